@@ -1,0 +1,1 @@
+import '@slewcurve/elements/define/chart';

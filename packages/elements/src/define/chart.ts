@@ -1,0 +1,3 @@
+import { SlewChart } from '../chart.js';
+
+if (!customElements.get('slew-chart')) customElements.define('slew-chart', SlewChart);

@@ -1,0 +1,2 @@
+export type { Step } from './step.js';
+export type { EditResult, Verb } from './verb.js';

@@ -1,0 +1,1 @@
+export type { Finding, Level, Occurrence, Way } from './finding.js';
