@@ -29,6 +29,10 @@ export interface Verb {
   readonly reads: readonly (keyof Step)[];
   /** True where `--proposed` may only use it when allowed by name. */
   readonly needsAllowing: boolean;
+  /** True where each of `keys` is acted on by itself, so that two steps on one track can be one. */
+  readonly keysApart: boolean;
+  /** True where it puts in keys, so that later key numbers shift. */
+  readonly insertsKeys: boolean;
   /** The step in a sentence, as people read it. */
   say(step: Step): string;
   /**
