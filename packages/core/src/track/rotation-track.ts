@@ -80,7 +80,7 @@ export function storedTrack(input: RotationTrackInput): RotationTrack {
   if (!Object.hasOwn(VALUES_PER_KEY, interpolation))
     throw new SlewcurveError(
       'track.unknown-interpolation',
-      `${String(interpolation)} is not one of STEP, LINEAR, CUBICSPLINE, EULER.`,
+      `${interpolation} is not one of STEP, LINEAR, CUBICSPLINE, EULER.`,
       place,
     );
   const size = VALUES_PER_KEY[interpolation];

@@ -1,0 +1,31 @@
+import type { ReadonlyNumberStore } from '../number-store.js';
+import { unitScale } from './unit-scale.js';
+
+/**
+ * Shortest angle between two orientations, radians, 0 to π. `q` and `-q` are the same orientation; inputs need not be unit; one
+ * of no length counts as identity. Exactly 0 for equal inputs.
+ *
+ * θ = 4·atan2(|a − b|, |a + b|) after a·b ≥ 0: W. Kahan's form of the angle between vectors (from memory), doubled. It keeps
+ * every digit at 0 and at π, where arc cosines lose half of them.
+ */
+export function angleBetween(a: ReadonlyNumberStore, b: ReadonlyNumberStore): number {
+  const ka = unitScale(a[0], a[1], a[2], a[3]);
+  const kb = unitScale(b[0], b[1], b[2], b[3]);
+  const ax = a[0] * ka,
+    ay = a[1] * ka,
+    az = a[2] * ka,
+    aw = ka === 0 ? 1 : a[3] * ka;
+  let bx = b[0] * kb,
+    by = b[1] * kb,
+    bz = b[2] * kb,
+    bw = kb === 0 ? 1 : b[3] * kb;
+  if (ax * bx + ay * by + az * bz + aw * bw < 0) {
+    bx = -bx;
+    by = -by;
+    bz = -bz;
+    bw = -bw;
+  }
+  const apart = (ax - bx) ** 2 + (ay - by) ** 2 + (az - bz) ** 2 + (aw - bw) ** 2;
+  const along = (ax + bx) ** 2 + (ay + by) ** 2 + (az + bz) ** 2 + (aw + bw) ** 2;
+  return 4 * Math.atan2(Math.sqrt(apart), Math.sqrt(along));
+}

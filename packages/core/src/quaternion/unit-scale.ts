@@ -1,0 +1,14 @@
+/**
+ * What a quaternion's numbers are multiplied by to make it unit: 1 where its squared length is 1 to within the rounding of
+ * float64 (its numbers are then used as they stand, so that end points stay exact to the bit), 0 where it has no length.
+ * Shorter than 1e-300 counts as no length: its reciprocal is not a float64.
+ */
+export function unitScale(x: number, y: number, z: number, w: number): number {
+  const squared = x * x + y * y + z * z + w * w;
+  // 8 eps: four roundings of squares and three of sums, each at most half an eps, and as much again for the numbers stored.
+  if (Math.abs(squared - 1) <= 8 * Number.EPSILON) return 1;
+  if (squared > 1e-200 && squared < 1e200) return 1 / Math.sqrt(squared);
+  const largest = Math.max(Math.abs(x), Math.abs(y), Math.abs(z), Math.abs(w));
+  if (largest < 1e-300) return 0;
+  return 1 / largest / Math.hypot(x / largest, y / largest, z / largest, w / largest);
+}
