@@ -25,11 +25,35 @@ export { relative } from './quaternion/relative.js';
 export { rotateVector } from './quaternion/rotate-vector.js';
 export { slerp, slerpAsStored } from './quaternion/slerp.js';
 export { squad } from './quaternion/squad.js';
-export { fromEuler } from './quaternion/from-euler.js';
+export { fromAxisAngle, toAxisAngle } from './quaternion/axis-angle.js';
+export { canonical } from './quaternion/canonical.js';
+export { axisChange, changeAxes, changeAxesOfRate, changeBasis, mirror } from './quaternion/change-axes.js';
+export { EULER_SEQUENCES, eulerSequence, type EulerSequence } from './quaternion/euler/euler-sequence.js';
+export { fromEuler } from './quaternion/euler/from-euler.js';
+export { poleDistance, toEuler } from './quaternion/euler/to-euler.js';
+export { unwrapEuler } from './quaternion/euler/unwrap-euler.js';
+export { fromMat3, fromMat4 } from './quaternion/from-matrix.js';
+export { lookAlong, lookAlongPath, lookAt, lookLeastTwist } from './quaternion/look-at.js';
+export { toMat3, toMat4 } from './quaternion/matrix.js';
+export { mean } from './quaternion/mean.js';
+export { slerpTurns } from './quaternion/slerp-turns.js';
+export { matrixOrientation, SHEAR_FLOOR, splitMatrix, type SplitMatrix } from './quaternion/split-matrix.js';
+export { swing, twist, twistAngle } from './quaternion/swing-twist.js';
+export { turnAboutOwn, turnAboutParent, turnAboutWorld } from './quaternion/turn-about.js';
+export { turnBetween } from './quaternion/turn-between.js';
 export { alignSigns, signChanges, type AlignedTrack, type AlignSignsOptions } from './track/align-signs.js';
 export { findSegment } from './track/find-segment.js';
+export { FRAME_RATES, frameGrid } from './track/frame-grid.js';
 export { keyOrientation } from './track/key-orientation.js';
 export { accelerationFloor, angleFloor, rateFloor } from './track/noise-floor.js';
 export { playableTrack } from './track/playable-track.js';
 export { replaceTrack, type TrackChanges } from './track/replace-track.js';
 export { segmentAngle } from './track/segment-angle.js';
+export { medianGap, regime, type Regime } from './track/regime.js';
+export {
+  BREAK_KINDS,
+  localRoughness,
+  type BreakKind,
+  type LocalRoughness,
+  type LocalRoughnessOptions,
+} from './measure/local-roughness.js';

@@ -1,5 +1,5 @@
 import type { NumberStore } from '../number-store.js';
-import { fromEuler } from '../quaternion/from-euler.js';
+import { fromEuler } from '../quaternion/euler/from-euler.js';
 import { normalise } from '../quaternion/normalise.js';
 import { VALUES_PER_KEY, type RotationTrack } from './rotation-track.js';
 
