@@ -1,13 +1,27 @@
-import type { Clip, RotationTrack, SceneNode } from '@slewcurve/core';
+import type { Clip, ErrorPlace, RotationTrack, SceneNode } from '@slewcurve/core';
 import type { PatchPlan } from './patch-plan.js';
 import type { Source } from './source.js';
+
+/** Something wrong in a file that did not stop the rest from being read. */
+export interface FileProblem {
+  /** Stable, dotted, lower-case, as `SlewcurveError.code`. */
+  readonly code: string;
+  readonly message: string;
+  readonly place: ErrorPlace;
+}
 
 /** An animation file read into tracks, and the way back. */
 export interface AnimationFile {
   readonly format: 'glb' | 'gltf';
   readonly nodes: readonly SceneNode[];
   readonly clips: readonly Clip[];
-  /** Plan that writes the given tracks (matched by `clip` and `id`) into the file and changes nothing else. */
+  /** Faults of single nodes, channels, samplers and accessors, in the file's order. A channel named here may have no track. */
+  readonly problems: readonly FileProblem[];
+  /**
+   * Plan that writes the given tracks (matched by `clip` and `id`) into the file and changes nothing else.
+   *
+   * @throws SlewcurveError `plan.unknown-track`, `plan.doubled-track`, `plan.cannot-write`
+   */
   plan(changed: readonly RotationTrack[]): Promise<PatchPlan>;
 }
 
@@ -15,6 +29,6 @@ export interface AnimationFile {
 export interface OpenOptions {
   /** The file's name, for messages. */
   readonly name: string;
-  /** Gives the file that stands beside this one under a relative URI. */
-  readonly sibling?: (uri: string) => Promise<Source>;
+  /** Gives the file that stands beside this one under a relative path (percent-decoded, checked, `/`-separated). */
+  readonly sibling?: (path: string) => Promise<Source>;
 }

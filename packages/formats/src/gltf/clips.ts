@@ -1,0 +1,250 @@
+import { type Clip, type RotationTrack, type Storage, frameGrid, storedTrack } from '@slewcurve/core';
+import {
+  type JsonObject,
+  countMember,
+  isObject,
+  listMember,
+  member,
+  shown,
+  textMember,
+} from '../json-value.js';
+import { type AccessorLayout, AccessorFault } from './accessor-layout.js';
+import { type AccessorReaders, accessorReaders } from './accessor-readers.js';
+import type { Buffers } from './buffers.js';
+import type { Container } from './container.js';
+import { uniqueLabels } from './node-tree.js';
+import { type Problem, problem, problemOf } from './problem.js';
+import { type ColumnsOf, type Columns, readColumns } from './rotation-columns.js';
+import { type RotationChannel, channelPointer, rotationChannel, samplerPointer } from './rotation-channel.js';
+
+/** Pointers kept of what shares an accessor. A take of a thousand joints on one clock would list a million otherwise. */
+const MOST_SHARERS = 16;
+
+/** Every clip with its rotation tracks. What hides a channel is added to `problems`; the others are read all the same. */
+export async function readClips(
+  container: Container,
+  paths: readonly string[],
+  buffers: Buffers,
+  problems: Problem[],
+): Promise<Clip[]> {
+  const animations = listMember(container.json, 'animations');
+  const names = uniqueLabels(
+    animations.map((clip) => textMember(clip, 'name')),
+    (index) => `#${index}`,
+  );
+  const channels = animations.map((_, index) =>
+    rotationChannels(container, index, names[index] ?? '', problems),
+  );
+  const columnsOf = await readColumns(container, channels.flat(), buffers);
+  const sharing = sharersOf(container.json);
+  return animations.map((_, index) => {
+    const name = names[index] ?? `#${index}`;
+    const own = channels[index] ?? [];
+    const ids = uniqueIds(own.map(({ node }) => paths[node] ?? `#${node}`));
+    const tracks: RotationTrack[] = [];
+    own.forEach((channel, i) => {
+      const columns = columnsOrProblem(channel, columnsOf, name, problems);
+      if (!columns) return;
+      const id = ids[i] ?? '';
+      problems.push(...flaws(container, channel, columns, id, name));
+      tracks.push(trackOf(channel, columns, id, name, sharing));
+    });
+    return clipOf(name, index, tracks);
+  });
+}
+
+/** Ids of a clip's tracks. A node that two channels turn (which glTF forbids) gives ids that end in `[0]`, `[1]`. */
+function uniqueIds(paths: readonly string[]): string[] {
+  return uniqueLabels(paths, (index) => `#${index}`);
+}
+
+function rotationChannels(
+  container: Container,
+  clipIndex: number,
+  clip: string,
+  problems: Problem[],
+): RotationChannel[] {
+  const json = listMember(container.json, 'animations')[clipIndex];
+  const pointer = `/animations/${clipIndex}`;
+  const list = member(json, 'channels');
+  if (!isObject(json) || !Array.isArray(list)) {
+    problems.push(
+      problem(container, 'gltf.bad-clip', `${pointer}/channels`, `must be a list; it is ${shown(list)}.`, {
+        clip,
+      }),
+    );
+    return [];
+  }
+  const found: RotationChannel[] = [];
+  const turned = new Map<number, number>();
+  list.forEach((_, index) => {
+    try {
+      const channel = rotationChannel(container, clipIndex, index);
+      if (!channel) return;
+      const first = turned.get(channel.node);
+      if (first !== undefined)
+        problems.push(
+          problem(
+            container,
+            'gltf.doubled-target',
+            channelPointer(clipIndex, index),
+            `turns node ${channel.node}, as ${channelPointer(clipIndex, first)} does; readers play one of them. Take one out.`,
+            { clip, node: channel.node },
+          ),
+        );
+      else turned.set(channel.node, index);
+      found.push(channel);
+    } catch (error) {
+      if (!(error instanceof AccessorFault)) throw error;
+      problems.push(problemOf(error, { clip }));
+    }
+  });
+  return found;
+}
+
+function columnsOrProblem(
+  channel: RotationChannel,
+  columnsOf: ColumnsOf,
+  clip: string,
+  problems: Problem[],
+): Columns | undefined {
+  try {
+    return columnsOf(channel);
+  } catch (error) {
+    if (!(error instanceof AccessorFault)) throw error;
+    problems.push(problemOf(error, { clip, node: channel.node }));
+    return undefined;
+  }
+}
+
+/** What glTF 2.0 forbids of a sampler that can be read all the same. */
+function flaws(
+  container: Container,
+  channel: RotationChannel,
+  { input, output, times }: Columns,
+  track: string,
+  clip: string,
+): Problem[] {
+  const place = { clip, track, node: channel.node };
+  const found: Problem[] = [];
+  const add = (code: string, pointer: string, what: string): void => {
+    found.push(problem(container, code, pointer, what, place));
+  };
+  const least = channel.interpolation === 'CUBICSPLINE' ? 2 : 1;
+  if (times.length < least)
+    add(
+      'gltf.too-few-keys',
+      samplerPointer(channel.clipIndex, channel.sampler),
+      `has ${times.length} keys; ${channel.interpolation} needs ${least}.`,
+    );
+  for (const { index, run } of [input, output])
+    if (run?.strided)
+      add(
+        'gltf.strided',
+        `/bufferViews/${run.view}/byteStride`,
+        `is set, which only mesh data may have (for /accessors/${index}).`,
+      );
+  const json = listMember(container.json, 'accessors')[input.index];
+  if (!hasBounds(json))
+    add(
+      'gltf.no-bounds',
+      `/accessors/${input.index}`,
+      'holds times and lacks the min and max that it must have.',
+    );
+  return found;
+}
+
+function hasBounds(json: Parameters<typeof listMember>[0]): boolean {
+  return ['min', 'max'].every((name) => {
+    const bound = listMember(json, name);
+    return bound.length === 1 && typeof bound[0] === 'number';
+  });
+}
+
+type SharersOf = (channel: RotationChannel) => readonly string[];
+
+function sharersOf(json: JsonObject): SharersOf {
+  const readers: AccessorReaders = accessorReaders(json);
+  const users = listMember(json, 'animations').map((clip) => {
+    const bySampler = new Map<number, number[]>();
+    listMember(clip, 'channels').forEach((channel, index) => {
+      const sampler = countMember(channel, 'sampler') ?? -1;
+      const known = bySampler.get(sampler);
+      if (known) known.push(index);
+      else bySampler.set(sampler, [index]);
+    });
+    return bySampler;
+  });
+  return ({ clipIndex, channel, sampler, input, output }) => {
+    const own = samplerPointer(clipIndex, sampler);
+    const others = (index: number, name: string): string[] =>
+      (readers.get(index) ?? []).slice(0, MOST_SHARERS + 1).filter((pointer) => pointer !== `${own}/${name}`);
+    const channels = (users[clipIndex]?.get(sampler) ?? [])
+      .slice(0, MOST_SHARERS + 1)
+      .filter((user) => user !== channel)
+      .map((user) => channelPointer(clipIndex, user));
+    const shared = [
+      ...channels,
+      ...others(output, 'output').slice(0, MOST_SHARERS),
+      ...others(input, 'input').slice(0, MOST_SHARERS),
+    ];
+    return Object.freeze(shared);
+  };
+}
+
+function trackOf(
+  channel: RotationChannel,
+  columns: Columns,
+  id: string,
+  clip: string,
+  sharers: SharersOf,
+): RotationTrack {
+  return storedTrack({
+    id,
+    clip,
+    times: columns.times,
+    values: columns.values,
+    interpolation: channel.interpolation,
+    storage: Object.freeze({
+      component: stored(columns.output),
+      timeComponent: stored(columns.input),
+    }),
+    source: Object.freeze({
+      clip,
+      clipIndex: channel.clipIndex,
+      node: channel.node,
+      sampler: channel.sampler,
+      channel: channel.channel,
+      times: channel.input,
+      values: channel.output,
+      sharedWith: sharers(channel),
+    }),
+  });
+}
+
+function stored({ component }: AccessorLayout): Storage['component'] {
+  return component.name === 'uint32' ? 'float32' : component.name;
+}
+
+function clipOf(name: string, index: number, tracks: readonly RotationTrack[]): Clip {
+  const clocks = [...new Set(tracks.map(({ times }) => times))];
+  let start = Infinity;
+  let end = -Infinity;
+  for (const times of clocks)
+    for (const time of times) {
+      if (!Number.isFinite(time)) continue;
+      start = Math.min(start, time);
+      end = Math.max(end, time);
+    }
+  const frameRate = frameGrid(clocks);
+  return Object.freeze({
+    name,
+    index,
+    tracks: Object.freeze(tracks),
+    start: start > end ? 0 : start,
+    end: start > end ? 0 : end,
+    ...(frameRate !== undefined && { frameRate }),
+    loop: false,
+    marks: Object.freeze([]),
+  });
+}
