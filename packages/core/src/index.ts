@@ -57,3 +57,6 @@ export {
   type LocalRoughness,
   type LocalRoughnessOptions,
 } from './measure/local-roughness.js';
+export { cumulativeHermite } from './curve/cumulative-hermite.js';
+export { playAs } from './playback/play-as.js';
+export { PLAYBACKS } from './playback/registry.js';
