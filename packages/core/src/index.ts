@@ -25,6 +25,8 @@ export { relative } from './quaternion/relative.js';
 export { rotateVector } from './quaternion/rotate-vector.js';
 export { slerp, slerpAsStored } from './quaternion/slerp.js';
 export { squad } from './quaternion/squad.js';
+export { cumulativeBezier } from './curve/cumulative-bezier.js';
+export { cumulativeBSpline } from './curve/cumulative-b-spline.js';
 export { fromAxisAngle, toAxisAngle } from './quaternion/axis-angle.js';
 export { canonical } from './quaternion/canonical.js';
 export { axisChange, changeAxes, changeAxesOfRate, changeBasis, mirror } from './quaternion/change-axes.js';
@@ -60,3 +62,4 @@ export {
 export { cumulativeHermite } from './curve/cumulative-hermite.js';
 export { playAs } from './playback/play-as.js';
 export { PLAYBACKS } from './playback/registry.js';
+export { rotationSpline, type KeyRates, type RotationSplineOptions } from './curve/rotation-spline.js';

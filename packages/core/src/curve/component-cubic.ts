@@ -113,10 +113,7 @@ export function componentCubicMotion(coefficients: CubicCoefficients, gaps: Floa
       out[1] = (y - drag * now[1]) / gap / gap;
       out[2] = (z - drag * now[2]) / gap / gap;
     },
-    length(segment, u0, u1) {
-      const splits = narrowPlaces(coefficients, segment).map(({ at }) => at);
-      return integrate(speed(segment), u0, u1, splits);
-    },
+    length: (segment, u0, u1) => integrate(speed(segment), u0, u1, narrowPlaces(coefficients, segment)),
     peakAt: (segment, u0, u1) => greatest(speed(segment), u0, u1, narrowPlaces(coefficients, segment)),
   };
 }

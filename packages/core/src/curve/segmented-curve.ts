@@ -24,7 +24,7 @@ export interface SegmentedCurveParts {
   /** Keys after which nothing is interpolated: their orientation is held until the next key. */
   readonly breaks: readonly number[];
   /** Writes the unit orientation of a key. */
-  key(out: NumberStore, key: number): void;
+  readonly key: (out: NumberStore, key: number) => void;
   readonly motion: SegmentMotion;
 }
 
