@@ -1,0 +1,3 @@
+export { poseSampler, type PoseSampler } from './pose-sampler.js';
+export type { SamplerOptions } from './precision.js';
+export { sampler, type Sampler } from './sampler.js';

@@ -1,0 +1,18 @@
+import { writeKeys, type SharedTimes, type WriteGroup } from './group.js';
+import { locate, timeLookup } from './time-lookup.js';
+
+/** STEP tracks: the key at or before `t`, to the bit. */
+export function step(shared: SharedTimes): WriteGroup {
+  const { times, values, slots } = shared;
+  const lookup = timeLookup(times, 1, 0, times.length);
+  const { start, end } = lookup;
+  const stride = 4 * values.length;
+  const keys = new Float64Array(stride * times.length);
+  values.forEach((track, i) => {
+    for (let at = 0; at < track.length; at++) keys[(at >> 2) * stride + 4 * i + (at & 3)] = track[at];
+  });
+  return (t, out, at) => {
+    const key = !(t > start) ? 0 : t >= end ? times.length - 1 : locate(lookup, t);
+    writeKeys(keys, key * stride, 4, slots, out, at);
+  };
+}
