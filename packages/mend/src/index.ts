@@ -1,3 +1,10 @@
-export { nearestWord } from './nearest-word.js';
 export type { Step } from './step.js';
 export type { EditResult, Verb } from './verb.js';
+export { VERBS, verbNamed } from './registry.js';
+export { nearestWord } from './nearest-word.js';
+export { type AppliedStep, type JobCard, applySteps, parseJobCard } from './job-card.js';
+export { matchesPattern } from './pattern.js';
+export { parseSentence, sayStep } from './sentence.js';
+export { type EditProof, proveEdit } from './proof.js';
+export { type BridgeEnds, bridgeAcross, shelfEnds } from './bridge-across.js';
+export { shelfTurn } from './shelf-turn.js';

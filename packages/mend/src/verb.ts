@@ -9,11 +9,11 @@ export interface EditResult {
   readonly changed: readonly number[];
   /** Keys of the new track that the old one did not have. Ascending. */
   readonly inserted: readonly number[];
-  /** Largest turn of any key of the old track, degrees. */
+  /** Largest turn of any key of the old track, degrees. Keys that had no orientation before are left out. */
   readonly largest: number;
   /** Seconds added to the clip. 0 for every verb that keeps times. */
   readonly added: number;
-  /** First and last time between which the motion may differ, seconds; undefined where it can't differ anywhere. */
+  /** First and last time between which the motion as written may differ, seconds; left out where it can't differ anywhere. */
   readonly span?: readonly [number, number];
 }
 
@@ -25,7 +25,9 @@ export interface Verb {
   readonly summary: string;
   /** What the trade calls it elsewhere; feeds `explain`. */
   readonly alsoCalled: readonly string[];
-  /** Which of the step's own numbers it reads. */
+  /** What its sentence begins with: "Lift out". Unlike every other verb's. */
+  readonly opening: string;
+  /** Which of the step's own numbers it reads, apart from `span`, `shoulders` and `keep`, which every verb reads. */
   readonly reads: readonly (keyof Step)[];
   /** True where `--proposed` may only use it when allowed by name. */
   readonly needsAllowing: boolean;
@@ -33,7 +35,7 @@ export interface Verb {
   readonly keysApart: boolean;
   /** True where it puts in keys, so that later key numbers shift. */
   readonly insertsKeys: boolean;
-  /** The step in a sentence, as people read it. */
+  /** The step in a sentence, as people read it. `parseSentence` reads it back. */
   say(step: Step): string;
   /**
    * @throws SlewcurveError `step.…` where the step can't be applied to this track; nothing is half done.

@@ -1,0 +1,93 @@
+import type { Step } from './step.js';
+
+/** A step's keys that a sentence says at its end, one clause each. `verb`, `clip`, `track` and `keys` have places of their own. */
+type ClauseKey = Exclude<keyof Step, 'verb' | 'clip' | 'track' | 'keys'>;
+
+/** One clause: how it is said, and how it is read back from the start of what is left of a sentence. */
+interface Clause {
+  readonly key: ClauseKey;
+  say(step: Step): string;
+  readonly pattern: RegExp;
+  read(groups: readonly string[]): Partial<Step>;
+}
+
+const NUMBER = String.raw`(-?\d+(?:\.\d+)?(?:e[+-]?\d+)?)`;
+const KEYS = String.raw`keys? (\d+(?:, \d+)*(?: and \d+)?)`;
+
+/** In the order in which a sentence has them. */
+export const CLAUSES: readonly Clause[] = [
+  {
+    key: 'steps',
+    say: ({ steps }) => `over ${steps} ${steps === 1 ? 'step' : 'steps'}`,
+    pattern: /^, over (\d+) steps?/,
+    read: ([steps]) => ({ steps: Number(steps) }),
+  },
+  {
+    key: 'axis',
+    say: ({ axis = [0, 0, 0] }) => `turning about (${axis.map(sayNumber).join(', ')}) in its own frame`,
+    pattern: new RegExp(String.raw`^, turning about \(${NUMBER}, ${NUMBER}, ${NUMBER}\) in its own frame`),
+    read: ([x, y, z]) => ({ axis: [Number(x), Number(y), Number(z)] }),
+  },
+  {
+    key: 'side',
+    say: ({ side }) => (side === 'own' ? 'on its own side' : "on the parent's side"),
+    pattern: /^, on (its own|the parent's) side/,
+    read: ([whose]) => ({ side: whose === 'its own' ? 'own' : 'parent' }),
+  },
+  {
+    key: 'fade',
+    say: ({ fade = 0 }) => `fading away over ${sayNumber(fade)} s`,
+    pattern: new RegExp(`^, fading away over ${NUMBER} s`),
+    read: ([fade]) => ({ fade: Number(fade) }),
+  },
+  {
+    key: 'span',
+    say: ({ span = [0, 0] }) => `between ${sayNumber(span[0])} s and ${sayNumber(span[1])} s`,
+    pattern: new RegExp(`^, between ${NUMBER} s and ${NUMBER} s`),
+    read: ([from, to]) => ({ span: [Number(from), Number(to)] }),
+  },
+  {
+    key: 'shoulders',
+    say: ({ shoulders = 0 }) => `with shoulders of ${sayNumber(shoulders)} s`,
+    pattern: new RegExp(`^, with shoulders of ${NUMBER} s`),
+    read: ([shoulders]) => ({ shoulders: Number(shoulders) }),
+  },
+  {
+    key: 'keep',
+    say: ({ keep = [] }) => `keeping ${sayKeys(keep)}`,
+    pattern: new RegExp(`^, keeping ${KEYS}`),
+    read: ([keys = '']) => ({ keep: readKeys(keys) }),
+  },
+];
+
+/** What follows the opening: the keys acted on. */
+export const KEYS_PATTERN: RegExp = new RegExp(`^ (?:(all keys)|${KEYS}) of `);
+
+/** `opening` and the step's own words: "Lift out key 19 of Hips/Spine/Neck in Walk." */
+export function sentenceOf(opening: string, step: Step): string {
+  const clauses = CLAUSES.filter(({ key }) => step[key] !== undefined).map(
+    (clause) => `, ${clause.say(step)}`,
+  );
+  const keys = step.keys ? sayKeys(step.keys) : 'all keys';
+  return `${opening} ${keys} of ${sayName(step.track)} in ${sayName(step.clip)}${clauses.join('')}.`;
+}
+
+/** "key 3", "keys 3 and 5", "keys 3, 5 and 9". */
+export function sayKeys(keys: readonly number[]): string {
+  if (keys.length === 1) return `key ${keys[0]}`;
+  return `keys ${keys.slice(0, -1).join(', ')} and ${keys.at(-1)}`;
+}
+
+/** The other way round: the numbers of "3, 5 and 9". */
+export function readKeys(keys: string): number[] {
+  return keys.split(/, | and /).map(Number);
+}
+
+/** A name as it is, or as a JSON string where white space, a comma, a quote or a last full stop would make it unclear. */
+function sayName(name: string): string {
+  return /^[^\s",\p{C}]*[^\s",.\p{C}]$/u.test(name) ? name : JSON.stringify(name);
+}
+
+function sayNumber(value: number): string {
+  return Object.is(value, -0) ? '-0' : String(value);
+}

@@ -1,0 +1,82 @@
+import { type RotationTrack, VALUES_PER_KEY, angleBetween, keyOrientation } from '@slewcurve/core';
+import { isPlayable } from './stored-key.js';
+import type { EditResult } from './verb.js';
+
+/** Degrees in a radian. */
+export const DEGREES: number = 180 / Math.PI;
+
+/**
+ * What an edit did, read off the two tracks and not off what the verb meant to do. `inserted`: keys of `after` that `before` lacks,
+ * ascending. `moves`: whether the motion as written may differ.
+ */
+export function editResult(
+  before: RotationTrack,
+  after: RotationTrack,
+  { inserted = [], moves = true }: { readonly inserted?: readonly number[]; readonly moves?: boolean } = {},
+): EditResult {
+  const changed = [...inserted];
+  let largest = 0;
+  const was = new Float64Array(4);
+  const is = new Float64Array(4);
+  for (const [key, oldKey] of pairedKeys(after, inserted)) {
+    if (sameNumbers(before, oldKey, after, key)) continue;
+    changed.push(key);
+    if (isPlayable(before, oldKey))
+      largest = Math.max(
+        largest,
+        angleBetween(keyOrientation(was, before, oldKey), keyOrientation(is, after, key)),
+      );
+  }
+  if (changed.length === 0) return { track: before, changed, inserted, largest: 0, added: 0 };
+  changed.sort((a, b) => a - b);
+  return {
+    track: after,
+    changed,
+    inserted,
+    largest: largest * DEGREES,
+    added: lengthOf(after) - lengthOf(before),
+    ...(moves && { span: withinKeys(after, reach(after, changed[0], changed[changed.length - 1])) }),
+  };
+}
+
+/** Every key of `after` that `before` has too, with its number there. */
+export function* pairedKeys(after: RotationTrack, inserted: readonly number[]): Generator<[number, number]> {
+  let passed = 0;
+  for (let key = 0; key < after.times.length; key++) {
+    if (inserted[passed] === key) passed++;
+    else yield [key, key - passed];
+  }
+}
+
+/** Whether two keys are stored alike to the bit, time included. */
+export function sameNumbers(a: RotationTrack, keyA: number, b: RotationTrack, keyB: number): boolean {
+  const size = VALUES_PER_KEY[a.interpolation];
+  if (!Object.is(a.times[keyA], b.times[keyB])) return false;
+  for (let i = 0; i < size; i++)
+    if (!Object.is(a.values[keyA * size + i], b.values[keyB * size + i])) return false;
+  return true;
+}
+
+/**
+ * Times between which playing hangs on keys `first` to `last`, seconds: out to the nearest playable key on either side, cuts or not (the
+ * pose before a cut is held up to it). ∓Infinity where there is none, as the ends are held.
+ */
+export function reach(track: RotationTrack, first: number, last: number): readonly [number, number] {
+  const { times } = track;
+  let from = first - 1;
+  while (from >= 0 && !(times[from] < times[first] && isPlayable(track, from))) from--;
+  let to = last + 1;
+  while (to < times.length && !(times[to] > times[last] && isPlayable(track, to))) to++;
+  return [from < 0 ? -Infinity : times[from], to < times.length ? times[to] : Infinity];
+}
+
+function withinKeys(
+  { times }: RotationTrack,
+  [from, to]: readonly [number, number],
+): readonly [number, number] {
+  return [Math.max(from, times[0]), Math.min(to, times[times.length - 1])];
+}
+
+function lengthOf({ times }: RotationTrack): number {
+  return times.length === 0 ? 0 : times[times.length - 1] - times[0];
+}

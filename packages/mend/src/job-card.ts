@@ -1,0 +1,129 @@
+import { type RotationTrack, SlewcurveError } from '@slewcurve/core';
+import { matchesPattern } from './pattern.js';
+import { verbNamed } from './registry.js';
+import type { Step } from './step.js';
+import { readStep } from './read-step.js';
+import type { EditResult } from './verb.js';
+
+/** An ordered list of edits that can be run again, as REPORT writes it: flat JSON. */
+export interface JobCard {
+  readonly schemaVersion: 1;
+  /** The file that it was written for. */
+  readonly for?: { readonly file: string; readonly sha256: string };
+  readonly steps: readonly Step[];
+}
+
+/** What one step did to one of the tracks that it names. */
+export interface AppliedStep {
+  readonly step: Step;
+  /** Index of the step in the card, and of the track in the list. */
+  readonly number: number;
+  readonly index: number;
+  /** The track as this step found it. */
+  readonly before: RotationTrack;
+  readonly result: EditResult;
+}
+
+/**
+ * A job card from parsed JSON of any origin. Keys that the card itself does not know are passed over; in a step they are refused, as
+ * passing over an instruction would do another edit than the one asked for.
+ *
+ * @throws SlewcurveError `card.bad-shape`, `card.bad-version`, `card.unknown-verb`, `card.bad-number`, `card.bad-text`,
+ * `card.unknown-key`; the place is a JSON pointer into the card.
+ */
+export function parseJobCard(json: unknown): JobCard {
+  if (!isRecord(json)) throw new SlewcurveError('card.bad-shape', 'A job card is a JSON object.');
+  if (json['schemaVersion'] !== 1)
+    throw new SlewcurveError(
+      'card.bad-version',
+      `schemaVersion must be 1; it is ${JSON.stringify(json['schemaVersion']) ?? 'missing'}.`,
+      { pointer: '/schemaVersion' },
+    );
+  const { steps } = json;
+  if (!Array.isArray(steps))
+    throw new SlewcurveError('card.bad-shape', 'steps must be a list.', { pointer: '/steps' });
+  return {
+    schemaVersion: 1,
+    ...(json['for'] !== undefined && { for: readFor(json['for']) }),
+    steps: steps.map((step: unknown, index) => readStep(step, index)),
+  };
+}
+
+/**
+ * Runs steps in order over a list of tracks. `clip` and `track` of a step are patterns (`*` stands for anything); one that a track
+ * has as its very name means that name alone. Tracks that no step names stay the same objects.
+ *
+ * @throws SlewcurveError `step.no-match` and what the verbs throw, with the step's number in the message; the given tracks are never
+ * written, so nothing is half done.
+ */
+export function applySteps(
+  tracks: readonly RotationTrack[],
+  steps: readonly Step[],
+): { readonly tracks: readonly RotationTrack[]; readonly results: readonly AppliedStep[] } {
+  const current = [...tracks];
+  const results = steps.flatMap((step, number) => {
+    const verb = verbNamed(step.verb, { pointer: `/steps/${number}/verb` });
+    return tracksNamed(current, step, number).map((index): AppliedStep => {
+      const before = current[index];
+      const result = saysWhichStep(number, step, () => verb.apply(before, step));
+      current[index] = result.track;
+      return { step, number, index, before, result };
+    });
+  });
+  return { tracks: current, results };
+}
+
+function tracksNamed(tracks: readonly RotationTrack[], step: Step, number: number): number[] {
+  const place = { clip: step.clip, track: step.track, pointer: `/steps/${number}` };
+  const inClip = named(
+    tracks.map((_, index) => index),
+    step.clip,
+    (index) => tracks[index].clip,
+  );
+  if (inClip.length === 0)
+    throw new SlewcurveError(
+      'step.no-match',
+      `Step ${number} (${step.verb}): no clip fits "${step.clip}".`,
+      place,
+    );
+  const found = named(inClip, step.track, (index) => tracks[index].id);
+  if (found.length === 0)
+    throw new SlewcurveError(
+      'step.no-match',
+      `Step ${number} (${step.verb}): no track of clip "${step.clip}" fits "${step.track}".`,
+      place,
+    );
+  return found;
+}
+
+function named(indices: readonly number[], pattern: string, nameOf: (index: number) => string): number[] {
+  const same = pattern === '*' ? [] : indices.filter((index) => nameOf(index) === pattern);
+  return same.length > 0 ? same : indices.filter((index) => matchesPattern(pattern, nameOf(index)));
+}
+
+function saysWhichStep<T>(number: number, step: Step, run: () => T): T {
+  try {
+    return run();
+  } catch (error) {
+    if (!(error instanceof SlewcurveError)) throw error;
+    throw new SlewcurveError(
+      error.code,
+      `Step ${number} (${step.verb}) on ${error.place.track ?? step.track}: ${error.message}`,
+      { ...error.place, pointer: `/steps/${number}` },
+      { cause: error },
+    );
+  }
+}
+
+function readFor(json: unknown): { file: string; sha256: string } {
+  const pointer = '/for';
+  if (!isRecord(json)) throw new SlewcurveError('card.bad-shape', '"for" must be an object.', { pointer });
+  const { file, sha256 } = json;
+  if (typeof file !== 'string' || typeof sha256 !== 'string')
+    throw new SlewcurveError('card.bad-text', '"for" needs file and sha256, both text.', { pointer });
+  return { file, sha256 };
+}
+
+function isRecord(value: unknown): value is Record<string, unknown> {
+  return typeof value === 'object' && value !== null && !Array.isArray(value);
+}

@@ -1,0 +1,120 @@
+import { SlewcurveError } from '@slewcurve/core';
+import { verbNamed } from './registry.js';
+import type { Step } from './step.js';
+
+/** What is wrong with one value; `readKey` adds the step and the key. */
+class Fault extends Error {
+  readonly code: string;
+  constructor(code: string, message: string) {
+    super(message);
+    this.code = code;
+  }
+}
+
+/** Every key of a step and how its JSON is read. */
+const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Partial<Step> } = {
+  verb: (value) => ({ verb: text(value) }),
+  clip: (value) => ({ clip: text(value) }),
+  track: (value) => ({ track: text(value) }),
+  keys: (value) => ({ keys: keyNumbers(value) }),
+  span: (value) => {
+    const [from, to] = finiteNumbers(value, 2);
+    if (from > to) throw new Fault('card.bad-number', 'must not end before it starts');
+    return { span: [from, to] };
+  },
+  shoulders: (value) => ({ shoulders: seconds(value) }),
+  keep: (value) => ({ keep: keyNumbers(value) }),
+  axis: (value) => {
+    const [x, y, z] = finiteNumbers(value, 3);
+    if (!(Math.hypot(x, y, z) > 0)) throw new Fault('card.bad-number', 'must have a length');
+    return { axis: [x, y, z] };
+  },
+  side: (value) => {
+    if (value !== 'own' && value !== 'parent') throw new Fault('card.bad-text', 'must be "own" or "parent"');
+    return { side: value };
+  },
+  fade: (value) => ({ fade: seconds(value) }),
+  steps: (value) => {
+    if (!isWhole(value) || value < 2) throw new Fault('card.bad-number', 'must be a whole number from 2 up');
+    return { steps: value };
+  },
+};
+
+const EVERY_VERB_READS: readonly (keyof Step)[] = ['verb', 'clip', 'track', 'span', 'shoulders', 'keep'];
+
+/**
+ * One step of a job card from parsed JSON of any origin. `index` is its place in the card, for the message.
+ *
+ * @throws SlewcurveError `card.bad-shape`, `card.unknown-verb`, `card.bad-number`, `card.bad-text`, `card.unknown-key`
+ */
+export function readStep(json: unknown, index: number): Step {
+  const pointer = `/steps/${index}`;
+  if (typeof json !== 'object' || json === null || Array.isArray(json))
+    throw new SlewcurveError('card.bad-shape', `Step ${index} must be an object.`, { pointer });
+  const given = new Map<string, unknown>(Object.entries(json));
+  let step: Step = { verb: '', clip: '', track: '' };
+  for (const key of ['verb', 'clip', 'track'] as const)
+    step = { ...step, ...readKey(key, given.get(key), index) };
+  const verb = verbNamed(step.verb, { pointer: `${pointer}/verb` });
+  const known = [...EVERY_VERB_READS, ...verb.reads];
+  for (const [name, value] of given) {
+    const key = known.find((other) => other === name);
+    if (key === undefined)
+      throw new SlewcurveError(
+        'card.unknown-key',
+        `Step ${index}: "${verb.name}" reads no "${name.slice(0, 60)}". It reads ${known.join(', ')}.`,
+        { pointer: `${pointer}/${name.replaceAll('~', '~0').replaceAll('/', '~1')}` },
+      );
+    step = { ...step, ...readKey(key, value, index) };
+  }
+  return step;
+}
+
+function readKey(key: keyof Step, value: unknown, index: number): Partial<Step> {
+  try {
+    return READERS[key](value);
+  } catch (error) {
+    if (!(error instanceof Fault)) throw error;
+    throw new SlewcurveError(
+      error.code,
+      `Step ${index}: "${key}" ${error.message}; it is ${shown(value)}.`,
+      { pointer: `/steps/${index}/${key}` },
+      { cause: error },
+    );
+  }
+}
+
+function text(value: unknown): string {
+  if (typeof value !== 'string') throw new Fault('card.bad-text', 'must be text');
+  return value;
+}
+
+function keyNumbers(value: unknown): readonly number[] {
+  if (!Array.isArray(value) || value.length === 0 || !value.every(isWhole))
+    throw new Fault('card.bad-number', 'must be a list of key numbers, whole and from 0 up');
+  return value;
+}
+
+function finiteNumbers(value: unknown, count: number): readonly number[] {
+  if (!Array.isArray(value) || value.length !== count || !value.every(isFiniteNumber))
+    throw new Fault('card.bad-number', `must be a list of ${count} finite numbers`);
+  return value;
+}
+
+function seconds(value: unknown): number {
+  if (!isFiniteNumber(value) || value < 0)
+    throw new Fault('card.bad-number', 'must be a finite number of seconds, 0 or more');
+  return value;
+}
+
+function isFiniteNumber(value: unknown): value is number {
+  return Number.isFinite(value);
+}
+
+function isWhole(value: unknown): value is number {
+  return isFiniteNumber(value) && Number.isSafeInteger(value) && value >= 0;
+}
+
+function shown(value: unknown): string {
+  return (JSON.stringify(value) ?? 'missing').slice(0, 60);
+}

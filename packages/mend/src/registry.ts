@@ -1,0 +1,42 @@
+import { type ErrorPlace, SlewcurveError } from '@slewcurve/core';
+import { bridge } from './edits/bridge.js';
+import { chooseSide } from './edits/choose-side.js';
+import { liftOut } from './edits/lift-out.js';
+import { normaliseKeys } from './edits/normalise.js';
+import { reSeat } from './edits/re-seat.js';
+import { sameSide } from './edits/same-side.js';
+import { nearestWord } from './nearest-word.js';
+import type { Verb } from './verb.js';
+
+/** Every edit that is built. */
+export const VERBS: readonly Verb[] = Object.freeze([
+  sameSide,
+  chooseSide,
+  liftOut,
+  bridge,
+  reSeat,
+  normaliseKeys,
+]);
+
+/**
+ * The edit of this name.
+ *
+ * @throws SlewcurveError `card.unknown-verb`; the message says which edit may be meant.
+ */
+export function verbNamed(name: string, place: ErrorPlace = {}): Verb {
+  const verb = VERBS.find((candidate) => candidate.name === name);
+  if (verb) return verb;
+  const meant = verbMeant(name);
+  const hint = meant
+    ? `Did you mean "${meant.name}"?`
+    : `There are: ${VERBS.map((candidate) => candidate.name).join(', ')}.`;
+  throw new SlewcurveError('card.unknown-verb', `"${name.slice(0, 60)}" is no edit. ${hint}`, place);
+}
+
+/** The edit whose name, or whose name in the trade, is spelt nearly so. */
+function verbMeant(name: string): Verb | undefined {
+  if (name.length > 60) return undefined;
+  const words = new Map(VERBS.flatMap((verb) => [verb.name, ...verb.alsoCalled].map((word) => [word, verb])));
+  const nearest = nearestWord(name.replace(/[-_]/g, ' '), [...words.keys()]);
+  return nearest === undefined ? undefined : words.get(nearest);
+}

@@ -1,0 +1,103 @@
+import { type Step, VERBS, parseSentence, sayStep } from '@slewcurve/mend';
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { codeOf } from '../support/edit-acceptance.js';
+
+const names = fc.oneof(
+  fc.string({ unit: 'binary', maxLength: 20 }),
+  fc.constantFrom(
+    '*',
+    'Hips/Spine/Neck',
+    'lowerleg.l',
+    'key 3 of',
+    'a in b',
+    'Walk.',
+    '"',
+    '',
+    '\\',
+    '~1',
+    '[2]',
+    '#7',
+  ),
+);
+const keyList = fc.array(fc.nat(), { minLength: 1, maxLength: 5 });
+const number = fc.double({ noNaN: true, noDefaultInfinity: true });
+const seconds = fc.double({ min: 0, noNaN: true, noDefaultInfinity: true });
+
+/** Steps of every verb, with any of the keys that it reads. */
+const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
+  const optional = {
+    keys: keyList,
+    steps: fc.nat(),
+    axis: fc.tuple(number, number, number),
+    side: fc.constantFrom('own' as const, 'parent' as const),
+    fade: seconds,
+  };
+  const read = Object.entries(optional).filter(([key]) => verb.reads.some((name) => name === key));
+  return fc.record(
+    {
+      verb: fc.constant(verb.name),
+      clip: names,
+      track: names,
+      span: fc.tuple(number, number),
+      shoulders: seconds,
+      keep: keyList,
+      ...Object.fromEntries(read),
+    },
+    { requiredKeys: ['verb', 'clip', 'track'] },
+  );
+});
+
+describe('sentence', () => {
+  it('says a step as people read it', () => {
+    const place = { clip: 'Walk', track: 'Hips/Spine/Neck' };
+    expect(sayStep({ verb: 'lift out', ...place, keys: [19] })).toBe(
+      'Lift out key 19 of Hips/Spine/Neck in Walk.',
+    );
+    expect(sayStep({ verb: 'bridge', ...place, keys: [20], steps: 4 })).toBe(
+      'Bridge key 20 of Hips/Spine/Neck in Walk, over 4 steps.',
+    );
+    expect(sayStep({ verb: 're-seat', ...place, keys: [20], side: 'parent', fade: 0.5 })).toBe(
+      "Re-seat from key 20 of Hips/Spine/Neck in Walk, on the parent's side, fading away over 0.5 s.",
+    );
+    expect(sayStep({ verb: 'same side', clip: '*', track: 'upper arm', keep: [0, 3, 36] })).toBe(
+      'Bring to one side all keys of "upper arm" in *, keeping keys 0, 3 and 36.',
+    );
+    expect(sayStep({ verb: 'choose side', ...place, keys: [1], axis: [0, -1, 0] })).toBe(
+      'Choose the side of key 1 of Hips/Spine/Neck in Walk, turning about (0, -1, 0) in its own frame.',
+    );
+    expect(sayStep({ verb: 'normalise', ...place, span: [0.5, 1.25], shoulders: 0.1 })).toBe(
+      'Normalise all keys of Hips/Spine/Neck in Walk, between 0.5 s and 1.25 s, with shoulders of 0.1 s.',
+    );
+  });
+
+  it('reads back what it says, whatever the names and numbers', () => {
+    fc.assert(
+      fc.property(steps, (step) => {
+        expect(parseSentence(sayStep(step))).toEqual(step);
+      }),
+      { numRuns: 500 },
+    );
+  });
+
+  it('reads a sentence without its full stop and with a small first letter', () => {
+    expect(parseSentence(' lift out keys 3 and 5 of Neck in Walk ')).toEqual({
+      verb: 'lift out',
+      clip: 'Walk',
+      track: 'Neck',
+      keys: [3, 5],
+    });
+  });
+
+  it('says where a sentence stops making sense', () => {
+    expect(codeOf(() => parseSentence('Lift up key 3 of Neck in Walk.'))).toBe('sentence.unknown-opening');
+    expect(codeOf(() => parseSentence('Lift out key three of Neck in Walk.'))).toBe('sentence.unreadable');
+    expect(codeOf(() => parseSentence('Lift out key 3 of Neck.'))).toBe('sentence.unreadable');
+    expect(codeOf(() => parseSentence('Lift out key 3 of "Neck in Walk.'))).toBe('sentence.unreadable');
+    expect(codeOf(() => parseSentence('Lift out key 3 of "\\q" in Walk.'))).toBe('sentence.unreadable');
+    expect(codeOf(() => parseSentence('Lift out key 3 of Neck in Walk, slowly.'))).toBe(
+      'sentence.unreadable',
+    );
+    expect(codeOf(() => parseSentence(''))).toBe('sentence.unknown-opening');
+  });
+});
