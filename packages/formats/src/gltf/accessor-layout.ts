@@ -176,14 +176,14 @@ function viewOf(container: Container, json: Json, pointer: string): View {
       `is ${shown(member(json, 'bufferView'))}; there are ${views.length} buffer views.`,
     );
   const at = `/bufferViews/${index}`;
-  for (const name of COMPRESSIONS)
-    if (isObject(member(member(view, 'extensions'), name)))
-      throw fault(
-        container,
-        'gltf.needs-extension',
-        at,
-        `is compressed with ${name}, which is not read. Export the file without it.`,
-      );
+  const compression = COMPRESSIONS.find((name) => isObject(member(member(view, 'extensions'), name)));
+  if (compression !== undefined && listMember(container.json, 'extensionsRequired').includes(compression))
+    throw fault(
+      container,
+      'gltf.needs-extension',
+      at,
+      `is compressed with ${compression}, which the file requires and which is not read. Export it without that compression.`,
+    );
   const buffer = countMember(view, 'buffer');
   const length = countMember(view, 'byteLength');
   const offset = countMember(view, 'byteOffset') ?? 0;

@@ -14,11 +14,18 @@ import type { Buffers } from './buffers.js';
 import type { Container } from './container.js';
 import { uniqueLabels } from './node-tree.js';
 import { type Problem, problem, problemOf } from './problem.js';
+import type { ReadTrack } from './track-change.js';
 import { type ColumnsOf, type Columns, readColumns } from './rotation-columns.js';
 import { type RotationChannel, channelPointer, rotationChannel, samplerPointer } from './rotation-channel.js';
 
 /** Pointers kept of what shares an accessor. A take of a thousand joints on one clock would list a million otherwise. */
 const MOST_SHARERS = 16;
+
+/** The clips of a file, and every track of theirs with what writing it back needs. */
+export interface ReadClips {
+  readonly clips: readonly Clip[];
+  readonly tracks: readonly ReadTrack[];
+}
 
 /** Every clip with its rotation tracks. What hides a channel is added to `problems`; the others are read all the same. */
 export async function readClips(
@@ -26,7 +33,7 @@ export async function readClips(
   paths: readonly string[],
   buffers: Buffers,
   problems: Problem[],
-): Promise<Clip[]> {
+): Promise<ReadClips> {
   const animations = listMember(container.json, 'animations');
   const names = uniqueLabels(
     animations.map((clip) => textMember(clip, 'name')),
@@ -36,26 +43,26 @@ export async function readClips(
     rotationChannels(container, index, names[index] ?? '', problems),
   );
   const columnsOf = await readColumns(container, channels.flat(), buffers);
-  const sharing = sharersOf(container.json);
-  return animations.map((_, index) => {
-    const name = names[index] ?? `#${index}`;
+  const sharers = sharersOf(container.json);
+  const all: ReadTrack[] = [];
+  const clips = names.map((name, index) => {
     const own = channels[index] ?? [];
-    const ids = uniqueIds(own.map(({ node }) => paths[node] ?? `#${node}`));
-    const tracks: RotationTrack[] = [];
-    own.forEach((channel, i) => {
+    const ids = uniqueLabels(
+      own.map(({ node }) => paths[node] ?? `#${node}`),
+      (i) => `#${i}`,
+    );
+    const tracks = own.flatMap((channel, i) => {
       const columns = columnsOrProblem(channel, columnsOf, name, problems);
-      if (!columns) return;
+      if (!columns) return [];
       const id = ids[i] ?? '';
       problems.push(...flaws(container, channel, columns, id, name));
-      tracks.push(trackOf(channel, columns, id, name, sharing));
+      const track = trackOf(channel, columns, id, name, sharers);
+      all.push({ track, channel, columns });
+      return [track];
     });
     return clipOf(name, index, tracks);
   });
-}
-
-/** Ids of a clip's tracks. A node that two channels turn (which glTF forbids) gives ids that end in `[0]`, `[1]`. */
-function uniqueIds(paths: readonly string[]): string[] {
-  return uniqueLabels(paths, (index) => `#${index}`);
+  return { clips, tracks: all };
 }
 
 function rotationChannels(
@@ -144,6 +151,7 @@ function flaws(
         `/bufferViews/${run.view}/byteStride`,
         `is set, which only mesh data may have (for /accessors/${index}).`,
       );
+  flawsOfTarget(container, channel, add);
   const json = listMember(container.json, 'accessors')[input.index];
   if (!hasBounds(json))
     add(
@@ -152,6 +160,24 @@ function flaws(
       'holds times and lacks the min and max that it must have.',
     );
   return found;
+}
+
+function flawsOfTarget(
+  container: Container,
+  { clipIndex, channel, node }: RotationChannel,
+  add: (code: string, pointer: string, what: string) => void,
+): void {
+  const clip = listMember(container.json, 'animations')[clipIndex];
+  const target = member(listMember(clip, 'channels')[channel], 'target');
+  const pointer = `${channelPointer(clipIndex, channel)}/target`;
+  if (member(listMember(container.json, 'nodes')[node], 'matrix') !== undefined)
+    add(
+      'gltf.matrix-target',
+      pointer,
+      `turns node ${node}, which has a matrix; a moved node needs rotation, translation and scale.`,
+    );
+  if (textMember(target, 'path') === 'pointer' && member(target, 'node') !== undefined)
+    add('gltf.pointer-with-node', `${pointer}/node`, 'must not be there beside a KHR_animation_pointer.');
 }
 
 function hasBounds(json: Parameters<typeof listMember>[0]): boolean {

@@ -1,12 +1,12 @@
-import { SlewcurveError } from '@slewcurve/core';
+import { type RotationTrack, SlewcurveError } from '@slewcurve/core';
 import type { AnimationFile, OpenOptions } from '../animation-file.js';
-import { isObject, listMember, member, shown, textMember } from '../json-value.js';
-import { COMPRESSIONS } from './accessor-layout.js';
+import { member, shown, textMember } from '../json-value.js';
 import { fileBuffers } from './buffers.js';
 import { readClips } from './clips.js';
 import type { Container } from './container.js';
 import { nodeTree } from './node-tree.js';
 import { type Problem, problem } from './problem.js';
+import { writePlan } from './write-plan.js';
 
 /** Reads a glTF asset that has been taken apart into tracks. */
 export async function gltfFile(container: Container, options: OpenOptions): Promise<AnimationFile> {
@@ -16,20 +16,14 @@ export async function gltfFile(container: Container, options: OpenOptions): Prom
   const nodes = nodeTree(container, problems);
   const buffers = fileBuffers(container, options.sibling);
   const paths = nodes.map(({ path }) => path);
-  const clips = await readClips(container, paths, buffers, problems);
-  refuseHidden(
-    container,
-    clips.some(({ tracks }) => tracks.length > 0),
-    problems,
-  );
+  const { clips, tracks } = await readClips(container, paths, buffers, problems);
+  refuseHidden(problems);
   return Object.freeze({
     format: container.format,
     nodes: Object.freeze(nodes),
     clips: Object.freeze(clips),
     problems: Object.freeze(problems),
-    plan: async () => {
-      throw new SlewcurveError('plan.cannot-write', 'Writing is not built yet.');
-    },
+    plan: async (changed: readonly RotationTrack[]) => writePlan(container, buffers, tracks, changed),
   });
 }
 
@@ -58,26 +52,11 @@ function checkLength({ source, file, declaredLength }: Container, problems: Prob
 }
 
 /**
- * A file whose rotations are all hidden by a required extension can't be read, and says by which.
+ * A file that hides rotations behind a required extension is not read in part: it says by which.
  *
  * @throws SlewcurveError `gltf.needs-extension`
  */
-function refuseHidden(container: Container, anyTrack: boolean, problems: readonly Problem[]): void {
-  if (anyTrack) return;
-  const required = listMember(container.json, 'extensionsRequired').filter(
-    (name): name is string => typeof name === 'string',
-  );
-  const buffers = listMember(container.json, 'buffers');
-  const hiding = required.filter(
-    (name) =>
-      COMPRESSIONS.includes(name) &&
-      (problems.some(({ code }) => code === 'gltf.needs-extension') ||
-        buffers.some((buffer) => isObject(member(member(buffer, 'extensions'), name)))),
-  );
-  if (hiding.length > 0)
-    throw new SlewcurveError(
-      'gltf.needs-extension',
-      `${container.file}: the data is compressed with ${hiding.join(' and ')}, which the file requires and which is not read. Export it without that compression.`,
-      { file: container.file, pointer: '/extensionsRequired' },
-    );
+function refuseHidden(problems: readonly Problem[]): void {
+  const hidden = problems.find(({ code }) => code === 'gltf.needs-extension');
+  if (hidden) throw new SlewcurveError(hidden.code, hidden.message, hidden.place);
 }
