@@ -1,0 +1,60 @@
+import type { ReadonlyNumberStore } from '../number-store.js';
+import { cumulativeCubicBasis } from './b-spline-basis.js';
+import { controlTurns, type ControlTurns } from './control-turns.js';
+import type { Curve } from './curve.js';
+import { stateCurve, type MotionState } from './state-curve.js';
+import { turnProduct } from './turn-product.js';
+
+/**
+ * The cumulative cubic B-spline of four or more control orientations (`[x, y, z, w]`, not necessarily unit, signs do not matter),
+ * `gap` seconds apart: n controls make n − 3 segments. It follows the controls without passing through them and has continuous
+ * acceleration. Played backwards it is another curve. For a spline near a track's keys see `rotationSpline`, kind `b-spline`.
+ *
+ * q = c₀ Π Exp(B_k(t) r_k), r_k = Log(c_{k−1}⁻¹c_k): M.-J. Kim, M.-S. Kim and S. Y. Shin, SIGGRAPH 1995.
+ *
+ * @throws SlewcurveError `curve.too-few-controls`, `curve.bad-control`
+ */
+export function cumulativeBSpline(
+  controls: readonly ReadonlyNumberStore[],
+  gap: number = 1,
+  start: number = 0,
+): Curve {
+  const legs = controlTurns(controls, 4);
+  const segments = controls.length - 3;
+  const times = Float64Array.from({ length: segments + 1 }, (_, n) => start + n * gap);
+  return bSplineThrough(legs, times, (n) => start + n * gap, []);
+}
+
+/**
+ * The B-spline over `times` whose segment i is under the controls i to i + 3. `knot(n)` gives the knots, `knot(i)` being
+ * `times[i]`. @internal
+ */
+export function bSplineThrough(
+  { controls, turns }: ControlTurns,
+  times: Float64Array,
+  knot: (n: number) => number,
+  breaks: readonly number[],
+): Curve {
+  const product = turnProduct();
+  const basis = new Float64Array(9);
+  const legs = Array.from({ length: turns.length / 3 }, (_, k) => turns.subarray(3 * k, 3 * k + 3));
+  function at(segment: number, u: number): MotionState {
+    const t = knot(segment) + u * (knot(segment + 1) - knot(segment));
+    cumulativeCubicBasis(basis, knot, segment, t);
+    product.reset(controls.subarray(4 * segment, 4 * segment + 4));
+    for (let k = 0; k < 3; k++)
+      product.turn(legs[segment + k], basis[3 * k], basis[3 * k + 1], basis[3 * k + 2]);
+    return product;
+  }
+  return stateCurve({
+    times,
+    continuity: 2,
+    breaks,
+    key(out, key) {
+      const inner = Math.min(key, times.length - 2);
+      const { orientation } = at(inner, key - inner);
+      for (let k = 0; k < 4; k++) out[k] = orientation[k];
+    },
+    at,
+  });
+}
