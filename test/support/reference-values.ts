@@ -30,6 +30,27 @@ interface Hermite {
 /** Cases of every group by its file. The spelling of the fields is the files'. */
 export interface ReferenceGroups {
   readonly 'fifty-digit.json': {
+    readonly nlerp: {
+      readonly q0: readonly number[];
+      readonly q1: readonly number[];
+      readonly h: number;
+      readonly samples: readonly ReferenceSample[];
+    };
+    readonly squad: {
+      readonly rule: 'uniform-shoemake' | 'secant' | 'bessel';
+      readonly times: readonly number[];
+      readonly quats: readonly (readonly number[])[];
+      /** `t` is on the clock of `times`. */
+      readonly samples: readonly ReferenceSample[];
+    };
+    readonly gltf_cubicspline: {
+      readonly v0: readonly number[];
+      readonly out_tangent0: readonly number[];
+      readonly v1: readonly number[];
+      readonly in_tangent1: readonly number[];
+      readonly td: number;
+      readonly samples: readonly ReferenceSample[];
+    };
     readonly cumulative_hermite: Hermite & {
       readonly h: number;
       readonly samples: readonly ReferenceSample[];
@@ -62,6 +83,25 @@ export interface ReferenceGroups {
     };
   };
   readonly 'scipy-1.10.1.json': {
+    readonly slerp: Spline & {
+      readonly kind: string;
+      readonly expected: readonly (readonly number[])[];
+    };
+    readonly rotvec: {
+      readonly rotvec: readonly number[];
+      readonly quat: readonly number[];
+      readonly principal_rotvec: readonly number[];
+      readonly angle_rad: number;
+    };
+    readonly product: {
+      readonly a: readonly number[];
+      readonly b: readonly number[];
+      readonly a_times_b: readonly number[];
+      readonly a_inverse_times_b: readonly number[];
+      readonly angle_between_rad: number;
+      readonly vector: readonly number[];
+      readonly a_applied_to_vector: readonly number[];
+    };
     readonly rotation_spline: Spline & {
       readonly expected_quat: readonly (readonly number[])[];
       readonly expected_rate_body: readonly (readonly number[])[];

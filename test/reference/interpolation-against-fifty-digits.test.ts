@@ -1,0 +1,78 @@
+import { cumulativeHermite, playAs, rotationSpline, rotationTrack, type Curve } from '@slewcurve/core';
+import { describe, expect, test } from 'vitest';
+import { againstSamples, type CurveDifferences } from '../support/against-samples.js';
+import { referenceValues, type ReferenceSample } from '../support/reference-values.js';
+
+// Source: 50-digit arithmetic with mpmath 1.2.1, rates by numerical differentiation, independent of the closed forms here. The
+// tolerances came with the values: angle 1e-12 rad, rate 1e-11 and acceleration 1e-10 of the vector's size.
+
+function expectSame(worst: CurveDifferences): void {
+  expect(worst.angle).toBeLessThan(1e-12);
+  expect(worst.rate).toBeLessThan(1e-11);
+  expect(worst.acceleration).toBeLessThan(1e-10);
+}
+
+/** Values from a frozen case and a curve built from it; every group is one table of them. */
+function againstAll(cases: readonly (readonly [Curve, readonly ReferenceSample[]])[]): CurveDifferences {
+  expect(cases.length).toBeGreaterThan(0);
+  const all = cases.map(([curve, samples]) => againstSamples(curve, samples));
+  return {
+    angle: Math.max(...all.map(({ angle }) => angle)),
+    rate: Math.max(...all.map(({ rate }) => rate)),
+    acceleration: Math.max(...all.map(({ acceleration }) => acceleration)),
+  };
+}
+
+test('chords made unit (nlerp) meet the 50-digit values in orientation, rate and acceleration', () => {
+  const cases = referenceValues('fifty-digit.json', 'nlerp').map(({ q0, q1, h, samples }) => {
+    const track = rotationTrack({ times: [0, h], values: [...q0, ...q1] });
+    return [playAs(track, 'chord'), samples] as const;
+  });
+  expectSame(againstAll(cases));
+});
+
+describe.each([
+  ['uniform-shoemake', 'uniform'],
+  ['secant', 'secant'],
+  ['bessel', 'three-point'],
+] as const)('squad by the %s rule', (rule, rates) => {
+  test('meets the 50-digit values in orientation, rate and acceleration', () => {
+    const cases = referenceValues('fifty-digit.json', 'squad')
+      .filter((each) => each.rule === rule)
+      .map(({ times, quats, samples }) => {
+        const track = rotationTrack({ times, values: quats.flat() });
+        return [rotationSpline(track, { kind: 'squad', rates }), samples] as const;
+      });
+    expectSame(againstAll(cases));
+  });
+});
+
+test("stored cubics meet the 50-digit values of glTF 2.0's CUBICSPLINE (B16: tangents in, value, tangent out)", () => {
+  const cases = referenceValues('fifty-digit.json', 'gltf_cubicspline').map(
+    ({ v0, out_tangent0, v1, in_tangent1, td, samples }) => {
+      const none = [0, 0, 0, 0];
+      const values = [none, v0, out_tangent0, in_tangent1, v1, none].flat();
+      const track = rotationTrack({ times: [0, td], values, interpolation: 'CUBICSPLINE' });
+      return [playAs(track, 'stored-cubic'), samples] as const;
+    },
+  );
+  expectSame(againstAll(cases));
+});
+
+test('cumulative Hermite curves meet the 50-digit values in orientation, rate and acceleration', () => {
+  const cases = referenceValues('fifty-digit.json', 'cumulative_hermite').map(
+    ({ q0, q1, rate0_body, rate1_body, h, samples }) =>
+      [cumulativeHermite(q0, q1, rate0_body, rate1_body, h), samples] as const,
+  );
+  expectSame(againstAll(cases));
+});
+
+test('the angle turned along a curve meets the 50-digit arc lengths to 1e-11 of it, near-stops included', () => {
+  const cases = referenceValues('fifty-digit.json', 'arc_length');
+  expect(cases.length).toBeGreaterThan(0);
+  for (const { q0, q1, rate0_body, rate1_body, total_turned_angle_rad } of cases) {
+    const curve = cumulativeHermite(q0, q1, rate0_body, rate1_body, 1);
+    // A speed that nearly touches zero is the hard case: adaptive halving stops at 1e-13 of the sum a cell.
+    expect(Math.abs(curve.length(0, 1) / total_turned_angle_rad - 1)).toBeLessThan(1e-11);
+  }
+});
