@@ -16,47 +16,32 @@ export interface GreatArcs<Numbers extends Float64Array | Float32Array> {
   readonly lookup: TimeLookup;
 }
 
-/** `near` is the greatest h of the short polynomials. */
-export function greatArcs64(shared: SharedTimes, near: number): GreatArcs<Float64Array> {
-  const { times, values } = shared;
-  const stride = 7 * values.length + 1;
-  const records = new Float64Array(stride * times.length);
-  times.forEach((time, key) => (records[key * stride + stride - 1] = time));
-  const lookup = timeLookup(records, stride, stride - 1, times.length);
-  return { records, stride, lookup, near: writeRecords(records, stride, shared, near) };
-}
-
-/** Times stay float64 and apart: near 180 s a float32 time is off by up to 8e-6 s, at 500°/s hundreds of times the arc's error. */
-export function greatArcs32(shared: SharedTimes, near: number): GreatArcs<Float32Array> {
-  const { times, values } = shared;
-  const stride = 7 * values.length + 1;
-  const records = new Float32Array(stride * times.length);
-  const lookup = timeLookup(times, 1, 0, times.length);
-  return { records, stride, lookup, near: writeRecords(records, stride, shared, near) };
-}
-
-function writeRecords(
-  records: Float64Array | Float32Array,
-  stride: number,
-  { values }: SharedTimes,
+/**
+ * Fills `records`, which must hold `7 · tracks + 1` numbers a key; `near` is the greatest h of the short polynomials. The times
+ * of float32 records stay float64 and apart: near 180 s a float32 time is off by up to 8e-6 s, at 500°/s hundreds of times the
+ * arc's error.
+ */
+export function greatArcs<Numbers extends Float64Array | Float32Array>(
+  { times, values }: SharedTimes,
+  records: Numbers,
   near: number,
-): Uint8Array {
-  const rows = records.length / stride;
-  const isNear = new Uint8Array(rows).fill(1);
+): GreatArcs<Numbers> {
+  const count = times.length;
+  const stride = records.length / count;
+  const isNear = new Uint8Array(count).fill(1);
   values.forEach((keys, track) => {
-    for (let key = 0; key < rows; key++) {
-      const at = key * stride + 4 * track;
-      for (let i = 0; i < 4; i++) records[at + i] = keys[4 * key + i];
-      if (key === rows - 1) continue;
-      const h = writeWeights(
-        records,
-        key * stride + 4 * values.length + 3 * track,
-        keys,
-        4 * key,
-        4 * key + 4,
-      );
-      if (h > near) isNear[key] = 0;
+    for (let key = 0; key < count; key++) {
+      const from = 4 * key;
+      const row = key * stride;
+      for (let i = 0; i < 4; i++) records[row + 4 * track + i] = keys[from + i];
+      records[row + stride - 1] = times[key];
+      const weights = row + 4 * values.length + 3 * track;
+      if (key + 1 < count && writeWeights(records, weights, keys, from) > near) isNear[key] = 0;
     }
   });
-  return isNear;
+  const lookup =
+    records instanceof Float64Array
+      ? timeLookup(records, stride, stride - 1, count)
+      : timeLookup(times, 1, 0, count);
+  return { records, stride, near: isNear, lookup };
 }

@@ -16,16 +16,15 @@ export interface SharedTimes {
   readonly slots: Int32Array;
 }
 
-/** Copy of the orientations of one key, from `from` on, `step` numbers a track. */
+/** Copy of the orientations of one key, from `from` on. */
 export function writeKeys(
   numbers: Float64Array | Float32Array,
   from: number,
-  step: number,
   slots: Int32Array,
   out: NumberStore,
   at: number,
 ): void {
-  for (let i = 0; i < slots.length; i++, from += step) {
+  for (let i = 0; i < slots.length; i++, from += 4) {
     const to = at + slots[i];
     out[to] = numbers[from];
     out[to + 1] = numbers[from + 1];

@@ -1,6 +1,6 @@
 import { SlewcurveError } from '../errors.js';
 import { unitScale } from '../quaternion/unit-scale.js';
-import { playableTrack } from '../track/playable-track.js';
+import { playableKeys } from '../track/playable-track.js';
 import { VALUES_PER_KEY, type RotationTrack } from '../track/rotation-track.js';
 import type { SharedTimes } from './group.js';
 
@@ -11,7 +11,7 @@ export interface PlayedKeys {
   readonly values: Float64Array;
 }
 
-const IDENTITY = { times: Float64Array.of(0), values: Float64Array.of(0, 0, 0, 1) };
+const IDENTITY = [0, 0, 0, 1];
 
 /** @throws SlewcurveError `sampler.euler-track` */
 export function playedKeys(track: RotationTrack): PlayedKeys {
@@ -19,57 +19,61 @@ export function playedKeys(track: RotationTrack): PlayedKeys {
   if (interpolation === 'EULER')
     throw new SlewcurveError(
       'sampler.euler-track',
-      'A sampler plays quaternions; this track holds Euler angles. Re-grid it to quaternion keys first.',
+      'The track holds Euler angles; a sampler plays quaternions. Re-grid it to LINEAR first.',
       { track: track.id, clip: track.clip },
     );
-  const playable = playableTrack(track);
-  if (playable.times.length === 0) return { interpolation: 'STEP', ...IDENTITY };
-  if (interpolation === 'CUBICSPLINE') return { interpolation, ...withHolds(playable) };
-  const { times, values } = interpolation === 'LINEAR' ? withHolds(playable) : playable;
-  return { interpolation, times, values: unitKeys(values, interpolation === 'LINEAR') };
+  const { times, values } = withHolds(track, interpolation, playableKeys(track));
+  if (times.length === 0)
+    return { interpolation: 'STEP', times: Float64Array.of(0), values: Float64Array.from(IDENTITY) };
+  if (interpolation !== 'CUBICSPLINE') makeUnit(values, interpolation === 'LINEAR');
+  return { interpolation, times, values };
 }
 
 /**
- * Nothing is interpolated after a break: the key before it stands until the key after it. A copy of it at that key's time, with
- * tangents 0, makes an ordinary segment of that; the copy's own segment lasts no time and is never played.
+ * A copy of the keys `kept`. Nothing is interpolated after a break: the key before it stands until the key after it. A second copy
+ * at that key's time, with tangents 0, makes an ordinary segment of that; the copy's own segment lasts no time and is never
+ * played. STEP holds as it is.
  */
-function withHolds(track: RotationTrack): { times: Float64Array; values: Float64Array } {
-  const { times, values } = track;
-  const breaks = track.breaks.filter((key) => key < times.length - 1);
-  if (breaks.length === 0) return { times, values };
-  const size = VALUES_PER_KEY[track.interpolation];
-  const heldTimes = new Float64Array(times.length + breaks.length);
-  const heldValues = new Float64Array(heldTimes.length * size);
-  for (let key = 0, to = 0, next = 0; key < times.length; key++, to++) {
-    heldTimes[to] = times[key];
-    heldValues.set(values.subarray(key * size, (key + 1) * size), to * size);
-    if (key !== breaks[next]) continue;
-    next++;
-    if (size === 12) heldValues.fill(0, to * size + 8, to * size + 12);
-    heldTimes[++to] = times[key + 1];
-    const value = size === 12 ? 4 : 0;
-    heldValues.set(values.subarray(key * size + value, key * size + value + 4), to * size + value);
-  }
-  return { times: heldTimes, values: heldValues };
+function withHolds(
+  track: RotationTrack,
+  interpolation: PlayedKeys['interpolation'],
+  kept: readonly number[],
+): { times: Float64Array; values: Float64Array } {
+  const size = VALUES_PER_KEY[interpolation];
+  const times: number[] = [];
+  const values: number[] = [];
+  let cut = 0;
+  kept.forEach((key, i) => {
+    const own = track.values.subarray(key * size, (key + 1) * size);
+    times.push(track.times[key]);
+    values.push(...own);
+    // A cut after a key that was dropped is one after the key kept before it.
+    const next = kept[i + 1];
+    while (track.breaks[cut] < key) cut++;
+    if (interpolation === 'STEP' || !(track.breaks[cut] < next)) return;
+    times.push(track.times[next]);
+    if (size === 12) values.fill(0, -4);
+    values.push(...(size === 12 ? [0, 0, 0, 0, ...own.subarray(4, 8), 0, 0, 0, 0] : own));
+  });
+  return { times: Float64Array.from(times), values: Float64Array.from(values) };
 }
 
 /**
- * Keys made unit and, for great arcs, each put on the side of the one before. Whether two keys lie on one side is asked of their
+ * Makes keys unit and, for great arcs, puts each on the side of the one before. Whether two keys lie on one side is asked of their
  * signs as stored: exactly half a turn apart these alone tell the way.
  */
-function unitKeys(values: Float64Array, oneSide: boolean): Float64Array {
-  const keys = new Float64Array(values.length);
+function makeUnit(keys: Float64Array, oneSide: boolean): void {
   let side = 1;
   for (let at = 0; at < keys.length; at += 4) {
-    const scale = unitScale(values[at], values[at + 1], values[at + 2], values[at + 3]);
-    for (let i = at; i < at + 4; i++) keys[i] = values[i] * scale;
-    if (!oneSide || at === 0) continue;
+    const scale = unitScale(keys[at], keys[at + 1], keys[at + 2], keys[at + 3]);
     let dot = 0;
-    for (let i = at; i < at + 4; i++) dot += keys[i - 4] * keys[i];
-    if (dot * side < 0) side = -side;
+    for (let i = at; i < at + 4; i++) {
+      keys[i] *= scale;
+      dot += at > 0 ? keys[i - 4] * keys[i] : 0;
+    }
+    if (oneSide && dot * side < 0) side = -side;
     if (side < 0) for (let i = at; i < at + 4; i++) keys[i] = -keys[i];
   }
-  return keys;
 }
 
 /** Tracks of one kind with the same times, number by number, put together in the order in which they come. */
@@ -92,7 +96,7 @@ export function groupBySharedTimes(
   return groups.map(({ first, members }) => ({
     interpolation: first.interpolation,
     shared: {
-      times: first.times.slice(),
+      times: first.times,
       values: members.map((i) => tracks[i].values),
       slots: Int32Array.from(members, (i) => 4 * i),
     },

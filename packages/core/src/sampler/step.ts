@@ -2,8 +2,7 @@ import { writeKeys, type SharedTimes, type WriteGroup } from './group.js';
 import { locate, timeLookup } from './time-lookup.js';
 
 /** STEP tracks: the key at or before `t`, to the bit. */
-export function step(shared: SharedTimes): WriteGroup {
-  const { times, values, slots } = shared;
+export function step({ times, values, slots }: SharedTimes): WriteGroup {
   const lookup = timeLookup(times, 1, 0, times.length);
   const { start, end } = lookup;
   const stride = 4 * values.length;
@@ -13,6 +12,6 @@ export function step(shared: SharedTimes): WriteGroup {
   });
   return (t, out, at) => {
     const key = !(t > start) ? 0 : t >= end ? times.length - 1 : locate(lookup, t);
-    writeKeys(keys, key * stride, 4, slots, out, at);
+    writeKeys(keys, key * stride, slots, out, at);
   };
 }

@@ -3,12 +3,20 @@ import { replaceTrack } from './replace-track.js';
 import { VALUES_PER_KEY, type RotationTrack } from './rotation-track.js';
 
 /**
- * The track without the keys that cannot be played: numbers that are not finite (a time beyond ±1e300 s counts as such, so that
- * differences of times stay finite), an orientation of no length (under 1e-6, as `rotationTrack`), a time that is not later than
- * that of the key kept before it. A declared cut after a dropped key moves to the key kept before. `track` itself where nothing
- * is dropped, a new track otherwise.
+ * The track without the keys that cannot be played (see `playableKeys`). A declared cut after a dropped key moves to the key kept
+ * before. `track` itself where nothing is dropped, a new track otherwise.
  */
 export function playableTrack(track: RotationTrack): RotationTrack {
+  const kept = playableKeys(track);
+  return kept.length === track.times.length ? track : keepKeys(track, kept);
+}
+
+/**
+ * Numbers of the keys that can be played, ascending. Those that cannot: numbers that are not finite (a time beyond ±1e300 s
+ * counts as such, so that differences of times stay finite), an orientation of no length (under 1e-6, as `rotationTrack`), a time
+ * that is not later than that of the key kept before it.
+ */
+export function playableKeys(track: RotationTrack): number[] {
   const kept: number[] = [];
   let last = -Infinity;
   for (let key = 0; key < track.times.length; key++) {
@@ -16,7 +24,7 @@ export function playableTrack(track: RotationTrack): RotationTrack {
     last = track.times[key];
     kept.push(key);
   }
-  return kept.length === track.times.length ? track : keepKeys(track, kept);
+  return kept;
 }
 
 function playable(track: RotationTrack, key: number): boolean {
