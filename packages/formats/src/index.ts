@@ -1,5 +1,5 @@
 export type { AnimationFile, FileProblem, OpenOptions } from './animation-file.js';
-export { applyPatchPlan, checkPatchPlan, invertPatchPlan, patchedBytes } from './apply-patch-plan.js';
+export { checkPatchPlan, invertPatchPlan, patchedBytes, patchedSource } from './patched-source.js';
 export { openAnimation } from './open.js';
 export type { PatchPlan, PatchRange } from './patch-plan.js';
 export { parsePatchPlan, patchPlanJson, type StoredPatchPlan } from './patch-plan-json.js';

@@ -3,31 +3,74 @@ import type { PatchPlan, PatchRange } from './patch-plan.js';
 import { readRange } from './read-range.js';
 import type { Source } from './source.js';
 
-/** Untouched stretches are copied in pieces of this size, so that a large file never stands in memory whole. */
-const PIECE = 1 << 20;
+/** A stretch of the new file: bytes of the plan, or bytes of the old file from `from`. */
+interface Stretch {
+  readonly at: number;
+  readonly length: number;
+  readonly bytes?: Uint8Array;
+  readonly from: number;
+}
 
 /**
- * The new file, piece by piece: the plan's bytes where it has ranges, the old file's everywhere else.
+ * The new file as a source: the plan's bytes where it has ranges, the old file's everywhere else. Nothing is copied before it
+ * is read, so a large file never stands in memory whole.
  *
- * @throws SlewcurveError `plan.bad-range` where the plan does not fit the source, `source.short-read`
+ * @throws SlewcurveError `plan.bad-range` where the plan does not fit the source; `source.short-read` when read
  */
-export async function* applyPatchPlan(source: Source, plan: PatchPlan): AsyncGenerator<Uint8Array, void> {
+export function patchedSource(source: Source, plan: PatchPlan): Source {
   checkPatchPlan(plan, source.size);
+  const stretches = stretchesOf(plan, source.size);
+  return {
+    size: plan.size,
+    read: async (offset, length) => {
+      const out = new Uint8Array(length);
+      const end = offset + length;
+      for (let i = stretchAt(stretches, offset); i < stretches.length; i++) {
+        const stretch = stretches[i];
+        if (!stretch || stretch.at >= end) break;
+        const from = Math.max(offset, stretch.at);
+        const to = Math.min(end, stretch.at + stretch.length);
+        const skip = from - stretch.at;
+        const bytes =
+          stretch.bytes?.subarray(skip, skip + to - from) ??
+          (await readRange(source, stretch.from + skip, to - from, 'the original'));
+        out.set(bytes, from - offset);
+      }
+      return out;
+    },
+  };
+}
+
+function stretchesOf(plan: PatchPlan, size: number): Stretch[] {
+  const stretches: Stretch[] = [];
+  let from = 0;
   let at = 0;
+  const put = (length: number, bytes?: Uint8Array): void => {
+    if (length > 0) stretches.push({ at, length, from, ...(bytes && { bytes }) });
+    at += length;
+  };
   for (const range of plan.ranges) {
-    yield* copied(source, at, range.at);
-    if (range.bytes.byteLength > 0) yield range.bytes;
-    at = range.at + range.length;
+    put(range.at - from);
+    put(range.bytes.byteLength, range.bytes);
+    from = range.at + range.length;
   }
-  yield* copied(source, at, source.size);
+  put(size - from);
+  return stretches;
 }
 
-async function* copied(source: Source, from: number, to: number): AsyncGenerator<Uint8Array, void> {
-  for (let at = from; at < to; at += PIECE)
-    yield await readRange(source, at, Math.min(PIECE, to - at), 'the original');
+/** The last stretch that starts at or before `offset`. */
+function stretchAt(stretches: readonly Stretch[], offset: number): number {
+  let low = 0;
+  let high = stretches.length - 1;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if ((stretches[middle]?.at ?? Infinity) <= offset) low = middle;
+    else high = middle - 1;
+  }
+  return low;
 }
 
-/** The new file whole, from the old one whole. Throws as `applyPatchPlan`. */
+/** The new file whole, from the old one whole. Throws as `patchedSource`. */
 export function patchedBytes(original: Uint8Array, plan: PatchPlan): Uint8Array {
   checkPatchPlan(plan, original.byteLength);
   const patched = new Uint8Array(plan.size);
@@ -46,7 +89,7 @@ export function patchedBytes(original: Uint8Array, plan: PatchPlan): Uint8Array 
   return patched;
 }
 
-/** The plan that makes the old file from the new one. Throws as `applyPatchPlan`. */
+/** The plan that makes the old file from the new one. Throws as `patchedSource`. */
 export async function invertPatchPlan(source: Source, plan: PatchPlan): Promise<PatchPlan> {
   checkPatchPlan(plan, source.size);
   const ranges: PatchRange[] = [];
