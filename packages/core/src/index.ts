@@ -63,3 +63,4 @@ export { cumulativeHermite } from './curve/cumulative-hermite.js';
 export { playAs } from './playback/play-as.js';
 export { PLAYBACKS } from './playback/registry.js';
 export { rotationSpline, type KeyRates, type RotationSplineOptions } from './curve/rotation-spline.js';
+export { measure, type Measures } from './measure/measure.js';
