@@ -1,8 +1,458 @@
-import { LitElement, html, type TemplateResult } from 'lit';
+import {
+  LitElement,
+  html,
+  nothing,
+  type CSSResult,
+  type PropertyDeclarations,
+  type PropertyValues,
+  type TemplateResult,
+} from 'lit';
+import { guard } from 'lit/directives/guard.js';
+import { repeat } from 'lit/directives/repeat.js';
+import { caretsOfRow, numberNotes, type NumberedNote } from './chart/carets.js';
+import { frameLength, peakSpeed, trackName, type ChartData, type MarginNote } from './chart/chart-data.js';
+import { chartIntent, type ChartIntent } from './chart/chart-keys.js';
+import { ROW, rowHeight, rowPicture } from './chart/chart-row.js';
+import { chartStyles } from './chart/chart-styles.js';
+import { chartHead, keyWords, readingWords, rowTable, twinWords } from './chart/chart-words.js';
+import { foldChoices, foldRows, rowAt, type FoldRow } from './chart/fold.js';
+import { marginOf } from './chart/margin.js';
+import { sayAngle, saySpan, sayTime } from './chart/quantity.js';
+import { linearScale, logScale, type ScaleKind, type SpeedScale } from './chart/scale.js';
+import { SheetPointer } from './chart/sheet-pointer.js';
+import { rowSentence, sayReading } from './chart/text-twin.js';
+import { traceStyles } from './chart/trace-styles.js';
+import { controls } from './theme/controls.js';
+import { paper } from './theme/paper.js';
+import { valueOf } from './theme/value-of.js';
 
-/** The chart of one track. */
+type Span = readonly [number, number];
+
+/** Playbacks that differ more than this many times are told apart by powers of ten. */
+const APART = 20;
+
+/**
+ * Chart: one track. Its angular speed as played, on paper folded into rows, with its keys as posts, findings as carets and notes
+ * in the margin.
+ *
+ * @fires cursor-moved - `{ time: number, settled: boolean }` seconds; not settled while a pointer passes over
+ * @fires span-chosen - `{ span: [number, number] | undefined }` seconds
+ * @fires note-chosen - `{ id: string }`
+ * @fires remedy-chosen - `{ id: string }` the button of a note's remedy
+ * @fires play-asked - the space bar
+ * @fires fold-chosen - `{ fold: number }` seconds a row
+ */
 export class SlewChart extends LitElement {
-  override render(): TemplateResult {
-    return html`<p>No track is open.</p>`;
+  static override properties: PropertyDeclarations = {
+    data: { attribute: false },
+    time: { type: Number },
+    fold: { type: Number },
+    scale: { type: String },
+    span: { attribute: false },
+    chosen: { type: String },
+    opened: { attribute: false },
+    hover: { state: true },
+    width: { state: true },
+    inSight: { state: true },
+    unfolded: { state: true },
+  };
+  static override styles: CSSResult[] = [paper, controls, traceStyles, chartStyles];
+
+  declare data: ChartData | undefined;
+  /** The cursor, seconds. */
+  declare time: number;
+  /** Seconds a row; left out: one loop where the clip repeats, else 10 s, 5 s where narrow. */
+  declare fold: number | undefined;
+  /** Left out: linear, unless the motions compared differ too much. */
+  declare scale: ScaleKind | undefined;
+  /** Where an edit would act, seconds. */
+  declare span: Span | undefined;
+  /** Id of the chosen note. */
+  declare chosen: string | undefined;
+  /** Stretch that the close-up shows; undefined: closed. */
+  declare opened: Span | undefined;
+  declare private hover: number | undefined;
+  declare private width: number;
+  declare private inSight: ReadonlySet<number>;
+  declare private unfolded: ReadonlySet<number>;
+  private anchor: number | undefined;
+  private numbered: readonly NumberedNote[] = [];
+  private speedScale: SpeedScale = linearScale(1);
+  private readonly pointer = new SheetPointer({
+    hover: (time) => this.hoverAt(time),
+    go: (time, widen) => this.go(time, widen),
+    drag: (span, settled) => this.dragged(span, settled),
+    note: (id) => {
+      const numbered = this.numbered.find(({ note }) => note.id === id);
+      if (numbered) this.chooseNote(numbered.note);
+    },
+  });
+  private readonly resize = new ResizeObserver(() => this.measure());
+  private sight: IntersectionObserver | undefined;
+
+  constructor() {
+    super();
+    this.time = 0;
+    this.width = 0;
+    this.inSight = new Set();
+    this.unfolded = new Set();
   }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    this.resize.observe(this);
+    addEventListener('beforeprint', this.showAll);
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    this.resize.disconnect();
+    this.sight?.disconnect();
+    this.sight = undefined;
+    removeEventListener('beforeprint', this.showAll);
+  }
+
+  /** Rows as they are folded now. */
+  get rows(): FoldRow[] {
+    const { data } = this;
+    return data ? foldRows(data.motion.start, data.motion.end, this.foldNow) : [];
+  }
+
+  private get foldNow(): number {
+    return this.fold ?? this.data?.loop ?? (this.narrow ? 5 : 10);
+  }
+
+  private get narrow(): boolean {
+    return this.clientWidth > 0 && this.clientWidth < 560;
+  }
+
+  /** Puts the keyboard on the trace. */
+  override focus(options?: FocusOptions): void {
+    this.renderRoot.querySelector<HTMLElement>('.readout')?.focus(options);
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    const { data } = this;
+    if (!data) return;
+    if (changed.has('data')) {
+      this.numbered = numberNotes(data.notes);
+      const before = changed.get('data');
+      if (before && (before.track !== data.track || before.clip !== data.clip || before.file !== data.file)) {
+        this.opened = undefined;
+        this.unfolded = new Set();
+      }
+      this.time = Math.min(data.motion.end, Math.max(data.motion.start, this.time));
+    }
+    if (changed.has('data') || changed.has('scale')) this.speedScale = this.chooseScale(data);
+  }
+
+  private chooseScale(data: ChartData): SpeedScale {
+    const peak = peakSpeed(data.motion).speed;
+    const others = [data.before, data.second].map((other) => (other ? peakSpeed(other.motion).speed : 0));
+    const all = Math.max(peak, data.noiseFloor * 4, ...others);
+    const kind = this.scale ?? (all > APART * Math.max(peak, 1e-9) ? 'log' : 'linear');
+    return kind === 'log' ? logScale(all) : linearScale(all);
+  }
+
+  protected override updated(): void {
+    this.measure();
+    this.sight ??= new IntersectionObserver((entries) => this.see(entries), { rootMargin: '400px' });
+    for (const row of this.renderRoot.querySelectorAll('.row')) this.sight.observe(row);
+  }
+
+  private see(entries: readonly IntersectionObserverEntry[]): void {
+    const seen = new Set(this.inSight);
+    for (const { target, isIntersecting } of entries)
+      if (isIntersecting && target instanceof HTMLElement) seen.add(Number(target.dataset['row']));
+    if (seen.size > this.inSight.size) this.inSight = seen;
+  }
+
+  private readonly showAll = (): void => {
+    this.inSight = new Set(this.rows.keys());
+    this.performUpdate();
+  };
+
+  private measure(): void {
+    const sheet = this.renderRoot.querySelector('.sheet');
+    if (sheet && Math.abs(sheet.clientWidth - this.width) >= 1) this.width = sheet.clientWidth;
+  }
+
+  protected override render(): TemplateResult {
+    const { data } = this;
+    if (!data) return html`<p class="empty">No track is open. Choose one on the roster.</p>`;
+    if (data.keys.length === 0)
+      return html`${chartHead(data)}
+        <p class="empty">This track has no keys to play.</p>`;
+    const rows = this.rows;
+    const now = this.hover ?? this.time;
+    const here = rowAt(rows, now);
+    return html`${chartHead(data)} ${this.choices(data)} ${this.readout(data, now)}
+      <ol aria-label="Rows of the trace" @pointerleave=${this.leave}>
+        ${repeat(
+          rows,
+          (row) => row.index,
+          (row) => this.row(data, rows, row, now, here),
+        )}
+      </ol>
+      ${keyWords()} ${guard([data], () => twinWords(data))}
+      ${guard([data, this.foldNow], () => rowTable(data, this.foldNow))}`;
+  }
+
+  private choices(data: ChartData): TemplateResult {
+    const folds = foldChoices(data.motion.end - data.motion.start, data.loop);
+    const all = folds.includes(this.foldNow) ? folds : [...folds, this.foldNow].toSorted((a, b) => a - b);
+    return html`<div class="choices on-screen">
+      <label>
+        A row is
+        <select @change=${this.chooseFold}>
+          ${all.map(
+            (fold) =>
+              html`<option value=${fold} ?selected=${fold === this.foldNow}>
+                ${saySpan(fold)}${fold === data.loop ? ', one loop' : ''}
+              </option>`,
+          )}
+        </select>
+      </label>
+      <label>
+        Speeds stand
+        <select @change=${this.chooseSpeeds}>
+          <option value="linear" ?selected=${this.speedScale.kind === 'linear'}>evenly</option>
+          <option value="log" ?selected=${this.speedScale.kind === 'log'}>by powers of ten</option>
+        </select>
+      </label>
+      <button class="plain" @click=${() => this.act({ kind: this.opened ? 'back' : 'open-close-up' })}>
+        ${this.opened ? 'Close the close-up' : 'Open a close-up here'}
+      </button>
+    </div>`;
+  }
+
+  private readout(data: ChartData, now: number): TemplateResult {
+    const reading = data.motion.read(now);
+    return html`<div
+      class="readout"
+      role="slider"
+      tabindex="0"
+      aria-label="Cursor on the trace of ${trackName(data.track)}"
+      aria-describedby="keys"
+      aria-orientation="horizontal"
+      aria-valuemin=${data.motion.start}
+      aria-valuemax=${data.motion.end}
+      aria-valuenow=${reading.time}
+      aria-valuetext=${sayReading(reading, data.rateNames)}
+      @keydown=${this.keyed}
+    >
+      ${readingWords(reading, data, this.span)}
+    </div>`;
+  }
+
+  private row(
+    data: ChartData,
+    rows: readonly FoldRow[],
+    row: FoldRow,
+    now: number,
+    here: number,
+  ): TemplateResult {
+    const last = row.index === rows.length - 1;
+    const notes = this.numbered.filter(({ note }) => rowAt(rows, note.time) === row.index);
+    const open = this.opened && rowAt(rows, (this.opened[0] + this.opened[1]) / 2) === row.index;
+    const carried = data.motion.read(Math.min(row.to, data.motion.end)).odometer;
+    return html`<li class="row ${row.index === here ? 'here' : ''}" data-row=${row.index}>
+      <span class="from">${sayTime(row.from, row.from % 1 === 0 ? 0 : 2)}</span>
+      <div
+        class="sheet"
+        @pointermove=${(event: PointerEvent) => this.pointer.move(event, row)}
+        @pointerdown=${(event: PointerEvent) => this.pointer.down(event, row)}
+        @pointerup=${(event: PointerEvent) => this.pointer.up(event, row) && this.focus({ preventScroll: true })}
+        @pointercancel=${() => this.pointer.cancel()}
+        @dblclick=${() => this.act({ kind: 'open-close-up' })}
+      >
+        ${guard(
+          [data, this.speedScale, this.width, this.chosen, row.from, row.to, this.inSight.has(row.index)],
+          () => this.picture(data, row),
+        )}
+        ${this.spanMark(row)}
+        ${row.index === here ? html`<div class="cursor" .style=${`left:${this.left(row, now)}px`}></div>` : nothing}
+      </div>
+      <span class="carried"
+        ><span class="unseen">odometer </span>${sayAngle(carried, 4)}<span class="unseen"
+          >${last ? ' in all' : ''}</span
+        ></span
+      >
+      <div class="notes">
+        ${marginOf(row.index, notes, this.chosen, this.unfolded.has(row.index), {
+          choose: (note) => this.chooseNote(note),
+          mend: (note) => this.send('remedy-chosen', { id: note.id }),
+          unfold: (index) => (this.unfolded = new Set([...this.unfolded, index])),
+        })}
+      </div>
+      ${open ? this.closeUp(data, now) : nothing}
+      <div class="between"><slot name=${`row-${row.index}`}></slot></div>
+    </li>`;
+  }
+
+  private picture(data: ChartData, row: FoldRow): TemplateResult {
+    if (this.width === 0 || !this.inSight.has(row.index))
+      return html`<svg class="paper" width="1" height=${rowHeight(data, ROW)} aria-hidden="true"></svg>`;
+    return rowPicture({
+      data,
+      row,
+      scale: this.speedScale,
+      width: this.width,
+      bands: ROW,
+      carets: caretsOfRow(this.numbered, row, this.width),
+      chosen: this.chosen,
+      says: rowSentence(data, row),
+    });
+  }
+
+  private closeUp(data: ChartData, now: number): TemplateResult {
+    return html`<slew-close-up
+      class="between"
+      .data=${data}
+      .span=${this.opened}
+      .time=${now}
+      .scale=${this.speedScale.kind}
+      .chosen=${this.chosen}
+      @span-moved=${(event: CustomEvent<{ span: Span }>) => (this.opened = event.detail.span)}
+      @closed=${() => this.act({ kind: 'back' })}
+      @time-chosen=${(event: CustomEvent<{ time: number }>) => this.go(event.detail.time, false)}
+    ></slew-close-up>`;
+  }
+
+  private spanMark(row: FoldRow): TemplateResult | typeof nothing {
+    const { span } = this;
+    if (!span || span[1] <= row.from || span[0] >= row.to) return nothing;
+    const left = Math.max(0, this.left(row, span[0]));
+    const right = Math.min(this.width, this.left(row, span[1]));
+    return html`<div
+      class="chosen-span"
+      .style=${`left:${left}px;width:${Math.max(0, right - left)}px`}
+    ></div>`;
+  }
+
+  private left(row: FoldRow, time: number): number {
+    return ((time - row.from) / (row.to - row.from)) * this.width;
+  }
+
+  private readonly keyed = (event: KeyboardEvent): void => {
+    if (!this.data) return;
+    const intent = chartIntent(event, this.time, this.data, this.rows);
+    if (!intent) return;
+    if (intent.kind === 'back' && !this.opened && !this.span && this.hover === undefined) return;
+    event.preventDefault();
+    event.stopPropagation();
+    this.act(intent);
+  };
+
+  private act(intent: ChartIntent): void {
+    const { data } = this;
+    if (!data) return;
+    switch (intent.kind) {
+      case 'go':
+        return this.go(intent.time, intent.widen);
+      case 'note':
+        return this.stepNote(intent.step);
+      case 'open-close-up':
+        this.opened = closeUpSpan(this.time, this.span, this.foldNow, data);
+        return;
+      case 'back':
+        return this.back();
+      case 'play':
+        this.send('play-asked', undefined);
+    }
+  }
+
+  private back(): void {
+    this.pointer.cancel();
+    if (this.opened) {
+      this.opened = undefined;
+      this.focus({ preventScroll: true });
+    } else if (this.span) this.setSpan(undefined);
+    this.hover = undefined;
+  }
+
+  private go(asked: number, widen: boolean): void {
+    const time = this.held(asked);
+    if (widen) {
+      this.anchor ??= this.time;
+      this.setSpan([Math.min(this.anchor, time), Math.max(this.anchor, time)]);
+    } else this.anchor = undefined;
+    this.hover = undefined;
+    this.time = time;
+    this.send('cursor-moved', { time, settled: true });
+    void this.bringHere();
+  }
+
+  private async bringHere(): Promise<void> {
+    await this.updateComplete;
+    this.renderRoot.querySelector('.row.here .sheet')?.scrollIntoView({ block: 'nearest' });
+  }
+
+  private stepNote(step: 1 | -1): void {
+    const at = this.numbered.findIndex(({ note }) => note.id === this.chosen);
+    const after = this.numbered.findIndex(({ note }) => note.time > this.time + 1e-9);
+    // Without a chosen note: the next or the previous one from the cursor, without going round.
+    const from =
+      step > 0 ? (after < 0 ? this.numbered.length : after) : (after < 0 ? this.numbered.length : after) - 1;
+    const next = this.numbered[at < 0 ? from : at + step];
+    if (next) this.chooseNote(next.note);
+  }
+
+  private chooseNote(note: MarginNote): void {
+    this.chosen = note.id;
+    this.send('note-chosen', { id: note.id });
+    this.go(note.time, false);
+  }
+
+  private setSpan(span: Span | undefined): void {
+    this.span = span;
+    this.send('span-chosen', { span });
+  }
+
+  private held(time: number): number {
+    const { start = 0, end = 0 } = this.data?.motion ?? {};
+    return Math.min(end, Math.max(start, time));
+  }
+
+  private hoverAt(time: number): void {
+    this.hover = this.held(time);
+    this.send('cursor-moved', { time: this.hover, settled: false });
+  }
+
+  private dragged([from, to]: Span, settled: boolean): void {
+    const span: Span = [this.held(from), this.held(to)];
+    if (settled) this.setSpan(span);
+    else this.span = span;
+  }
+
+  private readonly leave = (): void => {
+    if (this.pointer.pressed) return;
+    this.hover = undefined;
+    this.send('cursor-moved', { time: this.time, settled: true });
+  };
+
+  private readonly chooseFold = (event: Event): void => {
+    this.fold = Number(valueOf(event));
+    this.inSight = new Set();
+    this.sight?.disconnect();
+    this.sight = undefined;
+    this.send('fold-chosen', { fold: this.fold });
+  };
+
+  private readonly chooseSpeeds = (event: Event): void => {
+    this.scale = valueOf(event) === 'log' ? 'log' : 'linear';
+  };
+
+  private send(type: string, detail: unknown): void {
+    this.dispatchEvent(new CustomEvent(type, { detail, bubbles: true, composed: true }));
+  }
+}
+
+/** A few seconds around the cursor, or the span with room at both sides; at least twelve frames. */
+function closeUpSpan(time: number, span: Span | undefined, fold: number, data: ChartData): Span {
+  const least = 12 * frameLength(data);
+  const room = span ? Math.max(least, (span[1] - span[0]) * 1.5) : Math.max(least, Math.min(2, fold / 4));
+  const middle = span ? (span[0] + span[1]) / 2 : time;
+  const from = Math.max(data.motion.start, Math.min(middle - room / 2, data.motion.end - room));
+  return [from, Math.min(data.motion.end, from + room)];
 }

@@ -1,0 +1,112 @@
+import { html, nothing, svg, type TemplateResult } from 'lit';
+import { trackName, type ChartData } from './chart-data.js';
+import type { Reading } from './motion.js';
+import { sayAngle, sayCount, sayRate, saySpan, sayTime } from './quantity.js';
+import { tableLines, textTwin } from './text-twin.js';
+
+/** Head of the chart: whose trace it is and how it is played. */
+export function chartHead(data: ChartData): TemplateResult {
+  return html`<header>
+      <h2 title=${data.track}>
+        ${trackName(data.track)} <span class="of">in ${data.clip}, ${data.file}</span>
+      </h2>
+    </header>
+    <p class="facts">
+      As played: ${data.playback}${data.second ? html`; also ${data.second.name}` : nothing}.
+      ${sayCount(data.keys.length, 'key')}, ${saySpan(data.motion.end - data.motion.start)}. Noise floor
+      ${sayRate(data.noiseFloor)}.
+    </p>
+    ${legend(data)}`;
+}
+
+function sample(kind: string): TemplateResult {
+  return html`<svg width="34" height="4" aria-hidden="true">
+    ${svg`<path class="line ${kind}" d="M1 2H33" />`}
+  </svg>`;
+}
+
+/** The lines and what they are, by line, not by hue. */
+function legend(data: ChartData): TemplateResult | typeof nothing {
+  if (!data.before && !data.second) return nothing;
+  return html`<p class="legend">
+    <span>${sample('trace')}${data.before ? 'after' : data.playback}</span>
+    ${data.before ? html`<span>${sample('before')}${data.before.name}</span>` : nothing}
+    ${data.second ? html`<span>${sample('second')}${data.second.name}</span>` : nothing}
+  </p>`;
+}
+
+/** The numbers under the cursor. */
+export function readingWords(
+  reading: Reading,
+  data: ChartData,
+  span: readonly [number, number] | undefined,
+): TemplateResult {
+  return html`<b>${sayTime(reading.time)}</b><b>${sayRate(reading.speed, 4)}</b>
+    ${data.rateNames.map((name, i) => html`<span>${name} <i>${sayRate(reading.own[i])}</i></span>`)}
+    <span>odometer <i>${sayAngle(reading.odometer, 4)}</i></span>
+    ${data.before ? other(data.before.name, data.before.motion.read(reading.time)) : nothing}
+    ${data.second ? other(data.second.name, data.second.motion.read(reading.time)) : nothing}
+    ${span ? html`<span>span <i>${sayTime(span[0])} to ${sayTime(span[1])}</i></span>` : nothing}`;
+}
+
+function other(name: string, reading: Reading): TemplateResult {
+  return html`<span>${name} <i>${sayRate(reading.speed)}</i></span>`;
+}
+
+/** The chart in words. */
+export function twinWords(data: ChartData): TemplateResult {
+  return html`<details>
+    <summary>The chart in words</summary>
+    ${textTwin(data).map((paragraph) => html`<p>${paragraph}</p>`)}
+  </details>`;
+}
+
+/** The chart as a table, a line a row. */
+export function rowTable(data: ChartData, fold: number): TemplateResult {
+  return html`<details>
+    <summary>The chart as a table</summary>
+    <div class="table" tabindex="0" role="region" aria-label="Rows of the chart">
+      <table>
+        <thead>
+          <tr>
+            ${['from', 'to', 'greatest speed', 'turned', 'odometer', 'keys'].map(
+              (head) => html`<th scope="col">${head}</th>`,
+            )}
+          </tr>
+        </thead>
+        <tbody>
+          ${tableLines(data, fold).map(
+            (line) =>
+              html`<tr>
+                <th scope="row">${sayTime(line.from)}</th>
+                <td>${sayTime(line.to)}</td>
+                <td>${sayRate(line.peak, 4)}</td>
+                <td>${sayAngle(line.turned, 4)}</td>
+                <td>${sayAngle(line.odometer, 4)}</td>
+                <td>${line.keys.toLocaleString('en')} keys</td>
+              </tr>`,
+          )}
+        </tbody>
+      </table>
+    </div>
+  </details>`;
+}
+
+const KEYS: readonly (readonly [string, string])[] = [
+  ['Left, Right', 'a frame'],
+  ['Ctrl+Left, Ctrl+Right', 'previous or next key'],
+  ['Home, End', 'ends of the row'],
+  ['Up, Down', 'a row'],
+  ['Page Up, Page Down', 'previous or next finding'],
+  ['Shift', 'widens the span'],
+  ['Enter', 'close-up'],
+  ['Escape', 'back'],
+  ['Space', 'play'],
+];
+
+/** The keys, shown on the page. */
+export function keyWords(): TemplateResult {
+  return html`<p class="keys on-screen" id="keys">
+    On the trace: ${KEYS.map(([key, does], i) => html`${i > 0 ? '; ' : ''}<kbd>${key}</kbd> ${does}`)}.
+  </p>`;
+}

@@ -1,0 +1,74 @@
+import { html, nothing, type TemplateResult } from 'lit';
+import type { NumberedNote } from './carets.js';
+import type { MarginNote } from './chart-data.js';
+import { sayTime } from './quantity.js';
+
+/** Notes beside one row before "and 12 more". */
+const NOTES_AT_FIRST = 4;
+
+/** What the margin tells the chart. */
+export interface MarginEvents {
+  choose(note: MarginNote): void;
+  mend(note: MarginNote): void;
+  unfold(row: number): void;
+}
+
+/** The notes of a row: findings whose worst place stands in it, each with its remedy and a button that says what it does. */
+export function marginOf(
+  row: number,
+  notes: readonly NumberedNote[],
+  chosen: string | undefined,
+  unfolded: boolean,
+  events: MarginEvents,
+): TemplateResult | typeof nothing {
+  if (notes.length === 0) return nothing;
+  const shown = unfolded ? notes : notes.slice(0, NOTES_AT_FIRST);
+  const hidden = notes.length - shown.length;
+  return html`<ol aria-label="Findings in this row">
+      ${shown.map((note) => noteItem(note, chosen, events))}
+    </ol>
+    ${
+      hidden > 0
+        ? html`<button class="plain on-screen" @click=${() => events.unfold(row)}>
+            Show ${hidden.toLocaleString('en')} more in this row
+          </button>`
+        : nothing
+    }`;
+}
+
+function noteItem(
+  { note, number }: NumberedNote,
+  chosen: string | undefined,
+  events: MarginEvents,
+): TemplateResult {
+  const places = note.count > 1 ? `, the worst of ${note.count.toLocaleString('en')} places` : '';
+  return html`<li
+    class="${note.status} ${note.id === chosen ? 'chosen' : ''}"
+    data-note=${note.id}
+    data-level=${note.level}
+    aria-current=${note.id === chosen ? 'true' : nothing}
+  >
+    <span class="number">${number}${note.level === 'error' ? '!' : ''}</span>
+    <p class="message" @click=${() => events.choose(note)}>${note.message}</p>
+    <span class="level"
+      >${note.level} ${note.rule}, ${sayTime(note.time, 2)}${places}${STATUS[note.status]}</span
+    >
+    ${
+      note.remedy && note.status === 'open'
+        ? html`<button
+            class="plain on-screen"
+            title=${note.remedy.sentence}
+            @click=${() => events.mend(note)}
+          >
+            ${note.remedy.button}<span class="unseen">, finding ${number}</span>
+          </button>`
+        : nothing
+    }
+  </li>`;
+}
+
+const STATUS: Readonly<Record<MarginNote['status'], string>> = {
+  open: '',
+  mended: '; mended',
+  stamped: '; accepted with a reason',
+};

@@ -1,0 +1,3 @@
+import { SlewSentence } from '../sentence.js';
+
+if (!customElements.get('slew-sentence')) customElements.define('slew-sentence', SlewSentence);

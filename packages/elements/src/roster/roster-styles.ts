@@ -1,0 +1,147 @@
+import { css, type CSSResult } from 'lit';
+
+export const rosterStyles: CSSResult = css`
+  :host {
+    container-type: inline-size;
+  }
+  .tools {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    gap: 0 1.25rem;
+  }
+  .tools input {
+    width: 14rem;
+  }
+  .tally {
+    margin: 0.25rem 0 0.5rem;
+    color: var(--_soft);
+    font-size: 0.9375rem;
+  }
+  .heads,
+  .option {
+    display: grid;
+    grid-template-columns: minmax(9rem, 1.1fr) minmax(0, 4fr) 11.5rem 6.5rem 5rem;
+    column-gap: 0.875rem;
+    align-items: center;
+  }
+  .heads {
+    color: var(--_soft);
+    font-size: 0.8125rem;
+    font-style: italic;
+    border-bottom: 1px solid var(--_rule);
+    padding: 0 0.5rem 0.25rem;
+  }
+  .heads :nth-child(n + 4),
+  .option > .number {
+    text-align: right;
+  }
+  .scroll {
+    position: relative;
+    overflow-y: auto;
+    overscroll-behavior: contain;
+    max-height: var(--slew-roster-height, min(70vh, 960px));
+  }
+  .list {
+    position: relative;
+  }
+  canvas {
+    position: absolute;
+    pointer-events: none;
+  }
+  .option {
+    position: absolute;
+    left: 0;
+    right: 0;
+    padding: 0 0.5rem;
+    box-sizing: border-box;
+    cursor: pointer;
+    font-size: 0.875rem;
+    line-height: 1;
+    white-space: nowrap;
+  }
+  .close .option {
+    font-size: 0.6875rem;
+  }
+  .option > * {
+    overflow: hidden;
+    text-overflow: ellipsis;
+    line-height: 1.25;
+  }
+  .option .of {
+    color: var(--_soft);
+    font-style: italic;
+  }
+  .option .found {
+    color: var(--_soft);
+  }
+  .option.error .found {
+    color: var(--_limit);
+    font-weight: 600;
+  }
+  .option.warning .found {
+    color: var(--_ink);
+  }
+  .option:hover {
+    background: color-mix(in srgb, var(--_ink) 5%, transparent);
+  }
+  .option.active {
+    box-shadow: inset 3px 0 0 var(--_rule);
+  }
+  .scroll:focus-visible {
+    outline-offset: 0;
+  }
+  .scroll:focus-visible .option.active {
+    box-shadow:
+      inset 3px 0 0 var(--_ink),
+      inset 0 0 0 1px var(--_ink);
+  }
+  .option[aria-selected='true'] .name {
+    text-decoration: underline;
+    text-underline-offset: 0.2em;
+    font-weight: 600;
+  }
+  .empty {
+    font-size: 1.125rem;
+    font-style: italic;
+    color: var(--_soft);
+    padding: 2rem 0;
+  }
+  @container (max-width: 56rem) {
+    .heads,
+    .option {
+      grid-template-columns: minmax(0, 1fr) minmax(0, 2fr) 7rem;
+    }
+    .heads > :nth-child(n + 4),
+    .option > .number {
+      display: none;
+    }
+  }
+  @container (max-width: 32rem) {
+    .heads {
+      display: none;
+    }
+    .option {
+      grid-template-columns: minmax(0, 1fr) auto;
+      grid-template-rows: 1fr 1fr;
+    }
+    .option > .ink {
+      grid-column: 1 / -1;
+      grid-row: 2;
+    }
+    .tools label {
+      flex: 1 1 100%;
+    }
+    .tools input {
+      flex: 1;
+      width: auto;
+      min-width: 0;
+    }
+  }
+  @media print {
+    .scroll {
+      max-height: none;
+      overflow: visible;
+    }
+  }
+`;
