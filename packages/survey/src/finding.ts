@@ -13,8 +13,14 @@ export interface Occurrence {
   readonly level: Level;
   readonly confidence?: number;
   readonly remedy?: Step;
+  /** What the remedy costs: the largest turn of a key that it moves, degrees. */
+  readonly price?: number;
+  /** Other remedies that a person may prefer. */
+  readonly alternatives?: readonly Step[];
   /** turn.half: the two ways round, own frame; angle in degrees. */
   readonly ways?: readonly Way[];
+  /** This place in a sentence. */
+  readonly message: string;
   readonly fingerprint: string;
 }
 
@@ -45,6 +51,8 @@ export interface Finding {
   /** Worst first, up to a limit; `count` is whole. */
   readonly occurrences: readonly Occurrence[];
   readonly remedy?: Step;
+  readonly price?: number;
+  readonly alternatives?: readonly Step[];
   readonly ways?: readonly Way[];
   /** What the remedy leaves alone, in words. */
   readonly untouched?: string;

@@ -1,1 +1,31 @@
 export type { Finding, Level, Occurrence, Way } from './finding.js';
+export { ROLES, roleOf, type Role } from './roles.js';
+export {
+  NO_HOUSE_RULES,
+  type Address,
+  type Declared,
+  type DeclaredSpan,
+  type Exception,
+  type HouseRules,
+  type LevelSetting,
+  type LimitSetting,
+  type LimitTable,
+  type Where,
+} from './house-rules.js';
+export { parseHouseRules } from './parse-house-rules.js';
+export type {
+  Family,
+  Limits,
+  Place,
+  PlayedTrack,
+  Remedy,
+  RoleLimits,
+  Rule,
+  RulePage,
+  TrackContext,
+} from './rule.js';
+export { RULES } from './registry.js';
+export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings } from './survey.js';
+export { explainWord, type Entry, type Explanation } from './explain.js';
+export { rulePage } from './rule-page.js';
+export { fnv1a64 } from './fingerprint.js';

@@ -1,0 +1,75 @@
+import { VERBS, nearestWord } from '@slewcurve/mend';
+import { RULES } from './registry.js';
+import { rulePage } from './rule-page.js';
+
+/** A rule or an edit that a word leads to. */
+export interface Entry {
+  readonly kind: 'rule' | 'verb';
+  /** Rule id, or the edit's name on job cards. */
+  readonly name: string;
+  readonly summary: string;
+  readonly alsoCalled: readonly string[];
+  /** The rule's page in Markdown; of an edit, its name, summary and other names. */
+  readonly page: string;
+}
+
+/** What a word leads to: entries, or else the words that may be meant. */
+export interface Explanation {
+  readonly word: string;
+  readonly entries: readonly Entry[];
+  readonly didYouMean: readonly string[];
+}
+
+/**
+ * Rules and edits that a word leads to: by id or name alone where it is one, by family, by what the trade calls them, or by a single
+ * word of that. Case, hyphens and white space don't matter. Where nothing fits, the nearest known words.
+ */
+export function explainWord(word: string): Explanation {
+  const wanted = plain(word);
+  const named = ENTRIES.filter((entry) => plain(entry.name) === wanted);
+  const entries = named.length > 0 ? named : ENTRIES.filter((entry) => leadsTo(wanted, entry));
+  return { word, entries, didYouMean: entries.length > 0 ? [] : wordsMeant(word) };
+}
+
+const ENTRIES: readonly Entry[] = Object.freeze([
+  ...RULES.map((rule) => ({
+    kind: 'rule' as const,
+    name: rule.id,
+    summary: rule.summary,
+    alsoCalled: rule.alsoCalled,
+    page: rulePage(rule),
+  })),
+  ...VERBS.map(({ name, summary, alsoCalled }) => ({
+    kind: 'verb' as const,
+    name,
+    summary,
+    alsoCalled,
+    page: `# ${name}\n\n${summary}\n\nAlso called: ${alsoCalled.join(', ')}.\n`,
+  })),
+]);
+
+/** Every word that leads to an entry whole: for completion and for a find field. */
+const WORDS: ReadonlyMap<string, string> = new Map(
+  ENTRIES.flatMap(({ name, alsoCalled }) =>
+    [name, ...name.split('.'), ...alsoCalled].map((word) => [plain(word), word] as const),
+  ),
+);
+
+function leadsTo(wanted: string, { name, alsoCalled }: Entry): boolean {
+  if (wanted === '') return false;
+  const names = [...name.split('.'), ...alsoCalled].map(plain);
+  return names.some((known) => known === wanted || known.split(' ').includes(wanted));
+}
+
+function wordsMeant(word: string): string[] {
+  const wanted = plain(word).slice(0, 60);
+  const nearest = nearestWord(wanted, [...WORDS.keys()]);
+  return nearest === undefined ? [] : [WORDS.get(nearest) ?? nearest];
+}
+
+function plain(word: string): string {
+  return word
+    .trim()
+    .toLowerCase()
+    .replace(/[\s_-]+/g, ' ');
+}

@@ -1,0 +1,156 @@
+import {
+  PLAYBACKS,
+  SlewcurveError,
+  playableTrack,
+  regime,
+  replaceTrack,
+  type Clip,
+  type PlaybackId,
+  type RotationTrack,
+  type SceneNode,
+} from '@slewcurve/core';
+import { matchesPattern } from '@slewcurve/mend';
+import { claimSpots, type Found } from './claim-order.js';
+import { describeFinding, type Subject } from './describe-finding.js';
+import type { Finding } from './finding.js';
+import { NO_HOUSE_RULES, levelAt, limitsAt, roleAt, type Address, type HouseRules } from './house-rules.js';
+import { keptKeys } from './kept-keys.js';
+import { RULES } from './registry.js';
+import { roleOf } from './roles.js';
+import type { Limits, PlayedTrack, Rule, TrackContext } from './rule.js';
+
+/** What a survey goes by, apart from the track itself. */
+export interface SurveySettings {
+  /** How the file will be played; the worst counts. Default: as written. */
+  readonly playbacks?: readonly PlaybackId[];
+  readonly houseRules?: HouseRules;
+  /** The file's name, for exceptions of the house rules. */
+  readonly file?: string;
+}
+
+/** Where a track stands. */
+export interface TrackSurveySettings extends SurveySettings {
+  /** The clip that the track is of; its grid, its loop and its other tracks count. */
+  readonly clip?: Clip;
+  /** The file's node tree, from which the role comes. */
+  readonly nodes?: readonly SceneNode[];
+}
+
+/** Findings of every track of a clip, track by track. */
+export function surveyClip(
+  clip: Clip,
+  nodes: readonly SceneNode[],
+  settings: SurveySettings = {},
+): Finding[] {
+  return clip.tracks.flatMap((track) => surveyTrack(track, { ...settings, clip, nodes }));
+}
+
+/**
+ * What every rule finds on one track: at most one finding a rule, its worst place first. Keys that can't be played are found by the
+ * rules of family `file`; all other rules look at the track without them, and then offer no remedy, as that must wait for sound keys.
+ */
+export function surveyTrack(stored: RotationTrack, settings: TrackSurveySettings = {}): Finding[] {
+  const house = settings.houseRules ?? NO_HOUSE_RULES;
+  const address: Address = { file: settings.file ?? '', clip: stored.clip, track: stored.id };
+  const context = contextOf(stored, settings, house, address);
+  const found: Found[] = [];
+  const limitsOf = new Map<Rule, Limits>();
+  for (const rule of RULES) {
+    if (levelAt(house, rule.id, address) === 'off') continue;
+    const limits = context.limits(rule.id);
+    if (limits === undefined) continue;
+    limitsOf.set(rule, limits);
+    const places = rule.find(context, limits);
+    if (places.length > 0) found.push({ rule, places });
+  }
+  const keys = context.track === context.stored ? undefined : keptKeys(context.stored, context.track);
+  const subject: Subject = {
+    context,
+    keys,
+    frameRate: settings.clip?.frameRate,
+    playback: context.played[0]?.playback.id ?? 'as-written',
+  };
+  return claimSpots(found).flatMap(({ rule, places }) => {
+    const level = levelAt(house, rule.id, address);
+    const decreed =
+      level === undefined || level === 'off' ? places : places.map((place) => ({ ...place, level }));
+    return decreed.length === 0 ? [] : [describeFinding(rule, decreed, limitsOf.get(rule) ?? {}, subject)];
+  });
+}
+
+function contextOf(
+  track: RotationTrack,
+  settings: TrackSurveySettings,
+  house: HouseRules,
+  address: Address,
+): TrackContext {
+  const { clip = alone(track), nodes = [], playbacks = ['as-written'] } = settings;
+  const role = roleAt(house, track.id) ?? roleOf(track, nodes);
+  const stored = withDeclaredCuts(track, house);
+  const playable = playableTrack(stored);
+  return {
+    stored,
+    track: playable,
+    role,
+    regime: regime(playable, clip.frameRate),
+    clip,
+    loop: clip.loop || house.loops.some((pattern) => matchesPattern(pattern, track.clip)),
+    played: playable.times.length === 0 ? [] : playbacks.flatMap((id) => played(playable, id)),
+    limits: (id) => {
+      const rule = RULES.find((candidate) => candidate.id === id);
+      return rule === undefined ? undefined : limitsAt(house, rule, role, address);
+    },
+  };
+}
+
+/** The track under one playback; nothing where it needs what the track has not. */
+function played(track: RotationTrack, id: PlaybackId): PlayedTrack[] {
+  const playback = PLAYBACKS[id];
+  try {
+    const holds = id === 'step' || track.interpolation === 'STEP';
+    return [{ playback, curve: playback.play(track), holds }];
+  } catch (error) {
+    if (error instanceof SlewcurveError) return [];
+    throw error;
+  }
+}
+
+/** The declared cuts of a track as breaks: nothing is interpolated into the key at a declared time. */
+function withDeclaredCuts(track: RotationTrack, { declared }: HouseRules): RotationTrack {
+  const breaks = new Set(track.breaks);
+  for (const cut of declared.cuts) {
+    if (!matchesPattern(cut.clip, track.clip) || !matchesPattern(cut.track, track.id)) continue;
+    const key = nearestKey(track.times, cut.time);
+    if (key > 0) breaks.add(key - 1);
+  }
+  if (breaks.size === track.breaks.length) return track;
+  const sorted = [...breaks];
+  sorted.sort((a, b) => a - b);
+  return replaceTrack(track, { breaks: sorted });
+}
+
+/** The key that a declared time means: the nearest within half the gap to its neighbours; -1 where there is none. */
+function nearestKey(times: Float64Array, time: number): number {
+  let nearest = -1;
+  for (let key = 0; key < times.length; key++)
+    if (nearest < 0 || Math.abs((times[key] ?? 0) - time) < Math.abs((times[nearest] ?? 0) - time))
+      nearest = key;
+  const gap = Math.min(
+    Math.abs((times[nearest] ?? 0) - (times[nearest - 1] ?? -Infinity)),
+    Math.abs((times[nearest + 1] ?? Infinity) - (times[nearest] ?? 0)),
+  );
+  return Math.abs((times[nearest] ?? Infinity) - time) <= gap / 2 ? nearest : -1;
+}
+
+/** A clip that holds nothing but one track. */
+function alone(track: RotationTrack): Clip {
+  return {
+    name: track.clip,
+    index: track.source.clipIndex,
+    tracks: [track],
+    start: track.times[0] ?? 0,
+    end: track.times.at(-1) ?? 0,
+    loop: false,
+    marks: [],
+  };
+}
