@@ -1,1 +1,10 @@
 import '@slewcurve/elements/define/chart';
+import '@slewcurve/elements/define/job-card';
+import '@slewcurve/elements/define/porthole';
+import '@slewcurve/elements/define/roster';
+import '@slewcurve/elements/define/sentence';
+import { SlewApp } from './pages/app.js';
+import { SlewChartPage } from './pages/chart-page.js';
+
+customElements.define('slew-chart-page', SlewChartPage);
+customElements.define('slew-app', SlewApp);

@@ -1,1 +1,125 @@
-export {};
+import { SlewcurveError } from '@slewcurve/core';
+import type { Source } from '@slewcurve/formats';
+import {
+  desk,
+  kestrelPoint,
+  sha256Of,
+  type AskName,
+  type Asks,
+  type FromDesk,
+  type ToDesk,
+  type Watch,
+} from '@slewcurve/job';
+import { bufferSource } from '@slewcurve/formats';
+
+// The job desk in a worker: bytes, tracks and surveys live here, and the page stays free to draw.
+
+type Ask<Name extends AskName> = Asks<Blob>[Name]['ask'];
+type Answer<Name extends AskName> = Asks<Blob>[Name]['answer'];
+
+/** Milliseconds of work between two looks at what else was asked. */
+const SLICE_MS = 12;
+
+const here = desk();
+const stopped = new Set<number>();
+
+const answers: {
+  [Name in AskName]: (ask: Ask<Name>, watch: Watch, id: number) => Promise<Answer<Name>> | Answer<Name>;
+} = {
+  open: ({ file, name, blob, siblings }) => here.open(file, blobSource(blob), name, siblingIn(siblings)),
+  'open-demo': ({ file }) => here.open(file, bufferSource(kestrelPoint()), 'kestrel-point.glb'),
+  survey: ({ file, settings }, watch, id) =>
+    here.survey(file, settings, watch, (row) =>
+      tell({ id, told: 'row', row }, [row.columns.buffer as ArrayBuffer]),
+    ),
+  track: ({ file, clip, track }) => here.track(file, clip, track),
+  card: ({ file, steps }, watch) => here.card(file, steps, watch),
+  propose: ({ file, allow }) => here.propose(file, allow),
+  bytes: ({ file }, watch) => here.bytes(file, watch),
+  hash: async ({ blob }, watch) => ({ size: blob.size, sha256: await sha256Of(blobSource(blob), watch) }),
+  close: ({ file }) => {
+    here.close(file);
+    return null;
+  },
+  ping: () => null,
+};
+
+addEventListener('message', ({ data }: MessageEvent<ToDesk<Blob>>) => {
+  if (data.name === 'stop') stopped.add(data.id);
+  else void answer(data.id, data.name, data.ask);
+});
+
+async function answer<Name extends AskName>(id: number, name: Name, ask: Ask<Name>): Promise<void> {
+  try {
+    const made = await answers[name](ask, watchOf(id), id);
+    tell({ id, told: 'answer', answer: made }, buffersOf(made));
+  } catch (error) {
+    const known = error instanceof SlewcurveError;
+    const message = error instanceof Error ? error.message : String(error);
+    tell({ id, told: 'error', code: known ? error.code : 'job.fault', message });
+  } finally {
+    stopped.delete(id);
+  }
+}
+
+function watchOf(id: number): Watch {
+  let since = performance.now();
+  return {
+    get stopped() {
+      return stopped.has(id);
+    },
+    report(done, total, what) {
+      if (performance.now() - since >= SLICE_MS || done === total)
+        tell({ id, told: 'progress', done, total, what });
+    },
+    async pause() {
+      if (performance.now() - since < SLICE_MS) return;
+      await nextTurn();
+      since = performance.now();
+    },
+  };
+}
+
+/** Lets the messages that wait be heard first. A timer would wait 4 ms. */
+function nextTurn(): Promise<void> {
+  return new Promise((resolve) => {
+    const { port1, port2 } = new MessageChannel();
+    port1.addEventListener('message', () => {
+      port1.close();
+      resolve();
+    });
+    port1.start();
+    port2.postMessage(null);
+  });
+}
+
+function tell(message: FromDesk, transfer: Transferable[] = []): void {
+  postMessage(message, { transfer });
+}
+
+/** Big arrays are handed over, never cloned. */
+function buffersOf(made: Answer<AskName>): Transferable[] {
+  if (made === null) return [];
+  if ('before' in made)
+    return [made.before, made.after].flatMap((track) => [track.times.buffer, track.values.buffer]);
+  if ('bytes' in made) return [made.bytes.buffer];
+  return [];
+}
+
+function blobSource(blob: Blob): Source {
+  return {
+    size: blob.size,
+    read: async (offset, length) => new Uint8Array(await blob.slice(offset, offset + length).arrayBuffer()),
+  };
+}
+
+function siblingIn(siblings: Readonly<Record<string, Blob>>): (uri: string) => Promise<Source> {
+  return async (uri) => {
+    const blob = Object.hasOwn(siblings, uri) ? siblings[uri] : undefined;
+    if (blob) return blobSource(blob);
+    throw new SlewcurveError(
+      'file.not-found',
+      `It needs ${uri}, which was not opened with it. Open both together, or their folder.`,
+    );
+  };
+}

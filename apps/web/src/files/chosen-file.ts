@@ -1,0 +1,106 @@
+/** A file that somebody chose, with the files beside it that it may refer to. */
+export interface ChosenFile {
+  readonly name: string;
+  readonly blob: Blob;
+  readonly siblings: Readonly<Record<string, Blob>>;
+  /** Where the browser can write it back. */
+  readonly handle?: FileSystemFileHandle;
+}
+
+interface LooseFile {
+  /** Path within what was chosen. */
+  readonly path: string;
+  readonly file: File;
+  readonly handle?: FileSystemFileHandle;
+}
+
+/** Animation files among what was chosen or dropped, each with the rest as its siblings. */
+export function chosenFrom(files: readonly LooseFile[]): ChosenFile[] {
+  const animations = files.filter(({ path }) => isAnimation(path));
+  // Nothing known by name: let the reader say what is wrong with it.
+  const subjects = animations.length > 0 ? animations : files;
+  return subjects.map((subject) => ({
+    name: subject.path,
+    blob: subject.file,
+    siblings: siblingsOf(subject, files),
+    ...(subject.handle && { handle: subject.handle }),
+  }));
+}
+
+export function isAnimation(path: string): boolean {
+  return /\.(glb|gltf)$/i.test(path);
+}
+
+/** The other files by their path from this one's folder. */
+function siblingsOf(subject: LooseFile, files: readonly LooseFile[]): Record<string, Blob> {
+  const folder = subject.path.slice(0, subject.path.lastIndexOf('/') + 1);
+  const beside = files.filter(
+    (file) => file !== subject && file.path.startsWith(folder) && !isAnimation(file.path),
+  );
+  return Object.fromEntries(beside.map(({ path, file }) => [path.slice(folder.length), file]));
+}
+
+/** Every file in a drop, folders opened. Must be called within the drop event: the browser forgets the items afterwards. */
+export async function droppedFiles(transfer: DataTransfer): Promise<ChosenFile[]> {
+  const items = [...transfer.items].filter((item) => item.kind === 'file');
+  const handles = items.map((item) => handleOf(item));
+  const entries = items.map((item) => item.webkitGetAsEntry());
+  const loose = await Promise.all(
+    items.map(async (_, i) => {
+      const handle = await handles[i];
+      if (handle?.kind === 'file') {
+        const fileHandle = handle as FileSystemFileHandle;
+        return [{ path: handle.name, file: await fileHandle.getFile(), handle: fileHandle }];
+      }
+      const entry = entries[i];
+      return entry ? filesUnder(entry, '') : [];
+    }),
+  );
+  return chosenFrom(loose.flat());
+}
+
+/** Files from a file field, a folder field among them. */
+export function pickedFiles(list: FileList | readonly File[]): ChosenFile[] {
+  return chosenFrom([...list].map((file) => ({ path: file.webkitRelativePath || file.name, file })));
+}
+
+/** Ask for files by the browser's own dialogue, which lets them be written back; undefined where it has none. */
+export async function askForFiles(): Promise<ChosenFile[] | undefined> {
+  if (!('showOpenFilePicker' in window)) return undefined;
+  const pick = window.showOpenFilePicker as (options: object) => Promise<FileSystemFileHandle[]>;
+  const handles = await pick({ multiple: true }).catch((error: unknown) => {
+    if (error instanceof DOMException && error.name === 'AbortError') return [];
+    throw error;
+  });
+  return chosenFrom(
+    await Promise.all(
+      handles.map(async (handle) => ({ path: handle.name, file: await handle.getFile(), handle })),
+    ),
+  );
+}
+
+function handleOf(item: DataTransferItem): Promise<FileSystemHandle | null> {
+  const get = (item as { getAsFileSystemHandle?: () => Promise<FileSystemHandle | null> })
+    .getAsFileSystemHandle;
+  return get ? get.call(item).catch(() => null) : Promise.resolve(null);
+}
+
+async function filesUnder(entry: FileSystemEntry, folder: string): Promise<LooseFile[]> {
+  const path = `${folder}${entry.name}`;
+  if (entry.isFile) {
+    const file = await new Promise<File>((resolve, reject) =>
+      (entry as FileSystemFileEntry).file(resolve, reject),
+    );
+    return [{ path, file }];
+  }
+  const reader = (entry as FileSystemDirectoryEntry).createReader();
+  const found: LooseFile[] = [];
+  for (;;) {
+    // A reader gives a folder in lots, and an empty lot at its end.
+    const lot = await new Promise<FileSystemEntry[]>((resolve, reject) =>
+      reader.readEntries(resolve, reject),
+    );
+    if (lot.length === 0) return found;
+    for (const inner of lot) found.push(...(await filesUnder(inner, `${path}/`)));
+  }
+}

@@ -1,0 +1,239 @@
+import { LitElement, html, nothing, type PropertyDeclarations, type TemplateResult } from 'lit';
+import type { PlaybackId } from '@slewcurve/core';
+import { askForFiles, droppedFiles, pickedFiles, type ChosenFile } from '../files/chosen-file.js';
+import { saveCopy } from '../files/save-file.js';
+import type { FileWork } from '../session/file-work.js';
+import { keptWork, type SavedWork } from '../session/recovery.js';
+import { Session } from '../session/session.js';
+import { appStyles } from './app-styles.js';
+import type { SlewChartPage } from './chart-page.js';
+import { docketPage } from './docket-page.js';
+import { filesList } from './files-list.js';
+import { keysHelp } from './keys-help.js';
+import { rosterRows, rowId, trackOfRow, type ChosenTrack } from './roster-rows.js';
+
+type PageName = 'roster' | 'chart' | 'docket';
+
+const PAGES: readonly { readonly page: PageName; readonly says: string }[] = [
+  { page: 'roster', says: 'Roster: all tracks' },
+  { page: 'chart', says: 'Chart: one track' },
+  { page: 'docket', says: 'Docket: report' },
+];
+
+/** The whole page: files, and the words at its head that lead to roster, chart and docket. */
+export class SlewApp extends LitElement {
+  static override properties: PropertyDeclarations = {
+    page: { state: true },
+    files: { state: true },
+    chosen: { state: true },
+    notice: { state: true },
+    kept: { state: true },
+    over: { state: true },
+  };
+  static override styles = appStyles;
+
+  declare private page: PageName;
+  declare private files: readonly FileWork[];
+  declare private chosen: ChosenTrack | undefined;
+  declare private notice: string;
+  declare private kept: readonly SavedWork[];
+  /** Something is held over the page to be dropped. */
+  declare private over: boolean;
+  private readonly session = new Session();
+
+  constructor() {
+    super();
+    this.page = 'roster';
+    this.files = [];
+    this.notice = '';
+    this.kept = [];
+    this.over = false;
+    this.session.addEventListener('change', () => this.follow());
+    this.session.addEventListener('notice', (event) => (this.notice = (event as CustomEvent<string>).detail));
+  }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    addEventListener('keydown', this.keyed);
+    for (const name of ['dragover', 'dragleave', 'drop'] as const) addEventListener(name, this.dragged);
+    void this.begin();
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    removeEventListener('keydown', this.keyed);
+    for (const name of ['dragover', 'dragleave', 'drop'] as const) removeEventListener(name, this.dragged);
+  }
+
+  /** The demo scene where the address says so; work that an earlier visit left is offered. */
+  private async begin(): Promise<void> {
+    const left = await keptWork();
+    this.kept = left.filter((work) => work.lines.length > 0);
+    if (new URLSearchParams(location.search).has('demo') && this.kept.length === 0)
+      await this.session.openDemo();
+  }
+
+  private follow(): void {
+    this.files = this.session.files;
+    const { chosen } = this;
+    if (chosen && !this.files.some((file) => file.id === chosen.file)) this.chosen = undefined;
+    // The first track is drawn before the survey is through.
+    const first = this.files.find((file) => file.opened?.tracks[0]);
+    const track = first?.opened?.tracks[0];
+    if (!this.chosen && first && track)
+      this.chosen = { file: first.id, clip: track.clip, track: track.track };
+  }
+
+  private async take(chosen: readonly ChosenFile[]): Promise<void> {
+    if (chosen.length === 0) return;
+    this.kept = [];
+    this.notice = '';
+    await this.session.open(chosen);
+  }
+
+  private readonly dragged = (event: DragEvent): void => {
+    if (!event.dataTransfer?.types.includes('Files')) return;
+    event.preventDefault();
+    this.over = event.type === 'dragover';
+    if (event.type === 'drop') void droppedFiles(event.dataTransfer).then((files) => this.take(files));
+  };
+
+  private readonly keyed = (event: KeyboardEvent): void => {
+    const command = event.ctrlKey || event.metaKey;
+    const key = event.key.toLowerCase();
+    const typing = event
+      .composedPath()
+      .some((node) => node instanceof HTMLInputElement || node instanceof HTMLTextAreaElement);
+    if (!command || typing || !this.chosen) return;
+    if (key === 'z') {
+      event.preventDefault();
+      void (event.shiftKey ? this.session.redo(this.chosen.file) : this.session.undo(this.chosen.file));
+    }
+  };
+
+  private async pick(event: Event): Promise<void> {
+    const chosen = await askForFiles();
+    if (chosen) await this.take(chosen);
+    else (event.target as HTMLElement).parentElement?.querySelector<HTMLInputElement>('input.files')?.click();
+  }
+
+  private choose(chosen: ChosenTrack): void {
+    this.chosen = chosen;
+    this.go('chart');
+  }
+
+  private go(page: PageName): void {
+    this.page = page;
+    void this.updateComplete.then(() => {
+      const chart = this.renderRoot.querySelector<SlewChartPage>('slew-chart-page');
+      if (page === 'chart') chart?.focus();
+      else if (page === 'roster') this.renderRoot.querySelector('slew-roster')?.focus();
+    });
+  }
+
+  protected override render(): TemplateResult {
+    return html`<header>
+        <h1>Slewcurve</h1>
+        <nav aria-label="Pages">
+          ${PAGES.map(
+            ({ page, says }) =>
+              html`<button
+                class="word"
+                aria-current=${this.page === page ? 'page' : nothing}
+                @click=${() => this.go(page)}
+              >
+                ${says}
+              </button>`,
+          )}
+        </nav>
+        ${this.openers()}
+      </header>
+      <p class="notice" role="status">${this.notice}</p>
+      ${this.keptOffer()} ${filesList(this.files, this.fileActions)}
+      <main class=${this.page}>${this.files.length === 0 ? this.welcome() : this.pages()}</main>
+      ${keysHelp()}
+      ${this.over ? html`<p class="over">Let go to open it here. Nothing leaves this machine.</p>` : nothing}`;
+  }
+
+  private openers(): TemplateResult {
+    const picked = (event: Event): void =>
+      void this.take(pickedFiles((event.target as HTMLInputElement).files ?? []));
+    return html`<div class="openers on-screen">
+      <button @click=${(event: Event) => void this.pick(event)}>Open files</button>
+      <button
+        @click=${(event: Event) => (event.target as HTMLElement).parentElement?.querySelector<HTMLInputElement>('input.folder')?.click()}
+      >
+        Open a folder
+      </button>
+      <button @click=${() => void this.session.openDemo()}>Open the demo scene</button>
+      <input class="files" type="file" multiple hidden aria-hidden="true" tabindex="-1" @change=${picked} />
+      <input
+        class="folder"
+        type="file"
+        webkitdirectory
+        hidden
+        aria-hidden="true"
+        tabindex="-1"
+        @change=${picked}
+      />
+    </div>`;
+  }
+
+  private keptOffer(): TemplateResult | typeof nothing {
+    if (this.kept.length === 0) return nothing;
+    const names = this.kept.map((work) => work.name).join(', ');
+    const edits = this.kept.reduce((sum, work) => sum + work.lines.length, 0);
+    const resume = (): void => {
+      const works = this.kept;
+      this.kept = [];
+      void this.session.resume(works);
+    };
+    return html`<aside class="kept" aria-label="Work that was left">
+      <p>An earlier visit left ${edits === 1 ? '1 edit' : `${edits} edits`} on ${names}.</p>
+      <p class="doings">
+        <button class="first" @click=${resume}>Go on with it</button
+        ><button @click=${() => (this.kept = [])}>Leave it</button>
+      </p>
+    </aside>`;
+  }
+
+  private welcome(): TemplateResult {
+    return html`<section class="empty">
+      <p>
+        Open a glTF file (.glb or .gltf), drop one here, or begin with the demo scene. Every rotation track is
+        drawn as angular speed over time, exactly as a given program will play it; what is wrong with it
+        stands in the margin with its remedy. Files stay on this machine.
+      </p>
+    </section>`;
+  }
+
+  private pages(): TemplateResult {
+    const { chosen } = this;
+    return html`<section class="roster" aria-label="Roster: all tracks">
+        <slew-roster
+          .rows=${rosterRows(this.files)}
+          .chosen=${chosen ? rowId(chosen) : undefined}
+          .message=${this.files.some((file) => file.status === 'ready') ? 'There is no rotation track in these files.' : 'Reading.'}
+          @track-chosen=${(event: CustomEvent<{ id: string }>) => this.choose(trackOfRow(event.detail.id))}
+        ></slew-roster>
+      </section>
+      <section class="chart" aria-label="Chart: one track">
+        <slew-chart-page
+          .session=${this.session}
+          .file=${chosen ? this.files.find((file) => file.id === chosen.file) : undefined}
+          .chosen=${chosen}
+          @playback-chosen=${(event: CustomEvent<{ playback: PlaybackId }>) => void this.session.setPlaybacks([event.detail.playback])}
+        ></slew-chart-page>
+      </section>
+      <section class="docket" aria-label="Docket: report">
+        ${this.page === 'docket' ? docketPage(this.files, (name, text) => saveCopy(name, text, 'application/json')) : nothing}
+      </section>`;
+  }
+
+  private readonly fileActions = {
+    stop: (id: string): void => this.session.stop(id),
+    close: (id: string): void => void this.session.close(id),
+    mendAll: (id: string): void => void this.session.mendAll(id),
+    save: (id: string, how: 'in place' | 'download'): void => void this.session.save(id, how),
+  };
+}

@@ -1,0 +1,106 @@
+import { playAs, type PlaybackId, type RotationTrack } from '@slewcurve/core';
+import { curveMotion, rateNames, type ChartData, type MarginNote } from '@slewcurve/elements/plot';
+import { sayStep, type Step } from '@slewcurve/mend';
+import { roleOf, type Finding, type Occurrence } from '@slewcurve/survey';
+import { trackKey, type FileWork } from '../session/file-work.js';
+import type { ChosenTrack } from './roster-rows.js';
+
+/** Notes a chart shows at most; the rest is told by count. */
+const MOST_NOTES = 60;
+
+/** What is drawn of a track. */
+export interface ChartSubject {
+  readonly chosen: ChosenTrack;
+  readonly file: FileWork;
+  /** As the file has it, as the job card leaves it, and as the sentence at hand would leave it. */
+  readonly before: RotationTrack;
+  readonly after: RotationTrack;
+  readonly preview?: RotationTrack;
+  readonly playback: PlaybackId;
+  readonly second?: PlaybackId;
+  readonly kept?: readonly number[];
+}
+
+/** The chart's data: after solid, before dotted where they differ. */
+export function chartDataOf(subject: ChartSubject): ChartData {
+  const { chosen, file, before, playback, second, kept } = subject;
+  const shown = subject.preview ?? subject.after;
+  const clip = file.report?.clips.find((other) => other.clip === chosen.clip);
+  const report = file.report?.tracks.find(
+    (other) => trackKey(other.clip, other.track) === trackKey(chosen.clip, chosen.track),
+  );
+  const earlier = subject.preview ? subject.after : before;
+  return {
+    track: chosen.track,
+    clip: chosen.clip,
+    file: file.name,
+    motion: curveMotion(playAs(shown, playback)),
+    playback: playback.replaceAll('-', ' '),
+    keys: shown.times,
+    cuts: shown.breaks,
+    noiseFloor: report?.noiseFloor ?? 0,
+    rateNames: rateNames(roleOf(shown, file.opened?.nodes ?? [])),
+    notes: notesOf(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? []),
+    ...(clip?.frameRate !== undefined && { frameRate: clip.frameRate }),
+    ...(kept && { kept }),
+    ...(earlier !== shown && { before: { motion: curveMotion(playAs(earlier, playback)), name: 'before' } }),
+    ...(second && {
+      second: { motion: curveMotion(playAs(shown, second)), name: second.replaceAll('-', ' ') },
+    }),
+  };
+}
+
+/** A place of a finding by the id of its note. */
+export function placeOfNote(
+  findings: readonly Finding[],
+  id: string,
+): { readonly finding: Finding; readonly place: Occurrence } | undefined {
+  for (const finding of findings) {
+    const place = finding.occurrences.find((other) => noteId(finding, other) === id);
+    if (place) return { finding, place };
+  }
+  return undefined;
+}
+
+function notesOf(findings: readonly Finding[]): MarginNote[] {
+  return findings
+    .flatMap((finding) =>
+      hasOneRemedy(finding)
+        ? [noteOf(finding, finding.occurrences[0])]
+        : finding.occurrences.map((place) => noteOf(finding, place)),
+    )
+    .slice(0, MOST_NOTES);
+}
+
+/** All places are mended by one and the same step: one note stands for them. */
+function hasOneRemedy({ occurrences }: Finding): boolean {
+  const [first] = occurrences;
+  return occurrences.every(({ remedy }) => JSON.stringify(remedy) === JSON.stringify(first?.remedy));
+}
+
+function noteOf(finding: Finding, place: Occurrence | undefined): MarginNote {
+  const one = !hasOneRemedy(finding) && place !== undefined;
+  const { time, level, remedy } = place ?? finding;
+  return {
+    id: place ? noteId(finding, place) : finding.fingerprint,
+    rule: finding.rule,
+    level,
+    message: place && one ? place.message : finding.message,
+    time,
+    places: one ? [place] : finding.occurrences,
+    count: one ? 1 : finding.count,
+    status: 'open',
+    ...(remedy && { remedy: { sentence: sayStep(remedy), button: buttonOf(remedy) } }),
+  };
+}
+
+function noteId(finding: Finding, place: Occurrence): string {
+  return `${finding.fingerprint}/${place.fingerprint}`;
+}
+
+/** What the button of a remedy says: "Lift out key 19". */
+function buttonOf({ verb, keys = [] }: Step): string {
+  const words = verb.charAt(0).toUpperCase() + verb.slice(1);
+  if (keys.length === 0) return words;
+  return keys.length === 1 ? `${words} at key ${keys[0]}` : `${words} at ${keys.length} keys`;
+}

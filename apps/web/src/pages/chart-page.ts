@@ -1,0 +1,236 @@
+import {
+  LitElement,
+  css,
+  html,
+  nothing,
+  type PropertyDeclarations,
+  type PropertyValues,
+  type TemplateResult,
+} from 'lit';
+import { PLAYBACKS, playAs, type PlaybackId } from '@slewcurve/core';
+import type { SlewChart } from '@slewcurve/elements/chart';
+import { rowAt, type ChartData } from '@slewcurve/elements/plot';
+import type { TrackAnswer } from '@slewcurve/job';
+import { sayStep } from '@slewcurve/mend';
+import type { FileWork } from '../session/file-work.js';
+import { trackKey } from '../session/file-work.js';
+import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
+import type { Session } from '../session/session.js';
+import { chartDataOf, placeOfNote } from './chart-data-of.js';
+import { jobCardOf } from './job-card-of.js';
+import { pageStyles } from './page-styles.js';
+import type { ChosenTrack } from './roster-rows.js';
+
+/**
+ * Chart: one track, with its 3-D view, the sentence that edits it, and the job card of its file.
+ *
+ * @fires playback-chosen - `{ playback: PlaybackId }`
+ */
+export class SlewChartPage extends LitElement {
+  static override properties: PropertyDeclarations = {
+    session: { attribute: false },
+    file: { attribute: false },
+    chosen: { attribute: false },
+    second: { state: true },
+    answer: { state: true },
+    time: { state: true },
+    span: { state: true },
+    sentence: { state: true },
+    note: { state: true },
+    busy: { state: true },
+  };
+  static override styles = [
+    pageStyles,
+    css`
+      .figure {
+        max-width: 26rem;
+      }
+    `,
+  ];
+
+  declare session: Session;
+  declare file: FileWork | undefined;
+  declare chosen: ChosenTrack | undefined;
+  /** Playback to compare with. */
+  declare private second: PlaybackId | undefined;
+  declare private answer: TrackAnswer | undefined;
+  declare private time: number;
+  declare private span: readonly [number, number] | undefined;
+  declare private sentence: SentenceAtHand | undefined;
+  declare private note: string | undefined;
+  declare private busy: boolean;
+  private data: ChartData | undefined;
+
+  constructor() {
+    super();
+    this.time = 0;
+    this.busy = false;
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    const { chosen, file } = this;
+    const other = changed.get('chosen') as ChosenTrack | undefined;
+    if (changed.has('chosen') && JSON.stringify(other) !== JSON.stringify(chosen)) this.forget();
+    const card = (changed.get('file') as FileWork | undefined)?.proofs !== file?.proofs;
+    if (chosen && file?.opened && (changed.has('chosen') || card)) void this.fetch(chosen);
+    this.data = this.makeData();
+  }
+
+  private forget(): void {
+    this.answer = undefined;
+    this.sentence = undefined;
+    this.span = undefined;
+    this.note = undefined;
+  }
+
+  private async fetch(chosen: ChosenTrack): Promise<void> {
+    const answer = await this.session.track(chosen.file, chosen.clip, chosen.track).catch(() => undefined);
+    if (this.chosen === chosen && answer) this.answer = answer;
+  }
+
+  private makeData(): ChartData | undefined {
+    const { answer, chosen, file, sentence, second, session } = this;
+    if (!answer || !chosen || !file) return undefined;
+    const [playback = 'as-written'] = session.settings.playbacks;
+    const kept = sentence?.step?.keep;
+    const subject = { chosen, file, before: answer.before, after: answer.after, playback };
+    return chartDataOf({
+      ...subject,
+      ...(sentence?.preview && { preview: sentence.preview }),
+      ...(second && second !== playback && { second }),
+      ...(kept && { kept }),
+    });
+  }
+
+  /** Put the keyboard on the trace. */
+  override focus(): void {
+    this.chart?.focus();
+  }
+
+  private get chart(): SlewChart | null {
+    return this.renderRoot.querySelector('slew-chart');
+  }
+
+  protected override render(): TemplateResult {
+    const { data, file, chosen } = this;
+    if (!chosen)
+      return html`<p class="empty">
+        Choose a track on the roster, and its angular speed over time is drawn here.
+      </p>`;
+    if (!data || !file) return html`<p class="empty" role="status">Drawing ${chosen.track}.</p>`;
+    return html`${this.playbacks(data)}
+      <div class="sheet">
+        <slew-chart
+          .data=${data}
+          .time=${this.time}
+          .span=${this.span}
+          .chosen=${this.note}
+          @cursor-moved=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
+          @span-chosen=${(event: CustomEvent<{ span: [number, number] | undefined }>) => (this.span = event.detail.span)}
+          @note-chosen=${(event: CustomEvent<{ id: string }>) => (this.note = event.detail.id)}
+          @remedy-chosen=${(event: CustomEvent<{ id: string }>) => this.openRemedy(event.detail.id)}
+          @play-asked=${() => this.renderRoot.querySelector('slew-porthole')?.toggle()}
+          >${this.sentenceAt()}</slew-chart
+        >
+        <slew-porthole
+          class="figure"
+          .data=${data}
+          .time=${this.time}
+          .span=${this.span}
+          ?camera=${data.rateNames[0] === 'tilt'}
+          @time-changed=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
+        ></slew-porthole>
+      </div>
+      ${jobCardOf(file, this.session)}`;
+  }
+
+  private playbacks(data: ChartData): TemplateResult {
+    const [playback = 'as-written'] = this.session.settings.playbacks;
+    const can = PLAYBACKS.filter(({ id }) => this.canPlay(id));
+    const option = (id: PlaybackId, chosen: boolean): TemplateResult =>
+      html`<option value=${id} ?selected=${chosen}>${id.replaceAll('-', ' ')}</option>`;
+    return html`<p class="playbacks on-screen">
+      <label
+        >as played:
+        <select
+          @change=${(event: Event) => this.choosePlayback((event.target as HTMLSelectElement).value as PlaybackId)}
+        >
+          ${can.map(({ id }) => option(id, id === playback))}
+        </select></label
+      >
+      <label
+        >compare with:
+        <select
+          @change=${(event: Event) => (this.second = ((event.target as HTMLSelectElement).value || undefined) as PlaybackId | undefined)}
+        >
+          <option value="">nothing</option>
+          ${can.filter(({ id }) => id !== playback).map(({ id }) => option(id, id === this.second))}
+        </select></label
+      >
+      <span class="says">${PLAYBACKS.find(({ id }) => id === playback)?.says ?? data.playback}</span>
+    </p>`;
+  }
+
+  private canPlay(id: PlaybackId): boolean {
+    const { answer } = this;
+    if (!answer) return false;
+    try {
+      playAs(answer.after, id);
+      return true;
+    } catch {
+      return false;
+    }
+  }
+
+  private choosePlayback(playback: PlaybackId): void {
+    this.dispatchEvent(
+      new CustomEvent('playback-chosen', { detail: { playback }, bubbles: true, composed: true }),
+    );
+  }
+
+  private sentenceAt(): TemplateResult | typeof nothing {
+    const { sentence, chart, data } = this;
+    if (!sentence || !data) return nothing;
+    const row = chart ? (chart.rows[rowAt(chart.rows, sentence.time)]?.index ?? 0) : 0;
+    return html`<slew-sentence
+      slot=${`row-${row}`}
+      .text=${sentence.text}
+      .price=${sentence.price}
+      .problem=${sentence.problem}
+      .busy=${this.busy}
+      @sentence-changed=${(event: CustomEvent<{ text: string }>) => this.rewrite(event.detail.text)}
+      @apply-asked=${() => void this.applySentence()}
+      @left-alone=${() => this.leaveSentence()}
+    ></slew-sentence>`;
+  }
+
+  private openRemedy(id: string): void {
+    const { file, chosen, answer } = this;
+    if (!file || !chosen || !answer) return;
+    const found = placeOfNote(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? [], id);
+    if (!found?.place.remedy) return;
+    this.note = id;
+    this.time = found.place.time;
+    this.sentence = tryOut(sayStep(found.place.remedy), found.place.time, answer.after);
+    void this.updateComplete.then(() => this.renderRoot.querySelector('slew-sentence')?.focus());
+  }
+
+  private rewrite(text: string): void {
+    if (this.sentence && this.answer) this.sentence = tryOut(text, this.sentence.time, this.answer.after);
+  }
+
+  /** Apply what is written. The keyboard goes back to the trace. */
+  async applySentence(): Promise<void> {
+    const { sentence, chosen } = this;
+    if (!sentence?.step || !chosen || this.busy) return;
+    this.busy = true;
+    const done = await this.session.apply(chosen.file, [sentence.step]);
+    this.busy = false;
+    if (done) this.leaveSentence();
+  }
+
+  private leaveSentence(): void {
+    this.sentence = undefined;
+    void this.updateComplete.then(() => this.focus());
+  }
+}

@@ -1,0 +1,77 @@
+import { html, nothing, type TemplateResult } from 'lit';
+import { linesOf } from '../session/card-history.js';
+import type { FileWork } from '../session/file-work.js';
+
+/** What the list of files may ask for. */
+export interface FileActions {
+  stop(id: string): void;
+  close(id: string): void;
+  mendAll(id: string): void;
+  save(id: string, how: 'in place' | 'download'): void;
+}
+
+/** The open files, each with how far it is and what can be done with it. */
+export function filesList(files: readonly FileWork[], actions: FileActions): TemplateResult {
+  return html`<ul class="files" aria-label="Open files">
+    ${files.map((file) => html`<li class=${file.status}>${oneFile(file, actions)}</li>`)}
+  </ul>`;
+}
+
+function oneFile(file: FileWork, actions: FileActions): TemplateResult {
+  const { id, name, status, error } = file;
+  if (status === 'broken')
+    return html`<p role="alert">
+        <b>${name}</b> can’t be read. ${error?.message} <code>${error?.code}</code>
+      </p>
+      <button @click=${() => actions.close(id)}>Put ${name} away</button>`;
+  if (status === 'stopped')
+    return html`<p><b>${name}</b>: stopped. What was drawn so far stands below.</p>
+      <button @click=${() => actions.close(id)}>Put ${name} away</button>`;
+  if (status !== 'ready') return inProgress(file, actions);
+  const steps = linesOf(file.history).filter((line) => !line.skipped).length;
+  return html`<p><b>${name}</b>: ${sayFile(file)}</p>
+    ${(file.opened?.problems ?? []).map((problem) => html`<p class="problem">${problem.message} <code>${problem.code}</code></p>`)}
+    <p class="doings">
+      <button @click=${() => actions.mendAll(id)}>Mend all that is proposed</button>
+      ${
+        steps > 0
+          ? html`${
+                file.handle
+                  ? html`<button @click=${() => actions.save(id, 'in place')}>Save over ${name}</button>`
+                  : nothing
+              }<button class="first" @click=${() => actions.save(id, 'download')}>Save a mended copy</button>`
+          : nothing
+      }
+      <button @click=${() => actions.close(id)}>Put ${name} away</button>
+    </p>`;
+}
+
+function inProgress({ id, name, status, progress }: FileWork, actions: FileActions): TemplateResult {
+  const share = progress && progress.total > 0 ? progress.done / progress.total : undefined;
+  const words = progress
+    ? `${progress.done.toLocaleString('en')} of ${progress.total.toLocaleString('en')} ${progress.what}`
+    : 'reading';
+  return html`<p>
+      <b>${name}</b>: ${status === 'opening' ? 'opening' : 'surveying'},
+      <progress aria-label="Progress of ${name}" max="1" .value=${share ?? 0}></progress> ${words}
+    </p>
+    <button @click=${() => actions.stop(id)}>Stop</button>`;
+}
+
+function sayFile({ opened, report, findings, saved, history }: FileWork): string {
+  const found = [...findings.values()].flat();
+  const count = (level: string): number => found.filter((finding) => finding.level === level).length;
+  const parts = [
+    counted(opened?.tracks.length ?? 0, 'rotation track'),
+    `in ${counted(report?.clips.length ?? 0, 'clip')};`,
+    `${counted(count('error'), 'error')}, ${counted(count('warning'), 'warning')}, ${counted(count('note'), 'note')}.`,
+  ];
+  const steps = linesOf(history).length;
+  if (steps > 0)
+    parts.push(`${counted(steps, 'edit')} on the job card, ${saved ? 'saved' : 'not saved yet'}.`);
+  return parts.join(' ');
+}
+
+function counted(count: number, what: string): string {
+  return `${count.toLocaleString('en')} ${what}${count === 1 ? '' : 's'}`;
+}

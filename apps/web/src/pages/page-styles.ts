@@ -1,0 +1,78 @@
+import { css, type CSSResult } from 'lit';
+import { controls } from '@slewcurve/elements/theme';
+import { paper } from '@slewcurve/elements/theme';
+
+/** Paper, ink and buttons for the page around the elements. */
+export const pageStyles: CSSResult[] = [
+  paper,
+  controls,
+  css`
+    h1,
+    h2,
+    h3 {
+      font-weight: 400;
+      text-wrap: balance;
+      margin: 0;
+    }
+    h1 {
+      font-size: 1.5rem;
+      letter-spacing: 0.01em;
+    }
+    .empty {
+      color: var(--_soft);
+      font-style: italic;
+      max-width: 40rem;
+      padding: 2rem 0;
+    }
+    .problem {
+      color: var(--_limit);
+    }
+    .caution {
+      border-left: 3px double var(--_caution);
+      padding-left: 0.75rem;
+      max-width: 46rem;
+    }
+    .doings {
+      display: flex;
+      flex-wrap: wrap;
+      gap: 0.25rem 0.75rem;
+      margin: 0.25rem 0;
+    }
+    .playbacks {
+      display: flex;
+      flex-wrap: wrap;
+      gap: 0 1.25rem;
+      align-items: baseline;
+      margin: 0.5rem 0;
+    }
+    .says {
+      color: var(--_soft);
+      font-style: italic;
+    }
+    code {
+      font:
+        0.875em/1.4 ui-monospace,
+        'DejaVu Sans Mono',
+        monospace;
+      overflow-wrap: anywhere;
+    }
+    table {
+      border-collapse: collapse;
+      width: 100%;
+      font-size: 0.9375rem;
+    }
+    th,
+    td {
+      text-align: left;
+      vertical-align: top;
+      font-weight: 400;
+      padding: 0.2rem 0.75rem 0.2rem 0;
+      border-top: 1px solid var(--_hairline);
+      overflow-wrap: anywhere;
+    }
+    th {
+      color: var(--_soft);
+      border-top: 0;
+    }
+  `,
+];

@@ -1,0 +1,33 @@
+import type { OpenedAnswer, FileReport, RosterRow, StepReport } from '@slewcurve/job';
+import type { Finding } from '@slewcurve/survey';
+import type { CardHistory } from './card-history.js';
+import type { Progress } from './desk-client.js';
+
+/** Everything that the page holds of one file. A new object for every change. */
+export interface FileWork {
+  /** The file's name on the desk. */
+  readonly id: string;
+  readonly name: string;
+  /** The bytes as opened; absent for the demo scene. */
+  readonly blob?: Blob;
+  readonly siblings: Readonly<Record<string, Blob>>;
+  readonly handle?: FileSystemFileHandle;
+  readonly status: 'opening' | 'surveying' | 'ready' | 'broken' | 'stopped';
+  readonly progress?: Progress;
+  readonly error?: { readonly code: string; readonly message: string };
+  readonly opened?: OpenedAnswer;
+  readonly report?: FileReport;
+  /** By `trackKey`, as the job card leaves the tracks. */
+  readonly rows: ReadonlyMap<string, RosterRow>;
+  readonly findings: ReadonlyMap<string, readonly Finding[]>;
+  readonly history: CardHistory;
+  readonly proofs: readonly StepReport[];
+  readonly raised: readonly Finding[];
+  /** Whether the card was saved as it is. */
+  readonly saved: boolean;
+}
+
+/** One name for a track within its file. */
+export function trackKey(clip: string, track: string): string {
+  return JSON.stringify([clip, track]);
+}

@@ -1,0 +1,58 @@
+import type { CardLine } from './card-history.js';
+
+// Work in progress in the browser's own database: it survives a reload or a crash, and never leaves the machine.
+
+/** One file's work, as far as it had come. */
+export interface SavedWork {
+  readonly name: string;
+  /** The bytes as they were opened; absent for the demo scene. */
+  readonly blob?: Blob;
+  readonly siblings: Readonly<Record<string, Blob>>;
+  readonly handle?: FileSystemFileHandle;
+  readonly lines: readonly CardLine[];
+  readonly savedAt: number;
+}
+
+const DATABASE = 'slewcurve';
+const STORE = 'work';
+const KEY = 'last';
+
+/** Keep the work of this visit instead of what was kept before. Fails silently where the browser keeps nothing: saving is a comfort. */
+export async function keepWork(files: readonly SavedWork[]): Promise<void> {
+  await inStore('readwrite', (store) =>
+    files.length === 0 ? store.delete(KEY) : store.put(files, KEY),
+  ).catch(() => {});
+}
+
+/** The work that an earlier visit left, if any. */
+export async function keptWork(): Promise<readonly SavedWork[]> {
+  const kept: unknown = await inStore('readonly', (store) => store.get(KEY)).catch(() => undefined);
+  return Array.isArray(kept) ? (kept as SavedWork[]) : [];
+}
+
+async function inStore<T>(
+  mode: IDBTransactionMode,
+  use: (store: IDBObjectStore) => IDBRequest<T>,
+): Promise<T> {
+  const database = await opened();
+  try {
+    return await settled(use(database.transaction(STORE, mode).objectStore(STORE)));
+  } finally {
+    database.close();
+  }
+}
+
+function opened(): Promise<IDBDatabase> {
+  const request = indexedDB.open(DATABASE, 1);
+  request.addEventListener('upgradeneeded', () => request.result.createObjectStore(STORE));
+  return settled(request);
+}
+
+function settled<T>(request: IDBRequest<T>): Promise<T> {
+  return new Promise((resolve, reject) => {
+    request.addEventListener('success', () => resolve(request.result));
+    request.addEventListener('error', () =>
+      reject(request.error ?? new Error('The browser keeps nothing here.')),
+    );
+  });
+}

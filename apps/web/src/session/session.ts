@@ -1,0 +1,289 @@
+import type { PlaybackId } from '@slewcurve/core';
+import type { CardAnswer, JobSettings, TrackAnswer } from '@slewcurve/job';
+import type { Step } from '@slewcurve/mend';
+import { NO_HOUSE_RULES, type Finding } from '@slewcurve/survey';
+import type { ChosenFile } from '../files/chosen-file.js';
+import { mendedName, saveCopy, saveInPlace, type Saved } from '../files/save-file.js';
+import {
+  EMPTY_HISTORY,
+  linesOf,
+  redone,
+  stepsOf,
+  undone,
+  withLines,
+  withSteps,
+  type CardHistory,
+  type CardLine,
+} from './card-history.js';
+import { DeskClient, DeskError } from './desk-client.js';
+import { trackKey, type FileWork } from './file-work.js';
+import { keepWork, type SavedWork } from './recovery.js';
+
+/** The page's work: files, their surveys and job cards. Fires `change` after every change, `notice` with words for people. */
+export class Session extends EventTarget {
+  readonly desk = new DeskClient();
+  files: readonly FileWork[] = [];
+  settings: JobSettings = {
+    playbacks: ['as-written'],
+    failAt: 'warning',
+    allowWarnings: 0,
+    houseRules: NO_HOUSE_RULES,
+  };
+  #next = 1;
+  #stops = new Map<string, AbortController>();
+  #cards = Promise.resolve();
+
+  constructor() {
+    super();
+    this.desk.addEventListener('lost', () => void this.#startOver());
+  }
+
+  file(id: string): FileWork | undefined {
+    return this.files.find((file) => file.id === id);
+  }
+
+  /** Open files, one after the other; a broken one says so and the rest goes on. */
+  async open(chosen: readonly ChosenFile[]): Promise<void> {
+    await this.#take(chosen.map((file) => newWork(`file-${this.#next++}`, file)));
+  }
+
+  async openDemo(): Promise<void> {
+    await this.#take([newWork(`demo-${this.#next++}`, { name: 'kestrel-point.glb', siblings: {} })]);
+  }
+
+  /** Take up the work that an earlier visit left. */
+  async resume(works: readonly SavedWork[]): Promise<void> {
+    await this.#take(
+      works.map((work) => ({
+        ...newWork(`file-${this.#next++}`, work),
+        history: withLines(EMPTY_HISTORY, work.lines, 'all that was taken up'),
+      })),
+    );
+  }
+
+  stop(id: string): void {
+    this.#stops.get(id)?.abort();
+  }
+
+  async close(id: string): Promise<void> {
+    this.stop(id);
+    this.#set(this.files.filter((file) => file.id !== id));
+    await this.desk.ask('close', { file: id }).catch(() => {});
+    await this.#keep();
+  }
+
+  async setPlaybacks(playbacks: readonly PlaybackId[]): Promise<void> {
+    this.settings = { ...this.settings, playbacks };
+    await this.#surveyAll();
+  }
+
+  track(id: string, clip: string, track: string): Promise<TrackAnswer> {
+    return this.desk.ask('track', { file: id, clip, track });
+  }
+
+  /** Put steps on a file's card. */
+  apply(id: string, steps: readonly Step[]): Promise<boolean> {
+    return this.#changeCard(id, (history) => withSteps(history, steps));
+  }
+
+  setLines(id: string, lines: readonly CardLine[], change: string): Promise<boolean> {
+    return this.#changeCard(id, (history) => withLines(history, lines, change));
+  }
+
+  undo(id: string): Promise<boolean> {
+    return this.#changeCard(id, undone);
+  }
+
+  redo(id: string): Promise<boolean> {
+    return this.#changeCard(id, redone);
+  }
+
+  /** Put the remedy of every finding on the card. */
+  async mendAll(id: string): Promise<void> {
+    const { steps, declined } = await this.desk.ask('propose', { file: id, allow: [] });
+    for (const { step, why } of declined) this.#say(`Left out: ${step.verb} on ${step.track}: ${why}.`);
+    if (steps.length === 0) this.#say('There is nothing to mend by a proposed remedy.');
+    else await this.apply(id, steps);
+  }
+
+  /** Save over the file (`in place`) or as a copy. */
+  async save(id: string, how: Saved['how']): Promise<void> {
+    const file = this.file(id);
+    if (!file) return;
+    try {
+      const answer = await this.desk.ask('bytes', { file: id });
+      const order = {
+        name: file.name,
+        bytes: answer.bytes,
+        original: answer.original,
+        ...(file.handle && { handle: file.handle }),
+      };
+      const saved =
+        how === 'in place'
+          ? await saveInPlace(order, this.desk)
+          : saveCopy(mendedName(file.name), answer.bytes);
+      this.#put(id, { saved: true });
+      this.#say(
+        how === 'in place'
+          ? `${saved.name} is written.`
+          : `${saved.name} is handed to the browser as a download.`,
+      );
+    } catch (error) {
+      this.#say(messageOf(error));
+    }
+  }
+
+  async #take(works: readonly FileWork[]): Promise<void> {
+    this.#set([...this.files, ...works]);
+    for (const work of works) await this.#openAndSurvey(work.id);
+    await this.#keep();
+  }
+
+  async #openAndSurvey(id: string): Promise<void> {
+    const file = this.file(id);
+    if (!file) return;
+    const { name, blob, siblings } = file;
+    try {
+      const opened = blob
+        ? await this.desk.ask('open', { file: id, name, blob, siblings })
+        : await this.desk.ask('open-demo', { file: id });
+      this.#put(id, { opened, status: 'surveying' });
+      await this.#survey(id);
+    } catch (error) {
+      this.#fail(id, error);
+    }
+  }
+
+  async #survey(id: string): Promise<void> {
+    const stop = new AbortController();
+    this.#stops.set(id, stop);
+    const rows = new Map(this.file(id)?.rows);
+    const { settings } = this;
+    const report = await this.desk.ask(
+      'survey',
+      { file: id, settings },
+      {
+        signal: stop.signal,
+        onProgress: (progress) => this.#put(id, { progress }),
+        onRow: (row) => {
+          rows.set(trackKey(row.clip, row.track), row);
+          this.#put(id, { rows: new Map(rows) });
+        },
+      },
+    );
+    if (settings !== this.settings) return;
+    const findings = new Map<string, Finding[]>();
+    for (const finding of report.findings) {
+      const key = trackKey(finding.clip, finding.track);
+      findings.set(key, [...(findings.get(key) ?? []), finding]);
+    }
+    this.#put(id, { report, findings, status: 'ready' });
+    const history = this.file(id)?.history ?? EMPTY_HISTORY;
+    if (stepsOf(history).length > 0) await this.#changeCard(id, () => history);
+  }
+
+  async #surveyAll(): Promise<void> {
+    for (const { id, opened } of this.files) {
+      if (!opened) continue;
+      this.#put(id, { status: 'surveying' });
+      await this.#survey(id).catch((error: unknown) => this.#fail(id, error));
+    }
+  }
+
+  #fail(id: string, error: unknown): void {
+    const code = error instanceof DeskError ? error.code : 'page.fault';
+    if (code === 'desk.lost') return;
+    this.#put(id, {
+      status: code === 'job.stopped' ? 'stopped' : 'broken',
+      error: { code, message: messageOf(error) },
+    });
+  }
+
+  /** Cards are changed one after the other, so that two quick presses can't cross. */
+  #changeCard(id: string, change: (history: CardHistory) => CardHistory): Promise<boolean> {
+    const done = this.#cards.then(() => this.#makeCardTrue(id, change));
+    this.#cards = done.then(() => {});
+    return done;
+  }
+
+  async #makeCardTrue(id: string, change: (history: CardHistory) => CardHistory): Promise<boolean> {
+    const file = this.file(id);
+    if (!file) return false;
+    const history = change(file.history);
+    try {
+      this.#applyAnswer(id, await this.desk.ask('card', { file: id, steps: stepsOf(history) }));
+      this.#put(id, { history, saved: stepsOf(history).length === 0 });
+      await this.#keep();
+      return true;
+    } catch (error) {
+      this.#say(messageOf(error));
+      return false;
+    }
+  }
+
+  #applyAnswer(id: string, { tracks, steps, raised }: CardAnswer): void {
+    const file = this.file(id);
+    if (!file) return;
+    const rows = new Map(file.rows);
+    const findings = new Map(file.findings);
+    for (const { row, findings: found } of tracks) {
+      rows.set(trackKey(row.clip, row.track), row);
+      findings.set(trackKey(row.clip, row.track), found);
+    }
+    this.#put(id, { rows, findings, proofs: steps, raised });
+  }
+
+  async #startOver(): Promise<void> {
+    this.#say(
+      'The work behind the page stopped. It was started again, and your files and job cards are taken up where they were.',
+    );
+    for (const { id } of this.files) {
+      this.#put(id, { status: 'opening' });
+      await this.#openAndSurvey(id);
+    }
+  }
+
+  #keep(): Promise<void> {
+    return keepWork(this.files.filter((file) => file.status !== 'broken').map(savedWork));
+  }
+
+  #put(id: string, change: Partial<FileWork>): void {
+    this.#set(this.files.map((file) => (file.id === id ? { ...file, ...change } : file)));
+  }
+
+  #set(files: readonly FileWork[]): void {
+    this.files = files;
+    this.dispatchEvent(new Event('change'));
+  }
+
+  #say(words: string): void {
+    this.dispatchEvent(new CustomEvent('notice', { detail: words }));
+  }
+}
+
+function newWork(id: string, file: Omit<ChosenFile, 'blob'> & { readonly blob?: Blob }): FileWork {
+  const { name, blob, siblings, handle } = file;
+  return {
+    id,
+    name,
+    siblings,
+    status: 'opening',
+    rows: new Map(),
+    findings: new Map(),
+    history: EMPTY_HISTORY,
+    proofs: [],
+    raised: [],
+    saved: true,
+    ...(blob && { blob }),
+    ...(handle && { handle }),
+  };
+}
+
+function savedWork({ name, blob, siblings, handle, history }: FileWork): SavedWork {
+  const work = { name, siblings, lines: linesOf(history), savedAt: Date.now() };
+  return { ...work, ...(blob && { blob }), ...(handle && { handle }) };
+}
+
+function messageOf(error: unknown): string {
+  return error instanceof Error ? error.message : String(error);
+}

@@ -1,0 +1,36 @@
+import type { CommandIo } from '../command-io.js';
+import type { Arguments, CommandName } from '../flags.js';
+import { explain } from './explain.js';
+import { mend } from './mend.js';
+import { check, survey } from './survey.js';
+
+/** One command: one line in the table below. */
+export interface Command {
+  readonly name: CommandName;
+  readonly usage: string;
+  readonly summary: string;
+  /** @returns the exit code */
+  run(args: Arguments, io: CommandIo): Promise<number>;
+}
+
+export const COMMANDS: readonly Command[] = Object.freeze([
+  {
+    name: 'survey',
+    usage: 'survey FILE…',
+    summary: 'lists every rotation track with its figures, then what is wrong',
+    run: survey,
+  },
+  { name: 'check', usage: 'check FILE…', summary: 'tells what is wrong and gives a verdict', run: check },
+  {
+    name: 'mend',
+    usage: 'mend FILE (--card JOB | --proposed) -o OUT',
+    summary: 'mends a file and shows that nothing else changed',
+    run: mend,
+  },
+  {
+    name: 'explain',
+    usage: 'explain WORD',
+    summary: 'tells what a rule, a verb or a word of the trade means',
+    run: explain,
+  },
+] satisfies readonly Command[]);

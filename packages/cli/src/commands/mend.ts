@@ -1,0 +1,105 @@
+import { resolve } from 'node:path';
+import { SlewcurveError } from '@slewcurve/core';
+import {
+  buildReport,
+  jsonReport,
+  mendFile,
+  mendProposed,
+  surveyFile,
+  textReport,
+  undoPlan,
+  type JobSettings,
+  type MendedFile,
+} from '@slewcurve/job';
+import { parseJobCard } from '@slewcurve/mend';
+import type { CommandIo } from '../command-io.js';
+import { EXIT } from '../exit-code.js';
+import { writeOut } from '../files/write-out.js';
+import { writeWhole } from '../files/write-whole.js';
+import type { Arguments } from '../flags.js';
+import { oneOf, readJson, settingsOf } from '../settings.js';
+import { withFile, type FileInHand } from '../with-file.js';
+import { undo } from './undo.js';
+
+/** `slewcurve mend FILE`: run a job card, or the remedies that the survey proposes, and write the result. */
+export async function mend(args: Arguments, io: CommandIo): Promise<number> {
+  const [name, ...more] = args.words;
+  if (name === undefined || more.length > 0)
+    throw new SlewcurveError('usage.one-file', `slewcurve mend takes one file; got ${args.words.length}.`);
+  exactlyOne(args, ['card', 'proposed', 'undo']);
+  exactlyOne(args, ['o', 'in-place', 'dry-run']);
+  const settings = await settingsOf(args, io.cwd());
+  const asJson = oneOf(args, 'format', ['text', 'json']) === 'json';
+  return withFile(name, io.cwd(), async (file) => {
+    if (args.given('undo')) return undo(file, args, io);
+    const mended = await mendInHand(file, args, settings, io);
+    await writeResults(file, mended, args, io);
+    const report = buildReport([mended.report], settings, mended.steps);
+    io.stdout.write(asJson ? jsonReport(report) : textReport(report));
+    return report.verdict === 'pass' ? EXIT.pass : EXIT.fail;
+  });
+}
+
+async function mendInHand(
+  file: FileInHand,
+  args: Arguments,
+  settings: JobSettings,
+  io: CommandIo,
+): Promise<MendedFile> {
+  const before = await surveyFile(file.opened.name, file.opened.file, settings);
+  const card = args.value('card');
+  if (card !== undefined) {
+    const steps = parseJobCard(await readJson(card, io.cwd()));
+    const mended = await mendFile(file.opened, steps, before, settings, file.options);
+    for (const finding of mended.raised)
+      io.stderr.write(`new since the card ran: ${finding.track} in ${finding.clip}: ${finding.message}\n`);
+    return mended;
+  }
+  const { mended, declined } = await mendProposed(
+    file.opened,
+    before,
+    settings,
+    file.options,
+    args.values('allow'),
+  );
+  for (const { step, why } of declined)
+    io.stderr.write(`left out: ${step.verb} on ${step.track} in ${step.clip}: ${why}\n`);
+  return mended;
+}
+
+/** Write what was asked for. The side files come first: a mended file never stands without the plan that takes it back. */
+async function writeResults(
+  file: FileInHand,
+  mended: MendedFile,
+  args: Arguments,
+  io: CommandIo,
+): Promise<void> {
+  for (const range of mended.plan.ranges)
+    io.stderr.write(
+      `${file.opened.name}: bytes ${range.at} to ${range.at + range.length} become ${range.bytes.length}: ${range.what}\n`,
+    );
+  if (args.given('dry-run')) return;
+  const undoOut = args.value('undo-out');
+  if (undoOut !== undefined) await writeText(resolve(io.cwd(), undoOut), (await undoPlan(mended)).text);
+  const cardOut = args.value('card-out');
+  if (cardOut !== undefined)
+    await writeText(resolve(io.cwd(), cardOut), `${JSON.stringify(mended.card, null, 2)}\n`);
+  await writeOut(file, mended.result, args, io);
+}
+
+async function writeText(path: string, text: string): Promise<void> {
+  await writeWhole(path, [new TextEncoder().encode(text)]);
+}
+
+function exactlyOne(
+  args: Arguments,
+  flags: readonly ('card' | 'proposed' | 'undo' | 'o' | 'in-place' | 'dry-run')[],
+): void {
+  const given = flags.filter((flag) => args.given(flag));
+  if (given.length === 1) return;
+  const names = flags.map((flag) => (flag === 'o' ? '-o' : `--${flag}`));
+  throw new SlewcurveError(
+    'usage.one-of',
+    `slewcurve mend needs ${given.length === 0 ? 'one' : 'only one'} of ${names.join(', ')}. Try slewcurve mend --help.`,
+  );
+}

@@ -1,0 +1,160 @@
+import { parseArgs } from 'node:util';
+import { SlewcurveError } from '@slewcurve/core';
+import { nearestWord } from '@slewcurve/mend';
+
+/** A flag of the command line: one line here, and help and parsing know it. */
+interface Flag {
+  /** What stands after it in the help; a switch has none. */
+  readonly value?: string;
+  readonly help: string;
+  /** Commands that take it. */
+  readonly commands: readonly CommandName[];
+}
+
+export type CommandName = 'survey' | 'check' | 'mend' | 'explain';
+
+/** The flags; `-o` is written with one dash. */
+export type FlagName =
+  | 'format'
+  | 'playback'
+  | 'fail-at'
+  | 'allow-warnings'
+  | 'rules'
+  | 'card'
+  | 'proposed'
+  | 'allow'
+  | 'o'
+  | 'in-place'
+  | 'dry-run'
+  | 'card-out'
+  | 'undo-out'
+  | 'undo';
+
+const SURVEYING: readonly CommandName[] = ['survey', 'check', 'mend'];
+const MENDING: readonly CommandName[] = ['mend'];
+
+export const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
+  format: {
+    value: 'text|json',
+    help: 'form of the report (default text)',
+    commands: ['survey', 'check', 'mend', 'explain'],
+  },
+  playback: {
+    value: 'ID,…',
+    help: 'how the file will be played: as-written (default), short-way, chord, raw-chord, stored-cubic, finite-cubic, step; the worst counts',
+    commands: SURVEYING,
+  },
+  'fail-at': {
+    value: 'error|warning|note',
+    help: 'level at which a finding fails the run (default warning)',
+    commands: SURVEYING,
+  },
+  'allow-warnings': { value: 'N', help: 'let so many warnings pass (default 0)', commands: SURVEYING },
+  rules: { value: 'FILE', help: 'house rules: limits, levels, exceptions (JSON)', commands: SURVEYING },
+  card: { value: 'FILE', help: 'job card to run (JSON)', commands: MENDING },
+  proposed: { help: 'run the remedy of every finding at or above --fail-at', commands: MENDING },
+  allow: {
+    value: 'VERB',
+    help: 'let --proposed use a verb that needs asking for (again for more)',
+    commands: MENDING,
+  },
+  o: { value: 'OUT', help: 'file to write', commands: MENDING },
+  'in-place': { help: 'write over FILE and keep the original beside it', commands: MENDING },
+  'dry-run': { help: 'say what would change, write nothing', commands: MENDING },
+  'card-out': { value: 'FILE', help: 'write the steps that were run as a job card', commands: MENDING },
+  'undo-out': { value: 'FILE', help: 'write the plan that takes the change back', commands: MENDING },
+  undo: { value: 'PLAN', help: 'take back a change: run a plan from --undo-out', commands: MENDING },
+});
+
+/** What was typed: files and flags, as text. */
+export interface Arguments {
+  readonly words: readonly string[];
+  /** The value of a flag that was given once. */
+  value(flag: FlagName): string | undefined;
+  /** All values of a flag that may be given again. */
+  values(flag: FlagName): readonly string[];
+  given(flag: FlagName): boolean;
+}
+
+/**
+ * Read the words after the command's name.
+ *
+ * @throws SlewcurveError `usage.unknown-flag`, `usage.bad-value`
+ */
+export function readArguments(command: CommandName, argv: readonly string[]): Arguments {
+  const known = flagsOf(command);
+  const unknown = argv
+    .slice(0, endOfFlags(argv))
+    .find((word) => isFlag(word) && !known.includes(flagName(word)));
+  if (unknown !== undefined) throw unknownFlag(command, unknown, known);
+  const options = Object.fromEntries(
+    known.map((name) => [
+      name,
+      {
+        type: isSwitch(name) ? ('boolean' as const) : ('string' as const),
+        multiple: true,
+        ...(name === 'o' && { short: 'o' }),
+      },
+    ]),
+  );
+  try {
+    const { values, positionals } = parseArgs({ args: [...argv], options, allowPositionals: true });
+    const texts = (flag: FlagName): string[] => [values[flag] ?? []].flat().map(String);
+    return {
+      words: positionals,
+      value: (flag) => texts(flag).at(-1),
+      values: texts,
+      given: (flag) => flag in values,
+    };
+  } catch (cause) {
+    throw new SlewcurveError(
+      'usage.bad-value',
+      `${String((cause as Error).message)} Try slewcurve ${command} --help.`,
+      {},
+      { cause },
+    );
+  }
+}
+
+/** The flags of a command, one line each, for its help. */
+export function flagHelp(command: CommandName): string {
+  const rows = flagsOf(command).map((name) => {
+    const flag = FLAGS[name];
+    const left = `${name === 'o' ? '-o' : `--${name}`}${flag.value === undefined ? '' : ` ${flag.value}`}`;
+    return `  ${left.padEnd(30)} ${flag.help}`;
+  });
+  return rows.join('\n');
+}
+
+function flagsOf(command: CommandName): FlagName[] {
+  return (Object.keys(FLAGS) as FlagName[]).filter((name) => FLAGS[name].commands.includes(command));
+}
+
+function isSwitch(name: FlagName): boolean {
+  return FLAGS[name].value === undefined;
+}
+
+function endOfFlags(argv: readonly string[]): number {
+  const at = argv.indexOf('--');
+  return at < 0 ? argv.length : at;
+}
+
+function isFlag(word: string): boolean {
+  return /^--?[a-z]/.test(word);
+}
+
+function flagName(word: string): FlagName {
+  return word.replace(/^--?/, '').replace(/=.*/s, '') as FlagName;
+}
+
+function unknownFlag(command: CommandName, word: string, known: readonly FlagName[]): SlewcurveError {
+  const nearest = nearestWord(flagName(word), known);
+  const elsewhere = Object.hasOwn(FLAGS, flagName(word))
+    ? ` It belongs to ${FLAGS[flagName(word)].commands.join(', ')}.`
+    : '';
+  const hint = nearest === undefined ? '' : ` Did you mean --${nearest}?`;
+  return new SlewcurveError(
+    'usage.unknown-flag',
+    `slewcurve ${command} knows no flag ${word.replace(/=.*/s, '')}.${elsewhere || hint} Try slewcurve ${command} --help.`,
+  );
+}

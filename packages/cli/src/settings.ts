@@ -1,0 +1,93 @@
+import { readFile } from 'node:fs/promises';
+import { resolve } from 'node:path';
+import { PLAYBACKS, SlewcurveError, type PlaybackId } from '@slewcurve/core';
+import { LEVELS, type JobSettings } from '@slewcurve/job';
+import { nearestWord } from '@slewcurve/mend';
+import { NO_HOUSE_RULES, parseHouseRules, type HouseRules } from '@slewcurve/survey';
+import type { Arguments } from './flags.js';
+
+/**
+ * The settings that the flags ask for.
+ *
+ * @throws SlewcurveError `usage.bad-value`, and what `parseHouseRules` throws
+ */
+export async function settingsOf(args: Arguments, cwd: string): Promise<JobSettings> {
+  return {
+    playbacks: playbacksOf(args),
+    failAt: oneOf(args, 'fail-at', LEVELS) ?? 'warning',
+    allowWarnings: wholeNumber(args.value('allow-warnings')),
+    houseRules: await houseRulesOf(args.value('rules'), cwd),
+  };
+}
+
+/** The value of a flag that takes one of a few words. */
+export function oneOf<T extends string>(
+  args: Arguments,
+  flag: 'format' | 'fail-at',
+  allowed: readonly T[],
+): T | undefined {
+  const value = args.value(flag);
+  if (value === undefined) return undefined;
+  const found = allowed.find((word) => word === value);
+  if (found === undefined) throw badValue(flag, value, allowed);
+  return found;
+}
+
+/**
+ * Text of a file that the user names.
+ *
+ * @throws SlewcurveError `file.not-found`
+ */
+export function readText(path: string, cwd: string): Promise<string> {
+  return readFile(resolve(cwd, path), 'utf8').catch((cause: unknown) => {
+    throw new SlewcurveError(
+      'file.not-found',
+      `${path} can't be read: ${(cause as Error).message}`,
+      { file: path },
+      { cause },
+    );
+  });
+}
+
+/**
+ * JSON of a file that the user names.
+ *
+ * @throws SlewcurveError `file.not-found`, `file.not-json`
+ */
+export async function readJson(path: string, cwd: string): Promise<unknown> {
+  const text = await readText(path, cwd);
+  try {
+    return JSON.parse(text);
+  } catch (cause) {
+    throw new SlewcurveError(
+      'file.not-json',
+      `${path} is not JSON: ${(cause as Error).message}`,
+      { file: path },
+      { cause },
+    );
+  }
+}
+
+function playbacksOf(args: Arguments): readonly PlaybackId[] {
+  const ids = args.values('playback').flatMap((value) => value.split(','));
+  const known = Object.keys(PLAYBACKS) as PlaybackId[];
+  const bad = ids.find((id) => !known.some((other) => other === id));
+  if (bad !== undefined) throw badValue('playback', bad, known);
+  return ids.length === 0 ? ['as-written'] : ([...new Set(ids)] as PlaybackId[]);
+}
+
+function wholeNumber(value = '0'): number {
+  if (!/^\d{1,9}$/.test(value))
+    throw new SlewcurveError('usage.bad-value', `--allow-warnings takes a whole number; got ${value}.`);
+  return Number(value);
+}
+
+async function houseRulesOf(path: string | undefined, cwd: string): Promise<HouseRules> {
+  return path === undefined ? NO_HOUSE_RULES : parseHouseRules(await readJson(path, cwd));
+}
+
+function badValue(flag: string, value: string, allowed: readonly string[]): SlewcurveError {
+  const nearest = nearestWord(value, allowed);
+  const hint = nearest === undefined ? '' : ` Did you mean ${nearest}?`;
+  return new SlewcurveError('usage.bad-value', `--${flag} takes ${allowed.join(', ')}; got ${value}.${hint}`);
+}

@@ -1,0 +1,182 @@
+import { SlewcurveError, type Clip, type RotationTrack } from '@slewcurve/core';
+import type { Source } from '@slewcurve/formats';
+import { applySteps, type Step } from '@slewcurve/mend';
+import { surveyTrack, type Finding } from '@slewcurve/survey';
+import { clipReport } from './clip-report.js';
+import { mendFile } from './mend-file.js';
+import { newFaults } from './new-faults.js';
+import { openFile, type OpenedFile } from './open-file.js';
+import { declineHarmful } from './mend-proposed.js';
+import { propose } from './propose.js';
+import type { Asks, CardAnswer, OpenedAnswer, TrackAnswer } from './protocol.js';
+import type { FileReport } from './report.js';
+import { rosterRow, type RosterRow } from './roster-row.js';
+import type { JobSettings } from './settings.js';
+import { stepReports } from './step-reports.js';
+import { surveyFile } from './survey-file.js';
+import { trackReport } from './track-report.js';
+import { undoPlan } from './undo-plan.js';
+import { betweenSlices, type Watch } from './watch.js';
+import { sourceBytes } from './source-bytes.js';
+
+/** Files that are open at once, each with its survey and its job card: what the page's worker holds. No DOM, no Node. */
+export interface Desk {
+  open(
+    file: string,
+    source: Source,
+    name: string,
+    sibling?: (uri: string) => Promise<Source>,
+  ): Promise<OpenedAnswer>;
+  survey(
+    file: string,
+    settings: JobSettings,
+    watch: Watch,
+    onRow: (row: RosterRow) => void,
+  ): Promise<FileReport>;
+  track(file: string, clip: string, track: string): TrackAnswer;
+  /** Makes `steps` the file's whole card; an error leaves the card before in force. */
+  card(file: string, steps: readonly Step[], watch: Watch): Promise<CardAnswer>;
+  propose(file: string, allow: readonly string[]): Asks<never>['propose']['answer'];
+  bytes(file: string, watch: Watch): Promise<Asks<never>['bytes']['answer']>;
+  close(file: string): void;
+}
+
+interface Folder {
+  readonly opened: OpenedFile;
+  readonly sibling: ((uri: string) => Promise<Source>) | undefined;
+  settings: JobSettings | undefined;
+  report: FileReport | undefined;
+  steps: readonly Step[];
+  /** Tracks as the card leaves them, in the file's order. */
+  current: readonly RotationTrack[];
+}
+
+/** A desk with nothing on it. */
+export function desk(): Desk {
+  const folders = new Map<string, Folder>();
+  const folderOf = (file: string): Folder => {
+    const folder = folders.get(file);
+    if (folder) return folder;
+    throw new SlewcurveError('job.not-open', `No file ${file} is open.`, { file });
+  };
+  return {
+    async open(file, source, name, sibling) {
+      const opened = await openFile(source, { name, ...(sibling && { sibling }) });
+      const current = tracksOf(opened);
+      folders.set(file, { opened, sibling, settings: undefined, report: undefined, steps: [], current });
+      return openedAnswer(opened);
+    },
+    async survey(file, settings, watch, onRow) {
+      const folder = folderOf(file);
+      await tellRows(folder, settings, watch, onRow);
+      folder.report = await surveyFile(folder.opened.name, folder.opened.file, settings, watch);
+      folder.settings = settings;
+      return folder.report;
+    },
+    track(file, clip, track) {
+      const folder = folderOf(file);
+      const at = tracksOf(folder.opened).findIndex((other) => other.clip === clip && other.id === track);
+      const before = tracksOf(folder.opened)[at];
+      const after = folder.current[at];
+      if (before && after) return { before: copyOf(before), after: copyOf(after) };
+      throw new SlewcurveError('job.no-track', `There is no track ${track} in ${clip}.`, { clip, track });
+    },
+    card: (file, steps, watch) => setCard(folderOf(file), steps, watch),
+    propose(file, allow) {
+      const { opened, report, settings } = surveyed(folderOf(file));
+      const { steps, declined } = declineHarmful(opened, propose(report, settings, allow), settings);
+      return { steps, declined };
+    },
+    async bytes(file, watch) {
+      const { opened, sibling, steps, report, settings } = surveyed(folderOf(file));
+      const options = { name: opened.name, ...(sibling && { sibling }) };
+      const card = { schemaVersion: 1 as const, steps };
+      const mended = await mendFile(opened, card, report, settings, options, watch);
+      const undo = await undoPlan(mended, watch);
+      return {
+        bytes: await sourceBytes(mended.result),
+        sha256: undo.mended.sha256,
+        original: undo.original,
+        undo: undo.text,
+        card: { ...card, for: { file: opened.name, sha256: undo.original.sha256 } },
+      };
+    },
+    close(file) {
+      folders.delete(file);
+    },
+  };
+}
+
+/** Every track's row, drawn first: a survey takes longer. */
+async function tellRows(
+  folder: Folder,
+  settings: JobSettings,
+  watch: Watch,
+  onRow: (row: RosterRow) => void,
+): Promise<void> {
+  let done = 0;
+  for (const clip of folder.opened.file.clips)
+    for (const track of clip.tracks) {
+      onRow(rosterRow(currentOf(folder, track), clip, settings.playbacks[0] ?? 'as-written'));
+      await betweenSlices(watch, ++done, folder.current.length, 'tracks drawn');
+    }
+}
+
+async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Promise<CardAnswer> {
+  const { opened, report, settings } = surveyed(folder);
+  const { tracks, results } = applySteps(tracksOf(opened), steps);
+  const answers: CardAnswer['tracks'][number][] = [];
+  const raised: Finding[] = [];
+  for (const [at, track] of tracks.entries()) {
+    const clip = clipOf(opened, track);
+    if (track === folder.current[at] || !clip) continue;
+    const findings = surveyTrack(track, { clip, nodes: opened.file.nodes, file: opened.name, ...settings });
+    raised.push(...newFaults(report.findings, findings));
+    const playback = settings.playbacks[0] ?? 'as-written';
+    answers.push({ report: trackReport(track, playback), row: rosterRow(track, clip, playback), findings });
+    await betweenSlices(watch, at, tracks.length, 'tracks');
+  }
+  folder.steps = steps;
+  folder.current = tracks;
+  return { tracks: answers, steps: stepReports(results), raised };
+}
+
+function surveyed(folder: Folder): Folder & { report: FileReport; settings: JobSettings } {
+  const { report, settings } = folder;
+  if (report && settings) return { ...folder, report, settings };
+  throw new SlewcurveError(
+    'job.not-surveyed',
+    `${folder.opened.name} is not surveyed yet; wait until it is.`,
+  );
+}
+
+function openedAnswer({ name, source, file }: OpenedFile): OpenedAnswer {
+  return {
+    name,
+    format: file.format,
+    size: source.size,
+    nodes: file.nodes,
+    clips: file.clips.map(clipReport),
+    tracks: file.clips.flatMap((clip) =>
+      clip.tracks.map(({ id, times }) => ({ clip: clip.name, track: id, keys: times.length })),
+    ),
+    problems: file.problems.map(({ code, message }) => ({ code, message })),
+  };
+}
+
+function tracksOf(opened: OpenedFile): RotationTrack[] {
+  return opened.file.clips.flatMap((clip) => clip.tracks);
+}
+
+function currentOf(folder: Folder, track: RotationTrack): RotationTrack {
+  return folder.current[tracksOf(folder.opened).indexOf(track)] ?? track;
+}
+
+function clipOf(opened: OpenedFile, track: RotationTrack): Clip | undefined {
+  return opened.file.clips.find((clip) => clip.name === track.clip);
+}
+
+/** A copy whose arrays may be handed over. */
+function copyOf(track: RotationTrack): RotationTrack {
+  return { ...track, times: track.times.slice(), values: track.values.slice() };
+}

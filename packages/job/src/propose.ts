@@ -1,0 +1,70 @@
+import { verbNamed, type JobCard, type Step } from '@slewcurve/mend';
+import type { Finding } from '@slewcurve/survey';
+import { isAtLeast, type FileReport } from './report.js';
+import type { JobSettings } from './settings.js';
+
+/** A remedy that was not taken, and why. */
+export interface Declined {
+  readonly step: Step;
+  readonly why: string;
+}
+
+/** Steps for what a survey found. */
+export interface Proposal {
+  readonly card: JobCard;
+  readonly declined: readonly Declined[];
+}
+
+/**
+ * The remedy of every place of every finding at or above `settings.failAt`. A verb that needs allowing is taken only where `allow`
+ * names it. Steps of one verb on one track that differ in their keys alone become one; steps that insert keys come last on their
+ * track and from the last key to the first, so that every key number on the card is that of the file.
+ */
+export function propose(report: FileReport, settings: JobSettings, allow: readonly string[] = []): Proposal {
+  const wanted = report.findings
+    .filter((finding) => isAtLeast(finding.level, settings.failAt))
+    .flatMap(remediesOf);
+  const declined: Declined[] = [];
+  const steps: Step[] = [];
+  for (const step of wanted)
+    if (verbNamed(step.verb).needsAllowing && !allow.includes(step.verb))
+      declined.push({
+        step,
+        why: `${step.verb} is a choice of yours: allow it by name (--allow "${step.verb}")`,
+      });
+    else if (!steps.some((other) => sameStep(other, step))) steps.push(step);
+  return { card: { schemaVersion: 1, steps: ordered(merged(steps)) }, declined };
+}
+
+function remediesOf(finding: Finding): Step[] {
+  return finding.occurrences.flatMap((place) => place.remedy ?? []);
+}
+
+function sameStep(a: Step, b: Step): boolean {
+  return JSON.stringify(a) === JSON.stringify(b);
+}
+
+/** One step for all keys of a verb that takes each key by itself. */
+function merged(steps: readonly Step[]): Step[] {
+  const byRest = new Map<string, Step>();
+  for (const step of steps) {
+    const { keys, ...rest } = step;
+    const together = verbNamed(step.verb).keysApart && keys !== undefined;
+    const name = JSON.stringify(together ? rest : step);
+    const known = byRest.get(name);
+    byRest.set(name, known?.keys && keys && together ? { ...known, keys: union(known.keys, keys) } : step);
+  }
+  return [...byRest.values()];
+}
+
+function union(a: readonly number[], b: readonly number[]): number[] {
+  return [...new Set([...a, ...b])].sort((x, y) => x - y);
+}
+
+function ordered(steps: readonly Step[]): Step[] {
+  const inserts = (step: Step): boolean => verbNamed(step.verb).insertsKeys;
+  return [...steps].sort(
+    (a, b) =>
+      Number(inserts(a)) - Number(inserts(b)) || (inserts(a) ? (b.keys?.[0] ?? 0) - (a.keys?.[0] ?? 0) : 0),
+  );
+}

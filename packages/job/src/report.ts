@@ -1,0 +1,93 @@
+import type { Finding, Level } from '@slewcurve/survey';
+import type { Step } from '@slewcurve/mend';
+
+/** One clip of a report. `keys` and `tracks` count rotation tracks. */
+export interface ClipReport {
+  readonly clip: string;
+  readonly seconds: number;
+  readonly frameRate?: number;
+  readonly tracks: number;
+  readonly keys: number;
+}
+
+/** One track of a report, as played by the first playback. Degrees, deg/s, deg/s², seconds. */
+export interface TrackReport {
+  readonly clip: string;
+  readonly track: string;
+  readonly node: number;
+  readonly interpolation: string;
+  readonly keys: number;
+  readonly start: number;
+  readonly end: number;
+  readonly travelled: number;
+  readonly peakRate: number;
+  readonly peakAt: number;
+  readonly medianRate: number;
+  readonly worstRateJump: number;
+  readonly peakAcceleration: number;
+  readonly rmsAcceleration: number;
+  readonly accelerationIs: 'step' | 'exact';
+  /** Largest rate floor of any segment: nothing under it is claimed. */
+  readonly noiseFloor: number;
+  readonly signChanges: number;
+  readonly widestSegment: number;
+}
+
+/** Something in the file that could not be read and did not stop the rest. */
+export interface ProblemReport {
+  readonly code: string;
+  readonly message: string;
+}
+
+/** One file of a report. */
+export interface FileReport {
+  readonly file: string;
+  readonly status: 'surveyed' | 'unreadable';
+  readonly error?: ProblemReport;
+  readonly problems?: readonly ProblemReport[];
+  readonly clips: readonly ClipReport[];
+  readonly tracks: readonly TrackReport[];
+  readonly findings: readonly Finding[];
+}
+
+/** What one step of a job card did. Degrees and seconds. */
+export interface StepReport {
+  readonly step: Step;
+  /** Keys whose stored numbers differ now, inserted ones included. */
+  readonly changed: number;
+  /** Largest turn of a key. */
+  readonly largest: number;
+  /** Largest change of the motion outside the step's span. */
+  readonly outside: number;
+  /** Seconds that the clip became longer. */
+  readonly added: number;
+}
+
+/** Finding counts by level, and how many are stamped. */
+export interface Totals {
+  readonly error: number;
+  readonly warning: number;
+  readonly note: number;
+  readonly stamped: number;
+}
+
+/** What `check --format json` prints: see the published schema `schema/report.json`. */
+export interface Report {
+  readonly schemaVersion: 1;
+  readonly tool: { readonly name: 'slewcurve'; readonly version: string };
+  readonly playbacks: readonly string[];
+  readonly failAt: Level;
+  readonly files: readonly FileReport[];
+  readonly totals: Totals;
+  readonly verdict: 'pass' | 'fail';
+  /** `mend` alone: what each step did. */
+  readonly steps?: readonly StepReport[];
+}
+
+/** Levels from bad to mild. */
+export const LEVELS: readonly Level[] = Object.freeze(['error', 'warning', 'note']);
+
+/** Whether `level` is as bad as `than` or worse. */
+export function isAtLeast(level: Level, than: Level): boolean {
+  return LEVELS.indexOf(level) <= LEVELS.indexOf(than);
+}

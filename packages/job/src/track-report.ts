@@ -1,0 +1,50 @@
+import {
+  measure,
+  playAs,
+  rateFloor,
+  segmentAngle,
+  signChanges,
+  type PlaybackId,
+  type RotationTrack,
+} from '@slewcurve/core';
+import type { TrackReport } from './report.js';
+import { significant } from './significant.js';
+
+const DEGREES = 180 / Math.PI;
+
+/** The figures of one track as played by `playback`. */
+export function trackReport(track: RotationTrack, playback: PlaybackId): TrackReport {
+  const curve = playAs(track, playback);
+  const measured = measure(curve);
+  const degrees = (radians: number): number => significant(radians * DEGREES);
+  return {
+    clip: track.clip,
+    track: track.id,
+    node: track.source.node,
+    interpolation: track.interpolation,
+    keys: track.times.length,
+    start: curve.start,
+    end: curve.end,
+    travelled: degrees(measured.travelled),
+    peakRate: degrees(measured.peakRate),
+    peakAt: measured.peakAt,
+    medianRate: degrees(measured.medianRate),
+    worstRateJump: degrees(measured.worstRateJump),
+    peakAcceleration: degrees(measured.peakAcceleration),
+    rmsAcceleration: degrees(measured.rmsAcceleration),
+    accelerationIs: measured.accelerationIs,
+    noiseFloor: degrees(largest(track, (key) => rateFloor(track, key))),
+    signChanges: signChanges(track).length,
+    widestSegment: degrees(largest(track, (key) => segmentAngle(track, key))),
+  };
+}
+
+/** Largest finite value over the segments of a track; 0 where there are none. */
+function largest(track: RotationTrack, ofSegment: (key: number) => number): number {
+  let most = 0;
+  for (let key = 0; key + 1 < track.times.length; key++) {
+    const value = ofSegment(key);
+    if (Number.isFinite(value) && value > most) most = value;
+  }
+  return most;
+}
