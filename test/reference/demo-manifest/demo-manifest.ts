@@ -1,0 +1,56 @@
+// An independent reading of the demo scene: which rule finds what, worked out from the rules' text with reader and maths of its own.
+// It imports nothing of the packages that it judges.
+import type { Entry } from './entry.js';
+import { jumps } from './jumps.js';
+import { paces } from './paces.js';
+import { readScene, type Rules } from './read-scene.js';
+import { seams } from './seams.js';
+import { shakes } from './shakes.js';
+import { storedNumbers } from './stored-numbers.js';
+import { waysRound } from './ways-round.js';
+
+/** The rules that are worked out; of every other rule nothing is said. */
+export const WORKED_OUT: readonly string[] = [
+  'file.not-finite',
+  'file.not-normalised',
+  'file.time-order',
+  'file.coarse',
+  'file.idle',
+  'turn.sign-flip',
+  'turn.half',
+  'turn.lost',
+  'jump.lone-key',
+  'jump.shelf',
+  'jump.first-key',
+  'jump.cut-smear',
+  'jump.freeze',
+  'pace.elbow',
+  'pace.hard-stop',
+  'pace.axis-kick',
+  'shake.grain',
+  'shake.hum',
+  'shake.creep',
+  'seam.loop-gap',
+  'seam.loop-kink',
+  'seam.doubled-end',
+  'limit.speed',
+  'limit.picture',
+  'horizon.roll',
+  'horizon.overhead',
+];
+
+/** Every finding at note or above that those rules make on the scene, under the given house rules, played as written. */
+export function demoManifest(bytes: Uint8Array, rules: Rules): Entry[] {
+  return readScene(bytes, rules).flatMap((track) => {
+    const stored = storedNumbers(track);
+    const isCoarse = stored.some(({ rule }) => rule === 'file.coarse');
+    return [
+      ...stored,
+      ...waysRound(track),
+      ...jumps(track, isCoarse),
+      ...shakes(track, isCoarse),
+      ...paces(track, isCoarse),
+      ...seams(track),
+    ];
+  });
+}
