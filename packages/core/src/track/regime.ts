@@ -32,5 +32,7 @@ export function medianGap(track: RotationTrack): number {
     const gap = times[key + 1] - times[key];
     if (!Number.isNaN(gap)) gaps[count++] = gap;
   }
-  return count === 0 ? 0 : gaps.subarray(0, count).sort()[(count - 1) >> 1];
+  const sorted = gaps.subarray(0, count);
+  sorted.sort();
+  return count === 0 ? 0 : sorted[(count - 1) >> 1];
 }
