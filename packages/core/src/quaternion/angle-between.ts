@@ -11,20 +11,26 @@ import { unitScale } from './unit-scale.js';
 export function angleBetween(a: ReadonlyNumberStore, b: ReadonlyNumberStore): number {
   const ka = unitScale(a[0], a[1], a[2], a[3]);
   const kb = unitScale(b[0], b[1], b[2], b[3]);
-  const ax = a[0] * ka,
-    ay = a[1] * ka,
-    az = a[2] * ka,
-    aw = ka === 0 ? 1 : a[3] * ka;
-  let bx = b[0] * kb,
-    by = b[1] * kb,
-    bz = b[2] * kb,
-    bw = kb === 0 ? 1 : b[3] * kb;
-  if (ax * bx + ay * by + az * bz + aw * bw < 0) {
-    bx = -bx;
-    by = -by;
-    bz = -bz;
-    bw = -bw;
-  }
+  let ax = a[0] * ka;
+  let ay = a[1] * ka;
+  let az = a[2] * ka;
+  let aw = ka === 0 ? 1 : a[3] * ka;
+  let bx = b[0] * kb;
+  let by = b[1] * kb;
+  let bz = b[2] * kb;
+  let bw = kb === 0 ? 1 : b[3] * kb;
+  // Each times the other's length: what rounding left of a difference in length must not count as an angle.
+  const la = Math.sqrt(ax * ax + ay * ay + az * az + aw * aw);
+  const lb =
+    Math.sqrt(bx * bx + by * by + bz * bz + bw * bw) * (ax * bx + ay * by + az * bz + aw * bw < 0 ? -1 : 1);
+  ax *= lb;
+  ay *= lb;
+  az *= lb;
+  aw *= lb;
+  bx *= la;
+  by *= la;
+  bz *= la;
+  bw *= la;
   const apart = (ax - bx) ** 2 + (ay - by) ** 2 + (az - bz) ** 2 + (aw - bw) ** 2;
   const along = (ax + bx) ** 2 + (ay + by) ** 2 + (az + bz) ** 2 + (aw + bw) ** 2;
   return 4 * Math.atan2(Math.sqrt(apart), Math.sqrt(along));

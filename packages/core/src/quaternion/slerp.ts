@@ -66,13 +66,8 @@ function turnAlong<T extends NumberStore>(
   let ny = aw * by - ay * bw - (az * bx - ax * bz);
   let nz = aw * bz - az * bw - (ax * by - ay * bx);
   const sine = Math.sqrt(nx * nx + ny * ny + nz * nz);
-  if (t === 1) {
-    out[0] = bx;
-    out[1] = by;
-    out[2] = bz;
-    out[3] = bw;
-    return out;
-  }
+  if (t === 0 || (sine === 0 && cosine > 0)) return write(out, ax, ay, az, aw);
+  if (t === 1) return write(out, bx, by, bz, bw);
   const half = Math.atan2(sine, cosine) * Math.max(-1e300, Math.min(1e300, t));
   if (sine === 0 && cosine < 0) nx = 1;
   else if (sine > 0) {
@@ -86,11 +81,15 @@ function turnAlong<T extends NumberStore>(
   const y = ay * c + s * (aw * ny + az * nx - ax * nz);
   const z = az * c + s * (aw * nz + ax * ny - ay * nx);
   const w = aw * c - s * (ax * nx + ay * ny + az * nz);
-  // One Newton step towards unit length takes the rounding of the product away; at t = 0 the numbers of `a` stay.
-  const unit = s === 0 ? 1 : 1.5 - 0.5 * (x * x + y * y + z * z + w * w);
-  out[0] = x * unit;
-  out[1] = y * unit;
-  out[2] = z * unit;
-  out[3] = w * unit;
+  // One Newton step towards unit length takes the rounding of the product away.
+  const unit = 1.5 - 0.5 * (x * x + y * y + z * z + w * w);
+  return write(out, x * unit, y * unit, z * unit, w * unit);
+}
+
+function write<T extends NumberStore>(out: T, x: number, y: number, z: number, w: number): T {
+  out[0] = x;
+  out[1] = y;
+  out[2] = z;
+  out[3] = w;
   return out;
 }

@@ -5,8 +5,8 @@
  */
 export function unitScale(x: number, y: number, z: number, w: number): number {
   const squared = x * x + y * y + z * z + w * w;
-  // 8 eps: four roundings of squares and three of sums, each at most half an eps, and as much again for the numbers stored.
-  if (Math.abs(squared - 1) <= 8 * Number.EPSILON) return 1;
+  // 6 eps: a quaternion that was made unit and rounded is off by at most 4.5 (root, quotient, product, this sum of squares).
+  if (Math.abs(squared - 1) <= 6 * Number.EPSILON) return 1;
   if (squared > 1e-200 && squared < 1e200) return 1 / Math.sqrt(squared);
   const largest = Math.max(Math.abs(x), Math.abs(y), Math.abs(z), Math.abs(w));
   if (largest < 1e-300) return 0;
