@@ -62,5 +62,19 @@ export {
 export { cumulativeHermite } from './curve/cumulative-hermite.js';
 export { playAs } from './playback/play-as.js';
 export { PLAYBACKS } from './playback/registry.js';
-export { rotationSpline, type KeyRates, type RotationSplineOptions } from './curve/rotation-spline.js';
+export type { KeyRates } from './curve/key-rate.js';
+export { nestedBezier } from './curve/nested-bezier.js';
+export {
+  rotationSpline,
+  type BSplineOptions,
+  type LogChartOptions,
+  type RotationSplineOptions,
+  type ShapedSplineOptions,
+  type SmoothSplineOptions,
+  type SquadOptions,
+} from './curve/rotation-spline.js';
+export type { SplineShape } from './curve/shaped-spline.js';
+export type { Convergence } from './curve/smooth-rates.js';
+export type { SmoothSpline } from './curve/smooth-spline.js';
+export { tensionContinuityBiasRates, type TensionContinuityBias } from './curve/tension-continuity-bias.js';
 export { measure, type Measures } from './measure/measure.js';

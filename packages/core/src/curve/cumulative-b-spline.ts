@@ -1,4 +1,5 @@
 import type { ReadonlyNumberStore } from '../number-store.js';
+import { normalise } from '../quaternion/normalise.js';
 import { cumulativeCubicBasis } from './b-spline-basis.js';
 import { controlTurns, type ControlTurns } from './control-turns.js';
 import type { Curve } from './curve.js';
@@ -21,40 +22,37 @@ export function cumulativeBSpline(
 ): Curve {
   const legs = controlTurns(controls, 4);
   const segments = controls.length - 3;
-  const times = Float64Array.from({ length: segments + 1 }, (_, n) => start + n * gap);
-  return bSplineThrough(legs, times, (n) => start + n * gap, []);
+  const at = bSplineMotion(legs, (n) => start + n * gap);
+  return stateCurve({
+    times: Float64Array.from({ length: segments + 1 }, (_, n) => start + n * gap),
+    continuity: 2,
+    breaks: [],
+    key(out, key) {
+      const segment = Math.min(key, segments - 1);
+      normalise(out, at(segment, key - segment).orientation);
+    },
+    at,
+  });
 }
 
 /**
- * The B-spline over `times` whose segment i is under the controls i to i + 3. `knot(n)` gives the knots, `knot(i)` being
- * `times[i]`. @internal
+ * The motion whose segment i is under the controls i to i + 3, by the fraction `u` of the segment; `knot(n)` gives the knots,
+ * segment i lying between knot i and knot i + 1.
+ * @internal
  */
-export function bSplineThrough(
+export function bSplineMotion(
   { controls, turns }: ControlTurns,
-  times: Float64Array,
   knot: (n: number) => number,
-  breaks: readonly number[],
-): Curve {
+): (segment: number, u: number) => MotionState {
   const product = turnProduct();
   const basis = new Float64Array(9);
   const legs = Array.from({ length: turns.length / 3 }, (_, k) => turns.subarray(3 * k, 3 * k + 3));
-  function at(segment: number, u: number): MotionState {
+  return (segment, u) => {
     const t = knot(segment) + u * (knot(segment + 1) - knot(segment));
     cumulativeCubicBasis(basis, knot, segment, t);
     product.reset(controls.subarray(4 * segment, 4 * segment + 4));
     for (let k = 0; k < 3; k++)
       product.turn(legs[segment + k], basis[3 * k], basis[3 * k + 1], basis[3 * k + 2]);
     return product;
-  }
-  return stateCurve({
-    times,
-    continuity: 2,
-    breaks,
-    key(out, key) {
-      const inner = Math.min(key, times.length - 2);
-      const { orientation } = at(inner, key - inner);
-      for (let k = 0; k < 4; k++) out[k] = orientation[k];
-    },
-    at,
-  });
+  };
 }

@@ -28,13 +28,13 @@ export interface StateCurveParts {
  * numerically from the exact rate.
  */
 export function stateCurve(parts: StateCurveParts): Curve {
-  const { times, continuity, breaks, key } = parts;
+  const { times, continuity, breaks } = parts;
   const gaps = durations(times);
   return segmentedCurve({
     times,
     continuity,
     breaks,
-    key,
+    key: (out, key) => parts.key(out, key),
     motion: withNumericLength(
       {
         orientation: (out, i, u) => void normalise(out, parts.at(i, u, gaps[i]).orientation),
