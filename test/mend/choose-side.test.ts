@@ -1,5 +1,5 @@
 import { type RotationTrack, keyOrientation, logMap, playAs, relative, rotationTrack } from '@slewcurve/core';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { applied, codeOf, numbersOf } from '../support/edit-acceptance.js';
 
@@ -23,6 +23,11 @@ function turnAt(track: RotationTrack, time: number): number {
 function moved(track: RotationTrack, pattern: number): RotationTrack {
   const values = track.values.map((number, i) => number + ((pattern >> i) & 1 ? 1e-6 : -1e-6));
   return { ...track, values };
+}
+
+/** The code of what choosing a side about own y at key 1 is refused for. */
+function refusal(track: RotationTrack, rest: object = {}): string | undefined {
+  return codeOf(() => applied(track, { verb: 'choose side', keys: [1], axis: [0, 1, 0], ...rest }));
 }
 
 describe('choose side', () => {
@@ -130,22 +135,20 @@ describe('choose side', () => {
 
   it('never guesses: refuses without an axis, with one that tells nothing, and where nothing turns', () => {
     const half = twoKeys(180);
-    const code = (track: RotationTrack, rest: object): string | undefined =>
-      codeOf(() => applied(track, { verb: 'choose side', keys: [1], axis: [0, 1, 0], ...rest }));
-    expect(code(half, { axis: undefined })).toBe('step.needs-axis');
-    expect(code(half, { axis: [1, 0, 0] })).toBe('step.axis-tells-nothing');
-    expect(code(half, { keys: undefined })).toBe('step.needs-keys');
-    expect(code(half, { keys: [0] })).toBe('step.bad-key');
-    expect(code(half, { keys: [2] })).toBe('step.bad-key');
-    expect(code(half, { span: [0, 0.5] })).toBe('step.nothing-left');
-    expect(code(twoKeys(10), { axis: [0, -1, 0] })).toBe('step.not-half-a-turn');
-    expect(code(twoKeys(0), {})).toBe('step.axis-tells-nothing');
-    expect(code(rotationTrack({ ...half, breaks: [0] }), {})).toBe('step.nothing-between');
-    expect(code(rotationTrack({ ...half, interpolation: 'STEP' }), {})).toBe('step.nothing-between');
+    expect(refusal(half, { axis: undefined })).toBe('step.needs-axis');
+    expect(refusal(half, { axis: [1, 0, 0] })).toBe('step.axis-tells-nothing');
+    expect(refusal(half, { keys: undefined })).toBe('step.needs-keys');
+    expect(refusal(half, { keys: [0] })).toBe('step.bad-key');
+    expect(refusal(half, { keys: [2] })).toBe('step.bad-key');
+    expect(refusal(half, { span: [0, 0.5] })).toBe('step.nothing-left');
+    expect(refusal(twoKeys(10), { axis: [0, -1, 0] })).toBe('step.not-half-a-turn');
+    expect(refusal(twoKeys(0), {})).toBe('step.axis-tells-nothing');
+    expect(refusal(rotationTrack({ ...half, breaks: [0] }), {})).toBe('step.nothing-between');
+    expect(refusal(rotationTrack({ ...half, interpolation: 'STEP' }), {})).toBe('step.nothing-between');
     expect(
-      code(rotationTrack({ times: [0, 1], values: [0, 0, 0, 0, 3, 0], interpolation: 'EULER' }), {}),
+      refusal(rotationTrack({ times: [0, 1], values: [0, 0, 0, 0, 3, 0], interpolation: 'EULER' }), {}),
     ).toBe('step.needs-quaternions');
-    expect(code({ ...half, values: half.values.map((n, i) => (i === 5 ? NaN : n)) }, {})).toBe(
+    expect(refusal({ ...half, values: half.values.map((n, i) => (i === 5 ? NaN : n)) }, {})).toBe(
       'step.no-direction',
     );
   });

@@ -1,5 +1,5 @@
 import { angleBetween, keyOrientation, playAs, rotationTrack } from '@slewcurve/core';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { applied, codeOf, numbersOf } from '../support/edit-acceptance.js';
 import { grid, keyed, smoothTracks } from '../support/smooth-track.js';

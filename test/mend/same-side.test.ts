@@ -1,12 +1,5 @@
-import {
-  alignSigns,
-  angleBetween,
-  keyOrientation,
-  playAs,
-  rotationTrack,
-  signChanges,
-} from '@slewcurve/core';
-import fc from 'fast-check';
+import { alignSigns, angleBetween, playAs, rotationTrack, signChanges } from '@slewcurve/core';
+import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { applied, codeOf, numbersOf } from '../support/edit-acceptance.js';
 import { grid, keyed, smoothTracks } from '../support/smooth-track.js';
@@ -24,6 +17,8 @@ function negated(track: ReturnType<typeof keyed>, flip: (key: number) => boolean
 /** A fixed scatter: about half of the keys, in no order that repeats soon. */
 const scattered = (key: number): boolean => key > 0 && Math.sin(key * key * 1.37) > 0;
 
+const isFourth = (key: number): boolean => key === 4;
+
 describe('same side', () => {
   it.each(['LINEAR', 'CUBICSPLINE'] as const)(
     'NEEDS A1: gives back a 1,000-key %s track from random sign changes, to 1e-6° and 1e-6 of peak speed',
@@ -35,10 +30,10 @@ describe('same side', () => {
       for (const playback of ['as-written', 'raw-chord', 'finite-cubic'] as const) {
         const [was, is] = [playAs(original, playback), playAs(track, playback)];
         const [p, q] = [new Float64Array(4), new Float64Array(4)];
+        let worst = 0;
         for (let time = 0; time < was.end; time += 1 / 481)
-          expect(
-            angleBetween(was.orientation(p, time), is.orientation(q, time)) * DEGREES,
-          ).toBeLessThanOrEqual(1e-6);
+          worst = Math.max(worst, angleBetween(was.orientation(p, time), is.orientation(q, time)) * DEGREES);
+        expect(worst).toBeLessThanOrEqual(1e-6);
         const peak = was.peak(was.start, was.end).rate;
         expect(Math.abs(is.peak(is.start, is.end).rate / peak - 1)).toBeLessThanOrEqual(1e-6);
       }
@@ -84,10 +79,9 @@ describe('same side', () => {
   });
 
   it('says that only a CUBICSPLINE plays otherwise afterwards', () => {
-    const flips = (key: number): boolean => key === 4;
-    const linear = applied(negated(keyed(WAVE, grid(9), 'LINEAR'), flips), { verb: 'same side' });
+    const linear = applied(negated(keyed(WAVE, grid(9), 'LINEAR'), isFourth), { verb: 'same side' });
     expect(linear.span).toBeUndefined();
-    const cubic = applied(negated(keyed(WAVE, grid(9), 'CUBICSPLINE'), flips), { verb: 'same side' });
+    const cubic = applied(negated(keyed(WAVE, grid(9), 'CUBICSPLINE'), isFourth), { verb: 'same side' });
     expect(cubic.span).toEqual([3 / 30, 5 / 30]);
   });
 

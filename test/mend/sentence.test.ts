@@ -1,5 +1,5 @@
 import { type Step, VERBS, parseSentence, sayStep } from '@slewcurve/mend';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { codeOf } from '../support/edit-acceptance.js';
 

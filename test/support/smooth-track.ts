@@ -1,5 +1,5 @@
 import { type Interpolation, type RotationTrack, expMap, multiply, rotationTrack } from '@slewcurve/core';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 
 const DEGREE = Math.PI / 180;
 
@@ -15,12 +15,12 @@ export function poseAt({ spin, swing, hertz, phase }: Motion, time: number): Flo
   const wave = Math.sin(2 * Math.PI * hertz * time + phase);
   const other = Math.cos(Math.PI * hertz * time);
   const [x, y, z] = swing;
-  const turned = expMap(
+  const spun = expMap(
     new Float64Array(4),
     spin.map((rate) => rate * time * DEGREE),
   );
   const swung = expMap(new Float64Array(4), [x * wave * DEGREE, y * other * DEGREE, z * wave * DEGREE]);
-  return multiply(turned, turned, swung);
+  return multiply(spun, spun, swung);
 }
 
 /** The motion keyed at `times`, every key on the side of the one before; tangents are the motion's own. */

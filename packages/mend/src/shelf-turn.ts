@@ -9,9 +9,10 @@ import {
   multiply,
   playableTrack,
   relative,
+  replaceTrack,
 } from '@slewcurve/core';
 import { placeOf } from './acted-keys.js';
-import { isPlayable, playableNeighbour } from './stored-key.js';
+import { isPlayable, playableNeighbour, storedValue } from './stored-key.js';
 
 /** Where the shelf's vector lies among those of a local roughness fit: lone key, shelf, corner. */
 const SHELF_AT = 3;
@@ -45,17 +46,40 @@ export function shelfTurn(track: RotationTrack, key: number): Float64Array {
   return stepBeyondRates(track, before, key);
 }
 
-/** The turn that takes a shelf's tail back: d of `d·q` (`side` parent) or of `q·d` (own), as a rotation vector, radians. */
+/**
+ * The turn that takes a shelf's tail back: d of `d·q` (`side` parent) or of `q·d` (own), as a rotation vector, radians. The fit is
+ * repeated on the track so turned until no shelf is left: one fit is exact to first order alone, as its axes are those of one key.
+ */
 export function turnBack(track: RotationTrack, key: number, side: 'own' | 'parent'): Float64Array {
-  const back = shelfTurn(track, key).map((angle) => -angle);
-  if (side === 'own') return back;
-  const pose = keyOrientation(new Float64Array(4), track, key);
-  const turn = multiply(
-    new Float64Array(4),
-    multiply(new Float64Array(4), pose, expMap(new Float64Array(4), back)),
-    conjugate(new Float64Array(4), pose),
-  );
+  const stood = keyOrientation(new Float64Array(4), track, key);
+  const pose = Float64Array.from(stood);
+  const turn = new Float64Array(4);
+  let seated = track;
+  // Each pass leaves the last one's rest times the turn of a few keys; eight passes end at float64's own step.
+  for (let pass = 0; pass < 8; pass++) {
+    const rest = shelfTurn(seated, key).map((angle) => -angle);
+    multiply(pose, pose, expMap(new Float64Array(4), rest));
+    if (side === 'own') relative(turn, stood, pose);
+    else multiply(turn, pose, conjugate(new Float64Array(4), stood));
+    if (Math.hypot(...rest) < 1e-14) break;
+    seated = withTailTurned(track, key, side, turn);
+  }
   return logMap(new Float64Array(3), turn);
+}
+
+function withTailTurned(
+  track: RotationTrack,
+  first: number,
+  side: 'own' | 'parent',
+  turn: Float64Array,
+): RotationTrack {
+  const values = Float64Array.from(track.values);
+  for (let key = first; key < track.times.length; key++) {
+    const value = storedValue(track, key, values);
+    if (side === 'own') multiply(value, value, turn);
+    else multiply(value, turn, value);
+  }
+  return replaceTrack(track, { values });
 }
 
 function stepBeyondRates(track: RotationTrack, before: number, key: number): Float64Array {

@@ -1,0 +1,40 @@
+import { VERBS, verbNamed } from '@slewcurve/mend';
+import { describe, expect, it } from 'vitest';
+import { codeOf } from '../support/edit-acceptance.js';
+
+describe('VERBS', () => {
+  it('holds the edits that are built, each with a name, an opening and words of the trade of its own', () => {
+    expect(VERBS.map(({ name }) => name)).toEqual([
+      'same side',
+      'choose side',
+      'lift out',
+      'bridge',
+      're-seat',
+      'normalise',
+    ]);
+    expect(new Set(VERBS.map(({ opening }) => opening)).size).toBe(VERBS.length);
+    for (const verb of VERBS) {
+      expect(verb.summary).toMatch(/^[A-Z].*\.$/);
+      expect(verb.alsoCalled.length).toBeGreaterThan(2);
+      expect(verbNamed(verb.name)).toBe(verb);
+    }
+    // RULES 20: `--proposed` never re-seats unless allowed by name.
+    expect(VERBS.filter(({ needsAllowing }) => needsAllowing).map(({ name }) => name)).toEqual(['re-seat']);
+  });
+
+  it.each([
+    ['same sid', 'same side'],
+    ['normalize', 'normalise'],
+    ['outlier', 'lift out'],
+    ['Re-Seat', 're-seat'],
+    ['half turn', 'choose side'],
+    ['fill gap', 'bridge'],
+  ])('asks of %j whether %j is meant', (name, meant) => {
+    expect(codeOf(() => verbNamed(name))).toBe('card.unknown-verb');
+    expect(() => verbNamed(name)).toThrow(`Did you mean "${meant}"?`);
+  });
+
+  it('lists all edits where none is near', () => {
+    expect(() => verbNamed('xylophone')).toThrow('There are: same side, choose side,');
+  });
+});
