@@ -51,6 +51,14 @@ export { accelerationFloor, angleFloor, rateFloor } from './track/noise-floor.js
 export { playableTrack } from './track/playable-track.js';
 export { replaceTrack, type TrackChanges } from './track/replace-track.js';
 export { segmentAngle } from './track/segment-angle.js';
+export { spinTrack, type Spin } from './track/spin-track.js';
+export {
+  angleTrackToLinear,
+  LARGEST_STEP,
+  subdivideAngles,
+  type SubdividedAngles,
+} from './track/subdivide-angles.js';
+export { turnsCurve } from './curve/turns-curve.js';
 export { medianGap, regime, type Regime } from './track/regime.js';
 export {
   BREAK_KINDS,

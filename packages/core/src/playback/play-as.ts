@@ -7,7 +7,7 @@ import { PLAYBACKS } from './registry.js';
 /**
  * The curve by which a playback plays a track. Faulty keys are left out (`playableTrack`), so a curve never gives NaN.
  *
- * @throws SlewcurveError `playback.unknown`, `playback.needs-tangents`
+ * @throws SlewcurveError `playback.unknown`, `playback.needs-tangents`, `playback.needs-angles`
  */
 export function playAs(track: RotationTrack, id: PlaybackId): Curve {
   if (!Object.hasOwn(PLAYBACKS, id))

@@ -3,7 +3,15 @@ import type { RotationTrack } from '../track/rotation-track.js';
 
 /** Ids of the playbacks that are built; the only spelling anywhere. */
 export type PlaybackId =
-  'as-written' | 'short-way' | 'chord' | 'raw-chord' | 'stored-cubic' | 'finite-cubic' | 'step';
+  | 'as-written'
+  | 'short-way'
+  | 'long-way'
+  | 'chord'
+  | 'raw-chord'
+  | 'stored-cubic'
+  | 'finite-cubic'
+  | 'euler-linear'
+  | 'step';
 
 /** How some program plays a file: its interpolation and its sign rule. */
 export interface Playback {
@@ -12,6 +20,6 @@ export interface Playback {
   readonly says: string;
   /** Whether `q` and `-q` at a key of this track play the same. */
   signSafe(track: RotationTrack): boolean;
-  /** @throws SlewcurveError `playback.needs-tangents` where the track has none and the playback needs them. */
+  /** @throws SlewcurveError `playback.needs-tangents`, `playback.needs-angles` where the playback needs them and the track has none. */
   play(track: RotationTrack): Curve;
 }

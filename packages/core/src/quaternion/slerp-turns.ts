@@ -8,7 +8,7 @@ import { relative } from './relative.js';
 /**
  * From `a` to `b` at constant rate with `wholeTurns` more about the short way's axis: a · Exp(t(θ + 2πk)n), θ the short angle,
  * n its axis. Negative turns go against it: −1 is the long way round, 0 is `slerp`. `t` is any finite number. Equal orientations
- * have no axis to wind about: the turns then go about own x; give the axis with `spinTrack` instead. Exactly half a turn apart,
+ * have no axis to wind about and stay as they are: wind with `spinTrack`, which is given the axis. Exactly half a turn apart,
  * `wholeTurns` counts from the way that the stored signs tell. The result is unit, follows on from `a` without a jump of sign,
  * and is `a` to the bit at `t = 0` and `b` up to sign to the bit at `t = 1`. Inputs need not be unit. `out` may be an input.
  */
@@ -39,9 +39,8 @@ export function slerpTurns<T extends NumberStore>(
     out[3] = sign * bw;
     return out;
   }
-  const angle = t * (short + 2 * Math.PI * wholeTurns);
-  const scale = short > 0 ? angle / short : 0;
-  turn[0] = short > 0 ? turn[0] * scale : angle;
+  const scale = short > 0 ? t * (1 + (2 * Math.PI * wholeTurns) / short) : 0;
+  turn[0] *= scale;
   turn[1] *= scale;
   turn[2] *= scale;
   return normalise(out, multiply(turn, from, expMap(turn, turn)));

@@ -1,4 +1,5 @@
 import { SlewcurveError } from '../errors.js';
+import { eulerSequence } from '../quaternion/euler/euler-sequence.js';
 import { EXACT_STORAGE, type Storage } from './storage.js';
 
 /** How the file says its keys are joined. STEP, LINEAR and CUBICSPLINE are glTF 2.0's; EULER joins angles as numbers. */
@@ -72,7 +73,7 @@ const NOWHERE: TrackSource = Object.freeze({
  * A track as a file stores it: the shape is checked (lengths, interpolation, breaks), the numbers are kept, faulty ones too, so
  * that rules can report them.
  *
- * @throws SlewcurveError `track.bad-length`, `track.unknown-interpolation`, `track.bad-break`
+ * @throws SlewcurveError `track.bad-length`, `track.unknown-interpolation`, `track.bad-break`, `euler.unknown-sequence`
  */
 export function storedTrack(input: RotationTrackInput): RotationTrack {
   const { interpolation = 'LINEAR', id = '', clip = '', breaks = [] } = input;
@@ -83,6 +84,7 @@ export function storedTrack(input: RotationTrackInput): RotationTrack {
       `${interpolation} is not one of STEP, LINEAR, CUBICSPLINE, EULER.`,
       place,
     );
+  if (input.sequence !== undefined) eulerSequence(input.sequence);
   const size = VALUES_PER_KEY[interpolation];
   if (input.values.length !== size * input.times.length)
     throw new SlewcurveError(
