@@ -15,7 +15,10 @@ function signFlip(track: Track): Entry[] {
     return dot < 0 && angles[k] < 174;
   }).map((k) => k + 1);
   if (!keys.length) return [];
-  return [entry(track, 'turn.sign-flip', keys, keys.length, 'sign changes', 0, { level: 'note' })];
+  const longest = 360 - Math.min(...keys.map((k) => angles[k - 1]));
+  return [
+    entry(track, 'turn.sign-flip', keys, longest, 'deg', 1e-3, { level: 'note', means: 'the long way' }),
+  ];
 }
 
 function half(track: Track): Entry[] {
