@@ -9,27 +9,25 @@ import {
 } from 'lit';
 import { guard } from 'lit/directives/guard.js';
 import { repeat } from 'lit/directives/repeat.js';
-import { caretsOfRow, numberNotes, type NumberedNote } from './chart/carets.js';
-import { frameLength, peakSpeed, trackName, type ChartData, type MarginNote } from './chart/chart-data.js';
+import { caretsOfRow, numberNotes, spansOfRow, type NumberedNote } from './chart/carets.js';
+import { peakSpeed, trackName, usualSpeed, type ChartData, type MarginNote } from './chart/chart-data.js';
 import { chartIntent, type ChartIntent } from './chart/chart-keys.js';
 import { ROW, rowHeight, rowPicture } from './chart/chart-row.js';
 import { chartStyles } from './chart/chart-styles.js';
+import { chartChoices } from './chart/choices.js';
 import { chartHead, keyWords, readingWords, rowTable, twinWords } from './chart/chart-words.js';
-import { foldChoices, foldRows, rowAt, type FoldRow } from './chart/fold.js';
-import { marginOf } from './chart/margin.js';
-import { sayAngle, saySpan, sayTime } from './chart/quantity.js';
-import { linearScale, logScale, type ScaleKind, type SpeedScale } from './chart/scale.js';
+import { closeUpSpan } from './chart/close-up-span.js';
+import { foldRows, rowAt, type FoldRow } from './chart/fold.js';
+import { marginOf, packNotes } from './chart/margin.js';
+import { sayAngle, sayTime } from './chart/quantity.js';
+import { linearScale, speedScale, type ScaleKind, type SpeedScale } from './chart/scale.js';
 import { SheetPointer } from './chart/sheet-pointer.js';
 import { rowSentence, sayReading } from './chart/text-twin.js';
 import { traceStyles } from './chart/trace-styles.js';
 import { controls } from './theme/controls.js';
 import { paper } from './theme/paper.js';
-import { valueOf } from './theme/value-of.js';
 
 type Span = readonly [number, number];
-
-/** Playbacks that differ more than this many times are told apart by powers of ten. */
-const APART = 20;
 
 /**
  * Chart: one track. Its angular speed as played, on paper folded into rows, with its keys as posts, findings as carets and notes
@@ -63,7 +61,7 @@ export class SlewChart extends LitElement {
   declare time: number;
   /** Seconds a row; left out: one loop where the clip repeats, else 10 s, 5 s where narrow. */
   declare fold: number | undefined;
-  /** Left out: linear, unless the motions compared differ too much. */
+  /** Left out: `usual`. */
   declare scale: ScaleKind | undefined;
   /** Where an edit would act, seconds. */
   declare span: Span | undefined;
@@ -147,15 +145,18 @@ export class SlewChart extends LitElement {
   }
 
   private chooseScale(data: ChartData): SpeedScale {
-    const peak = peakSpeed(data.motion).speed;
-    const others = [data.before, data.second].map((other) => (other ? peakSpeed(other.motion).speed : 0));
-    const all = Math.max(peak, data.noiseFloor * 4, ...others);
-    const kind = this.scale ?? (all > APART * Math.max(peak, 1e-9) ? 'log' : 'linear');
-    return kind === 'log' ? logScale(all) : linearScale(all);
+    const peaks = [data.motion, data.before?.motion, data.second?.motion].map((motion) =>
+      motion ? peakSpeed(motion).speed : 0,
+    );
+    const usual = Math.max(usualSpeed(data.motion), data.noiseFloor * 2, (data.limit?.speed ?? 0) / 2);
+    return speedScale(this.scale ?? 'usual', usual, Math.max(...peaks, data.noiseFloor * 4));
   }
 
-  protected override updated(): void {
+  protected override updated(changed: PropertyValues<this>): void {
     this.measure();
+    // The cursor alone moves nothing in the margin; asking for heights on every pointer move would cost frames.
+    if ([...changed.keys()].some((name) => name !== 'time' && name !== 'hover' && name !== 'span'))
+      packNotes(this.renderRoot);
     this.sight ??= new IntersectionObserver((entries) => this.see(entries), { rootMargin: '400px' });
     for (const row of this.renderRoot.querySelectorAll('.row')) this.sight.observe(row);
   }
@@ -186,8 +187,20 @@ export class SlewChart extends LitElement {
     const rows = this.rows;
     const now = this.hover ?? this.time;
     const here = rowAt(rows, now);
-    return html`${chartHead(data)} ${this.choices(data)} ${this.readout(data, now)}
-      <ol aria-label="Rows of the trace" @pointerleave=${this.leave}>
+    return html`${chartHead(data)}
+      ${chartChoices(
+        { data, fold: this.foldNow, scale: this.scale ?? 'usual', opened: this.opened !== undefined },
+        {
+          fold: (fold) => this.chooseFold(fold),
+          scale: (scale) => (this.scale = scale),
+          closeUp: () => this.act({ kind: this.opened ? 'back' : 'open-close-up' }),
+        },
+      )}
+      ${this.readout(data, now)}
+      <div class="heads" aria-hidden="true">
+        <span>time</span><span>angular speed, as played</span><span>odometer</span><span>findings</span>
+      </div>
+      <ol class="rows" aria-label="Rows of the trace" @pointerleave=${this.leave}>
         ${repeat(
           rows,
           (row) => row.index,
@@ -196,34 +209,6 @@ export class SlewChart extends LitElement {
       </ol>
       ${keyWords()} ${guard([data], () => twinWords(data))}
       ${guard([data, this.foldNow], () => rowTable(data, this.foldNow))}`;
-  }
-
-  private choices(data: ChartData): TemplateResult {
-    const folds = foldChoices(data.motion.end - data.motion.start, data.loop);
-    const all = folds.includes(this.foldNow) ? folds : [...folds, this.foldNow].toSorted((a, b) => a - b);
-    return html`<div class="choices on-screen">
-      <label>
-        A row is
-        <select @change=${this.chooseFold}>
-          ${all.map(
-            (fold) =>
-              html`<option value=${fold} ?selected=${fold === this.foldNow}>
-                ${saySpan(fold)}${fold === data.loop ? ', one loop' : ''}
-              </option>`,
-          )}
-        </select>
-      </label>
-      <label>
-        Speeds stand
-        <select @change=${this.chooseSpeeds}>
-          <option value="linear" ?selected=${this.speedScale.kind === 'linear'}>evenly</option>
-          <option value="log" ?selected=${this.speedScale.kind === 'log'}>by powers of ten</option>
-        </select>
-      </label>
-      <button class="plain" @click=${() => this.act({ kind: this.opened ? 'back' : 'open-close-up' })}>
-        ${this.opened ? 'Close the close-up' : 'Open a close-up here'}
-      </button>
-    </div>`;
   }
 
   private readout(data: ChartData, now: number): TemplateResult {
@@ -300,6 +285,7 @@ export class SlewChart extends LitElement {
       width: this.width,
       bands: ROW,
       carets: caretsOfRow(this.numbered, row, this.width),
+      spans: spansOfRow(this.numbered, row, this.width),
       chosen: this.chosen,
       says: rowSentence(data, row),
     });
@@ -311,7 +297,7 @@ export class SlewChart extends LitElement {
       .data=${data}
       .span=${this.opened}
       .time=${now}
-      .scale=${this.speedScale.kind}
+      .scale=${this.scale ?? 'usual'}
       .chosen=${this.chosen}
       @span-moved=${(event: CustomEvent<{ span: Span }>) => (this.opened = event.detail.span)}
       @closed=${() => this.act({ kind: 'back' })}
@@ -431,28 +417,15 @@ export class SlewChart extends LitElement {
     this.send('cursor-moved', { time: this.time, settled: true });
   };
 
-  private readonly chooseFold = (event: Event): void => {
-    this.fold = Number(valueOf(event));
+  private chooseFold(fold: number): void {
+    this.fold = fold;
     this.inSight = new Set();
     this.sight?.disconnect();
     this.sight = undefined;
-    this.send('fold-chosen', { fold: this.fold });
-  };
-
-  private readonly chooseSpeeds = (event: Event): void => {
-    this.scale = valueOf(event) === 'log' ? 'log' : 'linear';
-  };
+    this.send('fold-chosen', { fold });
+  }
 
   private send(type: string, detail: unknown): void {
     this.dispatchEvent(new CustomEvent(type, { detail, bubbles: true, composed: true }));
   }
-}
-
-/** A few seconds around the cursor, or the span with room at both sides; at least twelve frames. */
-function closeUpSpan(time: number, span: Span | undefined, fold: number, data: ChartData): Span {
-  const least = 12 * frameLength(data);
-  const room = span ? Math.max(least, (span[1] - span[0]) * 1.5) : Math.max(least, Math.min(2, fold / 4));
-  const middle = span ? (span[0] + span[1]) / 2 : time;
-  const from = Math.max(data.motion.start, Math.min(middle - room / 2, data.motion.end - room));
-  return [from, Math.min(data.motion.end, from + room)];
 }

@@ -9,21 +9,22 @@ import {
   type TemplateResult,
 } from 'lit';
 import { guard } from 'lit/directives/guard.js';
-import { caretsOfRow, numberNotes } from './chart/carets.js';
+import { caretsOfRow, numberNotes, spansOfRow } from './chart/carets.js';
 import { peakSpeed, type ChartData } from './chart/chart-data.js';
 import { TALL_ROW, rowPicture } from './chart/chart-row.js';
 import { traceStyles } from './chart/trace-styles.js';
+import { moveSpan } from './chart/close-up-span.js';
 import type { FoldRow } from './chart/fold.js';
-import { keyNumbers, moveSpan, type KeyNumbers } from './chart/key-numbers.js';
+import { keyNumbers, type KeyNumbers } from './chart/key-numbers.js';
 import { firstKeyAfter, firstKeyAt, nearestKey } from './chart/posts.js';
 import { sayAngle, sayNumber, sayRate, saySpan, sayTime } from './chart/quantity.js';
-import { linearScale, logScale, type ScaleKind, type SpeedScale } from './chart/scale.js';
+import { linearScale, logScale, niceStep, type ScaleKind, type SpeedScale } from './chart/scale.js';
 import { controls } from './theme/controls.js';
 import { shareAcross } from './theme/hold-pointer.js';
 import { paper } from './theme/paper.js';
 
-/** Key numbers are written under posts that stand at least this far apart, px. */
-const NUMBER_ROOM = 22;
+/** Key numbers are written at least this far apart, px. */
+const NUMBER_ROOM = 34;
 
 /**
  * Close-up: a few seconds opened between two rows, with one post a key, the speed at each key as a plain knob, and the numbers of
@@ -71,6 +72,7 @@ export class SlewCloseUp extends LitElement {
         display: grid;
         grid-template-columns: minmax(0, 1fr) 15rem;
         gap: 1.5rem;
+        align-items: start;
       }
       .sheet {
         position: relative;
@@ -201,13 +203,15 @@ export class SlewCloseUp extends LitElement {
   private picture(data: ChartData, row: FoldRow, key: number): TemplateResult {
     if (this.width === 0) return html`<svg width="1" height=${TALL_ROW.bottom} aria-hidden="true"></svg>`;
     const scale = this.ownScale(data, row);
+    const numbered = numberNotes(data.notes);
     return html`${rowPicture({
       data,
       row,
       scale,
       width: this.width,
       bands: TALL_ROW,
-      carets: caretsOfRow(numberNotes(data.notes), row, this.width),
+      carets: caretsOfRow(numbered, row, this.width),
+      spans: spansOfRow(numbered, row, this.width),
       chosen: this.chosen,
       says: `Keys ${firstKeyAt(data.keys, row.from)} to ${firstKeyAfter(data.keys, row.to) - 1} of the trace`,
     })}
@@ -237,14 +241,14 @@ export class SlewCloseUp extends LitElement {
     if ((last - first) * 8 > this.width) return nothing;
     const { base, top, feet, bottom } = TALL_ROW;
     const at = (key: number): number => ((data.keys[key] - row.from) / (row.to - row.from)) * this.width;
-    const room = this.width / Math.max(1, last - first) >= NUMBER_ROOM;
+    const every = niceStep(Math.max(1, (NUMBER_ROOM * (last - first)) / this.width));
     const keys = Array.from({ length: last - first }, (_, i) => first + i);
     return html`<svg class="paper over" width=${this.width} height=${bottom} aria-hidden="true">
       ${keys.map((key) => {
         const { speed } = data.motion.read(data.keys[key]);
         const mark = key === here ? 'here' : '';
         return svg`<circle class="knob ${mark}" cx=${at(key)} cy=${base - scale.share(speed) * (base - top)} r="3.2" />
-          ${room || key === here ? svg`<text class="key ${mark}" x=${at(key)} y=${feet + 9}>${key}</text>` : nothing}`;
+          ${key === here || (key % every === 0 && Math.abs(at(key) - at(here)) >= NUMBER_ROOM) ? svg`<text class="key ${mark}" x=${at(key)} y=${feet + 11}>${key}</text>` : nothing}`;
       })}
     </svg>`;
   }

@@ -7,7 +7,7 @@ import {
   type PropertyValues,
   type TemplateResult,
 } from 'lit';
-import { frameLength, peakSpeed, trackName, type ChartData } from './chart/chart-data.js';
+import { frameLength, trackName, usualSpeed, type ChartData } from './chart/chart-data.js';
 import { frameBy } from './chart/chart-keys.js';
 import { sayNumber, sayRate, sayTime } from './chart/quantity.js';
 import { describeMoment } from './porthole/describe.js';
@@ -109,7 +109,8 @@ export class SlewPorthole extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues<this>): void {
-    if (changed.has('data') && this.data) this.fullRod = Math.max(peakSpeed(this.data.motion).speed, 1e-9);
+    if (changed.has('data') && this.data)
+      this.fullRod = Math.max(1.5 * usualSpeed(this.data.motion), this.data.noiseFloor, 1e-9);
     if (changed.has('playing')) this.wind();
   }
 
@@ -173,8 +174,8 @@ export class SlewPorthole extends LitElement {
         <figcaption>
           <b>3-D view at ${sayTime(this.time, 2)}</b>
           <span id="words">${describeMoment(data.motion, this.time, data.noiseFloor)}</span>
-          A tick across the path every 0.1 s; the rod is the turn axis, full at ${sayRate(this.fullRod)}. Drag
-          or arrow keys look round.
+          A tick across the path every 0.1 s; the rod is the turn axis, at full length from
+          ${sayRate(this.fullRod)}. Drag or arrow keys look round.
         </figcaption>
       </figure>
       ${this.controls(data)}<span class="swatch"></span>`;

@@ -198,7 +198,7 @@ export class SlewRoster extends LitElement {
     const { first, last } = this.window;
     const { pitch } = this.place;
     return html`<div class="heads" aria-hidden="true">
-        <span>track</span><span>speed against its own habit, over the clip</span><span>found</span
+        <span>track</span><span>the darker, the faster than is usual there</span><span>found</span
         ><span>greatest speed</span><span>length</span>
       </div>
       <div

@@ -9,8 +9,6 @@ export interface Caret {
   readonly level: NoteLevel;
   readonly status: MarginNote['status'];
   readonly x: number;
-  /** Both ends of the span, where it is wide enough to be ruled. */
-  readonly span?: readonly [number, number];
   /** How many carets this one stands for: neighbours of one note that would cover one another. */
   readonly stands: number;
 }
@@ -27,10 +25,8 @@ export function caretsOfRow(notes: readonly NumberedNote[], row: FoldRow, width:
   for (const { note, number } of notes) {
     let last: { caret: Caret; index: number } | undefined;
     for (const place of note.places.toSorted((a, b) => a.time - b.time)) {
-      if (place.span[1] < row.from || place.span[0] >= row.to) continue;
-      const x = Math.min(width, Math.max(0, at(place.time)));
-      const from = Math.max(0, at(place.span[0]));
-      const to = Math.min(width, at(place.span[1]));
+      if (place.time < row.from || place.time >= row.to) continue;
+      const x = at(place.time);
       if (last && x - last.caret.x < CARET_ROOM) {
         last.caret = {
           ...last.caret,
@@ -46,13 +42,36 @@ export function caretsOfRow(notes: readonly NumberedNote[], row: FoldRow, width:
         level: place.level,
         status: note.status,
         x,
-        ...(to - from >= SPAN_ROOM && { span: [from, to] as const }),
         stands: 1,
       };
       last = { caret, index: carets.push(caret) - 1 };
     }
   }
   return carets.toSorted((a, b) => a.x - b.x);
+}
+
+/** A stretch of a finding in a row, ruled under the trace. */
+export interface CaretSpan {
+  readonly note: string;
+  readonly status: MarginNote['status'];
+  readonly from: number;
+  readonly to: number;
+}
+
+/** Stretches wide enough to be ruled; they go on through all the rows that they touch. */
+export function spansOfRow(notes: readonly NumberedNote[], row: FoldRow, width: number): CaretSpan[] {
+  const at = (time: number): number => ((time - row.from) / (row.to - row.from)) * width;
+  return notes.flatMap(({ note }) =>
+    note.places
+      .filter(({ span }) => span[1] > row.from && span[0] < row.to)
+      .map(({ span }) => ({
+        note: note.id,
+        status: note.status,
+        from: Math.max(0, at(span[0])),
+        to: Math.min(width, at(span[1])),
+      }))
+      .filter(({ from, to }) => to - from >= SPAN_ROOM),
+  );
 }
 
 /** A note with the number that it has on the page. */

@@ -87,6 +87,12 @@ export function frameLength(data: Pick<ChartData, 'frameRate'>): number {
   return data.frameRate !== undefined && data.frameRate > 0 ? 1 / data.frameRate : 1 / 60;
 }
 
+/** The 95th percentile of the speeds of a motion, deg/s: what is usual for it. In `columns` looks of equal length. */
+export function usualSpeed(motion: Motion, columns = 1024): number {
+  const { greatest } = motion.columns(motion.start, motion.end, columns);
+  return greatest.toSorted()[Math.floor(0.95 * (columns - 1))];
+}
+
 /** Greatest speed of the whole motion, deg/s, in `columns` looks. */
 export function peakSpeed(motion: Motion, columns = 512): { readonly speed: number; readonly time: number } {
   let column = 0;

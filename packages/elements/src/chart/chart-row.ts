@@ -1,25 +1,35 @@
 import { html, nothing, svg, type TemplateResult } from 'lit';
-import { caretPath, type Caret } from './carets.js';
+import { caretPath, type Caret, type CaretSpan } from './carets.js';
 import type { ChartData } from './chart-data.js';
 import type { FoldRow } from './fold.js';
 import { holdStretches } from './holds.js';
 import { differenceColumns, type Motion, type SpeedColumns } from './motion.js';
-import { keyLine } from './posts.js';
+import { keyLine, type Rail } from './posts.js';
 import { sayAngle, sayNumber, sayRate, saySpan } from './quantity.js';
 import { speedTicks, tickPlaces, timeTicks, type SpeedScale } from './scale.js';
-import { tracePath, withinMotion, type TracePlace } from './trace-path.js';
+import { overshoots, tracePath, withinMotion, type TracePlace } from './trace-path.js';
 
 /** Heights of a row's bands, CSS pixels from its top. */
-export const ROW = { top: 18, base: 94, posts: 98, feet: 110, carets: 114, caret: 9, bottom: 138 } as const;
-/** The same for the close-up, which is tall. */
+export const ROW = {
+  top: 18,
+  base: 94,
+  posts: 98,
+  feet: 109,
+  times: 122,
+  carets: 114,
+  caret: 9,
+  bottom: 138,
+} as const;
+/** The same for the close-up, which is tall and has room for the keys' numbers. */
 export const TALL_ROW = {
   top: 22,
   base: 250,
   posts: 255,
-  feet: 273,
-  carets: 278,
+  feet: 270,
+  times: 299,
+  carets: 290,
   caret: 10,
-  bottom: 302,
+  bottom: 314,
 } as const;
 export type RowBands = { readonly [Band in keyof typeof ROW]: number };
 const DIFFERENCE = 34;
@@ -32,6 +42,7 @@ export interface RowScene {
   readonly width: number;
   readonly bands: RowBands;
   readonly carets: readonly Caret[];
+  readonly spans: readonly CaretSpan[];
   /** The note that is chosen: its carets are ringed. */
   readonly chosen?: string | undefined;
   /** What the picture is called. */
@@ -60,8 +71,8 @@ export function rowPicture(scene: RowScene): TemplateResult {
     ${ruling(scene)} ${noiseBand(scene)} ${limitLine(scene)} ${holds(scene, now)}
     ${data.before ? traceLine(scene, columnsOf(scene, data.before.motion, columns), 'before') : nothing}
     ${data.second ? traceLine(scene, columnsOf(scene, data.second.motion, columns), 'second') : nothing}
-    ${traceLine(scene, now, 'trace')} ${keyMarks(scene)} ${caretMarks(scene)} ${differenceLane(scene)}
-    ${foldMark(scene)}
+    ${traceLine(scene, now, 'trace')} ${offPaper(scene, now)} ${keyMarks(scene)} ${spanRules(scene)}
+    ${caretMarks(scene)} ${differenceLane(scene)} ${foldMark(scene)}
   </svg>`;
 }
 
@@ -79,6 +90,24 @@ function traceLine(scene: RowScene, columns: SpeedColumns, kind: string): Templa
   return svg`<path class="line ${kind}" d=${tracePath(columns, scene.scale, place)} />`;
 }
 
+/** What is faster than the paper is tall, written where it leaves. */
+function offPaper(scene: RowScene, columns: SpeedColumns): TemplateResult {
+  const { width, bands, scale } = scene;
+  const place = { left: 0, width: width / columns.greatest.length, base: bands.base, height: 1 };
+  return svg`${overshoots(columns, scale, place, 74).map(({ x, speed }) => {
+    const right = x > width - 74;
+    return svg`<path class="leaves" d="M${x - 4} ${bands.top + 1}l8 -3M${x - 4} ${bands.top - 2}l8 -3" />
+      <text class="leaves" text-anchor=${right ? 'end' : 'start'} x=${right ? x - 7 : x + 7} y=${bands.top - 1}>${sayRate(speed, 4)}</text>`;
+  })}`;
+}
+
+function spanRules(scene: RowScene): TemplateResult {
+  const y = scene.bands.carets - 2.5;
+  return svg`${scene.spans.map(
+    ({ from, to, status }) => svg`<path class="span ${status}" d="M${from} ${y}H${to}" />`,
+  )}`;
+}
+
 function heightOf(scene: RowScene, speed: number): number {
   const { base, top } = scene.bands;
   return base - scene.scale.share(speed) * (base - top);
@@ -89,7 +118,7 @@ function ruling(scene: RowScene): TemplateResult {
   const { row, width, bands, scale } = scene;
   const tall = bands.base - bands.top > 120;
   const speeds = speedTicks(scale, tall ? 5 : 2);
-  const named = scale.kind === 'log' && !tall ? speeds.filter((_, i) => i % 2 === 1) : speeds;
+  const named = scale.kind === 'log' && !tall ? speeds.filter((_, i) => i % 3 === 2) : speeds;
   const times = timeTicks(row.from, row.to, width / 92).filter((t) => t > row.from);
   const places = tickPlaces(times[1] - times[0]);
   return svg`
@@ -106,7 +135,7 @@ function ruling(scene: RowScene): TemplateResult {
       const x = ((time - row.from) / (row.to - row.from)) * width;
       const clash = scene.carets.some((caret) => Math.abs(caret.x + 8 - x) < 34);
       return svg`<line class="second-mark" x1=${x} x2=${x} y1=${bands.base} y2=${bands.base + 3} />
-        ${clash || x > width - 14 ? nothing : svg`<text class="time" x=${x} y=${bands.feet + 12}>${time.toFixed(places)} s</text>`}`;
+        ${clash || x > width - 14 ? nothing : svg`<text class="time" x=${x} y=${bands.times}>${time.toFixed(places)} s</text>`}`;
     })}`;
 }
 
@@ -140,7 +169,7 @@ function keyMarks(scene: RowScene): TemplateResult {
     .map((key) => ((data.keys[key + 1] - row.from) / (row.to - row.from)) * width)
     .filter((x) => x >= 0 && x <= width);
   return svg`
-    ${rails.map((rail) => railMark(rail.from, rail.to, rail.keys, rail.gap, bands))}
+    ${rails.map((rail) => railMark(rail, bands))}
     ${posts.map(({ x, kept }) => svg`<path class="post" d=${postPath(x, bands, kept)} />`)}
     ${cuts.map((x) => svg`<path class="cut" d="M${x - 1.5} ${bands.top}V${bands.feet}M${x + 1.5} ${bands.top}V${bands.feet}" />`)}`;
 }
@@ -151,10 +180,11 @@ function postPath(x: number, bands: RowBands, kept: boolean): string {
   return `${cap}${kept ? `M${x - 2.5} ${bands.posts + 3.5}H${x + 2.5}` : ''}M${x} ${bands.posts}V${bands.feet}`;
 }
 
-function railMark(from: number, to: number, keys: number, gap: number, bands: RowBands): TemplateResult {
-  const words = `${keys.toLocaleString('en')} keys, ${saySpan(gap)} apart`;
-  return svg`<path class="rail" d="M${from} ${bands.posts + 0.5}H${to}M${from} ${bands.posts}V${bands.feet}M${to} ${bands.posts}V${bands.feet}" />
-    ${to - from > 160 ? svg`<text class="rail-words" x=${(from + to) / 2} y=${bands.posts + 11}>${words}</text>` : nothing}`;
+/** Keys too close to be told apart: a rail with what lies between two of them. */
+function railMark({ from, to, gap }: Rail, bands: RowBands): TemplateResult {
+  const y = bands.posts + 0.5;
+  return svg`<path class="rail" d="M${from} ${y + 5}V${y}H${to}V${y + 5}" />
+    ${to - from > 130 ? svg`<text class="rail-words" x=${(from + to) / 2} y=${y + 4}>a key every ${saySpan(gap)}</text>` : nothing}`;
 }
 
 function caretMarks(scene: RowScene): TemplateResult {
@@ -165,7 +195,6 @@ function caretMarks(scene: RowScene): TemplateResult {
     const after = `${caret.number}${caret.level === 'error' ? '!' : ''}${caret.stands > 1 ? ` ×${caret.stands}` : ''}`;
     return svg`<g class="caret ${caret.level} ${caret.status}" data-note=${caret.note}>
       <rect class="touch" x=${caret.x - 14} y=${bands.posts} width="28" height=${bands.bottom - bands.posts} />
-      ${caret.span ? svg`<path class="span" d="M${caret.span[0]} ${bands.carets - 2.5}H${caret.span[1]}" />` : nothing}
       <path class="mark" d=${path} />
       ${caret.status === 'stamped' ? svg`<path class="struck" d="M${caret.x - 8} ${bands.carets + 6}H${caret.x + 18}" />` : nothing}
       ${ringed ? svg`<circle class="ring" cx=${caret.x} cy=${bands.carets + bands.caret * 0.55} r=${bands.caret + 1} />` : nothing}

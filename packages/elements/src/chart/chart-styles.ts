@@ -76,11 +76,36 @@ export const chartStyles: CSSResult = css`
     margin: 0;
     padding: 0;
   }
-  .row {
+  .rows {
+    position: relative;
+  }
+  .rows::before {
+    content: '';
+    position: absolute;
+    top: 0.5rem;
+    bottom: 0;
+    right: 16.5rem;
+    border-left: 1px solid var(--_hairline);
+  }
+  .row,
+  .heads {
+    position: relative;
     display: grid;
     grid-template-columns: 3.75rem minmax(0, 1fr) 4.5rem 16.5rem;
     column-gap: 0.75rem;
     align-items: start;
+  }
+  .heads {
+    color: var(--_soft);
+    font-style: italic;
+    font-size: 0.8125rem;
+    padding-top: 0.25rem;
+  }
+  .heads :first-child {
+    text-align: right;
+  }
+  .heads :last-child {
+    padding-left: 0.875rem;
   }
   .row > .from,
   .row > .carried {
@@ -125,9 +150,11 @@ export const chartStyles: CSSResult = css`
     pointer-events: none;
   }
   .notes {
-    border-left: 1px solid var(--_hairline);
-    padding: 12px 0 4px 0.875rem;
-    min-height: 100px;
+    position: absolute;
+    top: 0;
+    right: 0;
+    width: 16.5rem;
+    padding: 14px 0 0 0.875rem;
     box-sizing: border-box;
     font-size: 0.9375rem;
     line-height: 1.38;
@@ -170,11 +197,17 @@ export const chartStyles: CSSResult = css`
     font-style: italic;
   }
   .notes button {
+    display: block;
     margin-left: -0.25rem;
     text-align: left;
   }
+  @media (pointer: fine) {
+    .notes button {
+      min-height: 28px;
+    }
+  }
   .between {
-    grid-column: 1 / -1;
+    grid-column: 1 / 4;
   }
   details {
     margin-top: 1rem;
@@ -224,6 +257,10 @@ export const chartStyles: CSSResult = css`
     box-shadow: -5px 0 0 -2px var(--_ink);
   }
   @container (max-width: 56rem) {
+    .heads,
+    .rows::before {
+      display: none;
+    }
     .row {
       grid-template-columns: minmax(0, 1fr) auto;
       row-gap: 0;
@@ -241,16 +278,14 @@ export const chartStyles: CSSResult = css`
       grid-column: 2;
     }
     .row > .sheet,
-    .row > .notes {
+    .row > .notes,
+    .between {
       grid-column: 1 / -1;
     }
     .row > .notes {
-      border-left: 0;
+      position: static;
+      width: auto;
       padding: 0 0 0.75rem;
-      min-height: 0;
-    }
-    .row > .notes:empty {
-      display: none;
     }
     h2 {
       font-size: 1.25rem;

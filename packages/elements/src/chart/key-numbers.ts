@@ -52,20 +52,3 @@ function neighbour({ keys, motion }: ChartData, a: number, b: number): { gap: nu
     angle: toDegrees(angleBetween(motion.orientation(keys[a]), motion.orientation(keys[b]))),
   };
 }
-
-/** The span moved by `share` of itself, or made `factor` times as long about `about`; held to the motion. */
-export function moveSpan(
-  span: readonly [number, number],
-  motion: { readonly start: number; readonly end: number },
-  share: number,
-  factor = 1,
-  about: number = (span[0] + span[1]) / 2,
-): readonly [number, number] {
-  const whole = motion.end - motion.start;
-  const length = Math.min(whole, Math.max(1e-3, (span[1] - span[0]) * factor));
-  const held = Math.min(span[1], Math.max(span[0], about));
-  const part = (held - span[0]) / (span[1] - span[0] || 1);
-  const from = held - part * length + share * length;
-  const first = Math.max(motion.start, Math.min(from, motion.end - length));
-  return [first, first + length];
-}

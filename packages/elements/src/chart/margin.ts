@@ -1,10 +1,13 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { NumberedNote } from './carets.js';
 import type { MarginNote } from './chart-data.js';
+import { packMargin } from './pack-margin.js';
 import { sayTime } from './quantity.js';
 
 /** Notes beside one row before "and 12 more". */
 const NOTES_AT_FIRST = 4;
+/** Between two blocks of notes, px. */
+const NOTE_GAP = 6;
 
 /** What the margin tells the chart. */
 export interface MarginEvents {
@@ -72,3 +75,19 @@ const STATUS: Readonly<Record<MarginNote['status'], string>> = {
   mended: '; mended',
   stamped: '; accepted with a reason',
 };
+
+/** Notes that need more room than their row push the next ones down, so that the rows keep their rhythm. */
+export function packNotes(root: ParentNode): void {
+  const blocks = [...root.querySelectorAll<HTMLElement>('.notes')];
+  const list = root.querySelector<HTMLElement>('.rows');
+  if (!list) return;
+  // On narrow paper the styles put notes under their row, where nothing needs pushing.
+  const beside = blocks[0] !== undefined && getComputedStyle(blocks[0]).position === 'absolute';
+  const sizes = blocks.map((block) => ({
+    top: block.parentElement?.offsetTop ?? 0,
+    height: block.childElementCount === 0 ? 0 : block.offsetHeight,
+  }));
+  const { pushes, bottom } = packMargin(sizes, NOTE_GAP);
+  blocks.forEach((block, i) => (block.style.marginTop = beside ? `${pushes[i]}px` : ''));
+  list.style.minHeight = beside ? `${bottom}px` : '';
+}

@@ -11,7 +11,6 @@ export interface Post {
 export interface Rail {
   readonly from: number;
   readonly to: number;
-  readonly keys: number;
   /** Mean time between its keys, seconds. */
   readonly gap: number;
 }
@@ -48,7 +47,6 @@ export function keyLine(
       rails.push({
         from: at(key),
         to: at(last),
-        keys: last - key + 1,
         gap: (times[last] - times[key]) / (last - key),
       });
       for (const k of kept) if (k >= key && k <= last) posts.push({ key: k, x: at(k), kept: true });

@@ -1,9 +1,21 @@
-/** How speeds stand on the paper: linear, or by powers of ten. */
-export type ScaleKind = 'linear' | 'log';
+/**
+ * How speeds stand on the paper: evenly up to a few times the usual speed, so that a pop does not flatten the rest (what is faster
+ * leaves the paper at the top and is written there); evenly up to the greatest; or by powers of ten.
+ */
+export type ScaleKind = 'usual' | 'linear' | 'log';
+
+/** A scale for speeds whose 95th percentile is `usual` and whose greatest is `peak`, deg/s. */
+export function speedScale(kind: ScaleKind, usual: number, peak: number): SpeedScale {
+  if (kind === 'log') return logScale(peak);
+  return linearScale(kind === 'usual' ? Math.min(peak, usual * ROOM) : peak);
+}
+
+/** Of the usual speed: how much stands on the paper. */
+const ROOM = 2.5;
 
 /** deg/s to a share of the row's height, 0 at the baseline, 1 at the top; outside speeds are held at the ends. */
 export interface SpeedScale {
-  readonly kind: ScaleKind;
+  readonly kind: 'linear' | 'log';
   /** Speed at the baseline and at the top, deg/s. */
   readonly low: number;
   readonly high: number;

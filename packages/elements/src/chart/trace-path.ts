@@ -45,6 +45,31 @@ export function tracePath(columns: SpeedColumns, scale: SpeedScale, place: Trace
   return path;
 }
 
+/** Where a trace leaves the paper at the top: the middle of the stretch and its greatest speed. */
+export interface Overshoot {
+  readonly x: number;
+  readonly speed: number;
+}
+
+/** Stretches above the scale's top, at least `apart` px from one another (the faster one counts), left to right. */
+export function overshoots(
+  columns: SpeedColumns,
+  scale: SpeedScale,
+  place: TracePlace,
+  apart: number,
+): Overshoot[] {
+  const found: Overshoot[] = [];
+  for (let i = 0; i < columns.greatest.length; i++) {
+    const speed = columns.greatest[i];
+    if (!(speed > scale.high)) continue;
+    const x = place.left + (i + 0.5) * place.width;
+    const last = found[found.length - 1];
+    if (!last || x - last.x >= apart) found.push({ x, speed });
+    else if (speed > last.speed) found[found.length - 1] = { x, speed };
+  }
+  return found;
+}
+
 /** The part of columns that lies inside the motion: before its start and after its end there is no trace. */
 export function withinMotion(
   columns: SpeedColumns,

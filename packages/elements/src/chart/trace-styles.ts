@@ -97,16 +97,32 @@ export const traceStyles: CSSResult = css`
   .caret .touch {
     fill: transparent;
   }
-  .caret .mark,
-  .caret .span {
+  .caret .mark {
     fill: none;
     stroke: var(--_ink);
     stroke-width: 1.6;
     stroke-linejoin: round;
     stroke-linecap: round;
   }
-  .caret .span {
+  .span {
+    fill: none;
+    stroke: var(--_soft);
     stroke-width: 1;
+  }
+  .span.stamped,
+  .span.mended {
+    stroke: var(--_rule);
+    stroke-dasharray: 1 3;
+  }
+  .leaves {
+    fill: none;
+    stroke: var(--_trace);
+  }
+  text.leaves {
+    fill: var(--_ink);
+    paint-order: stroke;
+    stroke: var(--_paper);
+    stroke-width: 3px;
   }
   .caret text {
     fill: var(--_ink);

@@ -44,7 +44,7 @@ export function drawGlobe(
   scene: GlobeScene,
   inks: GlobeInks,
 ): void {
-  const pen = new Pen(context, size, scene.view);
+  const pen = new Pen(context, size, scene.view, inks.paper);
   context.clearRect(0, 0, size, size);
   drawRims(pen, scene, inks);
   for (const { axis, dash } of AXES) {
@@ -70,8 +70,10 @@ class Pen {
   readonly middle: number;
   readonly radius: number;
   readonly view: View;
+  readonly paper: string;
 
-  constructor(context: CanvasRenderingContext2D, size: number, view: View) {
+  constructor(context: CanvasRenderingContext2D, size: number, view: View, paper: string) {
+    this.paper = paper;
     this.context = context;
     this.middle = size / 2;
     this.radius = size / 2 - 22;
@@ -119,6 +121,11 @@ class Pen {
     const half = this.context.measureText(text).width;
     const left = this.context.textAlign === 'left' ? 0 : this.context.textAlign === 'right' ? half : half / 2;
     const held = Math.min(this.middle * 2 - half - 2, Math.max(2, x - left)) + left;
+    // A rim of paper keeps the word legible over paths.
+    this.context.strokeStyle = this.paper;
+    this.context.lineWidth = 4;
+    this.context.lineJoin = 'round';
+    this.context.strokeText(text, held, y);
     this.context.fillText(text, held, y);
     this.context.globalAlpha = 1;
   }

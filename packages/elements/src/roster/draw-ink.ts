@@ -41,7 +41,7 @@ export function drawInk(
   rows.forEach((row, i) =>
     inkRow(
       sheet,
-      row,
+      row.ink,
       Math.round((i * place.pitch + place.top) * ratio),
       Math.max(1, Math.round(place.height * ratio)),
       ink,

@@ -1,5 +1,4 @@
-import type { RosterRow } from './roster-row.js';
-import { rowColumns } from './roster-row.js';
+import { buildPyramid, columnMaxima, type Pyramid } from '../chart/pyramid.js';
 
 /** Pixels as a canvas holds them: four bytes each, row by row. */
 export interface InkSheet {
@@ -10,46 +9,102 @@ export interface InkSheet {
 
 /** Ink for usual speeds: fast but usual stays pale. */
 const PALE = 0.3;
-/** Speeds this many times the habit are as black as ink gets. */
+/** Speeds this many times the usual are as black as ink gets. */
 const BLACK_AT = 6;
+/** Speeds kept up this long are usual for their place, however fast, seconds: a whip is no pop. */
+const KEPT_UP = 0.1;
 
 /**
- * How dark a speed is, 0 to 1, against what is usual for its track: nothing at the noise floor, pale up to the habit (by its
- * square root, so that slow motion is seen), then darker by the logarithm.
+ * The ink of a track: how dark each bin is, 0 to 1, as a pyramid, to be drawn at any width without losing a bin.
+ *
+ * @param speeds greatest speed of equal bins of time, deg/s; a bin should be about a frame
+ * @param bin seconds
+ * @param noiseFloor deg/s
  */
-export function inkDensity(speed: number, habit: number, noiseFloor: number): number {
-  if (!(speed > noiseFloor)) return 0;
-  const usual = Math.max(habit, noiseFloor);
-  if (!(usual > 0)) return 1;
-  if (speed <= usual) return PALE * Math.sqrt(speed / usual);
-  return Math.min(1, PALE + ((1 - PALE) * Math.log(speed / usual)) / Math.log(BLACK_AT));
+export function trackInk(speeds: ArrayLike<number>, bin: number, noiseFloor: number): Pyramid {
+  const habit = habitOf(speeds);
+  // A pop of one frame may touch two bins; the length must be longer, else it would count as kept up.
+  const kept = keptUp(speeds, Math.max(3, Math.round(KEPT_UP / bin)));
+  return buildPyramid(
+    Float32Array.from(speeds, (speed, i) => inkDensity(speed, Math.max(habit, kept[i]), noiseFloor)),
+  );
 }
 
 /**
- * Writes one row's ink straight into the sheet: a column a pixel, the greatest speed within it, never the mean, so that a pop of
- * one frame among millions stands out. Column height follows density too, so that the row reads in grey and on paper.
+ * How dark a speed is, 0 to 1, against what is usual: nothing at the noise floor, pale up to the usual (by its square root, so
+ * that slow motion is seen), then darker by the logarithm.
+ */
+export function inkDensity(speed: number, usual: number, noiseFloor: number): number {
+  if (!(speed > noiseFloor)) return 0;
+  const habit = Math.max(usual, noiseFloor);
+  if (!(habit > 0)) return 1;
+  if (speed <= habit) return PALE * Math.sqrt(speed / habit);
+  return Math.min(1, PALE + ((1 - PALE) * Math.log(speed / habit)) / Math.log(BLACK_AT));
+}
+
+/** The 95th percentile of speeds, deg/s: a track's own habit. */
+export function habitOf(speeds: ArrayLike<number>): number {
+  const sorted = Float32Array.from(speeds).toSorted();
+  return sorted.length === 0 ? 0 : sorted[Math.floor(0.95 * (sorted.length - 1))];
+}
+
+/**
+ * At each bin the greatest speed that is kept up over `length` bins around it: the grey-scale opening of mathematical morphology
+ * (least over a window, then greatest over the same window turned round), which takes away every peak narrower than the window.
+ * Beyond the ends lies nothing, so a window there is shorter.
+ */
+export function keptUp(speeds: ArrayLike<number>, length: number): Float32Array {
+  const before = Math.floor((length - 1) / 2);
+  const least = slidingExtreme(speeds, before, length - 1 - before, (a, b) => a <= b);
+  return slidingExtreme(least, length - 1 - before, before, (a, b) => a >= b);
+}
+
+/** Extreme over `[i − before, i + after]` for every i, each number looked at twice at most (a queue of candidates). */
+function slidingExtreme(
+  values: ArrayLike<number>,
+  before: number,
+  after: number,
+  beats: (a: number, b: number) => boolean,
+): Float32Array {
+  const out = new Float32Array(values.length);
+  const queue = new Int32Array(values.length);
+  let head = 0;
+  let tail = 0;
+  for (let next = 0, i = 0; i < values.length; i++) {
+    for (; next < values.length && next <= i + after; next++) {
+      while (tail > head && beats(values[next], values[queue[tail - 1]])) tail--;
+      queue[tail++] = next;
+    }
+    while (queue[head] < i - before) head++;
+    out[i] = values[queue[head]];
+  }
+  return out;
+}
+
+/**
+ * Writes one row's ink straight into the sheet: a column a pixel, the darkest bin within it, never the mean, so that a pop of one
+ * frame among millions stands out. Column height follows darkness too, so that the row reads in grey and on paper.
  *
- * @param ink red, green, blue, 0 to 255
+ * @param color red, green, blue, 0 to 255
  */
 export function inkRow(
   sheet: InkSheet,
-  row: RosterRow,
+  ink: Pyramid,
   top: number,
   height: number,
-  ink: readonly [number, number, number],
+  color: readonly [number, number, number],
 ): void {
-  const columns = rowColumns(row, new Float32Array(sheet.width));
+  const columns = columnMaxima(ink, 0, ink.length, new Float32Array(sheet.width));
   for (let x = 0; x < sheet.width; x++) {
-    const density = inkDensity(columns[x], row.habit, row.noiseFloor);
+    const density = columns[x];
     if (density === 0) continue;
     const tall = Math.max(1, Math.round(height * (0.35 + 0.65 * density)));
-    const first = top + height - tall;
     const alpha = Math.round(255 * (0.22 + 0.78 * density));
-    for (let y = Math.max(0, first); y < Math.min(sheet.height, top + height); y++) {
+    for (let y = Math.max(0, top + height - tall); y < Math.min(sheet.height, top + height); y++) {
       const at = (y * sheet.width + x) * 4;
-      sheet.data[at] = ink[0];
-      sheet.data[at + 1] = ink[1];
-      sheet.data[at + 2] = ink[2];
+      sheet.data[at] = color[0];
+      sheet.data[at + 1] = color[1];
+      sheet.data[at + 2] = color[2];
       sheet.data[at + 3] = alpha;
     }
   }

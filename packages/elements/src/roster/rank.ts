@@ -20,7 +20,7 @@ export function rankRows(rows: readonly RosterRow[], order: RosterOrder): Roster
 }
 
 const COMPARE: Readonly<Record<RosterOrder, ((a: RosterRow, b: RosterRow) => number) | undefined>> = {
-  wrong: (a, b) => wrongness(b) - wrongness(a) || excess(b) - excess(a),
+  wrong: (a, b) => wrongness(b) - wrongness(a) || darkest(b) - darkest(a),
   effect: (a, b) => (b.effect?.value ?? -1) - (a.effect?.value ?? -1) || wrongness(b) - wrongness(a),
   peak: (a, b) => b.peak - a.peak,
   name: (a, b) => a.track.localeCompare(b.track) || a.clip.localeCompare(b.clip),
@@ -35,9 +35,9 @@ function wrongness(row: RosterRow): number {
   return (levelRank(level) + 1) * 1e4 + count;
 }
 
-/** How far the greatest speed stands above what is usual. */
-function excess(row: RosterRow): number {
-  return row.peak / Math.max(row.habit, row.noiseFloor, 1e-9);
+/** How far a row's greatest speed stands above what is usual there: its darkest ink. */
+function darkest(row: RosterRow): number {
+  return row.ink.greatest[row.ink.greatest.length - 1][0] ?? 0;
 }
 
 /** Rows that hold every word of `text` in file, clip, track or a family of their findings, whatever the case. */

@@ -1,5 +1,5 @@
-import { columnMaxima, type Pyramid } from '../chart/pyramid.js';
-import { sayAngle, sayCount, sayList, sayRate } from '../chart/quantity.js';
+import type { Pyramid } from '../chart/pyramid.js';
+import { sayAngle, sayCount, sayRate } from '../chart/quantity.js';
 import { trackName, type NoteLevel } from '../chart/chart-data.js';
 
 /** One track as the roster shows it. */
@@ -10,12 +10,8 @@ export interface RosterRow {
   readonly clip: string;
   readonly track: string;
   readonly seconds: number;
-  /** Greatest speed of equal bins over the whole clip, deg/s. */
-  readonly speeds: Pyramid;
-  /** 95th percentile of the speeds, deg/s: what is usual for this track. */
-  readonly habit: number;
-  /** deg/s below which nothing is claimed. */
-  readonly noiseFloor: number;
+  /** From `trackInk`. */
+  readonly ink: Pyramid;
   readonly counts: Readonly<Record<NoteLevel, number>>;
   /** Findings by family: `{ jump: 2, turn: 1 }`. */
   readonly families: Readonly<Record<string, number>>;
@@ -39,22 +35,10 @@ export function rowWords(row: RosterRow): string {
   return `${trackName(row.track)} in ${row.clip}: ${countWords(row) || 'nothing found'}, peak ${sayRate(row.peak)}, turns ${sayAngle(row.travel)}`;
 }
 
-/** "1 error and 2 notes"; empty where nothing was found. */
+/** "1 error, 2 notes"; empty where nothing was found. */
 export function countWords(row: RosterRow): string {
-  return sayList(
-    (['error', 'warning', 'note'] as const)
-      .filter((level) => row.counts[level] > 0)
-      .map((level) => sayCount(row.counts[level], level)),
-  );
-}
-
-/** The 95th percentile of speeds, deg/s: a track's own habit. Of equal bins, so longer moves count for more. */
-export function habitOf(speeds: ArrayLike<number>): number {
-  const sorted = Float32Array.from(speeds).toSorted();
-  return sorted.length === 0 ? 0 : sorted[Math.floor(0.95 * (sorted.length - 1))];
-}
-
-/** Greatest speeds of a row on `out.length` pixels. */
-export function rowColumns(row: RosterRow, out: Float32Array): Float32Array {
-  return columnMaxima(row.speeds, 0, row.speeds.length, out);
+  return (['error', 'warning', 'note'] as const)
+    .filter((level) => row.counts[level] > 0)
+    .map((level) => sayCount(row.counts[level], level))
+    .join(', ');
 }
