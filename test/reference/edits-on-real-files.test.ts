@@ -1,18 +1,17 @@
 // Edits on open glTF files, read by an independent reader of the specification. The files lie beside the project and are not shipped.
-import { existsSync, readFileSync } from 'node:fs';
 import { type RotationTrack, logMap, playAs, relative, rotationTrack, signChanges } from '@slewcurve/core';
 import { shelfEnds } from '@slewcurve/mend';
 import { describe, expect, it } from 'vitest';
 import { applied } from '../support/edit-acceptance.js';
 import { glbChunks, rotationSamplers } from '../support/independent-gltf.js';
+import { sharedFile } from '../support/shared-data.js';
 
-const FOLDER = new URL('../../../shared/data/gltf/animation-only/', import.meta.url);
 const DEGREES = 180 / Math.PI;
-const present = existsSync(FOLDER);
-if (!present) console.warn('skipped: ../shared/data/gltf/animation-only is not there');
+const ADVENTURER = sharedFile('data/gltf/animation-only/adventurer-9clips.glb');
+const CUBE = sharedFile('data/gltf/animation-only/spinning-cube.glb');
 
-function tracksOf(name: string): RotationTrack[] {
-  const bytes = new Uint8Array(readFileSync(new URL(name, FOLDER)));
+function tracksOf(file: typeof CUBE): RotationTrack[] {
+  const bytes = file.read();
   const { nodes } = glbChunks(bytes).json;
   return rotationSamplers(bytes).map(({ clip, node, times, output, interpolation }) => {
     if (interpolation !== 'LINEAR' && interpolation !== 'STEP' && interpolation !== 'CUBICSPLINE')
@@ -25,14 +24,14 @@ function peak(track: RotationTrack, from: number, to: number): number {
   return playAs(track, 'as-written').peak(track.times[from], track.times[to]).rate * DEGREES;
 }
 
-describe.skipIf(!present)('edits on open glTF files', () => {
+describe.skipIf(ADVENTURER.absent || CUBE.absent)('edits on open glTF files', () => {
   it.each([
     ['lowerleg.l', 1853, 645],
     ['lowerleg.r', 2022, 813],
   ])(
     'bridge over 4 steps brings %s of the chop from %i deg/s to %i in keys 14 to 25',
     (id, before, after) => {
-      const track = tracksOf('adventurer-9clips.glb').find(
+      const track = tracksOf(ADVENTURER).find(
         (candidate) => candidate.clip === '1H_Melee_Attack_Chop' && candidate.id === id,
       );
       if (!track) throw new Error(`${id} is not there`);
@@ -47,7 +46,7 @@ describe.skipIf(!present)('edits on open glTF files', () => {
   );
 
   it('same side takes all 107 sign changes of the adventurer away and moves nothing', () => {
-    const tracks = tracksOf('adventurer-9clips.glb');
+    const tracks = tracksOf(ADVENTURER);
     const changes = tracks.map((track) => signChanges(track).length);
     expect(changes.reduce((sum, count) => sum + count, 0)).toBe(107);
     expect(changes.filter((count) => count > 0)).toHaveLength(38);
@@ -61,8 +60,8 @@ describe.skipIf(!present)('edits on open glTF files', () => {
   it.each([1, -1])(
     'choose side settles both half turns of the spinning cube, way %i, against ±1e-6',
     (way) => {
-      const [track] = tracksOf('spinning-cube.glb');
-      const [from, to] = [new Float64Array(4), new Float64Array(4)];
+      const [track] = tracksOf(CUBE);
+      const to = new Float64Array(4);
       const turns = [1, 2].map((key) => {
         relative(
           to,
