@@ -1,22 +1,23 @@
-import { existsSync, readFileSync } from 'node:fs';
-import { fileURLToPath } from 'node:url';
 import { describe, expect, test } from 'vitest';
 import { playAs, type RotationTrack, type SceneNode } from '@slewcurve/core';
 import { bufferSource, openAnimation } from '@slewcurve/formats';
 import { verbNamed } from '@slewcurve/mend';
 import { surveyTrack, type Finding } from '@slewcurve/survey';
+import { measured } from '../support/measured.js';
+import { sharedFile } from '../support/shared-data.js';
 
-const DIRECTORY = fileURLToPath(new URL('../../../shared/data/gltf/animation-only/', import.meta.url));
 const DEGREES = 180 / Math.PI;
-if (!existsSync(DIRECTORY)) console.warn(`${DIRECTORY} is not there: surveys of real files are not tested.`);
+const adventurer = sharedFile('data/gltf/animation-only/adventurer-9clips.glb');
+const cube = sharedFile('data/gltf/animation-only/spinning-cube.glb');
 
 interface Surveyed {
   readonly nodes: readonly SceneNode[];
   readonly tracks: readonly { readonly track: RotationTrack; readonly findings: readonly Finding[] }[];
 }
 
-async function surveyed(name: string): Promise<Surveyed> {
-  const file = await openAnimation(bufferSource(readFileSync(DIRECTORY + name)), { name });
+async function surveyed(shared: typeof adventurer): Promise<Surveyed> {
+  if (shared.absent) return { nodes: [], tracks: [] };
+  const file = await openAnimation(bufferSource(shared.read()), { name: shared.path });
   const tracks = file.clips.flatMap((clip) =>
     clip.tracks.map((track) => ({ track, findings: surveyTrack(track, { clip, nodes: file.nodes }) })),
   );
@@ -42,10 +43,8 @@ function keyed(findings: readonly Finding[]): string[] {
 }
 
 // Character animation pack by Kay Lousberg (CC0), nine clips of one skeleton at 30 frames a second.
-describe.skipIf(!existsSync(DIRECTORY))('adventurer-9clips.glb', async () => {
-  const { nodes, tracks } = existsSync(DIRECTORY)
-    ? await surveyed('adventurer-9clips.glb')
-    : { nodes: [], tracks: [] };
+describe.skipIf(adventurer.absent)('adventurer-9clips.glb', async () => {
+  const { nodes, tracks } = await surveyed(adventurer);
   const findings = tracks.flatMap((one) => one.findings);
   const chop = (joint: string) =>
     tracks.find(({ track }) => track.clip === '1H_Melee_Attack_Chop' && track.id.endsWith(`/${joint}`))!;
@@ -74,14 +73,14 @@ describe.skipIf(!existsSync(DIRECTORY))('adventurer-9clips.glb', async () => {
     expect(shelves).toHaveLength(1);
     expect(shelves[0]).toMatchObject({ level: 'warning', keys: [20], count: keys.length });
     // Named to a tenth of a degree.
-    expect(Math.abs(shelves[0]!.value - size)).toBeLessThan(0.05);
-    expect(shelves[0]!.occurrences.map((place) => place.keys[0])).toEqual(keys);
+    expect(Math.abs(shelves[0].value - size)).toBeLessThan(0.05);
+    expect(shelves[0].occurrences.map((place) => place.keys[0])).toEqual(keys);
   });
 
   test('at most 20 jump places stand in the whole file', () => {
     const jumps = findings.filter((finding) => finding.rule.startsWith('jump.'));
     const places = jumps.reduce((sum, finding) => sum + finding.count, 0);
-    console.log(`adventurer-9clips.glb: ${places} jump places in ${jumps.length} findings`);
+    measured(`adventurer-9clips.glb: ${places} jump places in ${jumps.length} findings`);
     expect(places).toBeLessThanOrEqual(20);
   });
 
@@ -94,9 +93,9 @@ describe.skipIf(!existsSync(DIRECTORY))('adventurer-9clips.glb', async () => {
       expect(shelf.price).toBeGreaterThan(0);
       const after = mended(track, before);
       expect(surveyTrack(after, { nodes }).filter((finding) => finding.rule.startsWith('jump.'))).toEqual([]);
-      const span = [track.times[14]!, track.times[25]!] as const;
+      const span = [track.times[14], track.times[25]] as const;
       const peak = playAs(after, 'as-written').peak(...span).rate * DEGREES;
-      console.log(
+      measured(
         `${joint}: peak in keys 14 to 25 was ${(playAs(track, 'as-written').peak(...span).rate * DEGREES).toFixed(0)}, is ${peak.toFixed(0)} deg/s; largest key moved ${shelf.price!.toFixed(1)}°`,
       );
       expect(peak).toBeLessThanOrEqual(850);
@@ -121,16 +120,16 @@ describe.skipIf(!existsSync(DIRECTORY))('adventurer-9clips.glb', async () => {
 });
 
 // Khronos sample model AnimatedCube, its animation alone.
-describe.skipIf(!existsSync(DIRECTORY))('spinning-cube.glb', () => {
+describe.skipIf(cube.absent)('spinning-cube.glb', () => {
   test('both segments are half turns, each with two opposite ways', async () => {
-    const { tracks } = await surveyed('spinning-cube.glb');
+    const { tracks } = await surveyed(cube);
     const half = tracks.flatMap((one) => one.findings).find((finding) => finding.rule === 'turn.half')!;
     expect(half).toMatchObject({ level: 'error', count: 2 });
     expect(half.occurrences.map((place) => place.keys)).toEqual(expect.arrayContaining([[1], [2]]));
     for (const { ways } of half.occurrences) {
       const [now, other] = ways!;
-      expect(now!.angle + other!.angle).toBeCloseTo(360, 3);
-      expect(now!.axis.map((x) => 0 - x)).toEqual(other!.axis.map((x) => 0 + x));
+      expect(now.angle + other.angle).toBeCloseTo(360, 3);
+      expect(now.axis.map((x) => 0 - x)).toEqual(other.axis.map((x) => 0 + x));
     }
   });
 });

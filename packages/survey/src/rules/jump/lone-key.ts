@@ -28,7 +28,7 @@ export const loneKey: Rule = Object.freeze({
       .map((jump) => ({
         keys: [jump.key],
         time: times[jump.key] ?? 0,
-        span: [times[jump.key - 1] ?? 0, times[jump.key + 1] ?? 0],
+        span: [times[Math.max(0, jump.key - 1)] ?? 0, times[jump.key + 1] ?? 0],
         value: jump.size,
         limit: size,
         level: 'warning',

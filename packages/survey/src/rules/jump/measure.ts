@@ -1,6 +1,7 @@
 import { medianGap } from '@slewcurve/core';
 import type { TrackContext } from '../../rule.js';
 import { findJumps, type Jump, type JumpLimits } from './find-jumps.js';
+import { seamOf } from './seam-of.js';
 
 /** Both jump rules read the same competition; it is run once a track. */
 const known = new WeakMap<TrackContext, readonly Jump[]>();
@@ -24,6 +25,7 @@ export function jumpLimits(context: TrackContext): JumpLimits {
   return {
     ...(loneKey?.['size'] !== undefined && fast && { loneKey: loneKey['size'] }),
     ...(shelf?.['size'] !== undefined && { shelf: shelf['size'] }),
-    loop: context.loop,
+    // Where the loop stays open, the step from its end to its start is the seam's, not a jump.
+    loop: context.loop && seamOf(context.track) <= (shelf?.['seam'] ?? 0),
   };
 }

@@ -38,12 +38,12 @@ export const shelf: Rule = Object.freeze({
         return {
           keys: [key],
           time: times[key] ?? 0,
-          span: [times[key - 1] ?? 0, times[key] ?? 0],
+          span: spanInto(times, key),
           value,
           limit: size,
           level: still === 'explains' ? 'note' : 'warning',
           confidence: 1 - 1 / gain,
-          facts: { still: Number(still !== 'no') },
+          facts: { still: Number(still !== 'no'), before: keyBefore(times, key) },
         };
       });
   },
@@ -59,12 +59,14 @@ export const shelf: Rule = Object.freeze({
   },
   message(place: Place, remedy?: Remedy): string {
     const [key = 0] = place.keys;
+    const { before = key - 1 } = place.facts ?? {};
+    const seam = key === 0 ? ', over the seam of the loop,' : '';
     const still = place.facts?.['still'] === 1 ? ', starting from or ending in standing still' : '';
     const price =
       remedy?.price === undefined
         ? ''
         : `; ${remedy.step.verb === 'bridge' ? `a bridge over ${remedy.step.steps} steps` : 'seating the rest anew'} turns a key by up to ${sayDegrees(remedy.price)}`;
-    return `from key ${key - 1} to key ${key} it steps by ${sayDegrees(place.value)} in ${saySeconds(place.span[1] - place.span[0])} and stays there${still} (limit ${sayDegrees(place.limit)})${price}`;
+    return `from key ${before} to key ${key}${seam} it steps by ${sayDegrees(place.value)} in ${saySeconds(place.span[1] - place.span[0])} and stays there${still} (limit ${sayDegrees(place.limit)})${price}`;
   },
   page: {
     what: 'A sudden offset: a contact seated anew, two halves of a clip edited apart, a sensor that slipped, a knee that pops out of full stretch. The motion before and the motion after are each sound.',
@@ -86,10 +88,22 @@ export const shelf: Rule = Object.freeze({
  * pose after another. A side that moves calmly explains nothing.
  */
 function sidesAt(context: TrackContext, key: number): 'no' | 'beside' | 'explains' {
-  const sides = [speedOf(context, key - 2), speedOf(context, key)];
+  const before = keyBefore(context.track.times, key);
+  const sides = [speedOf(context, before - 1), speedOf(context, key)];
   const [slow, fast] = [Math.min(...sides), Math.max(...sides)];
   if (slow >= STILL) return 'no';
-  return fast >= STILL && fast < CALM * speedOf(context, key - 1) ? 'beside' : 'explains';
+  return fast >= STILL && fast < CALM * speedOf(context, before) ? 'beside' : 'explains';
+}
+
+/** The key before; of a loop's first key the last but one, as its last is the first again. */
+function keyBefore(times: Float64Array, key: number): number {
+  return key > 0 ? key - 1 : times.length - 2;
+}
+
+/** The times that a step into a key takes. */
+function spanInto(times: Float64Array, key: number): readonly [number, number] {
+  const before = keyBefore(times, key);
+  return [times[before] ?? 0, times[before + 1] ?? 0];
 }
 
 /** Mean speed from key to the next, deg/s; infinite where there is none. */

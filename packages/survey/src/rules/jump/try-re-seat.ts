@@ -1,9 +1,9 @@
-import { SlewcurveError, angleBetween, keyOrientation, type Clip, type RotationTrack } from '@slewcurve/core';
+import { SlewcurveError, type Clip } from '@slewcurve/core';
 import { verbNamed, type Step } from '@slewcurve/mend';
 import type { Limits, Remedy, TrackContext } from '../../rule.js';
+import { seamOf } from './seam-of.js';
 import { addressOf } from './try-remedy.js';
 
-const DEGREES = 180 / Math.PI;
 /** Share of a clip's tracks that must end where they start for it to count as a loop that nobody declared. */
 const MOST = 0.9;
 
@@ -48,10 +48,4 @@ function isClosed(clip: Clip, seam: number): boolean {
   const answer = moving.length > 0 && meet >= MOST * moving.length;
   known.set(seam, answer);
   return answer;
-}
-
-/** Angle from the last key to the first, degrees. */
-function seamOf(track: RotationTrack): number {
-  const first = keyOrientation(new Float64Array(4), track, 0);
-  return angleBetween(first, keyOrientation(new Float64Array(4), track, track.times.length - 1)) * DEGREES;
 }

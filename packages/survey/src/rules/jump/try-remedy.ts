@@ -31,13 +31,14 @@ function tryStep(context: TrackContext, key: number, step: Step): Remedy | undef
   const first = Math.max(0, key - AROUND);
   const stretch = stretchOf(context.track, first, Math.min(context.track.times.length, key + AROUND + 1));
   const whole = stretch.times.length === context.track.times.length;
-  const limits: JumpLimits = { ...jumpLimits(context), loop: context.loop && whole };
+  const limits = jumpLimits(context);
+  const within: JumpLimits = { ...limits, loop: limits.loop === true && whole };
   const verb = verbNamed(step.verb);
   try {
     const result = verb.apply(stretch, { ...step, keys: [key - first] });
     const changed = [Math.min(...result.changed) - BESIDE, Math.max(...result.changed) + BESIDE];
-    const before = findJumps(stretch, limits).filter((jump) => jump.key !== key - first);
-    const raised = findJumps(result.track, limits).filter(
+    const before = findJumps(stretch, within).filter((jump) => jump.key !== key - first);
+    const raised = findJumps(result.track, within).filter(
       (jump) =>
         jump.key >= (changed[0] ?? 0) &&
         jump.key <= (changed[1] ?? 0) &&

@@ -3,6 +3,8 @@ import { everyRole, type Place, type Remedy, type Rule, type TrackContext } from
 import { sayDegrees } from '../../say-number.js';
 
 const DEGREES = 180 / Math.PI;
+/** Degrees: from here on `turn.half` names the change of sign. */
+const HALF_TURN_TELLS = 174;
 
 /** Neighbouring keys stored on opposite sides: q beside −q. */
 export const signFlip: Rule = Object.freeze({
@@ -37,7 +39,7 @@ export const signFlip: Rule = Object.freeze({
     const unsafe = turning.find(({ playback }) => !playback.signSafe(track));
     const breaks = new Set(track.breaks);
     return signChanges(track)
-      .filter((key) => !breaks.has(key - 1))
+      .filter((key) => !breaks.has(key - 1) && segmentAngle(track, key - 1) * DEGREES < HALF_TURN_TELLS)
       .map((key) => {
         const short = segmentAngle(track, key - 1) * DEGREES;
         return {
