@@ -30,8 +30,8 @@ export interface JsonEditor {
   append(object: string, name: string, value: string): number;
   /** Writes an object anew on one line: the given members are set, those named are left out, the others keep their text. */
   rewrite(object: string, set: Readonly<Record<string, string>>, leaveOut: readonly string[]): void;
-  /** Puts bytes in the place of others, for edits inside a string. */
-  overwrite(at: number, bytes: Uint8Array, what: string): void;
+  /** Puts bytes in the place of `length` others, for edits inside a string. */
+  overwrite(at: number, length: number, bytes: Uint8Array, what: string): void;
   /** All edits, ascending and apart. */
   splices(): JsonSplice[];
 }
@@ -88,8 +88,8 @@ export function jsonEditor(bytes: Uint8Array): JsonEditor {
       ];
       replace(found.span, `{${members.join(',')}}`, object);
     },
-    overwrite: (at, replacement, what) => {
-      splices.push({ at, length: replacement.byteLength, bytes: replacement, what });
+    overwrite: (at, length, replacement, what) => {
+      splices.push({ at, length, bytes: replacement, what });
     },
     splices: () => {
       for (const { object, name, values } of newLists.values())

@@ -36,9 +36,10 @@ export function frameGrid(clocks: readonly ReadonlyNumberStore[]): number | unde
   );
   const lowest = best[0];
   if (!lowest) return undefined;
-  const nested = best.every(
-    ({ rate }) => Math.abs(rate / lowest.rate - Math.round(rate / lowest.rate)) < TWIN,
-  );
+  const nested = best.every(({ rate }) => {
+    const ratio = rate / lowest.rate;
+    return Math.abs(ratio / Math.round(ratio) - 1) < TWIN;
+  });
   return nested ? lowest.rate : undefined;
 }
 

@@ -105,20 +105,13 @@ export function accessorLayout(container: Container, index: number): AccessorLay
   const run =
     member(json, 'bufferView') === undefined
       ? undefined
-      : runOf(container, json, pointer, count, size * component.bytes, component.bytes);
+      : runOf(container, json, pointer, count, size * component.bytes);
   const sparse = sparseOf(container, layout, json);
   return { ...layout, ...(run && { run }), ...(sparse && { sparse }) };
 }
 
 /** The run that an accessor (or half of a sparse one) describes: it has `bufferView` and maybe `byteOffset`. */
-function runOf(
-  container: Container,
-  json: Json,
-  pointer: string,
-  count: number,
-  size: number,
-  align: number,
-): Run {
+function runOf(container: Container, json: Json, pointer: string, count: number, size: number): Run {
   const view = viewOf(container, json, pointer);
   const within = countMember(json, 'byteOffset') ?? 0;
   const stride = view.stride ?? size;
@@ -136,13 +129,6 @@ function runOf(
       'gltf.accessor-out-of-range',
       pointer,
       `needs bytes ${within} to ${within + needs} of /bufferViews/${view.index}, which has ${view.length}. The count or the view is wrong; export the file again.`,
-    );
-  if ((view.offset + within) % align !== 0)
-    throw fault(
-      container,
-      'gltf.misaligned',
-      pointer,
-      `starts at byte ${view.offset + within} of its buffer; components of ${align} bytes start at multiples of ${align}.`,
     );
   const strided = view.stride !== undefined;
   return {
@@ -244,7 +230,7 @@ function sparseOf(
   const { bytes } = layout.component;
   return {
     indexType,
-    indices: runOf(container, indices, `${pointer}/indices`, count, indexBytes, indexBytes),
-    values: runOf(container, values, `${pointer}/values`, count, layout.size * bytes, bytes),
+    indices: runOf(container, indices, `${pointer}/indices`, count, indexBytes),
+    values: runOf(container, values, `${pointer}/values`, count, layout.size * bytes),
   };
 }

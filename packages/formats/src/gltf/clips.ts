@@ -144,13 +144,20 @@ function flaws(
       samplerPointer(channel.clipIndex, channel.sampler),
       `has ${times.length} keys; ${channel.interpolation} needs ${least}.`,
     );
-  for (const { index, run } of [input, output])
+  for (const { index, run, component } of [input, output]) {
     if (run?.strided)
       add(
         'gltf.strided',
         `/bufferViews/${run.view}/byteStride`,
         `is set, which only mesh data may have (for /accessors/${index}).`,
       );
+    if (run && run.offset % component.bytes !== 0)
+      add(
+        'gltf.misaligned',
+        `/accessors/${index}`,
+        `starts at byte ${run.offset} of its buffer; its numbers must start at multiples of ${component.bytes}.`,
+      );
+  }
   flawsOfTarget(container, channel, add);
   const json = listMember(container.json, 'accessors')[input.index];
   if (!hasBounds(json))

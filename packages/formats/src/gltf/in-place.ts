@@ -87,14 +87,14 @@ export function binRanges(container: Container, writes: readonly BufferWrite[]):
   }));
 }
 
-/** Writes into a data URI as splices of its base64: whole groups of four letters. */
+/** Writes into a data URI, or behind its end, as splices of its base64: whole groups of four letters. */
 export function spliceDataUri(editor: JsonEditor, buffer: OpenBuffer, writes: readonly BufferWrite[]): void {
   const { dataUri } = buffer;
-  const index = writes[0]?.buffer ?? 0;
-  const span = editor.find(`/buffers/${index}/uri`);
-  if (!dataUri || !span)
-    throw new SlewcurveError('plan.cannot-write', `/buffers/${index}/uri is no data URI.`);
-  const data = dataUri.bytes.slice();
+  const span = editor.find(`/buffers/${writes[0]?.buffer ?? 0}/uri`);
+  if (!dataUri || !span) throw new SlewcurveError('plan.cannot-write', 'The buffer is no data URI.');
+  const ends = writes.map(({ offset, bytes }) => offset + bytes.byteLength);
+  const data = new Uint8Array(ends.reduce((most, end) => Math.max(most, end), dataUri.bytes.byteLength));
+  data.set(dataUri.bytes);
   const groups = new Map<number, string>();
   for (const { offset, bytes, what } of writes) {
     data.set(bytes, offset);
@@ -102,22 +102,31 @@ export function spliceDataUri(editor: JsonEditor, buffer: OpenBuffer, writes: re
       groups.set(group, what);
   }
   const payload = span.start + 1 + dataUri.head.length;
-  const ascending = [...groups.keys()];
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
-  ascending.sort((a, b) => a - b);
-  for (let i = 0; i < ascending.length; i++) {
-    const first = ascending[i] ?? 0;
-    const what = groups.get(first);
-    let last = first;
-    while (ascending[i + 1] === last + 1 && groups.get(last + 1) === what) {
-      last++;
-      i++;
-    }
+  // The closing quote follows the last letter.
+  const end = span.end - 1;
+  for (const { first, last, what } of stretchesOf(groups)) {
     const text = encodeBase64(data.subarray(first * 3, Math.min((last + 1) * 3, data.byteLength)));
+    const at = Math.min(payload + first * 4, end);
+    const length = Math.min(payload + (last + 1) * 4, end) - at;
     editor.overwrite(
-      payload + first * 4,
-      Uint8Array.from(text, (c) => c.charCodeAt(0)),
-      what ?? '',
+      at,
+      length,
+      Uint8Array.from(text, (letter) => letter.charCodeAt(0)),
+      what,
     );
   }
+}
+
+/** Neighbouring groups of one meaning, together, ascending. */
+function stretchesOf(groups: ReadonlyMap<number, string>): { first: number; last: number; what: string }[] {
+  const ascending = [...groups];
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  ascending.sort(([a], [b]) => a - b);
+  const stretches: { first: number; last: number; what: string }[] = [];
+  for (const [group, what] of ascending) {
+    const open = stretches.at(-1);
+    if (open && open.last + 1 === group && open.what === what) open.last = group;
+    else stretches.push({ first: group, last: group, what });
+  }
+  return stretches;
 }

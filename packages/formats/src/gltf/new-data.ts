@@ -2,7 +2,9 @@ import { SlewcurveError } from '@slewcurve/core';
 import { encodeBase64 } from '../base64.js';
 import type { JsonEditor } from '../json-text.js';
 import { isObject, listMember, member, textMember } from '../json-value.js';
+import type { OpenBuffer } from './buffers.js';
 import type { Container } from './container.js';
+import type { BufferWrite } from './in-place.js';
 
 /** Where an added block of bytes stands, as a buffer view says it. */
 export interface AddedBlock {
@@ -15,23 +17,27 @@ export interface AddedBlock {
 export interface NewData {
   /** Takes a block; it starts at a multiple of 4 of its buffer. */
   add(bytes: Uint8Array): AddedBlock;
-  /** Bytes that go to the end of the BIN chunk; writes the buffer's new length, or the new buffer, into the JSON. */
-  finish(editor: JsonEditor): Uint8Array;
+  /** What goes behind the old bytes of a buffer, if anything; its new length, or a new buffer, goes into the JSON. */
+  finish(editor: JsonEditor): BufferWrite | undefined;
+}
+
+/** A buffer that more can be added to: its number, and where what it holds ends. */
+export interface Host {
+  readonly buffer: number;
+  readonly end: number;
 }
 
 /** A GLB word is 32 bits: no part of the file is longer. */
 const LONGEST = 0xffff_ffff;
 
 /**
- * Added data goes behind what the BIN chunk holds; where the file has none, or its first buffer stands elsewhere, into a new
- * buffer with a data URI. Files beside the asset are never written.
+ * Added data goes behind what the BIN chunk holds, or else behind a data URI that changed values stand in, or else into a
+ * new buffer with a data URI. Files beside the asset are never written.
  */
-export function newData(container: Container): NewData {
+export function newData(container: Container, host: Host | undefined): NewData {
   const blocks: Uint8Array[] = [];
-  const buffers = listMember(container.json, 'buffers');
-  const bin = isObject(buffers[0]) && textMember(buffers[0], 'uri') === undefined ? container.bin : undefined;
-  const buffer = bin ? 0 : buffers.length;
-  const start = bin ? roundedUp(bin.length) : 0;
+  const buffer = host?.buffer ?? listMember(container.json, 'buffers').length;
+  const start = roundedUp(host?.end ?? 0);
   let next = start;
   return {
     add: (bytes) => {
@@ -47,20 +53,32 @@ export function newData(container: Container): NewData {
       return block;
     },
     finish: (editor) => {
-      if (blocks.length === 0) return new Uint8Array(0);
+      if (blocks.length === 0) return undefined;
       const data = joined(blocks, next - start);
-      if (!bin) {
+      if (!host) {
         const uri = `data:application/octet-stream;base64,${encodeBase64(data)}`;
         editor.append('', 'buffers', JSON.stringify({ byteLength: data.byteLength, uri }));
-        return new Uint8Array(0);
+        return undefined;
       }
-      editor.setMember('/buffers/0', 'byteLength', String(next));
-      const padding = start - bin.length;
-      const tail = new Uint8Array(padding + data.byteLength);
-      tail.set(data, padding);
-      return tail;
+      editor.setMember(`/buffers/${buffer}`, 'byteLength', String(next));
+      const bytes = new Uint8Array(next - host.end);
+      bytes.set(data, start - host.end);
+      return { buffer, offset: host.end, bytes, what: 'appended data' };
     },
   };
+}
+
+/** The buffer that added data goes behind; none where a new one is needed. */
+export function hostOf(
+  { json, bin }: Container,
+  open: ReadonlyMap<number, OpenBuffer>,
+  writable: ReadonlySet<number>,
+): Host | undefined {
+  const first = listMember(json, 'buffers')[0];
+  if (bin && isObject(first) && textMember(first, 'uri') === undefined) return { buffer: 0, end: bin.length };
+  for (const [buffer, { dataUri }] of open)
+    if (dataUri && writable.has(buffer)) return { buffer, end: dataUri.bytes.byteLength };
+  return undefined;
 }
 
 /** Adds the view of a block to the JSON; its number. */

@@ -1,7 +1,7 @@
 import { SlewcurveError } from '@slewcurve/core';
 
 /** Names that Windows gives to devices, with any ending ("Naming Files, Paths, and Namespaces", Microsoft). */
-const DEVICE = /^(con|prn|aux|nul|com[0-9¹²³]|lpt[0-9¹²³]|conin\$|conout\$)(\..*)?$/i;
+const DEVICE = /^(con|prn|aux|nul|com[0-9¹²³]|lpt[0-9¹²³]|conin\$|conout\$) *(\..*)?$/i;
 
 /**
  * The relative path that a buffer's URI names, percent-decoded, `/`-separated. Only a file beside the asset or below it is

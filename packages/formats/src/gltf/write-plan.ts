@@ -6,7 +6,7 @@ import type { Buffers, OpenBuffer } from './buffers.js';
 import { accessorsOnClaimedBytes, countViewUsers } from './claimed-bytes.js';
 import type { Container } from './container.js';
 import { type BufferWrite, binRanges, isWritable, spliceDataUri } from './in-place.js';
-import { checkLists, newData } from './new-data.js';
+import { checkLists, hostOf, newData } from './new-data.js';
 import { placeColumns } from './place-columns.js';
 import { channelsOf, rewireSamplers } from './rewire-samplers.js';
 import { readRuns } from './run-reader.js';
@@ -27,7 +27,8 @@ export async function writePlan(
     .flatMap(({ input, output }) => [input, output])
     .filter((column) => column !== undefined);
   const open = await openBuffers(columns, buffers);
-  const data = newData(container);
+  const canWrite = new Set([...open.keys()].filter((index) => writable(container, index, open, editor)));
+  const data = newData(container, hostOf(container, open, canWrite));
   const writes: BufferWrite[] = [];
   const places = placeColumns(
     {
@@ -37,7 +38,7 @@ export async function writePlan(
       writes,
       readers: readersButLone(container, changes),
       claimed: accessorsOnClaimedBytes(container),
-      writable: new Set([...open.keys()].filter((index) => writable(container, index, open, editor))),
+      writable: canWrite,
       viewUsers: countViewUsers(container),
       bytesOf: await readRuns(
         columns.flatMap(({ layout }) => (layout.run ? [layout.run] : [])),
@@ -48,13 +49,15 @@ export async function writePlan(
     columns,
   );
   rewireSamplers(container, editor, changes, places);
-  const tail = data.finish(editor);
+  const added = data.finish(editor);
   const ranges: PatchRange[] = [];
   for (const [index, buffer] of open) {
-    const own = writes.filter((write) => write.buffer === index);
-    if (buffer.kind === 'bin') ranges.push(...binRanges(container, own));
-    else if (own.length > 0) spliceDataUri(editor, buffer, own);
+    const own = [...writes, ...(added ? [added] : [])].filter((write) => write.buffer === index);
+    if (buffer.kind === 'data' && own.length > 0) spliceDataUri(editor, buffer, own);
   }
+  const inBin = container.bin ? writes.filter(({ buffer }) => open.get(buffer)?.kind === 'bin') : [];
+  ranges.push(...binRanges(container, inBin));
+  const tail = added && open.get(added.buffer)?.kind !== 'data' ? added.bytes : undefined;
   ranges.push(...jsonAndTail(container, editor.splices(), tail));
   // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
   ranges.sort((a, b) => a.at - b.at || a.length - b.length);
@@ -116,7 +119,11 @@ function readersButLone(
 }
 
 /** Splices of the JSON and the tail of the BIN chunk as ranges of the file, with the length fields that they change. */
-function jsonAndTail(container: Container, splices: readonly JsonSplice[], tail: Uint8Array): PatchRange[] {
+function jsonAndTail(
+  container: Container,
+  splices: readonly JsonSplice[],
+  tail: Uint8Array | undefined,
+): PatchRange[] {
   const { jsonSpan, bin, declaredLength } = container;
   const ranges: PatchRange[] = splices.map((splice) => ({ ...splice, at: jsonSpan.at + splice.at }));
   if (declaredLength === undefined) return ranges;
@@ -128,7 +135,7 @@ function jsonAndTail(container: Container, splices: readonly JsonSplice[], tail:
     );
   if (jsonLength + padding !== jsonSpan.length)
     ranges.push(rangeOf(12, 4, word(jsonLength + padding), 'length of the JSON chunk'));
-  if (bin && tail.byteLength > 0) {
+  if (bin && tail) {
     ranges.push(rangeOf(bin.at - 8, 4, word(bin.length + tail.byteLength), 'length of the BIN chunk'));
     ranges.push(rangeOf(bin.at + bin.length, 0, tail, 'appended data'));
   }

@@ -1,0 +1,203 @@
+// Real files against counts that two independent readers agreed on (../shared/data/counts.json), and the official validator's
+// fixtures against its reports (KhronosGroup/glTF-Validator, Apache-2.0).
+import { dirname, join } from 'node:path';
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
+import { WebIO } from '@gltf-transform/core';
+import { validateBytes } from 'gltf-validator';
+import { describe, expect, test } from 'vitest';
+import { replaceTrack, segmentAngle, signChanges, type RotationTrack } from '@slewcurve/core';
+import { bufferSource, openAnimation, patchedBytes, type AnimationFile } from '@slewcurve/formats';
+import { sharedFile } from '../support/shared-data.js';
+
+interface Counted {
+  readonly total: {
+    readonly rotation_channels: number;
+    readonly keys: number;
+    readonly flips: number;
+    readonly channels_with_flips: number;
+    readonly spans_over_170: number;
+    readonly bad_times: number;
+  };
+  readonly channels: readonly {
+    readonly clip: number | string;
+    readonly node: number | string;
+    readonly mode: string;
+    readonly keys: number;
+    readonly start?: number;
+    readonly end?: number;
+    readonly flip_at?: readonly number[];
+    readonly max_span_deg?: number;
+  }[];
+}
+
+const counts = sharedFile('data/counts.json');
+const counted = counts.absent
+  ? []
+  : Object.entries(
+      (JSON.parse(new TextDecoder().decode(counts.read())) as { files: Record<string, Counted> }).files,
+    ).filter(([name]) => name.startsWith('gltf/'));
+
+async function open(name: string): Promise<AnimationFile> {
+  const { path, read } = sharedFile(`data/${name}`);
+  return openAnimation(bufferSource(read()), {
+    name,
+    sibling: async (uri) => {
+      const beside = join(dirname(path), uri);
+      // One fixture's buffer is not among the data; it holds keys that are counted, not read.
+      return bufferSource(existsSync(beside) ? new Uint8Array(readFileSync(beside)) : new Uint8Array(4096));
+    },
+  });
+}
+
+const tracksOf = (file: AnimationFile): RotationTrack[] => file.clips.flatMap(({ tracks }) => tracks);
+const sum = (numbers: readonly number[]): number => numbers.reduce((total, x) => total + x, 0);
+const DEGREES = 180 / Math.PI;
+
+function widest(track: RotationTrack): number {
+  const segments = Math.max(track.times.length - 1, 0);
+  return Math.max(0, ...Array.from({ length: segments }, (_, key) => segmentAngle(track, key) * DEGREES));
+}
+
+describe.skipIf(counts.absent)('counts.json', () => {
+  test.each(counted)('%s holds what two independent readers counted', async (name, { total, channels }) => {
+    const file = await open(name);
+    const tracks = tracksOf(file);
+    const flips = tracks.map((track) => signChanges(track).length);
+    expect({
+      tracks: tracks.length,
+      keys: sum(tracks.map(({ times }) => times.length)),
+      flips: sum(flips),
+      flipped: flips.filter((count) => count > 0).length,
+      wide: tracks.reduce(
+        (wide, track) =>
+          wide +
+          Array.from(track.times.subarray(1), (_, key) => segmentAngle(track, key) * DEGREES).filter(
+            (x) => x > 170,
+          ).length,
+        0,
+      ),
+    }).toEqual({
+      tracks: total.rotation_channels,
+      keys: total.keys,
+      flips: total.flips,
+      flipped: total.channels_with_flips,
+      wide: total.spans_over_170,
+    });
+    for (const channel of channels) {
+      const clip = file.clips.find((each) => each.name === channel.clip || each.index === channel.clip);
+      const track = clip?.tracks.find(
+        ({ source }) => source.node === channel.node || file.nodes[source.node].name === channel.node,
+      );
+      expect(track).toMatchObject({ interpolation: channel.mode });
+      if (!track) continue;
+      expect(track.times).toHaveLength(channel.keys);
+      // The buffer of this fixture is not among the data.
+      if (channel.keys === 0 || name.includes('splines-single-or-no')) continue;
+      expect(track.times[0]).toBe(channel.start);
+      expect(track.times.at(-1)).toBe(channel.end);
+      expect([...signChanges(track)]).toEqual(channel.flip_at);
+      // Counted to four places.
+      expect(Math.abs(widest(track) - (channel.max_span_deg ?? 0))).toBeLessThanOrEqual(6e-5);
+    }
+  });
+
+  test.each(counted.filter(([name]) => name.endsWith('.glb')))(
+    '%s is written back: nothing for nothing, and all its tracks negated and shortened with no new issue',
+    async (name) => {
+      const bytes = sharedFile(`data/${name}`).read();
+      const file = await open(name);
+      expect(await file.plan([])).toEqual({ ranges: [], size: bytes.byteLength });
+      expect(await file.plan(tracksOf(file))).toEqual({ ranges: [], size: bytes.byteLength });
+      const before = await validateBytes(bytes, { maxIssues: 0 });
+      for (const change of [
+        (track: RotationTrack) => replaceTrack(track, { values: track.values.map((x) => -x) }),
+        (track: RotationTrack) => {
+          const keys = Math.max(track.times.length - 1, 2);
+          const size = track.values.length / track.times.length;
+          return replaceTrack(track, {
+            times: track.times.slice(0, keys),
+            values: track.values.slice(0, keys * size),
+          });
+        },
+      ]) {
+        const changed = tracksOf(file).map(change);
+        const made = patchedBytes(bytes, await file.plan(changed));
+        const again = await openAnimation(bufferSource(made), { name });
+        tracksOf(again).forEach((track, i) => {
+          expect(Buffer.compare(bytesOf(track.times), bytesOf(changed[i].times))).toBe(0);
+          expect(Buffer.compare(bytesOf(track.values), bytesOf(changed[i].values))).toBe(0);
+        });
+        const after = await validateBytes(made, { maxIssues: 0 });
+        expect(after.issues.messages.map(({ code, pointer }) => `${code} ${pointer}`)).toEqual(
+          before.issues.messages.map(({ code, pointer }) => `${code} ${pointer}`),
+        );
+        const document = await new WebIO().readBinary(made);
+        expect(document.getRoot().listAnimations()).toHaveLength(file.clips.length);
+      }
+    },
+  );
+});
+
+function bytesOf({ buffer, byteOffset, byteLength }: Float64Array): Uint8Array {
+  return new Uint8Array(buffer, byteOffset, byteLength);
+}
+
+const meshopt = sharedFile('data/gltf/MeshoptCubeTest/MeshoptCubeTest.gltf');
+
+test.skipIf(meshopt.absent)('a required compression is named in the error', async () => {
+  await expect(open('gltf/MeshoptCubeTest/MeshoptCubeTest.gltf')).rejects.toMatchObject({
+    code: 'gltf.needs-extension',
+    message: expect.stringContaining('KHR_meshopt_compression'),
+  });
+});
+
+const invalid = sharedFile('data/gltf/importer-tests/animation-invalid.gltf');
+
+test.skipIf(invalid.absent)(
+  '35 broken clips open with a problem for each that touches a rotation',
+  async () => {
+    const file = await open('gltf/importer-tests/animation-invalid.gltf');
+    expect(file.clips).toHaveLength(35);
+    expect(tracksOf(file)).toEqual([]);
+    expect(file.problems.map(({ code, place }) => [place.clip, code])).toEqual(
+      expect.arrayContaining([
+        ['unexpected time type', 'gltf.time-type'],
+        ['unsupported interpolation type', 'gltf.bad-interpolation'],
+        ['unexpected rotation type', 'gltf.value-type'],
+        ['missing channels', 'gltf.bad-clip'],
+        ['invalid channels', 'gltf.bad-clip'],
+        ['invalid channel', 'gltf.bad-channel'],
+        ['missing channel target', 'gltf.bad-target'],
+        ['invalid channel target', 'gltf.bad-target'],
+        ['missing channel target path', 'gltf.bad-target'],
+        ['invalid channel target path', 'gltf.bad-target'],
+      ]),
+    );
+  },
+);
+
+/** The validator's fixtures whose severe messages concern a rotation, and our code for each. */
+const ROTATION_FAULTS: Readonly<Record<string, string>> = {
+  'base/animation/sampler_too_few_cubic_frames.gltf': 'gltf.too-few-keys',
+  'ext/KHR_animation_pointer/animation/channel/target/invalid_channel_target_node.gltf':
+    'gltf.pointer-with-node',
+};
+
+const validator = sharedFile('data/validator');
+const fixtures = validator.absent
+  ? []
+  : readdirSync(validator.path, { recursive: true, encoding: 'utf8' }).filter((name) =>
+      name.endsWith('.gltf'),
+    );
+
+describe.skipIf(validator.absent)("the validator's fixtures", () => {
+  test.each(fixtures)('%s opens, with a problem where it is broken for a rotation', async (name) => {
+    const file = await open(`validator/${name}`);
+    const codes = file.problems.map(({ code }) => code);
+    if (ROTATION_FAULTS[name]) expect(codes).toEqual([ROTATION_FAULTS[name]]);
+    if (name.endsWith('/valid.gltf')) expect(codes).toEqual([]);
+    // Faulty numbers are no problem of the file: tracks keep them for the rules.
+    if (name.includes('non_unit'))
+      expect({ codes, tracks: tracksOf(file).length }).toEqual({ codes: [], tracks: 1 });
+  });
+});
