@@ -67,14 +67,15 @@ export function rotationSamplers(bytes: Uint8Array): RotationSampler[] {
   );
 }
 
-/** The orientation that the specification's formula gives at a time, normalised. */
-export function sampleAt({ times, output, interpolation }: RotationSampler, t: number): number[] {
+/** The orientation that the specification's formula gives at a time, normalised. `from`: a key at or before it, to look from. */
+export function sampleAt({ times, output, interpolation }: RotationSampler, t: number, from = 0): number[] {
   const last = times.length - 1;
   const size = interpolation === 'CUBICSPLINE' ? 12 : 4;
-  const valueOf = (key: number): number[] => output.slice(key * size + (size === 12 ? 4 : 0)).slice(0, 4);
+  const valueOf = (key: number): number[] =>
+    output.slice(key * size + (size === 12 ? 4 : 0), key * size + (size === 12 ? 8 : 4));
   if (t <= times[0]) return unit(valueOf(0));
   if (t >= times[last]) return unit(valueOf(last));
-  let k = 0;
+  let k = from;
   while (times[k + 1] <= t) k++;
   const td = times[k + 1] - times[k];
   const u = (t - times[k]) / td;

@@ -78,7 +78,7 @@ export function desk(): Desk {
       const at = tracksOf(folder.opened).findIndex((other) => other.clip === clip && other.id === track);
       const before = tracksOf(folder.opened)[at];
       const after = folder.current[at];
-      if (before && after) return { before: copyOf(before), after: copyOf(after) };
+      if (before && after) return trackAnswer(before, after);
       throw new SlewcurveError('job.no-track', `There is no track ${track} in ${clip}.`, { clip, track });
     },
     card: (file, steps, watch) => setCard(folderOf(file), steps, watch),
@@ -174,6 +174,12 @@ function currentOf(folder: Folder, track: RotationTrack): RotationTrack {
 
 function clipOf(opened: OpenedFile, track: RotationTrack): Clip | undefined {
   return opened.file.clips.find((clip) => clip.name === track.clip);
+}
+
+/** One object twice where nothing was edited, so that nobody compares equal numbers. */
+function trackAnswer(before: RotationTrack, after: RotationTrack): TrackAnswer {
+  const copy = copyOf(before);
+  return { before: copy, after: after === before ? copy : copyOf(after) };
 }
 
 /** A copy whose arrays may be handed over. */

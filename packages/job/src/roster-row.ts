@@ -1,5 +1,7 @@
 import { playAs, type Clip, type PlaybackId, type RotationTrack } from '@slewcurve/core';
 
+import { largestRateFloor } from './track-report.js';
+
 const DEGREES = 180 / Math.PI;
 
 /** What the roster draws of one track: angular speed over its clip, the greatest in each bin. deg/s, seconds. */
@@ -12,8 +14,8 @@ export interface RosterRow {
   readonly end: number;
   /** Greatest speed in each of equal bins from `start` to `end`: never the mean, so that no one-frame pop is lost. */
   readonly columns: Float32Array;
-  /** The track's own habit: nineteen of twenty bins in which it moves are slower. */
-  readonly habit: number;
+  /** Largest rate floor of any segment, deg/s. */
+  readonly noiseFloor: number;
   readonly peak: number;
   /** Degrees turned in all. */
   readonly travelled: number;
@@ -45,13 +47,8 @@ export function rosterRow(track: RotationTrack, clip: Clip, playback: PlaybackId
     start: clip.start,
     end: clip.end,
     columns,
-    habit: habitOf(columns),
+    noiseFloor: largestRateFloor(track) * DEGREES,
     peak,
     travelled: curve.length(curve.start, curve.end) * DEGREES,
   };
-}
-
-function habitOf(columns: Float32Array): number {
-  const moving = columns.filter((rate) => rate > 0).sort();
-  return moving[Math.floor(0.95 * moving.length)] ?? 0;
 }

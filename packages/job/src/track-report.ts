@@ -33,10 +33,15 @@ export function trackReport(track: RotationTrack, playback: PlaybackId): TrackRe
     peakAcceleration: degrees(measured.peakAcceleration),
     rmsAcceleration: degrees(measured.rmsAcceleration),
     accelerationIs: measured.accelerationIs,
-    noiseFloor: degrees(largest(track, (key) => rateFloor(track, key))),
+    noiseFloor: degrees(largestRateFloor(track)),
     signChanges: signChanges(track).length,
     widestSegment: degrees(largest(track, (key) => segmentAngle(track, key))),
   };
+}
+
+/** Largest rate floor of any segment of a track, rad/s: nothing under it is claimed anywhere on the track. */
+export function largestRateFloor(track: RotationTrack): number {
+  return largest(track, (key) => rateFloor(track, key));
 }
 
 /** Largest finite value over the segments of a track; 0 where there are none. */

@@ -1,5 +1,7 @@
 import { LitElement, html, nothing, type PropertyDeclarations, type TemplateResult } from 'lit';
 import type { PlaybackId } from '@slewcurve/core';
+import { rankRows } from '@slewcurve/elements/plot';
+import type { SlewRoster } from '@slewcurve/elements/roster';
 import { askForFiles, droppedFiles, pickedFiles, type ChosenFile } from '../files/chosen-file.js';
 import { saveCopy } from '../files/save-file.js';
 import type { FileWork } from '../session/file-work.js';
@@ -40,6 +42,8 @@ export class SlewApp extends LitElement {
   /** Something is held over the page to be dropped. */
   declare private over: boolean;
   private readonly session = new Session();
+  /** Somebody chose the track; the page chooses no other. */
+  private byHand = false;
 
   constructor() {
     super();
@@ -76,12 +80,26 @@ export class SlewApp extends LitElement {
   private follow(): void {
     this.files = this.session.files;
     const { chosen } = this;
-    if (chosen && !this.files.some((file) => file.id === chosen.file)) this.chosen = undefined;
-    // The first track is drawn before the survey is through.
-    const first = this.files.find((file) => file.opened?.tracks[0]);
-    const track = first?.opened?.tracks[0];
-    if (!this.chosen && first && track)
-      this.chosen = { file: first.id, clip: track.clip, track: track.track };
+    if (chosen && !this.files.some((file) => file.id === chosen.file))
+      [this.chosen, this.byHand] = [undefined, false];
+    if (this.byHand) return;
+    const next = this.worstTrack() ?? this.chosen ?? this.firstTrack();
+    // The same track is the same object, so that it is not fetched again.
+    if (JSON.stringify(next) !== JSON.stringify(this.chosen)) this.chosen = next;
+  }
+
+  /** Drawn before the survey is through. */
+  private firstTrack(): ChosenTrack | undefined {
+    const file = this.files.find((other) => other.opened?.tracks[0]);
+    const track = file?.opened?.tracks[0];
+    return file && track && { file: file.id, clip: track.clip, track: track.track };
+  }
+
+  /** What the roster puts first, once a survey is through. */
+  private worstTrack(): ChosenTrack | undefined {
+    if (!this.files.some((file) => file.status === 'ready')) return undefined;
+    const [first] = rankRows(rosterRows(this.files), 'wrong');
+    return first && trackOfRow(first.id);
   }
 
   private async take(chosen: readonly ChosenFile[]): Promise<void> {
@@ -118,6 +136,7 @@ export class SlewApp extends LitElement {
   }
 
   private choose(chosen: ChosenTrack): void {
+    this.byHand = true;
     this.chosen = chosen;
     this.go('chart');
   }
@@ -127,7 +146,7 @@ export class SlewApp extends LitElement {
     void this.updateComplete.then(() => {
       const chart = this.renderRoot.querySelector<SlewChartPage>('slew-chart-page');
       if (page === 'chart') chart?.focus();
-      else if (page === 'roster') this.renderRoot.querySelector('slew-roster')?.focus();
+      else if (page === 'roster') this.renderRoot.querySelector<SlewRoster>('slew-roster')?.focus();
     });
   }
 

@@ -85,7 +85,7 @@ function noteOf(finding: Finding, place: Occurrence | undefined): MarginNote {
     id: place ? noteId(finding, place) : finding.fingerprint,
     rule: finding.rule,
     level,
-    message: place && one ? place.message : finding.message,
+    message: asSentence(place && one ? place.message : finding.message),
     time,
     places: one ? [place] : finding.occurrences,
     count: one ? 1 : finding.count,
@@ -103,4 +103,8 @@ function buttonOf({ verb, keys = [] }: Step): string {
   const words = verb.charAt(0).toUpperCase() + verb.slice(1);
   if (keys.length === 0) return words;
   return keys.length === 1 ? `${words} at key ${keys[0]}` : `${words} at ${keys.length} keys`;
+}
+
+function asSentence(message: string): string {
+  return `${message.charAt(0).toUpperCase()}${message.slice(1)}${message.endsWith('.') ? '' : '.'}`;
 }

@@ -9,6 +9,8 @@ import {
 } from 'lit';
 import { PLAYBACKS, playAs, type PlaybackId } from '@slewcurve/core';
 import type { SlewChart } from '@slewcurve/elements/chart';
+import type { SlewPorthole } from '@slewcurve/elements/porthole';
+import type { SlewSentence } from '@slewcurve/elements/sentence';
 import { rowAt, type ChartData } from '@slewcurve/elements/plot';
 import type { TrackAnswer } from '@slewcurve/job';
 import { sayStep } from '@slewcurve/mend';
@@ -38,12 +40,28 @@ export class SlewChartPage extends LitElement {
     sentence: { state: true },
     note: { state: true },
     busy: { state: true },
+    fold: { state: true },
   };
   static override styles = [
     pageStyles,
     css`
+      :host {
+        container: chart-page / inline-size;
+      }
       .figure {
-        max-width: 26rem;
+        max-width: 24rem;
+      }
+      @container chart-page (min-width: 64rem) {
+        .sheet {
+          display: grid;
+          grid-template-columns: minmax(0, 1fr) 17rem;
+          gap: 2rem;
+          align-items: start;
+        }
+        .figure {
+          position: sticky;
+          top: 0.5rem;
+        }
       }
     `,
   ];
@@ -59,6 +77,8 @@ export class SlewChartPage extends LitElement {
   declare private sentence: SentenceAtHand | undefined;
   declare private note: string | undefined;
   declare private busy: boolean;
+  /** Seconds a row, where somebody chose. */
+  declare private fold: number | undefined;
   private data: ChartData | undefined;
 
   constructor() {
@@ -81,6 +101,7 @@ export class SlewChartPage extends LitElement {
     this.sentence = undefined;
     this.span = undefined;
     this.note = undefined;
+    this.fold = undefined;
   }
 
   private async fetch(chosen: ChosenTrack): Promise<void> {
@@ -108,7 +129,7 @@ export class SlewChartPage extends LitElement {
   }
 
   private get chart(): SlewChart | null {
-    return this.renderRoot.querySelector('slew-chart');
+    return this.renderRoot.querySelector<SlewChart>('slew-chart');
   }
 
   protected override render(): TemplateResult {
@@ -118,18 +139,20 @@ export class SlewChartPage extends LitElement {
         Choose a track on the roster, and its angular speed over time is drawn here.
       </p>`;
     if (!data || !file) return html`<p class="empty" role="status">Drawing ${chosen.track}.</p>`;
-    return html`${this.playbacks(data)}
+    return html`${this.playbacks()}
       <div class="sheet">
         <slew-chart
           .data=${data}
+          .fold=${this.fold ?? wholeClip(data)}
           .time=${this.time}
           .span=${this.span}
           .chosen=${this.note}
+          @fold-chosen=${(event: CustomEvent<{ fold: number }>) => (this.fold = event.detail.fold)}
           @cursor-moved=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
           @span-chosen=${(event: CustomEvent<{ span: [number, number] | undefined }>) => (this.span = event.detail.span)}
           @note-chosen=${(event: CustomEvent<{ id: string }>) => (this.note = event.detail.id)}
           @remedy-chosen=${(event: CustomEvent<{ id: string }>) => this.openRemedy(event.detail.id)}
-          @play-asked=${() => this.renderRoot.querySelector('slew-porthole')?.toggle()}
+          @play-asked=${() => this.renderRoot.querySelector<SlewPorthole>('slew-porthole')?.toggle()}
           >${this.sentenceAt()}</slew-chart
         >
         <slew-porthole
@@ -144,9 +167,9 @@ export class SlewChartPage extends LitElement {
       ${jobCardOf(file, this.session)}`;
   }
 
-  private playbacks(data: ChartData): TemplateResult {
+  private playbacks(): TemplateResult {
     const [playback = 'as-written'] = this.session.settings.playbacks;
-    const can = PLAYBACKS.filter(({ id }) => this.canPlay(id));
+    const can = Object.values(PLAYBACKS).filter(({ id }) => this.canPlay(id));
     const option = (id: PlaybackId, chosen: boolean): TemplateResult =>
       html`<option value=${id} ?selected=${chosen}>${id.replaceAll('-', ' ')}</option>`;
     return html`<p class="playbacks on-screen">
@@ -167,7 +190,7 @@ export class SlewChartPage extends LitElement {
           ${can.filter(({ id }) => id !== playback).map(({ id }) => option(id, id === this.second))}
         </select></label
       >
-      <span class="says">${PLAYBACKS.find(({ id }) => id === playback)?.says ?? data.playback}</span>
+      <span class="says">${PLAYBACKS[playback].says}</span>
     </p>`;
   }
 
@@ -212,7 +235,9 @@ export class SlewChartPage extends LitElement {
     this.note = id;
     this.time = found.place.time;
     this.sentence = tryOut(sayStep(found.place.remedy), found.place.time, answer.after);
-    void this.updateComplete.then(() => this.renderRoot.querySelector('slew-sentence')?.focus());
+    void this.updateComplete.then(() =>
+      this.renderRoot.querySelector<SlewSentence>('slew-sentence')?.focus(),
+    );
   }
 
   private rewrite(text: string): void {
@@ -233,4 +258,10 @@ export class SlewChartPage extends LitElement {
     this.sentence = undefined;
     void this.updateComplete.then(() => this.focus());
   }
+}
+
+/** A clip shorter than a row of ten seconds takes the whole row. */
+function wholeClip({ motion }: ChartData): number | undefined {
+  const seconds = motion.end - motion.start;
+  return seconds > 0 && seconds < 10 ? seconds : undefined;
 }

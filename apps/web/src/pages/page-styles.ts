@@ -1,6 +1,6 @@
 import { css, type CSSResult } from 'lit';
-import { controls } from '@slewcurve/elements/theme';
-import { paper } from '@slewcurve/elements/theme';
+import { controls } from '@slewcurve/elements/theme/controls';
+import { paper } from '@slewcurve/elements/theme/paper';
 
 /** Paper, ink and buttons for the page around the elements. */
 export const pageStyles: CSSResult[] = [

@@ -1,7 +1,7 @@
 import type { RosterRow as JobRow } from '@slewcurve/job';
-import { buildPyramid, type Pyramid, type RosterRow } from '@slewcurve/elements/plot';
+import { trackInk, type Pyramid, type RosterRow } from '@slewcurve/elements/plot';
 import type { Finding } from '@slewcurve/survey';
-import { trackKey, type FileWork } from '../session/file-work.js';
+import type { FileWork } from '../session/file-work.js';
 
 /** A track among all open files. */
 export interface ChosenTrack {
@@ -26,21 +26,18 @@ export function trackOfRow(id: string): ChosenTrack {
   return { file, clip, track };
 }
 
-// Building a pyramid for every row at every change would cost more than drawing it.
-const pyramids = new WeakMap<JobRow, Pyramid>();
+// Inking every row at every change would cost more than drawing it.
+const inks = new WeakMap<JobRow, Pyramid>();
 
-function pyramidOf(row: JobRow): Pyramid {
-  const known = pyramids.get(row);
+function inkOf(row: JobRow): Pyramid {
+  const known = inks.get(row);
   if (known) return known;
-  const made = buildPyramid(row.columns);
-  pyramids.set(row, made);
+  const made = trackInk(row.columns, (row.end - row.start) / row.columns.length, row.noiseFloor);
+  inks.set(row, made);
   return made;
 }
 
 function rosterRow(file: FileWork, row: JobRow, findings: readonly Finding[]): RosterRow {
-  const report = file.report?.tracks.find(
-    (track) => trackKey(track.clip, track.track) === trackKey(row.clip, row.track),
-  );
   const places = findings.flatMap((finding) => finding.occurrences);
   const count = (level: string): number => findings.filter((finding) => finding.level === level).length;
   return {
@@ -49,9 +46,7 @@ function rosterRow(file: FileWork, row: JobRow, findings: readonly Finding[]): R
     clip: row.clip,
     track: row.track,
     seconds: row.end - row.start,
-    speeds: pyramidOf(row),
-    habit: row.habit,
-    noiseFloor: report?.noiseFloor ?? 0,
+    ink: inkOf(row),
     counts: { error: count('error'), warning: count('warning'), note: count('note') },
     families: familiesOf(findings),
     marks: places.map(({ time, level }) => ({ time: time - row.start, level })),

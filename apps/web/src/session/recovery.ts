@@ -19,9 +19,7 @@ const KEY = 'last';
 
 /** Keep the work of this visit instead of what was kept before. Fails silently where the browser keeps nothing: saving is a comfort. */
 export async function keepWork(files: readonly SavedWork[]): Promise<void> {
-  await inStore('readwrite', (store) =>
-    files.length === 0 ? store.delete(KEY) : store.put(files, KEY),
-  ).catch(() => {});
+  await inStore('readwrite', (store) => store.put(files, KEY)).catch(() => {});
 }
 
 /** The work that an earlier visit left, if any. */
@@ -30,29 +28,30 @@ export async function keptWork(): Promise<readonly SavedWork[]> {
   return Array.isArray(kept) ? (kept as SavedWork[]) : [];
 }
 
-async function inStore<T>(
+async function inStore(
   mode: IDBTransactionMode,
-  use: (store: IDBObjectStore) => IDBRequest<T>,
-): Promise<T> {
+  use: (store: IDBObjectStore) => IDBRequest<unknown> | IDBRequest<IDBValidKey>,
+): Promise<unknown> {
   const database = await opened();
   try {
-    return await settled(use(database.transaction(STORE, mode).objectStore(STORE)));
+    const request = use(database.transaction(STORE, mode).objectStore(STORE));
+    await settled(request);
+    return request.result;
   } finally {
     database.close();
   }
 }
 
-function opened(): Promise<IDBDatabase> {
+async function opened(): Promise<IDBDatabase> {
   const request = indexedDB.open(DATABASE, 1);
   request.addEventListener('upgradeneeded', () => request.result.createObjectStore(STORE));
-  return settled(request);
+  await settled(request);
+  return request.result;
 }
 
-function settled<T>(request: IDBRequest<T>): Promise<T> {
+function settled(request: EventTarget): Promise<unknown> {
   return new Promise((resolve, reject) => {
-    request.addEventListener('success', () => resolve(request.result));
-    request.addEventListener('error', () =>
-      reject(request.error ?? new Error('The browser keeps nothing here.')),
-    );
+    request.addEventListener('success', resolve);
+    request.addEventListener('error', () => reject(new Error('The browser keeps nothing here.')));
   });
 }

@@ -21,7 +21,7 @@ export function tryOut(text: string, time: number, track: RotationTrack): Senten
   try {
     const step = parseSentence(text);
     const { tracks, results } = applySteps([track], [step]);
-    const result = results[0]?.edits[0]?.result;
+    const result = results[0]?.result;
     return {
       text,
       time,

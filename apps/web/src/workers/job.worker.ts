@@ -101,7 +101,10 @@ function tell(message: FromDesk, transfer: Transferable[] = []): void {
 function buffersOf(made: Answer<AskName>): Transferable[] {
   if (made === null) return [];
   if ('before' in made)
-    return [made.before, made.after].flatMap((track) => [track.times.buffer, track.values.buffer]);
+    return [...new Set([made.before, made.after])].flatMap((track) => [
+      track.times.buffer,
+      track.values.buffer,
+    ]);
   if ('bytes' in made) return [made.bytes.buffer];
   return [];
 }
