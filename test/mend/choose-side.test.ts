@@ -3,6 +3,8 @@ import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { applied, codeOf, numbersOf } from '../support/edit-acceptance.js';
 
+fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 2 });
+
 const DEGREES = 180 / Math.PI;
 
 /** Two keys a second apart, `degrees` about y, with the second's w as given. */

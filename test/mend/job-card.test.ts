@@ -5,6 +5,8 @@ import { describe, expect, it } from 'vitest';
 import { codeOf, numbersOf } from '../support/edit-acceptance.js';
 import { grid, keyed, turned } from '../support/smooth-track.js';
 
+fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 2 });
+
 const WAVE = { spin: [20, 35, -10], swing: [25, 10, 15], hertz: 0.4, phase: 1 } as const;
 const STEP = { verb: 'lift out', clip: 'Walk', track: 'Neck', keys: [6] };
 

@@ -4,6 +4,8 @@ import { describe, expect, it } from 'vitest';
 import { applied, codeOf, numbersOf } from '../support/edit-acceptance.js';
 import { grid, keyed, smoothTracks } from '../support/smooth-track.js';
 
+fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 2 });
+
 const DEGREES = 180 / Math.PI;
 const WAVE = { spin: [20, 35, -10], swing: [25, 10, 15], hertz: 0.4, phase: 1 } as const;
 

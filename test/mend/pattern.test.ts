@@ -2,6 +2,8 @@ import { matchesPattern } from '@slewcurve/mend';
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 
+fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 2 });
+
 describe('matchesPattern', () => {
   it.each([
     ['*', '', true],
