@@ -50,17 +50,20 @@ test.each([
   ['no length', [0, 0, 0, 0], [0, 0, 0], [0, 0, 0]],
   ['half a turn, its sign as stored', [0, -1, 0, 0], [0, -Math.PI, 0], [0, -Math.PI, 0]],
   ['not unit', [0, 0, 3, 3], [0, 0, Math.PI / 2], [0, 0, Math.PI / 2]],
-  ['a turn of 2e-200 rad', [1e-200, 0, 0, 1], [2e-200, 0, 0], [2e-200, 0, 0]],
 ])('logs of %s', (_, q, short, long) => {
   for (let k = 0; k < 3; k++) {
     expect(logMap([], q)[k]).toBeCloseTo(short[k], 14);
     expect(logMapLong([], q)[k]).toBeCloseTo(long[k], 14);
   }
-  if (q[0] === 1e-200) expect(logMap([], q)[0]).toBe(2e-200);
 });
 
 test('vectors too long to mean a direction give identity, never NaN', () => {
   expect(expMap([], [1e200, 0, 0])).toEqual([0, 0, 0, 1]);
   expect(expMap([], [0, 0, 0])).toEqual([0, 0, 0, 1]);
   expect(Math.hypot(...expMap([], [1e100, 1e100, 0]))).toBeCloseTo(1, 15);
+});
+
+test('a turn whose square leaves float64 keeps its vector', () => {
+  expect(logMap([], [1e-200, 0, 0, 1])).toEqual([2e-200, 0, 0]);
+  expect(expMap([], [2e-200, 0, 0])).toEqual([1e-200, 0, 0, 1]);
 });
