@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { jsonEditor, type JsonEditor } from '@slewcurve/formats';
 
@@ -42,6 +42,15 @@ const object = fc.dictionary(fc.string({ unit: 'binary', maxLength: 4 }), fc.jso
 });
 const escape = (name: string): string => name.replaceAll('~', '~0').replaceAll('/', '~1');
 
+/** The text after 1 and 2 were appended to its list `a`. */
+function appended(text: string): string {
+  return edited(text, (editor) => {
+    const { a = [] }: { a?: unknown[] } = JSON.parse(text);
+    expect(editor.append('', 'a', '1')).toBe(a.length);
+    editor.append('', 'a', '2');
+  });
+}
+
 describe('jsonEditor', () => {
   test('finds every value of any JSON, whatever its keys and white space', () => {
     fc.assert(
@@ -73,7 +82,7 @@ describe('jsonEditor', () => {
         (value, space, name, set) => {
           const text = spaced(value, space);
           const made = edited(text, (editor) => editor.setMember('', name, JSON.stringify(set)));
-          const wanted = JSON.parse(text) as Record<string, unknown>;
+          const wanted: Record<string, unknown> = JSON.parse(text);
           Object.defineProperty(wanted, name, {
             value: JSON.parse(JSON.stringify(set)),
             enumerable: true,
@@ -87,15 +96,10 @@ describe('jsonEditor', () => {
   });
 
   test('adds elements behind the last, in an empty list and where there is no list', () => {
-    const add = (text: string): string =>
-      edited(text, (editor) => {
-        expect(editor.append('', 'a', '1')).toBe((JSON.parse(text) as { a?: unknown[] }).a?.length ?? 0);
-        editor.append('', 'a', '2');
-      });
-    expect(add('{ "a" : [ 0 , {} ] }')).toBe('{ "a" : [ 0 , {},1,2 ] }');
-    expect(add('{"a":[ ]}')).toBe('{"a":[1,2 ]}');
-    expect(add('{"b":0 }')).toBe('{"b":0,"a":[1,2] }');
-    expect(add('{ }')).toBe('{"a":[1,2] }');
+    expect(appended('{ "a" : [ 0 , {} ] }')).toBe('{ "a" : [ 0 , {},1,2 ] }');
+    expect(appended('{"a":[ ]}')).toBe('{"a":[1,2 ]}');
+    expect(appended('{"b":0 }')).toBe('{"b":0,"a":[1,2] }');
+    expect(appended('{ }')).toBe('{"a":[1,2] }');
   });
 
   test('keeps the spelling of every number, key and blank that it does not edit', () => {

@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { parsePatchPlan, patchPlanJson, type StoredPatchPlan } from '@slewcurve/formats';
 
@@ -8,9 +8,9 @@ const stored = (ranges: StoredPatchPlan['plan']['ranges']): StoredPatchPlan => (
   resultSha256: 'cd'.repeat(32),
   plan: { ranges, size: 99 },
 });
-const sound = JSON.parse(
+const sound: object = JSON.parse(
   patchPlanJson(stored([{ at: 1, length: 2, bytes: Uint8Array.of(1, 2), what: 'x' }])),
-) as object;
+);
 
 describe('a stored patch plan', () => {
   test('reads back as it was written, whatever its bytes', () => {
@@ -24,9 +24,9 @@ describe('a stored patch plan', () => {
 
   test('spells bytes as Node spells base64', () => {
     const bytes = Uint8Array.from({ length: 256 }, (_, i) => i);
-    const json = JSON.parse(patchPlanJson(stored([{ at: 0, length: 0, bytes, what: '' }]))) as {
-      ranges: { bytes: string }[];
-    };
+    const json: { ranges: { bytes: string }[] } = JSON.parse(
+      patchPlanJson(stored([{ at: 0, length: 0, bytes, what: '' }])),
+    );
     expect(json.ranges[0].bytes).toBe(Buffer.from(bytes).toString('base64'));
   });
 

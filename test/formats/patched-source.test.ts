@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import {
   bufferSource,
@@ -35,8 +35,14 @@ describe('a patch plan', () => {
       fc.asyncProperty(patched, fc.nat(70), fc.nat(20), async ({ bytes, plan }, at, length) => {
         const whole = patchedBytes(bytes, plan);
         // The plain way: from the last range to the first, so that none moves another.
-        const expected = [...bytes];
-        for (const range of plan.ranges.toReversed()) expected.splice(range.at, range.length, ...range.bytes);
+        const expected = plan.ranges.reduceRight(
+          (made, range) => [
+            ...made.slice(0, range.at),
+            ...range.bytes,
+            ...made.slice(range.at + range.length),
+          ],
+          [...bytes],
+        );
         expect([...whole]).toEqual(expected);
         const source = patchedSource(bufferSource(bytes), plan);
         expect(source.size).toBe(whole.length);

@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { replaceTrack, SlewcurveError } from '@slewcurve/core';
 import { bufferSource, openAnimation, patchedBytes } from '@slewcurve/formats';

@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { bufferSource, openAnimation, type AnimationFile } from '@slewcurve/formats';
 import { toMat4 } from '@slewcurve/core';

@@ -30,6 +30,14 @@ const TEXT = `{ "asset" : {"version":"2.0",  "extras" : { "scale":1.0, "tiny" : 
 }   `;
 const bytes = glb(TEXT, packer.data);
 
+function jsonLength(glbBytes: Uint8Array): number {
+  return new DataView(glbBytes.buffer).getUint32(12, true);
+}
+
+function text(glbBytes: Uint8Array): string {
+  return new TextDecoder().decode(glbBytes.subarray(20, 20 + jsonLength(glbBytes)));
+}
+
 describe('one of two clips that share their values is changed', () => {
   const changed = (async () => {
     const file = await openAnimation(bufferSource(bytes), { name: 'sweep.glb' });
@@ -51,9 +59,6 @@ describe('one of two clips that share their values is changed', () => {
 
   test('every byte outside splices, tail and length fields is equal, found without the plan', async () => {
     const { made } = await changed;
-    const jsonLength = (glbBytes: Uint8Array): number => new DataView(glbBytes.buffer).getUint32(12, true);
-    const text = (glbBytes: Uint8Array): string =>
-      new TextDecoder().decode(glbBytes.subarray(20, 20 + jsonLength(glbBytes)));
     // The JSON: what was inserted is taken out again, and the old text must be left.
     const restored = text(made)
       .replace(`,{"bufferView":3,"componentType":5126,"count":3,"type":"VEC4"} ],`, ' ],')

@@ -16,7 +16,7 @@ interface Wiring {
  * new one elsewhere.
  */
 export function rewireSamplers(
-  container: Container,
+  samplerUsers: ReadonlyMap<string, number>,
   editor: JsonEditor,
   changes: readonly TrackChange[],
   places: ReadonlyMap<ColumnChange, number>,
@@ -31,7 +31,7 @@ export function rewireSamplers(
   }
   for (const [pointer, users] of bySampler) {
     const clip = users[0]?.read.channel.clipIndex ?? 0;
-    const alone = channelsOf(container, clip, users[0]?.read.channel.sampler ?? 0) === users.length;
+    const alone = samplerUsers.get(pointer) === users.length;
     // The first wiring takes the sampler over where every channel that reads it changes; the others get one each.
     const made = new Map<string, number | undefined>();
     for (const change of users) {
@@ -75,8 +75,14 @@ function setSampler(editor: JsonEditor, pointer: string, old: Wiring, wiring: Wi
     editor.setMember(pointer, 'interpolation', JSON.stringify(wiring.interpolation));
 }
 
-/** How many channels of a clip read a sampler. */
-export function channelsOf(container: Container, clip: number, sampler: number): number {
-  const channels = listMember(listMember(container.json, 'animations')[clip], 'channels');
-  return channels.filter((channel) => countMember(channel, 'sampler') === sampler).length;
+/** How many channels read each sampler, by the sampler's pointer. */
+export function countSamplerUsers(container: Container): ReadonlyMap<string, number> {
+  const users = new Map<string, number>();
+  listMember(container.json, 'animations').forEach((clip, index) => {
+    for (const channel of listMember(clip, 'channels')) {
+      const pointer = samplerPointer(index, countMember(channel, 'sampler') ?? -1);
+      users.set(pointer, (users.get(pointer) ?? 0) + 1);
+    }
+  });
+  return users;
 }

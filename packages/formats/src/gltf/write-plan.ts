@@ -8,7 +8,8 @@ import type { Container } from './container.js';
 import { type BufferWrite, binRanges, isWritable, spliceDataUri } from './in-place.js';
 import { checkLists, hostOf, newData } from './new-data.js';
 import { placeColumns } from './place-columns.js';
-import { channelsOf, rewireSamplers } from './rewire-samplers.js';
+import { countSamplerUsers, rewireSamplers } from './rewire-samplers.js';
+import { samplerPointer } from './rotation-channel.js';
 import { readRuns } from './run-reader.js';
 import { type ColumnChange, type ReadTrack, type TrackChange, trackChanges } from './track-change.js';
 
@@ -23,6 +24,7 @@ export async function writePlan(
   if (changes.length === 0) return { ranges: [], size: container.source.size };
   checkLists(container);
   const editor = jsonEditor(container.jsonBytes);
+  const samplerUsers = countSamplerUsers(container);
   const columns = changes
     .flatMap(({ input, output }) => [input, output])
     .filter((column) => column !== undefined);
@@ -36,7 +38,7 @@ export async function writePlan(
       editor,
       data,
       writes,
-      readers: readersButLone(container, changes),
+      readers: readersButLone(container, samplerUsers, changes),
       claimed: accessorsOnClaimedBytes(container),
       writable: canWrite,
       viewUsers: countViewUsers(container),
@@ -48,7 +50,7 @@ export async function writePlan(
     },
     columns,
   );
-  rewireSamplers(container, editor, changes, places);
+  rewireSamplers(samplerUsers, editor, changes, places);
   const added = data.finish(editor);
   const ranges: PatchRange[] = [];
   for (const [index, buffer] of open) {
@@ -96,6 +98,7 @@ function writable(
  */
 function readersButLone(
   container: Container,
+  samplerUsers: ReadonlyMap<string, number>,
   changes: readonly TrackChange[],
 ): ReadonlyMap<number, readonly string[]> {
   const readers = new Map<number, string[]>();
@@ -103,15 +106,15 @@ function readersButLone(
   const counts = new Map<string, { change: TrackChange; inputs: number; outputs: number }>();
   for (const change of changes) {
     const { clipIndex, sampler } = change.read.channel;
-    const key = `${clipIndex} ${sampler}`;
+    const key = samplerPointer(clipIndex, sampler);
     const count = counts.get(key) ?? { change, inputs: 0, outputs: 0 };
     counts.set(key, count);
     if (change.input) count.inputs++;
     if (change.output) count.outputs++;
   }
-  for (const { change, inputs, outputs } of counts.values()) {
-    const { clipIndex, sampler, input, output } = change.read.channel;
-    const users = channelsOf(container, clipIndex, sampler);
+  for (const [sampler, { change, inputs, outputs }] of counts) {
+    const { input, output } = change.read.channel;
+    const users = samplerUsers.get(sampler) ?? 0;
     if (users > inputs) readers.get(input)?.push('another channel');
     if (users > outputs) readers.get(output)?.push('another channel');
   }
