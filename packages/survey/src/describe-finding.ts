@@ -65,9 +65,9 @@ function severity(place: Place): number {
   return SEVERITY[place.level];
 }
 
-/** How far beyond its limit a place is, on whichever side that lies. */
+/** How far beyond its limit a place is, on whichever side that lies; rounded, so that equal places keep the order of keys. */
 function excess({ value, limit }: Place): number {
-  return Math.abs(value - limit);
+  return Number(Math.abs(value - limit).toPrecision(5));
 }
 
 function renumbered(rule: Rule, place: Place, { keys }: Subject): Place {

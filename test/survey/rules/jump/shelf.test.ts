@@ -91,17 +91,24 @@ describe('jump.shelf', () => {
     expect(place.remedy!.verb).toBe('re-seat');
     expect(verbNamed('re-seat').needsAllowing).toBe(true);
     expect(place.alternatives!.map((step) => step.verb)).toContain('bridge');
-    // The open seam is the other shelf of the loop; seating anew closes it.
-    expect(places.map(({ keys }) => keys[0] ?? -1).toSorted((a, b) => a - b)).toEqual([0, 30]);
-    expect(places.find(({ keys }) => keys[0] === 0)!.message).toContain(
-      'from key 59 to key 0, over the seam of the loop,',
-    );
+    // The open seam is no jump: it belongs to the seam.
+    expect(places).toHaveLength(1);
     const seated = verbNamed('re-seat').apply(track, place.remedy!).track;
     expect(jumps(seated, { houseRules: house })).toEqual([]);
     // No loop: a bridge, whatever the seam.
     const walk = { ...track, times: track.times };
     const clip = { name: 'Wave', index: 0, tracks: [walk, walk], start: 0, end: 2, loop: false, marks: [] };
     expect(jumps(track, { clip })[0].remedy!.verb).toBe('bridge');
+  });
+
+  test('in a closed loop a step from the last key but one into the first again is named over the seam', () => {
+    const closed = keyed({ spin: [0, 0, 0], swing: [20, 0, 0], hertz: 1, phase: 0 }, grid(61), 'LINEAR');
+    const saw = grid(60).reduce((track, _, key) => turned(track, [key], [0, 0.2 * key, 0]), closed);
+    const [finding] = jumps(saw, { houseRules: { ...NO_HOUSE_RULES, loops: ['*'] } });
+    expect(finding).toMatchObject({ rule: 'jump.shelf', keys: [0], count: 1, span: [59 / 30, 2] });
+    expect(finding.value).toBeCloseTo(12, 1);
+    expect(finding.message).toContain('from key 59 to key 0, over the seam of the loop, it steps by 12.0°');
+    expect(jumps(saw)).toEqual([]);
   });
 
   test('eyes are spared', () => {

@@ -1,5 +1,6 @@
 import { VALUES_PER_KEY } from '@slewcurve/core';
 import { everyRole, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
+import { isTime } from './is-time.js';
 
 /** NaN or infinity among a key's stored numbers. */
 export const notFinite: Rule = Object.freeze({
@@ -25,7 +26,7 @@ export const notFinite: Rule = Object.freeze({
         // Under CUBICSPLINE the value stands between its tangents.
         if (size === 4 || (i >= 4 && i < 8)) pose++;
       }
-      const times = Number.isFinite(time) ? 0 : 1;
+      const times = isTime(time) ? 0 : 1;
       if (values + times === 0) continue;
       const near = times === 0 ? time : nearestTime(stored.times, key);
       places.push({
@@ -55,7 +56,7 @@ export const notFinite: Rule = Object.freeze({
     standard: 'glTF 2.0 (“Binary Data Storage”) forbids NaN and infinities in accessors.',
     programs: 'Some drop the node, some the mesh, some every frame from there on.',
     people: 'A limb or the whole figure disappears.',
-    test: 'Any stored number of a key, its time or a tangent included, that is not finite. Always an error.',
+    test: 'Any stored number of a key, its time or a tangent included, that is not finite. A time beyond ±1e300 s counts as such. Always an error.',
     source: 'glTF 2.0.',
     spares: 'Nothing.',
     remedy:
@@ -68,7 +69,7 @@ function nearestTime(times: Float64Array, key: number): number {
   for (let away = 1; away < times.length; away++)
     for (const other of [key - away, key + away]) {
       const time = times[other];
-      if (time !== undefined && Number.isFinite(time)) return time;
+      if (isTime(time)) return time;
     }
   return 0;
 }

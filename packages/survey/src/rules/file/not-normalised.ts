@@ -1,5 +1,6 @@
 import { angleFloor, type RotationTrack } from '@slewcurve/core';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
+import { isTime } from './is-time.js';
 
 /** Shorter than this a quaternion has no direction. */
 const NOTHING = 1e-6;
@@ -27,10 +28,12 @@ export const notNormalised: Rule = Object.freeze({
     const places: Place[] = [];
     for (let key = 0; key < stored.times.length; key++) {
       const length = lengthOf(stored, key);
-      const value = Math.abs(length - 1);
-      // What is not finite is another rule's.
-      if (!(value > warning) || !Number.isFinite(value)) continue;
-      const time = finite(stored.times[key]);
+      // What is not finite is another rule's; a length that overflows is this one's.
+      if (Number.isNaN(length)) continue;
+      const value = Math.min(Math.abs(length - 1), Number.MAX_VALUE);
+      if (!(value > warning)) continue;
+      const stamp = stored.times[key];
+      const time = isTime(stamp) ? stamp : 0;
       places.push({
         keys: [key],
         time,
@@ -67,11 +70,10 @@ export const notNormalised: Rule = Object.freeze({
   },
 });
 
+/** Length of a key's quaternion; NaN where a number of it is not finite. */
 function lengthOf({ interpolation, values }: RotationTrack, key: number): number {
   const at = interpolation === 'CUBICSPLINE' ? key * 12 + 4 : key * 4;
-  return Math.hypot(...values.subarray(at, at + 4));
-}
-
-function finite(time: number | undefined): number {
-  return time !== undefined && Number.isFinite(time) ? time : 0;
+  const [x, y, z, w] = [values[at] ?? 0, values[at + 1] ?? 0, values[at + 2] ?? 0, values[at + 3] ?? 0];
+  const finite = Number.isFinite(x) && Number.isFinite(y) && Number.isFinite(z) && Number.isFinite(w);
+  return finite ? Math.hypot(x, y, z, w) : Number.NaN;
 }

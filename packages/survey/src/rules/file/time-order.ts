@@ -1,6 +1,7 @@
 import { VALUES_PER_KEY, medianGap, type RotationTrack } from '@slewcurve/core';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
 import { saySeconds } from '../../say-number.js';
+import { isTime } from './is-time.js';
 
 /** A key that is not later than the key before it, or hardly. */
 export const timeOrder: Rule = Object.freeze({
@@ -20,17 +21,17 @@ export const timeOrder: Rule = Object.freeze({
   limits: everyRole({ gap: 1e-4, share: 0.01 }),
   reads: 'stored',
   untouched: 'every orientation',
-  find({ stored }: TrackContext, { gap: least = 0, share = 0 }: Limits): readonly Place[] {
+  find({ stored, track }: TrackContext, { gap: least = 0, share = 0 }: Limits): readonly Place[] {
     const { times } = stored;
-    const limit = Math.max(least, share * medianGap(stored));
+    const limit = Math.max(least, share * medianGap(track));
     const places: Place[] = [];
     // Against the latest time so far, so that every key that can't be played is named, not the first alone.
     let latest = -Infinity;
     for (let key = 0; key < times.length; key++) {
       const time = times[key] ?? Number.NaN;
-      if (!Number.isFinite(time)) continue;
+      if (!isTime(time)) continue;
       const value = time - latest;
-      if (value < limit)
+      if (latest > -Infinity && value < limit)
         places.push({
           keys: [key],
           time,
