@@ -188,6 +188,9 @@ export const chartStyles: CSSResult = css`
     font-style: italic;
     color: var(--_soft);
   }
+  .notes .whole {
+    white-space: nowrap;
+  }
   .notes li.stamped .message {
     text-decoration: line-through;
   }

@@ -54,7 +54,8 @@ function noteItem(
     <span class="number">${number}${note.level === 'error' ? '!' : ''}</span>
     <p class="message" @click=${() => events.choose(note)}>${note.message}</p>
     <span class="level"
-      >${note.level} ${note.rule}, ${sayTime(note.time, 2)}${places}${STATUS[note.status]}</span
+      >${note.level} ${note.rule},
+      <span class="whole">${sayTime(note.time, 2)}</span>${places}${STATUS[note.status]}</span
     >
     ${
       note.remedy && note.status === 'open'
