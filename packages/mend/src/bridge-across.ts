@@ -81,7 +81,8 @@ function shelfWindow(
  * The track with `keys` laid anew on the cumulative Hermite curve (Kim, Kim & Shin 1995) from key `from` to key `to`. Its end rates are
  * those just outside: of the segments there, or under CUBICSPLINE what the end keys' own tangents say; at an end of the track or a cut,
  * where nothing lies outside, the bridge's mean rate. Where it would play faster than 1.9 times its mean and than both neighbouring
- * segments, both end rates are lowered by one factor, as little as that needs.
+ * segments, both end rates are lowered by one factor, as little as that needs. (Stored tangents stay; where they alone are too fast, so do
+ * the rates.)
  *
  * @throws SlewcurveError `step.time-order` where the times between the ends don't rise
  */
@@ -101,6 +102,7 @@ export function bridgeAcross(track: RotationTrack, { from, to, keys }: BridgeEnd
   const beyond = rateOutside(track, to, 1);
   const limit = Math.max(
     PEAK * Math.hypot(...mean),
+    ...[before, beyond].map((rate) => (rate ? Math.hypot(...rate) : 0)),
     speedOutside(track, from, -1),
     speedOutside(track, to, 1),
   );
@@ -114,7 +116,7 @@ export function bridgeAcross(track: RotationTrack, { from, to, keys }: BridgeEnd
   };
   const isSlowEnough = (candidate: RotationTrack): boolean => peakBetween(candidate, from, to) <= limit;
   const whole = laid(1);
-  if (isSlowEnough(whole)) return whole;
+  if (isSlowEnough(whole) || !isSlowEnough(laid(0))) return whole;
   let [low, high] = [0, 1];
   for (let halving = 0; halving < 20; halving++) {
     const share = (low + high) / 2;
