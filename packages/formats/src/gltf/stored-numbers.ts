@@ -1,4 +1,4 @@
-import { type AccessorLayout, COMPONENTS, type Component, FLOAT } from './accessor-layout.js';
+import { type AccessorLayout, COMPONENTS, FLOAT } from './accessor-layout.js';
 import { canHold, decodeAccessor, encodeComponent } from './accessor-data.js';
 
 /** Numbers as an accessor stores them. */
@@ -54,5 +54,3 @@ export function boundsOf(
 export function sameNumbers(a: Float64Array, b: Float64Array): boolean {
   return a === b || (a.length === b.length && a.every((number, i) => Object.is(number, b[i])));
 }
-
-export type { Component };
