@@ -3,7 +3,7 @@ import { LEVELS, isAtLeast, type FileReport, type Report, type StepReport, type 
 import type { JobSettings } from './settings.js';
 import { VERSION } from './version.js';
 
-/** The report over several files: totals and verdict from their findings. */
+/** The report over several files: totals and verdict from their findings. A file that can't be read never passes. */
 export function buildReport(
   files: readonly FileReport[],
   settings: JobSettings,
@@ -17,7 +17,7 @@ export function buildReport(
     failAt: settings.failAt,
     files,
     totals: totalsOf(findings),
-    verdict: passes(findings, settings) ? 'pass' : 'fail',
+    verdict: files.every((file) => file.status === 'surveyed') && passes(findings, settings) ? 'pass' : 'fail',
     ...(steps !== undefined && { steps }),
   };
 }

@@ -37,7 +37,7 @@ export const chooseSide: Verb = Object.freeze({
   alsoCalled: ['half turn', '180', 'long way', 'shortest path', 'spin direction', 'insert middle key'],
   opening: 'Choose the side of',
   reads: ['keys', 'axis'] as const,
-  needsAllowing: false,
+  needsAllowing: true,
   keysApart: true,
   insertsKeys: true,
   say: (step: Step) => sentenceOf('Choose the side of', step),
