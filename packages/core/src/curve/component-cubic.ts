@@ -97,8 +97,8 @@ export function componentCubicMotion(coefficients: CubicCoefficients, gaps: Floa
     },
     rate(out, segment, u) {
       load(segment, u);
-      turning(out);
-      for (let axis = 0; axis < 3; axis++) out[axis] /= gaps[segment];
+      turning(now);
+      for (let axis = 0; axis < 3; axis++) out[axis] = now[axis] / gaps[segment];
     },
     acceleration(out, segment, u) {
       load(segment, u);
@@ -113,7 +113,8 @@ export function componentCubicMotion(coefficients: CubicCoefficients, gaps: Floa
       out[1] = (y - drag * now[1]) / gap / gap;
       out[2] = (z - drag * now[2]) / gap / gap;
     },
-    length: (segment, u0, u1) => integrate(speed(segment), u0, u1, narrowPlaces(coefficients, segment)),
+    length: (segment, u0, u1) =>
+      integrate(speed(segment), u0, u1, narrowPlaces(coefficients, segment), 1e-16),
     peakAt: (segment, u0, u1) => greatest(speed(segment), u0, u1, narrowPlaces(coefficients, segment)),
   };
 }

@@ -11,25 +11,27 @@ const KRONROD = [
 ];
 const GAUSS = [0.1294849661688697, 0.27970539148927664, 0.3818300505051189, 0.4179591836734694];
 
-/** Halvings before an interval is taken as it is: 2^-50 of the whole adds nothing to a float64 sum. */
-const DEEPEST = 50;
+/** Halvings that one integral may cost: a kink takes 50, so this bounds only what rounding noise would ask for without end. */
+const MOST_HALVINGS = 300;
 
 /**
- * Integral of `f` from `a` to `b`, adaptive: an interval whose error, as the two rules estimate it, is over 1e-13 of the whole is
- * halved, so kinks (a speed that touches zero) cost steps, not digits. About a narrow place the interval is cut geometrically from
- * the start: both rules would step over a peak narrower than their points, and agree.
+ * Integral of `f` from `a` to `b`, adaptive: an interval whose error, as the two rules estimate it, is over 1e-13 of the whole,
+ * or over `floor` where that is larger, is halved, so kinks (a speed that touches zero) cost steps, not digits. About a narrow place the interval is
+ * cut geometrically from the start: both rules would step over a peak narrower than their points, and agree.
  */
 export function integrate(
   f: (x: number) => number,
   a: number,
   b: number,
   narrow: readonly NarrowPlace[] = [],
+  floor = 0,
 ): number {
   const edges = cuts(a, b, narrow);
   let rough = 0;
   for (let i = 0; i + 1 < edges.length; i++) rough += Math.abs(rule(f, edges[i], edges[i + 1]).fine);
+  const limit = { error: Math.max(1e-13 * rough, floor), halvings: MOST_HALVINGS };
   let sum = 0;
-  for (let i = 0; i + 1 < edges.length; i++) sum += refine(f, edges[i], edges[i + 1], 1e-13 * rough, 0);
+  for (let i = 0; i + 1 < edges.length; i++) sum += refine(f, edges[i], edges[i + 1], limit);
   return sum;
 }
 
@@ -45,15 +47,21 @@ function cuts(a: number, b: number, narrow: readonly NarrowPlace[]): ArrayLike<n
   return Float64Array.from(edges.filter((x) => x >= a && x <= b)).sort();
 }
 
-function refine(f: (x: number) => number, a: number, b: number, tolerance: number, depth: number): number {
+function refine(
+  f: (x: number) => number,
+  a: number,
+  b: number,
+  limit: { readonly error: number; halvings: number },
+): number {
   const { fine, coarse } = rule(f, a, b);
   const size = Math.abs(fine);
   const difference = Math.abs(fine - coarse) / size;
   // The difference is the error of the coarser rule; that of the finer one is about its 3/2 power (QUADPACK's estimate).
   const error = size * Math.min(difference, (200 * difference) ** 1.5);
-  if (!(error > tolerance) || depth >= DEEPEST) return fine;
+  if (!(error > limit.error) || limit.halvings === 0) return fine;
+  limit.halvings--;
   const middle = (a + b) / 2;
-  return refine(f, a, middle, tolerance, depth + 1) + refine(f, middle, b, tolerance, depth + 1);
+  return refine(f, a, middle, limit) + refine(f, middle, b, limit);
 }
 
 function rule(f: (x: number) => number, a: number, b: number): { fine: number; coarse: number } {

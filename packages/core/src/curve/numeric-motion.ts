@@ -2,6 +2,9 @@ import { greatest } from './greatest.js';
 import { integrate } from './integrate.js';
 import type { SegmentMotion } from './segmented-curve.js';
 
+/** Radians: less than the rounding of one orientation. */
+const ROUNDING = 1e-16;
+
 /**
  * Length and peak of a motion that has closed rates but no closed length: adaptive integration and search of its exact speed, to
  * about 1e-13 of the length and every digit of the peak.
@@ -19,7 +22,7 @@ export function withNumericLength(
     };
   return {
     ...motion,
-    length: (segment, u0, u1) => integrate(speed(segment), u0, u1),
+    length: (segment, u0, u1) => integrate(speed(segment), u0, u1, [], ROUNDING),
     peakAt: (segment, u0, u1) => greatest(speed(segment), u0, u1),
   };
 }

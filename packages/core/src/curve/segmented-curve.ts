@@ -47,6 +47,7 @@ export function segmentedCurve(parts: SegmentedCurveParts): Curve {
   const held = new Uint8Array(last + 1);
   for (const key of parts.breaks) held[key] = 1;
   const orientationNow = new Float64Array(4);
+  const vectorNow = new Float64Array(3);
 
   function orientation<T extends NumberStore>(out: T, t: number): T {
     // A NaN time counts as before the start.
@@ -70,8 +71,13 @@ export function segmentedCurve(parts: SegmentedCurveParts): Curve {
     const inside = last >= 1 && t >= times[0] && t <= times[last];
     const i = inside ? findSegment(times, t) : -1;
     if (i < 0 || held[i]) return still(out);
-    motion[kind](out, i, fraction(times, i, t));
-    return frame === 'own' ? out : rotateVector(out, orientation(orientationNow, t), out);
+    if (frame === 'own') {
+      motion[kind](out, i, fraction(times, i, t));
+      return out;
+    }
+    // Not by way of `out`, which may hold fewer digits.
+    motion[kind](vectorNow, i, fraction(times, i, t));
+    return rotateVector(out, orientation(orientationNow, t), vectorNow);
   }
 
   return {

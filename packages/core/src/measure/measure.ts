@@ -139,7 +139,7 @@ function insideAccelerations(
       peak = size(u);
       at = from + u * (to - from);
     }
-    squares += integrate((x) => size(x) ** 2, 0, 1, narrow) * (to - from);
+    squares += integrate((x) => size(x) ** 2, 0, 1, narrow, 1e-10 * size(u) ** 2) * (to - from);
   }
   return { peak, at, squares };
 }
