@@ -18,8 +18,8 @@ describe('VERBS', () => {
       expect(verb.alsoCalled.length).toBeGreaterThan(2);
       expect(verbNamed(verb.name)).toBe(verb);
     }
-    // RULES 20: `--proposed` never re-seats unless allowed by name.
-    expect(VERBS.filter(({ needsAllowing }) => needsAllowing).map(({ name }) => name)).toEqual(['re-seat']);
+    // `--proposed` never re-seats and never chooses a way round unless allowed by name: both are somebody's decision.
+    expect(VERBS.filter(({ needsAllowing }) => needsAllowing).map(({ name }) => name)).toEqual(['choose side', 're-seat']);
   });
 
   it.each([
