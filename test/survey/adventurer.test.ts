@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { playAs, type RotationTrack, type SceneNode } from '@slewcurve/core';
 import { bufferSource, openAnimation } from '@slewcurve/formats';
@@ -75,6 +76,24 @@ describe.skipIf(adventurer.absent)('adventurer-9clips.glb', async () => {
     // Named to a tenth of a degree.
     expect(Math.abs(shelves[0].value - size)).toBeLessThan(0.05);
     expect(shelves[0].occurrences.map((place) => place.keys[0])).toEqual(keys);
+  });
+
+  test('the table of verdicts lists every jump place, with its rule, size and level', () => {
+    const rows = readFileSync('packages/survey/docs/adventurer-verdicts.md', 'utf8')
+      .split('\n')
+      .map((line) => line.split('|').map((cell) => cell.trim()))
+      .filter((cells) => /^\d+$/.test(cells[3] ?? ''))
+      .map(([, clip, joint, key, rule, size, , level]) =>
+        [clip, joint, key, `jump.${rule.replace(' ', '-')}`, size, level].join(' '),
+      );
+    const places = findings
+      .filter((finding) => finding.rule.startsWith('jump.'))
+      .flatMap(({ clip, track, rule, occurrences }) =>
+        occurrences.map(({ keys, value, level }) =>
+          [clip, track.slice(track.lastIndexOf('/') + 1), keys[0], rule, value.toFixed(1), level].join(' '),
+        ),
+      );
+    expect(rows.toSorted()).toEqual(places.toSorted());
   });
 
   test('at most 20 jump places stand in the whole file', () => {

@@ -15,6 +15,10 @@ const levels = (json: unknown, file = 'walk.glb') =>
     limit,
   ]);
 
+function exception(where: object, level: string) {
+  return { where, levels: { 'jump.lone-key': level } };
+}
+
 describe('house rules', () => {
   test('nothing decreed is the default', () => {
     expect(parseHouseRules({})).toEqual(NO_HOUSE_RULES);
@@ -37,7 +41,6 @@ describe('house rules', () => {
   });
 
   test('exceptions hold where their patterns fit, the later one last', () => {
-    const exception = (where: object, level: string) => ({ where, levels: { 'jump.lone-key': level } });
     expect(levels({ exceptions: [exception({ track: 'Arm' }, 'off')] })).toEqual([]);
     expect(levels({ exceptions: [exception({ file: 'run*' }, 'off')] })).toHaveLength(1);
     expect(levels({ exceptions: [exception({ clip: 'W*' }, 'off'), exception({}, 'note')] })).toEqual([
