@@ -5,14 +5,13 @@ import { timeLookup, type TimeLookup } from './time-lookup.js';
 /**
  * LINEAR tracks that share their times. One record a key: the orientation of every track, then the three weights of every track
  * for the segment that begins there, then the time. For a single track that is one cache line, which is what a random time costs
- * in a long one.
+ * in a long one. The first h is negative where some track of the segment turns too far for the short polynomials: only h² is
+ * asked for.
  */
 export interface GreatArcs<Numbers extends Float64Array | Float32Array> {
   readonly records: Numbers;
   /** Numbers a record. */
   readonly stride: number;
-  /** 1 for segments in which no track turns by more than the bound of the short polynomials. */
-  readonly near: Uint8Array;
   readonly lookup: TimeLookup;
 }
 
@@ -28,7 +27,7 @@ export function greatArcs<Numbers extends Float64Array | Float32Array>(
 ): GreatArcs<Numbers> {
   const count = times.length;
   const stride = records.length / count;
-  const isNear = new Uint8Array(count).fill(1);
+  const far = new Uint8Array(count);
   values.forEach((keys, track) => {
     for (let key = 0; key < count; key++) {
       const from = 4 * key;
@@ -36,12 +35,15 @@ export function greatArcs<Numbers extends Float64Array | Float32Array>(
       for (let i = 0; i < 4; i++) records[row + 4 * track + i] = keys[from + i];
       records[row + stride - 1] = times[key];
       const weights = row + 4 * values.length + 3 * track;
-      if (key + 1 < count && writeWeights(records, weights, keys, from) > near) isNear[key] = 0;
+      if (key + 1 < count && writeWeights(records, weights, keys, from) > near) far[key] = 1;
     }
+  });
+  far.forEach((isFar, key) => {
+    if (isFar === 1) records[key * stride + 4 * values.length] *= -1;
   });
   const lookup =
     records instanceof Float64Array
       ? timeLookup(records, stride, stride - 1, count)
       : timeLookup(times, 1, 0, count);
-  return { records, stride, near: isNear, lookup };
+  return { records, stride, lookup };
 }

@@ -69,3 +69,22 @@ export function cosineNear32(v: number): number {
 export function sineNear32(v: number): number {
   return 1 - v * (0.16666648824949146 - v * 0.008321436284472496);
 }
+
+/** Greatest sin²h of `arcOverSine64`: 63.6° between the orientations. */
+export const NEAR_SINE_64 = 0.075;
+
+/** h / sin h from s = sin²h ≤ NEAR_SINE_64, 1.6e-17: for arcs whose h is known only when they are sampled. */
+export function arcOverSine64(s: number): number {
+  const ss = s * s;
+  return (
+    1 +
+    s * 0.16666666666665017 +
+    ss * (0.07500000000583387 + s * 0.04464285634917489) +
+    ss *
+      ss *
+      (0.0303819984245349 +
+        s * 0.02237010345018458 +
+        ss * (0.017398490352411117 + s * 0.013378673572309105)) +
+    ss * ss * ss * ss * 0.01549045964277512
+  );
+}

@@ -10,12 +10,12 @@ import { locate } from './time-lookup.js';
  */
 export function linearFloat32(shared: SharedTimes): WriteGroup {
   const { slots, times } = shared;
-  const { records, stride, near, lookup } = greatArcs(
+  const { records, stride, lookup } = greatArcs(
     shared,
     new Float32Array((7 * slots.length + 1) * shared.times.length),
     NEAR_32,
   );
-  const { start, end } = lookup;
+  const [start, end] = lookup.span;
   const last = records.length - stride;
   return (t, out, at) => {
     // A time that is no number plays the first key.
@@ -27,7 +27,7 @@ export function linearFloat32(shared: SharedTimes): WriteGroup {
     const t0 = times[segment];
     const u = (t - t0) / (times[segment + 1] - t0);
     if (u === 0) return writeKeys(records, from, slots, out, at);
-    if (near[segment] === 1) writeNear(records, from, to, slots, 2 * u - 1, out, at);
+    if (records[from + 4 * slots.length] >= 0) writeNear(records, from, to, slots, 2 * u - 1, out, at);
     else writeWide(records, from, to, slots, 2 * u - 1, out, at);
   };
 }

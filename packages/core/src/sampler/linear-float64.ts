@@ -7,24 +7,23 @@ import { locate } from './time-lookup.js';
 /** LINEAR tracks, float64 grade. Their keys are unit and each on the side of the one before. */
 export function linearFloat64(shared: SharedTimes): WriteGroup {
   const { slots } = shared;
-  const { records, stride, near, lookup } = greatArcs(
+  const { records, stride, lookup } = greatArcs(
     shared,
     new Float64Array((7 * slots.length + 1) * shared.times.length),
     NEAR_64,
   );
-  const { start, end } = lookup;
+  const [start, end] = lookup.span;
   const last = records.length - stride;
   return (t, out, at) => {
     // A time that is no number plays the first key.
     if (!(t > start)) return writeKeys(records, 0, slots, out, at);
     if (t >= end) return writeKeys(records, last, slots, out, at);
-    const segment = locate(lookup, t);
-    const from = segment * stride;
+    const from = locate(lookup, t) * stride;
     const to = from + stride;
     const t0 = records[to - 1];
     const u = (t - t0) / (records[to + stride - 1] - t0);
     if (u === 0) return writeKeys(records, from, slots, out, at);
-    if (near[segment] === 1) writeNear(records, from, to, slots, 2 * u - 1, out, at);
+    if (records[from + 4 * slots.length] >= 0) writeNear(records, from, to, slots, 2 * u - 1, out, at);
     else writeWide(records, from, to, slots, 2 * u - 1, out, at);
   };
 }

@@ -1,12 +1,8 @@
 import type { NumberStore, ReadonlyNumberStore } from '../number-store.js';
 import type { RotationTrack } from '../track/rotation-track.js';
-import { cubic } from './cubic.js';
-import type { WriteGroup } from './group.js';
-import { linearFloat32 } from './linear-float32.js';
-import { linearFloat64 } from './linear-float64.js';
+import { compileGroups } from './compile-groups.js';
 import type { SamplerOptions } from './precision.js';
-import { groupBySharedTimes, playedKeys, type PlayedKeys } from './shared-times.js';
-import { step } from './step.js';
+import { playedKeys } from './shared-times.js';
 
 /**
  * Tracks compiled for playing together. Its functions allocate nothing, never throw, keep nothing between calls and may be taken
@@ -53,10 +49,4 @@ export function poseSampler(tracks: readonly RotationTrack[], options: SamplerOp
       return out;
     },
   });
-}
-
-function compileGroups(played: readonly PlayedKeys[], options: SamplerOptions): WriteGroup[] {
-  const linear = options.precision === 'float32' ? linearFloat32 : linearFloat64;
-  const compile = { STEP: step, LINEAR: linear, CUBICSPLINE: cubic };
-  return groupBySharedTimes(played).map(({ interpolation, shared }) => compile[interpolation](shared));
 }

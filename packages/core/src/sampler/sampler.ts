@@ -1,7 +1,8 @@
 import type { NumberStore, ReadonlyNumberStore } from '../number-store.js';
 import type { RotationTrack } from '../track/rotation-track.js';
-import { poseSampler } from './pose-sampler.js';
+import { compileGroups } from './compile-groups.js';
 import type { SamplerOptions } from './precision.js';
+import { playedKeys } from './shared-times.js';
 
 /**
  * One track compiled for playing. Its functions allocate nothing, never throw, keep nothing between calls and may be taken off
@@ -23,6 +24,18 @@ export interface Sampler {
  * @throws SlewcurveError `sampler.euler-track` where the track holds Euler angles
  */
 export function sampler(track: RotationTrack, options: SamplerOptions = {}): Sampler {
-  const { start, end, samplePose, samplePoses } = poseSampler([track], options);
-  return Object.freeze({ start, end, sample: samplePose, sampleMany: samplePoses });
+  const keys = playedKeys(track);
+  const [write] = compileGroups([keys], options);
+  return Object.freeze({
+    start: keys.times[0],
+    end: keys.times[keys.times.length - 1],
+    sample: <T extends NumberStore>(t: number, out: T): T => {
+      write(t, out, 0);
+      return out;
+    },
+    sampleMany: <T extends NumberStore>(times: ReadonlyNumberStore, out: T): T => {
+      for (let n = 0; n < times.length; n++) write(times[n], out, 4 * n);
+      return out;
+    },
+  });
 }
