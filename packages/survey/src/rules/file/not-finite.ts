@@ -16,8 +16,11 @@ export const notFinite: Rule = Object.freeze({
   find({ stored }: TrackContext): readonly Place[] {
     const size = VALUES_PER_KEY[stored.interpolation];
     const places: Place[] = [];
+    // A report holds no NaN: a key without a time is told by the last time before it, the first of all where there is none.
+    let near = stored.times.find(isTime) ?? 0;
     for (let key = 0; key < stored.times.length; key++) {
       const time = stored.times[key] ?? 0;
+      if (isTime(time)) near = time;
       let values = 0;
       let pose = 0;
       for (let i = 0; i < size; i++) {
@@ -28,7 +31,6 @@ export const notFinite: Rule = Object.freeze({
       }
       const times = isTime(time) ? 0 : 1;
       if (values + times === 0) continue;
-      const near = times === 0 ? time : nearestTime(stored.times, key);
       places.push({
         keys: [key],
         time: near,
@@ -63,13 +65,3 @@ export const notFinite: Rule = Object.freeze({
       '`bridge` lays the lost keys anew between the nearest sound ones. A lost time has to be set at the source.',
   },
 });
-
-/** The nearest finite time among the keys; 0 where there is none. A report holds no NaN. */
-function nearestTime(times: Float64Array, key: number): number {
-  for (let away = 1; away < times.length; away++)
-    for (const other of [key - away, key + away]) {
-      const time = times[other];
-      if (isTime(time)) return time;
-    }
-  return 0;
-}

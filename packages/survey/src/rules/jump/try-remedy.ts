@@ -14,35 +14,46 @@ const MOST_STEPS = 24;
 
 /** Lifting out the key, with its price; undefined where the verb can't, or where the finding would stay. */
 export function tryLiftOut(context: TrackContext, key: number): Remedy | undefined {
-  const step = { verb: 'lift out', ...addressOf(context), keys: [key] };
-  return tryStep(context, key, step);
+  return tryStep(groundOf(context, key), { verb: 'lift out', ...addressOf(context), keys: [key] });
 }
 
 /** The shortest bridge, of four steps or more, after which neither this jump nor a new one stands there; undefined where there is none. */
 export function tryBridge(context: TrackContext, key: number): Remedy | undefined {
+  const ground = groundOf(context, key);
   for (let steps = LEAST_STEPS; steps <= MOST_STEPS; steps++) {
-    const remedy = tryStep(context, key, { verb: 'bridge', ...addressOf(context), keys: [key], steps });
+    const remedy = tryStep(ground, { verb: 'bridge', ...addressOf(context), keys: [key], steps });
     if (remedy !== undefined) return remedy;
   }
   return undefined;
 }
 
-function tryStep(context: TrackContext, key: number, step: Step): Remedy | undefined {
+/** The keys around a jump, as a track of their own to try remedies on. */
+interface Ground {
+  readonly stretch: RotationTrack;
+  /** The jump's key within the stretch. */
+  readonly key: number;
+  readonly limits: JumpLimits;
+  /** The other jumps of the stretch. */
+  readonly others: readonly Jump[];
+}
+
+function groundOf(context: TrackContext, key: number): Ground {
   const first = Math.max(0, key - AROUND);
   const stretch = stretchOf(context.track, first, Math.min(context.track.times.length, key + AROUND + 1));
   const whole = stretch.times.length === context.track.times.length;
   const limits = jumpLimits(context);
-  const within: JumpLimits = { ...limits, loop: limits.loop === true && whole };
-  const verb = verbNamed(step.verb);
+  const within = { ...limits, loop: limits.loop === true && whole };
+  const others = findJumps(stretch, within).filter((jump) => jump.key !== key - first);
+  return { stretch, key: key - first, limits: within, others };
+}
+
+function tryStep({ stretch, key, limits, others }: Ground, step: Step): Remedy | undefined {
   try {
-    const result = verb.apply(stretch, { ...step, keys: [key - first] });
-    const changed = [Math.min(...result.changed) - BESIDE, Math.max(...result.changed) + BESIDE];
-    const before = findJumps(stretch, within).filter((jump) => jump.key !== key - first);
-    const raised = findJumps(result.track, within).filter(
-      (jump) =>
-        jump.key >= (changed[0] ?? 0) &&
-        jump.key <= (changed[1] ?? 0) &&
-        !before.some((other) => sameJump(other, jump)),
+    const result = verbNamed(step.verb).apply(stretch, { ...step, keys: [key] });
+    const first = Math.min(...result.changed) - BESIDE;
+    const last = Math.max(...result.changed) + BESIDE;
+    const raised = findJumps(result.track, limits).filter(
+      (jump) => jump.key >= first && jump.key <= last && !others.some((other) => sameJump(other, jump)),
     );
     return raised.length > 0 ? undefined : { step, price: result.largest };
   } catch (error) {
