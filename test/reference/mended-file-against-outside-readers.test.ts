@@ -101,7 +101,7 @@ describe.skipIf(adventurer.absent)('adventurer-9clips.glb', { timeout: 60_000 },
           if (span.some(({ from, to }) => t > from && t < to)) continue;
           outside = Math.max(outside, degreesBetween(sampleAt(sampler, t, key), sampleAt(again[i], t, key)));
         }
-      if (isKnee({ clip: sampler.clip, track: glbChunks(old).json.nodes[sampler.node].name ?? '' }))
+      if (isKnee({ clip: sampler.clip, track: nodes[sampler.node].name ?? '' }))
         peak = Math.max(peak, peakOf(again[i], 14, 25));
     });
     expect(outside).toBeLessThanOrEqual(1e-7);
