@@ -49,7 +49,7 @@ export const loneKey: Rule = Object.freeze({
     people: 'A pop of one frame, most visible where a camera or a long limb hangs on the joint.',
     test: 'Around each key the fourth differences of the motion are explained by a lone key, by a shelf and by a corner. The lone key must explain best within three keys, lower the roughness at least 16 times, explain half as much again as any rival within one key, and be larger than the limit and twice the noise floor. At least seven positions of the window of nine must be usable, so the first and last four keys are never named.',
     source:
-      'Limits are common practice, no source. The least gain: in exact arithmetic lifting out a key at a dead stop lowers the roughness 13.5 times by itself; the rest was measured on 13 kinds of synthetic motion at 24 to 120 frames a second.',
+      'Limits are common practice, no source. The least gain: in exact arithmetic lifting out a key at a dead stop lowers the roughness 13.5 times by itself. Tested here on 300 smooth tracks with one outlier of 2° to 120° each, at 30 and 60 keys a second: all named, and nothing on the same tracks without it.',
     spares:
       'Sparse tracks (each of their keys is a decision), STEP tracks, declared cuts, whips, impacts and dead stops. Eyes below 60 frames a second, whose real jumps look the same. Violent shakes of a head may still be named.',
     remedy:

@@ -76,10 +76,10 @@ export const shelf: Rule = Object.freeze({
     people: 'A snap. A real hit is at least two frames wide and is not named.',
     test: 'As for a lone key, but the shelf must explain best within three keys, lower the roughness at least 8 times, explain half as much again as any rival within one key, and its fitted offset must be larger than the limit and twice the noise floor. Where one side turns slower than 2 deg/s the finding says so, and it is a note, as the start or the stop of a fast move and a held pose look alike; but not where the other side moves, and at less than a quarter of the step’s speed: then no fast move starts or stops there.',
     source:
-      'Limits are common practice, no source. Measured on synthetic gait and head shakes at 30 frames a second: shelves of 6° were all found; false alarms stay where a hinge reaches full stretch (17 to 29 % of such moments).',
+      'Limits are common practice, no source. In a prototype of this rule, on synthetic gait and head shakes at 30 frames a second, shelves of 6° were all found; false alarms stay where a hinge reaches full stretch (17 to 29 % of such moments there).',
     spares: 'Sparse tracks, STEP tracks, declared cuts, hits two or more frames wide, eyes.',
     remedy:
-      '`bridge` lays one smooth turn over the shortest run of four steps or more that raises no jump; the price is how far the most moved key turns. `re-seat` turns the whole rest of the track back instead. It is proposed only in a loop whose open seam it closes, and is never done unless allowed by name.',
+      '`bridge` lays one smooth turn over the shortest run of four steps or more that raises no jump; the price is how far the most moved key turns. `re-seat` turns the whole rest of the track back instead. It is proposed only in a loop whose open seam it closes, and is never done unless allowed by name. A bridge is shorter than a person would move: before a motorised head or a headset plays it, look at its peak speed.',
   },
 });
 

@@ -84,10 +84,11 @@ export const half: Rule = Object.freeze({
     standard:
       'glTF 2.0 has LINEAR rotations go the shorter way; at half a turn it leaves the choice to the program.',
     programs: 'Each goes by the last bit of its own dot product.',
-    people: 'A turn that goes the wrong way round, perhaps only in one viewer or only after the next export.',
+    people:
+      'A turn that goes the wrong way round, perhaps only in one viewer or only after the next export. On a motorised head it winds up cables or hits a stop, and in a headset it turns the wearer’s world: settle it before it runs.',
     test: 'The angle between neighbouring keys: a note from 150°, a warning from 165°, an error from 175° (machines: 120°, 150°, 170°), and an error wherever 180° is nearer than ten times the noise floor. Both ways are shown, axis in the own frame of the earlier key.',
     source:
-      'Common practice for the limits, no source. Measured: with noise of 1° the way is reversed in 2 % of cases at 178°, in 16 % at 179°, in 31 % at 179.5°.',
+      'Common practice for the limits, no source. With normal noise of 1° in the angle the way is reversed in 2 % of cases at 178°, in 16 % at 179°, in 31 % at 179.5° (the normal distribution beyond 2, 1 and ½ σ).',
     spares: 'STEP tracks and declared cuts.',
     remedy:
       '`choose side` puts a key in the middle of the way that is meant; both ends stay. The way proposed is the one that a sign-safe slerp takes now. Whether that is the way that was meant only a person can say; the other way is offered beside it.',
