@@ -17,7 +17,7 @@ export interface BenchCase {
 }
 
 /** Median and the 10th and 90th hundredth. */
-export interface Spread {
+interface Spread {
   readonly median: number;
   readonly p10: number;
   readonly p90: number;

@@ -13,7 +13,7 @@ const TERMS = 24;
 const times = (a: bigint, b: bigint): bigint => (a * b) >> BITS;
 
 /** A float64 as fixed point: exact, its least bit is above 2^-200 for the sizes used here. */
-export function fixed(value: number): bigint {
+function fixed(value: number): bigint {
   const scale = 2 ** 60;
   const high = Math.trunc(value * scale);
   return (
@@ -21,7 +21,7 @@ export function fixed(value: number): bigint {
   );
 }
 
-export function toNumber(value: bigint): number {
+function toNumber(value: bigint): number {
   const negative = value < 0n;
   const size = negative ? -value : value;
   const shift = BigInt(Math.max(0, size.toString(2).length - 64));
