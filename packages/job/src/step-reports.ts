@@ -1,6 +1,6 @@
 import { proveEdit, type AppliedStep } from '@slewcurve/mend';
 import type { StepReport } from './report.js';
-import { significant } from './significant.js';
+import { significant } from '@slewcurve/survey';
 
 /** What each step of a card did, over all tracks that it named, with the largest change that any of them shows where none may be. */
 export function stepReports(applied: readonly AppliedStep[]): StepReport[] {

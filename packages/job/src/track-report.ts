@@ -8,7 +8,7 @@ import {
   type RotationTrack,
 } from '@slewcurve/core';
 import type { TrackReport } from './report.js';
-import { significant } from './significant.js';
+import { significant } from '@slewcurve/survey';
 
 const DEGREES = 180 / Math.PI;
 

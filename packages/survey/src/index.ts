@@ -29,3 +29,4 @@ export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings 
 export { explainWord, type Entry, type Explanation } from './explain.js';
 export { rulePage } from './rule-page.js';
 export { fnv1a64 } from './fingerprint.js';
+export { significant } from './significant.js';
