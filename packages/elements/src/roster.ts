@@ -232,18 +232,18 @@ export class SlewRoster extends LitElement {
       aria-selected=${row.id === this.chosen ? 'true' : 'false'}
       aria-setsize=${this.shown.length}
       aria-posinset=${index + 1}
-      aria-label=${rowWords(row)}
       title=${`${row.track}, ${row.clip}, ${row.file}`}
       .style=${`top:${index * pitch}px;height:${pitch}px`}
       @click=${() => this.choose(row)}
     >
-      <span class="name"
+      <span class="unseen">${rowWords(row)}</span>
+      <span class="name" aria-hidden="true"
         >${trackName(row.track)} <span class="of">${row.clip}${several ? `, ${row.file}` : ''}</span></span
       >
-      <span class="ink"></span>
-      <span class="found">${countWords(row)}</span>
-      <span class="number">${sayRate(row.peak)}</span>
-      <span class="number">${saySpan(row.seconds)}</span>
+      <span class="ink" aria-hidden="true"></span>
+      <span class="found" aria-hidden="true">${countWords(row)}</span>
+      <span class="number" aria-hidden="true">${sayRate(row.peak)}</span>
+      <span class="number" aria-hidden="true">${saySpan(row.seconds)}</span>
     </div>`;
   }
 

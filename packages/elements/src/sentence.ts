@@ -36,7 +36,6 @@ export class SlewSentence extends LitElement {
         padding: 0.75rem 0 0.5rem;
         border: solid var(--_rule);
         border-width: 1px 0;
-        background: none;
       }
       p {
         margin: 0;

@@ -4,6 +4,7 @@ import { css, type CSSResult } from 'lit';
 export const chartStyles: CSSResult = css`
   :host {
     container-type: inline-size;
+    overflow-x: clip;
     padding: 0.25rem 0 1rem;
   }
   header {

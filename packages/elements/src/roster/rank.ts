@@ -35,9 +35,13 @@ function wrongness(row: RosterRow): number {
   return (levelRank(level) + 1) * 1e4 + count;
 }
 
+/** Ink paler than this is the usual of one track or another; tracks that have no darker keep the order of the file. */
+const STANDS_OUT = 0.5;
+
 /** How far a row's greatest speed stands above what is usual there: its darkest ink. */
 function darkest(row: RosterRow): number {
-  return row.ink.greatest[row.ink.greatest.length - 1][0] ?? 0;
+  const ink = row.ink.greatest[row.ink.greatest.length - 1][0] ?? 0;
+  return ink > STANDS_OUT ? ink : 0;
 }
 
 /** Rows that hold every word of `text` in file, clip, track or a family of their findings, whatever the case. */

@@ -63,7 +63,7 @@ export const rosterStyles: CSSResult = css`
   .close .option {
     font-size: 0.6875rem;
   }
-  .option > * {
+  .option > :not(.unseen) {
     overflow: hidden;
     text-overflow: ellipsis;
     line-height: 1.25;
