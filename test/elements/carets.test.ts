@@ -7,7 +7,7 @@ import {
   type MarginNote,
   type NoteLevel,
 } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
 const note = (id: string, level: NoteLevel, ...times: number[]): MarginNote => ({
@@ -68,6 +68,13 @@ describe('carets', () => {
         },
       ),
     );
+  });
+
+  test('of many notes on one spot are one, the worst, with how many others', () => {
+    const notes = numberNotes([note('a', 'note', 5), note('b', 'error', 5.01), note('c', 'warning', 5.02)]);
+    expect(caretsOfRow(notes, row, 1000)).toMatchObject([
+      { note: 'b', level: 'error', others: 2, stands: 3 },
+    ]);
   });
 
   test('have another shape at each level', () => {

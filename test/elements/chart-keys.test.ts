@@ -7,7 +7,7 @@ import {
   moveSpan,
   type KeyPress,
 } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { chartOf, popped } from '../support/tracks-for-elements.js';
 

@@ -1,5 +1,5 @@
 import { ROWS_AT_MOST, foldChoices, foldRows, rowAt } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
 describe('the fold', () => {

@@ -1,6 +1,6 @@
 import { playAs } from '@slewcurve/core';
 import { curveMotion, differenceColumns, segmentAt } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { popped, turning } from '../support/tracks-for-elements.js';
 

@@ -10,7 +10,7 @@ import {
   seenFrom,
   turnView,
 } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { turning } from '../support/tracks-for-elements.js';
 

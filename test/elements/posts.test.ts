@@ -1,6 +1,11 @@
 import { firstKeyAfter, firstKeyAt, holdStretches, keyLine, nearestKey } from '@slewcurve/elements/plot';
 import { describe, expect, test } from 'vitest';
 
+const columns = (greatest: number[]): { greatest: Float32Array; least: Float32Array } => ({
+  greatest: Float32Array.from(greatest),
+  least: Float32Array.from(greatest),
+});
+
 describe('the key line', () => {
   test('has a post a key where they can be told apart, and two caps where kept', () => {
     expect(keyLine([0, 1, 2], 0, 10, 100, [1])).toEqual({
@@ -36,11 +41,6 @@ describe('finding a key', () => {
 });
 
 describe('holds', () => {
-  const columns = (greatest: number[]): { greatest: Float32Array; least: Float32Array } => ({
-    greatest: Float32Array.from(greatest),
-    least: Float32Array.from(greatest),
-  });
-
   test('are stretches at or below the noise floor that last', () => {
     expect(holdStretches(columns([9, 0, 0, 0, 9, 0, 9, 0, 0, 0]), 0.1, 3)).toEqual([
       { from: 1, to: 4 },

@@ -1,5 +1,5 @@
 import { buildPyramid, columnMaxima, queryPyramid } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
 const speeds = fc.array(fc.float({ min: 0, max: 1e6, noNaN: true }), { minLength: 1, maxLength: 700 });

@@ -1,5 +1,5 @@
 import { buildPyramid, habitOf, inkDensity, inkRow, keptUp, trackInk } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
 const FRAME = 1 / 120;
@@ -8,6 +8,14 @@ const FRAME = 1 / 120;
 function swinging(): Float32Array {
   return Float32Array.from({ length: 21_600 }, (_, i) => 30 + 30 * Math.sin(i / 400));
 }
+
+/** Opening by looking at every window. */
+const scan = (values: readonly number[], length: number): number[] => {
+  const before = Math.floor((length - 1) / 2);
+  const after = length - 1 - before;
+  const least = values.map((_, i) => Math.min(...values.slice(Math.max(0, i - before), i + after + 1)));
+  return values.map((_, i) => Math.max(...least.slice(Math.max(0, i - after), i + before + 1)));
+};
 
 describe('the ink of a track', () => {
   test('has a pop of one frame among 21,600 at its blackest, on 800 pixels', () => {
@@ -51,12 +59,6 @@ describe('the ink of a track', () => {
   });
 
   test('keeps what is kept up, as a plain scan finds it', () => {
-    const scan = (values: readonly number[], length: number): number[] => {
-      const before = Math.floor((length - 1) / 2);
-      const after = length - 1 - before;
-      const least = values.map((_, i) => Math.min(...values.slice(Math.max(0, i - before), i + after + 1)));
-      return values.map((_, i) => Math.max(...least.slice(Math.max(0, i - after), i + before + 1)));
-    };
     fc.assert(
       fc.property(
         fc.array(fc.integer({ min: 0, max: 50 }), { minLength: 1, maxLength: 60 }),

@@ -7,7 +7,7 @@ import {
   tickPlaces,
   timeTicks,
 } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
 const positive = fc.double({ min: 1e-4, max: 1e7, noNaN: true });

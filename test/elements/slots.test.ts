@@ -1,5 +1,5 @@
 import { fillSlot, nudge, sentencePieces } from '@slewcurve/elements/plot';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
 const HUM =

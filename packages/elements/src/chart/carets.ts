@@ -11,10 +11,14 @@ export interface Caret {
   readonly x: number;
   /** How many carets this one stands for: neighbours of one note that would cover one another. */
   readonly stands: number;
+  /** Carets of other notes that stand on the same spot; this one is the worst of them. */
+  readonly others: number;
 }
 
 /** Carets of one note closer than this are one, px. */
 const CARET_ROOM = 14;
+/** Carets of different notes closer than this are drawn as one, px. */
+const SAME_SPOT = 5;
 /** Spans narrower than this are a caret alone, px. */
 const SPAN_ROOM = 12;
 
@@ -43,11 +47,32 @@ export function caretsOfRow(notes: readonly NumberedNote[], row: FoldRow, width:
         status: note.status,
         x,
         stands: 1,
+        others: 0,
       };
       last = { caret, index: carets.push(caret) - 1 };
     }
   }
-  return carets.toSorted((a, b) => a.x - b.x);
+  return crowded(carets.toSorted((a, b) => a.x - b.x));
+}
+
+/** One caret where those of several notes could not be told apart: thousands of findings in a row are still a row. */
+function crowded(carets: readonly Caret[]): Caret[] {
+  const drawn: Caret[] = [];
+  for (const caret of carets) {
+    const last = drawn[drawn.length - 1];
+    if (!last || caret.x - last.x >= SAME_SPOT) {
+      drawn.push(caret);
+      continue;
+    }
+    const first = RANK[caret.level] > RANK[last.level] ? caret : last;
+    drawn[drawn.length - 1] = {
+      ...first,
+      x: last.x,
+      stands: last.stands + caret.stands,
+      others: last.others + caret.others + 1,
+    };
+  }
+  return drawn;
 }
 
 /** A stretch of a finding in a row, ruled under the trace. */

@@ -192,7 +192,7 @@ function caretMarks(scene: RowScene): TemplateResult {
   return svg`${carets.map((caret) => {
     const ringed = caret.note === chosen;
     const path = caretPath(caret.level, caret.x, bands.carets, bands.caret);
-    const after = `${caret.number}${caret.level === 'error' ? '!' : ''}${caret.stands > 1 ? ` ×${caret.stands}` : ''}`;
+    const after = caretWords(caret);
     return svg`<g class="caret ${caret.level} ${caret.status}" data-note=${caret.note}>
       <rect class="touch" x=${caret.x - 14} y=${bands.posts} width="28" height=${bands.bottom - bands.posts} />
       <path class="mark" d=${path} />
@@ -201,6 +201,12 @@ function caretMarks(scene: RowScene): TemplateResult {
       <text x=${caret.x + bands.caret * 0.55 + 4} y=${bands.carets + bands.caret + 1}>${after}</text>
     </g>`;
   })}`;
+}
+
+/** What stands beside a caret: its number, `!` for an error, and what else it stands for. */
+function caretWords({ number, level, stands, others }: Caret): string {
+  const more = others > 0 ? ` +${others}` : stands > 1 ? ` ×${stands}` : '';
+  return `${number}${level === 'error' ? '!' : ''}${more}`;
 }
 
 /** How far the two motions stand apart, on a lane of its own under the row. */
