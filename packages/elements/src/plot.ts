@@ -6,6 +6,7 @@ export * from './chart/fold.js';
 export * from './chart/holds.js';
 export * from './chart/key-numbers.js';
 export * from './chart/motion.js';
+export * from './chart/note-of-finding.js';
 export * from './chart/pack-margin.js';
 export * from './chart/posts.js';
 export * from './chart/pyramid.js';
