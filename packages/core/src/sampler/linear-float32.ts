@@ -5,6 +5,12 @@ import { NEAR_32, cosineNear32, cosineWide32, sineNear32, sineWide32 } from './h
 import { locate } from './time-lookup.js';
 
 /**
+ * k = 2u − 1, written before it is read in every call. As an argument it would be a number object on the heap, and a stream of
+ * those drives the keys out of the cache.
+ */
+const part = new Float64Array(1);
+
+/**
  * LINEAR tracks, float32 grade. Their keys are unit and each on the side of the one before. The same lines as linear-float64 over
  * another kind of array: one loop for both would look up the kind of its array at every number.
  */
@@ -27,8 +33,9 @@ export function linearFloat32(shared: SharedTimes): WriteGroup {
     const t0 = times[segment];
     const u = (t - t0) / (times[segment + 1] - t0);
     if (u === 0) return writeKeys(records, from, slots, out, at);
-    if (records[from + 4 * slots.length] >= 0) writeNear(records, from, to, slots, 2 * u - 1, out, at);
-    else writeWide(records, from, to, slots, 2 * u - 1, out, at);
+    part[0] = 2 * u - 1;
+    if (records[from + 4 * slots.length] >= 0) writeNear(records, from, to, slots, out, at);
+    else writeWide(records, from, to, slots, out, at);
   };
 }
 
@@ -37,10 +44,10 @@ function writeNear(
   from: number,
   to: number,
   slots: Int32Array,
-  k: number,
   out: NumberStore,
   at: number,
 ): void {
+  const k = part[0];
   let weights = from + 4 * slots.length;
   for (let i = 0; i < slots.length; i++, from += 4, to += 4, weights += 3) {
     const x = k * records[weights];
@@ -61,10 +68,10 @@ function writeWide(
   from: number,
   to: number,
   slots: Int32Array,
-  k: number,
   out: NumberStore,
   at: number,
 ): void {
+  const k = part[0];
   let weights = from + 4 * slots.length;
   for (let i = 0; i < slots.length; i++, from += 4, to += 4, weights += 3) {
     const x = k * records[weights];

@@ -4,6 +4,12 @@ import { writeKeys, type SharedTimes, type WriteGroup } from './group.js';
 import { NEAR_64, cosineNear64, cosineWide64, sineNear64, sineWide64 } from './half-angle.js';
 import { locate } from './time-lookup.js';
 
+/**
+ * k = 2u − 1, written before it is read in every call. As an argument it would be a number object on the heap, and a stream of
+ * those drives the keys out of the cache.
+ */
+const part = new Float64Array(1);
+
 /** LINEAR tracks, float64 grade. Their keys are unit and each on the side of the one before. */
 export function linearFloat64(shared: SharedTimes): WriteGroup {
   const { slots } = shared;
@@ -23,8 +29,9 @@ export function linearFloat64(shared: SharedTimes): WriteGroup {
     const t0 = records[to - 1];
     const u = (t - t0) / (records[to + stride - 1] - t0);
     if (u === 0) return writeKeys(records, from, slots, out, at);
-    if (records[from + 4 * slots.length] >= 0) writeNear(records, from, to, slots, 2 * u - 1, out, at);
-    else writeWide(records, from, to, slots, 2 * u - 1, out, at);
+    part[0] = 2 * u - 1;
+    if (records[from + 4 * slots.length] >= 0) writeNear(records, from, to, slots, out, at);
+    else writeWide(records, from, to, slots, out, at);
   };
 }
 
@@ -33,10 +40,10 @@ function writeNear(
   from: number,
   to: number,
   slots: Int32Array,
-  k: number,
   out: NumberStore,
   at: number,
 ): void {
+  const k = part[0];
   let weights = from + 4 * slots.length;
   for (let i = 0; i < slots.length; i++, from += 4, to += 4, weights += 3) {
     const x = k * records[weights];
@@ -57,10 +64,10 @@ function writeWide(
   from: number,
   to: number,
   slots: Int32Array,
-  k: number,
   out: NumberStore,
   at: number,
 ): void {
+  const k = part[0];
   let weights = from + 4 * slots.length;
   for (let i = 0; i < slots.length; i++, from += 4, to += 4, weights += 3) {
     const x = k * records[weights];
