@@ -61,16 +61,21 @@ function parabola(out: NumberStore, { turns, gaps }: SegmentTurns, before: numbe
 
 /**
  * F. N. Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238–246 (abstract seen): a cubic runs monotone where its end
- * slopes are at most three times its mean slope, so a rate is shortened until that holds along both chords, and is 0 where the turn goes
- * back or rests. Exact for turns about one axis; for others the same rule along each chord.
+ * slopes do not oppose its mean slope and are at most three times as large. So what of the rate opposes a chord is taken out of
+ * it, and the rest is shortened to three times the slower mean rate: 0 where the turn goes straight back or rests. Exact for
+ * turns about one axis; for others the same along each chord, changing smoothly with the keys.
  */
 function limit(out: NumberStore, { turns, gaps }: SegmentTurns, before: number, after: number): void {
-  let scale = agreement(turns, before, turns, after) > 0 ? 1 : 0;
+  let most = Infinity;
   for (const segment of [before, after]) {
     const squared = agreement(turns, segment, turns, segment);
     const along = agreement(turns, segment, out, 0);
-    if (along * gaps[segment] * scale > 3 * squared) scale = (3 * squared) / (along * gaps[segment]);
+    if (along < 0 && squared > 0)
+      for (let k = 0; k < 3; k++) out[k] -= (along / squared) * turns[3 * segment + k];
+    most = Math.min(most, (3 * Math.sqrt(squared)) / gaps[segment]);
   }
+  const size = Math.sqrt(agreement(out, 0, out, 0));
+  const scale = size > most ? most / size : 1;
   for (let k = 0; k < 3; k++) out[k] *= scale;
 }
 
