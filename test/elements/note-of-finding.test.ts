@@ -17,7 +17,15 @@ const FINDING: Finding = {
   owner: 'Hips/Spine/Neck',
   count: 1,
   occurrences: [
-    { keys: [19], time: 0.633, span: [0.6, 0.667], value: 12.4, level: 'warning', fingerprint: 'place' },
+    {
+      keys: [19],
+      time: 0.633,
+      span: [0.6, 0.667],
+      value: 12.4,
+      level: 'warning',
+      message: 'key 19 stands 12.4° off its neighbours for one frame',
+      fingerprint: 'place',
+    },
   ],
   remedy: { verb: 'lift out', clip: 'Walk', track: 'Hips/Spine/Neck', keys: [19] },
   message: 'Key 19 at 0.633 s stands 12.4° off its neighbours for one frame.',

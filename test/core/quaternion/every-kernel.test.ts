@@ -58,9 +58,11 @@ const KERNELS: readonly (readonly [string, Kernel, number, ...(readonly number[]
   ['turnBetween', (out, from, to) => core.turnBetween(out, from, to), 4, [...VIEW, 0], [...AXIS, 0]],
 ];
 
-test.each(KERNELS)(
-  '%s answers the same in every kind of store, onto its own input, and writes nothing else',
-  (_, kernel, outLength, ...inputs) => {
+const CASES = KERNELS.map(([name, kernel, outLength, ...inputs]) => ({ name, kernel, outLength, inputs }));
+
+test.each(CASES)(
+  '$name answers the same in every kind of store, onto its own input, and writes nothing else',
+  ({ kernel, outLength, inputs }) => {
     const differences = storeDifferences(kernel, outLength, ...inputs);
     // float32: one rounding of numbers below 4 is at most 2^-23; a sum of two answers' roundings twice that.
     expect(differences.float32).toBeLessThanOrEqual(2 ** -22);
@@ -68,7 +70,7 @@ test.each(KERNELS)(
   },
 );
 
-test.each(KERNELS)('%s returns its own output', (_, kernel, outLength, ...inputs) => {
+test.each(CASES)('$name returns its own output', ({ kernel, outLength, inputs }) => {
   const out = new Float64Array(outLength);
   const returned = kernel(out, ...inputs);
   expect(typeof returned === 'number' || returned === out).toBe(true);
