@@ -1,7 +1,7 @@
 import { existsSync, mkdirSync, readFileSync, readdirSync, writeFileSync } from 'node:fs';
-import { kestrelPoint, type Report } from '@slewcurve/job';
+import { kestrelPoint } from '@slewcurve/job';
 import { describe, expect, test } from 'vitest';
-import { commandFolder, type Ran } from '../support/run-command.js';
+import { commandFolder, reportOf, type Ran } from '../support/run-command.js';
 
 async function withDemo(): ReturnType<typeof commandFolder> {
   const at = await commandFolder();
@@ -9,8 +9,8 @@ async function withDemo(): ReturnType<typeof commandFolder> {
   return at;
 }
 
-function reportOf({ stdout }: Ran): Report {
-  return JSON.parse(stdout) as Report;
+function verbsOf(ran: Ran): Set<string> {
+  return new Set((reportOf(ran).steps ?? []).map(({ step }) => step.verb));
 }
 
 describe('slewcurve', () => {
@@ -212,9 +212,7 @@ describe('slewcurve mend', () => {
   test('leaves out what is a choice, and takes it when it is allowed by name', async () => {
     const at = await withDemo();
     const shy = await at.run('mend', 'demo.glb', '--proposed', '--dry-run', '--format', 'json');
-    const verbs = (ran: Ran): Set<string> =>
-      new Set((reportOf(ran).steps ?? []).map(({ step }) => step.verb));
-    expect(verbs(shy).has('choose side')).toBe(false);
+    expect(verbsOf(shy).has('choose side')).toBe(false);
     expect(shy.stderr).toContain('left out: choose side');
     const bold = await at.run(
       'mend',
@@ -226,7 +224,7 @@ describe('slewcurve mend', () => {
       '--format',
       'json',
     );
-    expect(verbs(bold).has('choose side')).toBe(true);
+    expect(verbsOf(bold).has('choose side')).toBe(true);
   });
 
   test('refuses an undo plan that is for another file, or that was changed', async () => {

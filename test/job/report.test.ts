@@ -82,9 +82,6 @@ describe('the report', () => {
 });
 
 describe('verdict', () => {
-  const at = (levels: readonly Finding['level'][], change: Partial<JobSettings>): string =>
-    buildReport([fileWith(levels)], { ...SETTINGS, ...change }).verdict;
-
   test.each([
     [[], {}, 'pass'],
     [['note'], {}, 'pass'],
@@ -96,7 +93,7 @@ describe('verdict', () => {
     [['error'], { allowWarnings: 5 }, 'fail'],
     [['note', 'warning'], { failAt: 'note', allowWarnings: 1 }, 'fail'],
   ] as const)('%j under %j: %s', (levels, change, verdict) => {
-    expect(at(levels, change)).toBe(verdict);
+    expect(buildReport([fileWith(levels)], { ...SETTINGS, ...change }).verdict).toBe(verdict);
   });
 
   test('a file that can’t be read never passes', () => {
@@ -121,12 +118,8 @@ describe('verdict', () => {
 
 describe('fingerprints', () => {
   test('stay as they are when a file is exported anew two keys later', () => {
-    const found = (shift: number): string[] =>
-      surveyTrack(swayWithPop(shift)).flatMap((finding) =>
-        finding.occurrences.map((place) => place.fingerprint),
-      );
-    expect(found(0)).toHaveLength(1);
-    expect(found(2)).toEqual(found(0));
+    expect(placesOf(0)).toHaveLength(1);
+    expect(placesOf(2)).toEqual(placesOf(0));
   });
 });
 
@@ -147,8 +140,15 @@ function swayWithPop(shift: number): RotationTrack {
   return rotationTrack({ times, values, id: 'hip', clip: 'walk' });
 }
 
-function fileWith(levels: readonly Finding['level'][]): FileReport {
-  const finding = (level: Finding['level'], i: number): Finding => ({
+/** Fingerprints of what is found on the sway. */
+function placesOf(shift: number): string[] {
+  return surveyTrack(swayWithPop(shift)).flatMap(({ occurrences }) =>
+    occurrences.map((place) => place.fingerprint),
+  );
+}
+
+function findingOf(level: Finding['level'], i: number): Finding {
+  return {
     rule: 'jump.lone-key',
     level,
     clip: 'c',
@@ -165,8 +165,11 @@ function fileWith(levels: readonly Finding['level'][]): FileReport {
     occurrences: [],
     message: 'key 1 stands off',
     fingerprint: String(i),
-  });
-  return { file: 'f', status: 'surveyed', clips: [], tracks: [], findings: levels.map(finding) };
+  };
+}
+
+function fileWith(levels: readonly Finding['level'][]): FileReport {
+  return { file: 'f', status: 'surveyed', clips: [], tracks: [], findings: levels.map(findingOf) };
 }
 
 function caught(promise: Promise<unknown>): Promise<unknown> {

@@ -8,7 +8,7 @@ import { GLTFLoader } from 'three/examples/jsm/loaders/GLTFLoader.js';
 import { describe, expect, test } from 'vitest';
 import type { Report } from '@slewcurve/job';
 import { degreesBetween, glbChunks, rotationSamplers, sampleAt } from '../support/independent-gltf.js';
-import { commandFolder } from '../support/run-command.js';
+import { commandFolder, reportOf } from '../support/run-command.js';
 import { sharedFile } from '../support/shared-data.js';
 
 const adventurer = sharedFile('data/gltf/animation-only/adventurer-9clips.glb');
@@ -22,6 +22,10 @@ async function inFolder(file: typeof adventurer): ReturnType<typeof commandFolde
   return at;
 }
 
+function isKnee({ clip, track }: { readonly clip: string; readonly track: string }): boolean {
+  return clip === CLIP && KNEES.some((name) => track.endsWith(name));
+}
+
 function findingsOf(report: Report): Report['files'][number]['findings'] {
   return report.files[0]?.findings ?? [];
 }
@@ -29,8 +33,8 @@ function findingsOf(report: Report): Report['files'][number]['findings'] {
 describe.skipIf(adventurer.absent)('adventurer-9clips.glb', { timeout: 60_000 }, () => {
   test('has 107 sign changes in 38 tracks over 7 clips, as two independent readers counted', async () => {
     const at = await inFolder(adventurer);
-    const { stdout } = await at.run('check', 'in.glb', '--format', 'json');
-    const { tracks } = (JSON.parse(stdout) as Report).files[0];
+    const checked = await at.run('check', 'in.glb', '--format', 'json');
+    const { tracks } = reportOf(checked).files[0];
     const changed = tracks.filter((track) => track.signChanges > 0);
     expect(changed.reduce((sum, track) => sum + track.signChanges, 0)).toBe(107);
     expect(changed).toHaveLength(38);
@@ -39,11 +43,9 @@ describe.skipIf(adventurer.absent)('adventurer-9clips.glb', { timeout: 60_000 },
 
   test('snaps at key 20 in both lower legs, by 61.8° and 67.4°, and has at most 20 places that jump', async () => {
     const at = await inFolder(adventurer);
-    const { stdout, code } = await at.run('check', 'in.glb', '--format', 'json');
-    expect(code).toBe(1);
-    const jumps = findingsOf(JSON.parse(stdout) as Report).filter((finding) =>
-      finding.rule.startsWith('jump.'),
-    );
+    const checked = await at.run('check', 'in.glb', '--format', 'json');
+    expect(checked.code).toBe(1);
+    const jumps = findingsOf(reportOf(checked)).filter((finding) => finding.rule.startsWith('jump.'));
     const knees = jumps.filter(
       (finding) => finding.clip === CLIP && KNEES.some((name) => finding.track.endsWith(name)),
     );
@@ -58,7 +60,7 @@ describe.skipIf(adventurer.absent)('adventurer-9clips.glb', { timeout: 60_000 },
 
   test('is mended by its proposed bridges, and nothing else changes', async () => {
     const at = await inFolder(adventurer);
-    const before = JSON.parse((await at.run('check', 'in.glb', '--format', 'json')).stdout) as Report;
+    const before = reportOf(await at.run('check', 'in.glb', '--format', 'json'));
     const done = await at.run(
       'mend',
       'in.glb',
@@ -72,9 +74,7 @@ describe.skipIf(adventurer.absent)('adventurer-9clips.glb', { timeout: 60_000 },
       '--format',
       'json',
     );
-    const after = JSON.parse(done.stdout) as Report;
-    const isKnee = ({ clip, track }: { clip: string; track: string }): boolean =>
-      clip === CLIP && KNEES.some((name) => track.endsWith(name));
+    const after = reportOf(done);
     expect(
       findingsOf(before).filter((finding) => isKnee(finding) && finding.rule === 'jump.shelf'),
     ).toHaveLength(2);
@@ -139,8 +139,8 @@ describe.skipIf(adventurer.absent)('adventurer-9clips.glb', { timeout: 60_000 },
 describe.skipIf(cube.absent)('spinning-cube.glb', { timeout: 60_000 }, () => {
   test('turns by two half turns; both ways of each are shown', async () => {
     const at = await inFolder(cube);
-    const { stdout } = await at.run('check', 'in.glb', '--format', 'json');
-    const halves = findingsOf(JSON.parse(stdout) as Report).filter((finding) => finding.rule === 'turn.half');
+    const checked = await at.run('check', 'in.glb', '--format', 'json');
+    const halves = findingsOf(reportOf(checked)).filter((finding) => finding.rule === 'turn.half');
     expect(halves.map((finding) => finding.count)).toEqual([2]);
     for (const { ways = [] } of halves[0].occurrences) {
       expect(ways).toHaveLength(2);
@@ -155,7 +155,7 @@ describe.skipIf(cube.absent)('spinning-cube.glb', { timeout: 60_000 }, () => {
 
   test('turns the chosen way after choose side, whatever the last digits of its keys', async () => {
     const at = await inFolder(cube);
-    const card = JSON.parse((await at.run('check', 'in.glb', '--format', 'json')).stdout) as Report;
+    const card = reportOf(await at.run('check', 'in.glb', '--format', 'json'));
     const steps = findingsOf(card)
       .flatMap((finding) => finding.occurrences)
       .flatMap((place) => place.remedy ?? [])

@@ -42,7 +42,7 @@ interface Json {
 export function glbChunks(bytes: Uint8Array): { readonly json: Json; readonly bin: DataView } {
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
   const length = view.getUint32(12, true);
-  const json = JSON.parse(new TextDecoder().decode(bytes.subarray(20, 20 + length))) as Json;
+  const json: Json = JSON.parse(new TextDecoder().decode(bytes.subarray(20, 20 + length)));
   const at = 20 + length;
   const size = view.getUint32(at, true);
   return { json, bin: new DataView(bytes.buffer, bytes.byteOffset + at + 8, size) };

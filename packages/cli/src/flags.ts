@@ -1,6 +1,7 @@
 import { parseArgs } from 'node:util';
 import { SlewcurveError } from '@slewcurve/core';
 import { nearestWord } from '@slewcurve/mend';
+import { messageOf } from './system-error.js';
 
 /** A flag of the command line: one line here, and help and parsing know it. */
 interface Flag {
@@ -14,7 +15,7 @@ interface Flag {
 export type CommandName = 'survey' | 'check' | 'mend' | 'explain';
 
 /** The flags; `-o` is written with one dash. */
-export type FlagName =
+type FlagName =
   | 'format'
   | 'playback'
   | 'fail-at'
@@ -33,7 +34,7 @@ export type FlagName =
 const SURVEYING: readonly CommandName[] = ['survey', 'check', 'mend'];
 const MENDING: readonly CommandName[] = ['mend'];
 
-export const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
+const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
   format: {
     value: 'text|json',
     help: 'form of the report (default text)',
@@ -85,7 +86,7 @@ export function readArguments(command: CommandName, argv: readonly string[]): Ar
   const known = flagsOf(command);
   const unknown = argv
     .slice(0, endOfFlags(argv))
-    .find((word) => isFlag(word) && !known.includes(flagName(word)));
+    .find((word) => isFlag(word) && !known.some((name) => name === flagName(word)));
   if (unknown !== undefined) throw unknownFlag(command, unknown, known);
   const options = Object.fromEntries(
     known.map((name) => [
@@ -109,7 +110,7 @@ export function readArguments(command: CommandName, argv: readonly string[]): Ar
   } catch (cause) {
     throw new SlewcurveError(
       'usage.bad-value',
-      `${String((cause as Error).message)} Try slewcurve ${command} --help.`,
+      `${messageOf(cause)} Try slewcurve ${command} --help.`,
       {},
       { cause },
     );
@@ -127,7 +128,9 @@ export function flagHelp(command: CommandName): string {
 }
 
 function flagsOf(command: CommandName): FlagName[] {
-  return (Object.keys(FLAGS) as FlagName[]).filter((name) => FLAGS[name].commands.includes(command));
+  return Object.keys(FLAGS)
+    .filter(isFlagName)
+    .filter((name) => FLAGS[name].commands.includes(command));
 }
 
 function isSwitch(name: FlagName): boolean {
@@ -143,15 +146,18 @@ function isFlag(word: string): boolean {
   return /^--?[a-z]/.test(word);
 }
 
-function flagName(word: string): FlagName {
-  return word.replace(/^--?/, '').replace(/=.*/s, '') as FlagName;
+function flagName(word: string): string {
+  return word.replace(/^--?/, '').replace(/=.*/s, '');
+}
+
+function isFlagName(name: string): name is FlagName {
+  return Object.hasOwn(FLAGS, name);
 }
 
 function unknownFlag(command: CommandName, word: string, known: readonly FlagName[]): SlewcurveError {
-  const nearest = nearestWord(flagName(word), known);
-  const elsewhere = Object.hasOwn(FLAGS, flagName(word))
-    ? ` It belongs to ${FLAGS[flagName(word)].commands.join(', ')}.`
-    : '';
+  const name = flagName(word);
+  const nearest = nearestWord(name, known);
+  const elsewhere = isFlagName(name) ? ` It belongs to ${FLAGS[name].commands.join(', ')}.` : '';
   const hint = nearest === undefined ? '' : ` Did you mean --${nearest}?`;
   return new SlewcurveError(
     'usage.unknown-flag',

@@ -18,7 +18,7 @@ export async function main(argv: readonly string[], io: CommandIo): Promise<numb
   } catch (error) {
     if (!(error instanceof SlewcurveError)) {
       io.stderr.write(
-        `slewcurve: a fault of its own, please report it: ${String((error as Error).stack ?? error)}\n`,
+        `slewcurve: a fault of its own, please report it: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`,
       );
       return EXIT.unable;
     }

@@ -5,6 +5,7 @@ import { LEVELS, type JobSettings } from '@slewcurve/job';
 import { nearestWord } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, parseHouseRules, type HouseRules } from '@slewcurve/survey';
 import type { Arguments } from './flags.js';
+import { messageOf } from './system-error.js';
 
 /**
  * The settings that the flags ask for.
@@ -42,7 +43,7 @@ export function readText(path: string, cwd: string): Promise<string> {
   return readFile(resolve(cwd, path), 'utf8').catch((cause: unknown) => {
     throw new SlewcurveError(
       'file.not-found',
-      `${path} can't be read: ${(cause as Error).message}`,
+      `${path} can't be read: ${messageOf(cause)}`,
       { file: path },
       { cause },
     );
@@ -61,7 +62,7 @@ export async function readJson(path: string, cwd: string): Promise<unknown> {
   } catch (cause) {
     throw new SlewcurveError(
       'file.not-json',
-      `${path} is not JSON: ${(cause as Error).message}`,
+      `${path} is not JSON: ${messageOf(cause)}`,
       { file: path },
       { cause },
     );
@@ -70,10 +71,13 @@ export async function readJson(path: string, cwd: string): Promise<unknown> {
 
 function playbacksOf(args: Arguments): readonly PlaybackId[] {
   const ids = args.values('playback').flatMap((value) => value.split(','));
-  const known = Object.keys(PLAYBACKS) as PlaybackId[];
-  const bad = ids.find((id) => !known.some((other) => other === id));
-  if (bad !== undefined) throw badValue('playback', bad, known);
-  return ids.length === 0 ? ['as-written'] : ([...new Set(ids)] as PlaybackId[]);
+  const bad = ids.find((id) => !isPlaybackId(id));
+  if (bad !== undefined) throw badValue('playback', bad, Object.keys(PLAYBACKS));
+  return ids.length === 0 ? ['as-written'] : [...new Set(ids.filter(isPlaybackId))];
+}
+
+function isPlaybackId(id: string): id is PlaybackId {
+  return Object.hasOwn(PLAYBACKS, id);
 }
 
 function wholeNumber(value = '0'): number {

@@ -17,7 +17,8 @@ export function buildReport(
     failAt: settings.failAt,
     files,
     totals: totalsOf(findings),
-    verdict: files.every((file) => file.status === 'surveyed') && passes(findings, settings) ? 'pass' : 'fail',
+    verdict:
+      files.every((file) => file.status === 'surveyed') && passes(findings, settings) ? 'pass' : 'fail',
     ...(steps !== undefined && { steps }),
   };
 }

@@ -96,7 +96,10 @@ function nameOf(track: RotationTrack): string {
 }
 
 function sameNumbers(a: RotationTrack, b: RotationTrack): boolean {
-  const same = (x: Float64Array, y: Float64Array): boolean =>
-    x.length === y.length && x.every((value, i) => Object.is(value, y[i]));
-  return same(a.times, b.times) && same(a.values, b.values);
+  return sameArray(a.times, b.times) && sameArray(a.values, b.values);
+}
+
+/** To the bit: NaN equals NaN, and 0 is not -0. */
+function sameArray(a: Float64Array, b: Float64Array): boolean {
+  return a.length === b.length && a.every((value, i) => Object.is(value, b[i]));
 }

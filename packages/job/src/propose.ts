@@ -58,13 +58,16 @@ function merged(steps: readonly Step[]): Step[] {
 }
 
 function union(a: readonly number[], b: readonly number[]): number[] {
-  return [...new Set([...a, ...b])].sort((x, y) => x - y);
+  return [...new Set([...a, ...b])].toSorted((x, y) => x - y);
 }
 
 function ordered(steps: readonly Step[]): Step[] {
-  const inserts = (step: Step): boolean => verbNamed(step.verb).insertsKeys;
-  return [...steps].sort(
+  return steps.toSorted(
     (a, b) =>
       Number(inserts(a)) - Number(inserts(b)) || (inserts(a) ? (b.keys?.[0] ?? 0) - (a.keys?.[0] ?? 0) : 0),
   );
+}
+
+function inserts(step: Step): boolean {
+  return verbNamed(step.verb).insertsKeys;
 }

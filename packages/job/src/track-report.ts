@@ -16,7 +16,6 @@ const DEGREES = 180 / Math.PI;
 export function trackReport(track: RotationTrack, playback: PlaybackId): TrackReport {
   const curve = playAs(track, playback);
   const measured = measure(curve);
-  const degrees = (radians: number): number => significant(radians * DEGREES);
   return {
     clip: track.clip,
     track: track.id,
@@ -37,6 +36,10 @@ export function trackReport(track: RotationTrack, playback: PlaybackId): TrackRe
     signChanges: signChanges(track).length,
     widestSegment: degrees(largest(track, (key) => segmentAngle(track, key))),
   };
+}
+
+function degrees(radians: number): number {
+  return significant(radians * DEGREES);
 }
 
 /** Largest rate floor of any segment of a track, rad/s: nothing under it is claimed anywhere on the track. */

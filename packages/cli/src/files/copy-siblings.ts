@@ -2,6 +2,7 @@ import { copyFile, constants, mkdir } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { SlewcurveError } from '@slewcurve/core';
 import type { FileInHand } from '../with-file.js';
+import { messageOf, systemCode } from '../system-error.js';
 
 /**
  * Copy the files that the written file refers to into its folder, where they are not there yet. Gives the paths that were copied.
@@ -19,10 +20,10 @@ export async function copyMissingSiblings(file: FileInHand, folder: string): Pro
       await copyFile(join(from, uri), to, constants.COPYFILE_EXCL);
       copied.push(to);
     } catch (cause) {
-      if ((cause as NodeJS.ErrnoException).code !== 'EEXIST')
+      if (systemCode(cause) !== 'EEXIST')
         throw new SlewcurveError(
           'file.unwritable',
-          `${to} can't be written: ${(cause as Error).message}`,
+          `${to} can't be written: ${messageOf(cause)}`,
           { file: to },
           { cause },
         );

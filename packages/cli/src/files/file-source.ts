@@ -1,6 +1,7 @@
 import { open, type FileHandle } from 'node:fs/promises';
 import { SlewcurveError } from '@slewcurve/core';
 import type { Source } from '@slewcurve/formats';
+import { messageOf, systemCode } from '../system-error.js';
 
 /** A file on disk that is read by range; `close` it when done. */
 export interface FileSource extends Source {
@@ -54,12 +55,12 @@ async function readRange(
 }
 
 function cannotRead(path: string, cause: unknown): SlewcurveError {
-  const missing = (cause as NodeJS.ErrnoException).code === 'ENOENT';
+  const missing = systemCode(cause) === 'ENOENT';
   return missing
     ? new SlewcurveError('file.not-found', `There is no file ${path}.`, { file: path }, { cause })
     : new SlewcurveError(
         'file.unreadable',
-        `${path} can't be read: ${(cause as Error).message}`,
+        `${path} can't be read: ${messageOf(cause)}`,
         { file: path },
         { cause },
       );

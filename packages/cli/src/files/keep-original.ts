@@ -1,6 +1,7 @@
 import { copyFile, constants, link } from 'node:fs/promises';
 import { parse, join } from 'node:path';
 import { SlewcurveError } from '@slewcurve/core';
+import { messageOf, systemCode } from '../system-error.js';
 
 /**
  * Keep a file's bytes under another name beside it (`walk.original.glb`, then `walk.original-2.glb`); never over anything.
@@ -24,16 +25,16 @@ export async function keepOriginal(path: string): Promise<string> {
 /** A second name for the same bytes where the disk knows such, else a copy; false where the name is taken. */
 async function takesName(path: string, kept: string): Promise<boolean> {
   try {
-    await link(path, kept).catch((error: NodeJS.ErrnoException) => {
-      if (error.code === 'EEXIST') throw error;
+    await link(path, kept).catch((error: unknown) => {
+      if (systemCode(error) === 'EEXIST') throw error;
       return copyFile(path, kept, constants.COPYFILE_EXCL);
     });
     return true;
   } catch (cause) {
-    if ((cause as NodeJS.ErrnoException).code === 'EEXIST') return false;
+    if (systemCode(cause) === 'EEXIST') return false;
     throw new SlewcurveError(
       'file.unwritable',
-      `The original can't be kept as ${kept}: ${(cause as Error).message}`,
+      `The original can't be kept as ${kept}: ${messageOf(cause)}`,
       { file: kept },
       { cause },
     );

@@ -49,8 +49,12 @@ async function* slicesOf(source: Source): AsyncIterable<Uint8Array> {
 }
 
 async function isSameFile(a: string, b: string): Promise<boolean> {
-  const real = (path: string): Promise<string> => realpath(path).catch(() => path);
-  return (await real(a)) === (await real(b));
+  return (await realPath(a)) === (await realPath(b));
+}
+
+/** The path itself where there is no file yet. */
+function realPath(path: string): Promise<string> {
+  return realpath(path).catch(() => path);
 }
 
 /** The name on disk must still hold the bytes that were opened. */

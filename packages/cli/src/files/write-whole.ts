@@ -2,6 +2,7 @@ import { randomBytes } from 'node:crypto';
 import { open, rename, rm } from 'node:fs/promises';
 import { basename, dirname, join } from 'node:path';
 import { SlewcurveError } from '@slewcurve/core';
+import { messageOf } from '../system-error.js';
 
 /**
  * Write a file so that it is there whole or not at all: into a temporary file beside it, flushed, then renamed over it.
@@ -27,7 +28,7 @@ export async function writeWhole(
     if (cause instanceof SlewcurveError) throw cause;
     throw new SlewcurveError(
       'file.unwritable',
-      `${path} can't be written: ${(cause as Error).message}`,
+      `${path} can't be written: ${messageOf(cause)}`,
       { file: path },
       { cause },
     );
