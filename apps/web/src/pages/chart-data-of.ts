@@ -1,6 +1,6 @@
 import { playAs, type PlaybackId, type RotationTrack } from '@slewcurve/core';
-import { curveMotion, rateNames, type ChartData, type MarginNote } from '@slewcurve/elements/plot';
-import { sayStep, type Step } from '@slewcurve/mend';
+import { curveMotion, rateNames, remedyButton, type ChartData, type MarginNote } from '@slewcurve/elements/plot';
+import { sayStep } from '@slewcurve/mend';
 import { roleOf, type Finding, type Occurrence } from '@slewcurve/survey';
 import { trackKey, type FileWork } from '../session/file-work.js';
 import type { ChosenTrack } from './roster-rows.js';
@@ -19,6 +19,17 @@ export interface ChartSubject {
   readonly playback: PlaybackId;
   readonly second?: PlaybackId;
   readonly kept?: readonly number[];
+}
+
+/** Whether two subjects make the same chart: a file changes at every step of a survey, its one track hardly ever. */
+export function drawsTheSame(a: ChartSubject, b: ChartSubject): boolean {
+  const key = trackKey(a.chosen.clip, a.chosen.track);
+  const rest = ['chosen', 'before', 'after', 'preview', 'playback', 'second', 'kept'] as const;
+  return (
+    rest.every((name) => a[name] === b[name]) &&
+    a.file.report === b.file.report &&
+    a.file.findings.get(key) === b.file.findings.get(key)
+  );
 }
 
 /** The chart's data: after solid, before dotted where they differ. */
@@ -90,19 +101,12 @@ function noteOf(finding: Finding, place: Occurrence | undefined): MarginNote {
     places: one ? [place] : finding.occurrences,
     count: one ? 1 : finding.count,
     status: 'open',
-    ...(remedy && { remedy: { sentence: sayStep(remedy), button: buttonOf(remedy) } }),
+    ...(remedy && { remedy: { sentence: sayStep(remedy), button: remedyButton(remedy) } }),
   };
 }
 
 function noteId(finding: Finding, place: Occurrence): string {
   return `${finding.fingerprint}/${place.fingerprint}`;
-}
-
-/** What the button of a remedy says: "Lift out key 19". */
-function buttonOf({ verb, keys = [] }: Step): string {
-  const words = verb.charAt(0).toUpperCase() + verb.slice(1);
-  if (keys.length === 0) return words;
-  return keys.length === 1 ? `${words} at key ${keys[0]}` : `${words} at ${keys.length} keys`;
 }
 
 function asSentence(message: string): string {

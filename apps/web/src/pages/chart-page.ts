@@ -18,7 +18,7 @@ import type { FileWork } from '../session/file-work.js';
 import { trackKey } from '../session/file-work.js';
 import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
 import type { Session } from '../session/session.js';
-import { chartDataOf, placeOfNote } from './chart-data-of.js';
+import { chartDataOf, drawsTheSame, placeOfNote, type ChartSubject } from './chart-data-of.js';
 import { jobCardOf } from './job-card-of.js';
 import { pageStyles } from './page-styles.js';
 import type { ChosenTrack } from './roster-rows.js';
@@ -80,6 +80,10 @@ export class SlewChartPage extends LitElement {
   /** Seconds a row, where somebody chose. */
   declare private fold: number | undefined;
   private data: ChartData | undefined;
+  /** What `data` was made of. */
+  private subject: ChartSubject | undefined;
+  /** State of the card that the answer belongs to. */
+  private fetchedAt: FileWork['proofs'] | undefined;
 
   constructor() {
     super();
@@ -91,8 +95,10 @@ export class SlewChartPage extends LitElement {
     const { chosen, file } = this;
     const other = changed.get('chosen') as ChosenTrack | undefined;
     if (changed.has('chosen') && JSON.stringify(other) !== JSON.stringify(chosen)) this.forget();
-    const card = (changed.get('file') as FileWork | undefined)?.proofs !== file?.proofs;
-    if (chosen && file?.opened && (changed.has('chosen') || card)) void this.fetch(chosen);
+    if (chosen && file?.opened && (changed.has('chosen') || this.fetchedAt !== file.proofs)) {
+      this.fetchedAt = file.proofs;
+      void this.fetch(chosen);
+    }
     this.data = this.makeData();
   }
 
@@ -114,13 +120,20 @@ export class SlewChartPage extends LitElement {
     if (!answer || !chosen || !file) return undefined;
     const [playback = 'as-written'] = session.settings.playbacks;
     const kept = sentence?.step?.keep;
-    const subject = { chosen, file, before: answer.before, after: answer.after, playback };
-    return chartDataOf({
-      ...subject,
+    const subject: ChartSubject = {
+      chosen,
+      file,
+      before: answer.before,
+      after: answer.after,
+      playback,
       ...(sentence?.preview && { preview: sentence.preview }),
       ...(second && second !== playback && { second }),
       ...(kept && { kept }),
-    });
+    };
+    // Compiling a curve of an hour costs; moving the cursor must not.
+    if (this.data && this.subject && drawsTheSame(this.subject, subject)) return this.data;
+    this.subject = subject;
+    return chartDataOf(subject);
   }
 
   /** Put the keyboard on the trace. */
@@ -140,7 +153,7 @@ export class SlewChartPage extends LitElement {
       </p>`;
     if (!data || !file) return html`<p class="empty" role="status">Drawing ${chosen.track}.</p>`;
     return html`${this.playbacks()}
-      <div class="sheet">
+      <div class="sheet" @keydown=${this.keyed}>
         <slew-chart
           .data=${data}
           .fold=${this.fold ?? wholeClip(data)}
@@ -226,6 +239,14 @@ export class SlewChartPage extends LitElement {
       @left-alone=${() => this.leaveSentence()}
     ></slew-sentence>`;
   }
+
+  /** Ctrl+Enter on the trace opens the remedy of the chosen finding; the sentence has the keyboard then. */
+  private readonly keyed = (event: KeyboardEvent): void => {
+    if (event.key !== 'Enter' || !(event.ctrlKey || event.metaKey) || event.defaultPrevented) return;
+    event.preventDefault();
+    if (this.sentence) void this.applySentence();
+    else if (this.note !== undefined) this.openRemedy(this.note);
+  };
 
   private openRemedy(id: string): void {
     const { file, chosen, answer } = this;

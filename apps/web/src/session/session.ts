@@ -19,7 +19,7 @@ import { DeskClient, DeskError } from './desk-client.js';
 import { trackKey, type FileWork } from './file-work.js';
 import { keepWork, type SavedWork } from './recovery.js';
 
-/** The page's work: files, their surveys and job cards. Fires `change` after every change, `notice` with words for people. */
+/** The page's work: files, their surveys and job cards. Fires `change` once a picture at most, `notice` with words for people. */
 export class Session extends EventTarget {
   readonly desk = new DeskClient();
   files: readonly FileWork[] = [];
@@ -32,6 +32,8 @@ export class Session extends EventTarget {
   #next = 1;
   #stops = new Map<string, AbortController>();
   #cards = Promise.resolve();
+  /** A `change` is on its way. */
+  #told = false;
 
   constructor() {
     super();
@@ -167,7 +169,7 @@ export class Session extends EventTarget {
         onProgress: (progress) => this.#put(id, { progress }),
         onRow: (row) => {
           rows.set(trackKey(row.clip, row.track), row);
-          this.#put(id, { rows: new Map(rows) });
+          this.#put(id, { rows });
         },
       },
     );
@@ -253,12 +255,23 @@ export class Session extends EventTarget {
 
   #set(files: readonly FileWork[]): void {
     this.files = files;
-    this.dispatchEvent(new Event('change'));
+    if (this.#told) return;
+    this.#told = true;
+    inNextPicture(() => {
+      this.#told = false;
+      this.dispatchEvent(new Event('change'));
+    });
   }
 
   #say(words: string): void {
     this.dispatchEvent(new CustomEvent('notice', { detail: words }));
   }
+}
+
+/** Pages out of sight draw no pictures, and must go on all the same. */
+function inNextPicture(work: () => void): void {
+  if (document.hidden) setTimeout(work);
+  else requestAnimationFrame(work);
 }
 
 function newWork(id: string, file: Omit<ChosenFile, 'blob'> & { readonly blob?: Blob }): FileWork {
