@@ -1,0 +1,54 @@
+import { execFileSync } from 'node:child_process';
+import { mkdirSync, mkdtempSync, readdirSync, rmSync, symlinkSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { dirname, join, resolve } from 'node:path';
+import { packPackages } from './packed.js';
+
+/** A project of a stranger's that has the packages as npm would install them, and nothing of this repository's. */
+export interface FreshProject {
+  readonly folder: string;
+  /** Writes a file and gives its path. */
+  write(name: string, text: string): string;
+  /** Runs Node in the project and gives what it prints. */
+  node(...args: string[]): string;
+  remove(): void;
+}
+
+/** Packs, unpacks and links; their dependencies come from this repository's own installation, as there may be no network. */
+export function freshProject(): FreshProject {
+  const folder = mkdtempSync(join(tmpdir(), 'slewcurve-fresh-'));
+  const modules = join(folder, 'node_modules');
+  for (const [name, tarball] of packPackages()) {
+    const into = join(modules, '@slewcurve', name);
+    mkdirSync(into, { recursive: true });
+    execFileSync('tar', ['-xzf', tarball, '-C', into, '--strip-components=1']);
+  }
+  const scoped = (scope: string): string[] =>
+    readdirSync(join('node_modules', scope)).map((name) => `${scope}/${name}`);
+  for (const name of [
+    'gl-matrix',
+    'three',
+    'lit',
+    'lit-html',
+    'lit-element',
+    ...scoped('@lit'),
+    ...scoped('@noble'),
+    ...scoped('@types'),
+    'typescript',
+  ]) {
+    mkdirSync(dirname(join(modules, name)), { recursive: true });
+    symlinkSync(resolve('node_modules', name), join(modules, name));
+  }
+  writeFileSync(join(folder, 'package.json'), '{ "name": "fresh", "private": true }\n');
+  return {
+    folder,
+    write(name, text) {
+      const path = join(folder, name);
+      mkdirSync(dirname(path), { recursive: true });
+      writeFileSync(path, text);
+      return path;
+    },
+    node: (...args) => execFileSync(process.execPath, args, { cwd: folder, encoding: 'utf8' }),
+    remove: () => rmSync(folder, { recursive: true, force: true }),
+  };
+}
