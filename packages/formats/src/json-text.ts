@@ -36,7 +36,11 @@ export interface JsonEditor {
   splices(): JsonSplice[];
 }
 
-/** @param bytes UTF-8 of sound JSON: parse it first. */
+/**
+ * Finds places in JSON text and collects edits of it, so that every byte outside them stays.
+ *
+ * @param bytes UTF-8 of sound JSON: parse it first
+ */
 export function jsonEditor(bytes: Uint8Array): JsonEditor {
   const find = finder(bytes);
   const splices: JsonSplice[] = [];

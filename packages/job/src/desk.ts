@@ -21,23 +21,29 @@ import { sourceBytes } from './source-bytes.js';
 
 /** Files that are open at once, each with its survey and its job card: what the page's worker holds. No DOM, no Node. */
 export interface Desk {
+  /** Opens a file; `file` is its name on the desk. Throws what `openAnimation` throws. */
   open(
     file: string,
     source: Source,
     name: string,
     sibling?: (uri: string) => Promise<Source>,
   ): Promise<OpenedAnswer>;
+  /** Surveys a file; every track's row is told first. Throws `job.stopped`. */
   survey(
     file: string,
     settings: JobSettings,
     watch: Watch,
     onRow: (row: RosterRow) => void,
   ): Promise<FileReport>;
+  /** A track as the file has it and as the card leaves it. Throws `job.no-track`. */
   track(file: string, clip: string, track: string): TrackAnswer;
   /** Makes `steps` the file's whole card; an error leaves the card before in force. */
   card(file: string, steps: readonly Step[], watch: Watch): Promise<CardAnswer>;
+  /** The remedies of what the survey found, less those that would do harm. */
   propose(file: string, allow: readonly string[]): Asks<never>['propose']['answer'];
+  /** The bytes that the card makes of the file, and what takes them back. */
   bytes(file: string, watch: Watch): Promise<Asks<never>['bytes']['answer']>;
+  /** Puts a file away. */
   close(file: string): void;
 }
 

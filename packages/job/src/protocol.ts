@@ -74,6 +74,7 @@ export interface Asks<Blob> {
   ping: { ask: object; answer: null };
 }
 
+/** Names of what can be asked. */
 export type AskName = keyof Asks<unknown>;
 
 /** To the desk. `stop` ends the ask of that id with `job.stopped`. */

@@ -37,6 +37,7 @@ export interface Declared {
   readonly marks: readonly { readonly clip: string; readonly time: number; readonly name: string }[];
 }
 
+/** A stretch of a track that is meant as it is. Seconds of the file's own clock. */
 export interface DeclaredSpan {
   readonly clip: string;
   readonly track: string;

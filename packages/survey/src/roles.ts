@@ -3,6 +3,7 @@ import type { RotationTrack, SceneNode } from '@slewcurve/core';
 /** What a turning thing is, which says how closely people look at it. */
 export type Role = 'joint' | 'prop' | 'camera-screen' | 'camera-headset' | 'eye' | 'machine';
 
+/** Every role. */
 export const ROLES: readonly Role[] = Object.freeze([
   'joint',
   'prop',

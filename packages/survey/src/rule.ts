@@ -3,6 +3,7 @@ import type { Step } from '@slewcurve/mend';
 import type { Level, Way } from './finding.js';
 import type { Role } from './roles.js';
 
+/** Families of rules: the part of an id before the full stop. */
 export type Family = 'file' | 'turn' | 'jump' | 'pace' | 'shake' | 'seam' | 'limit' | 'horizon' | 'space';
 
 /** Named thresholds of one rule for one role, in the units that the rule's page states. */

@@ -50,6 +50,7 @@ export interface LogChartOptions extends Looping {
   readonly reference?: ReadonlyNumberStore;
 }
 
+/** The kind of spline, and what that kind can be told. */
 export type RotationSplineOptions =
   SquadOptions | ShapedSplineOptions | SmoothSplineOptions | BSplineOptions | LogChartOptions;
 

@@ -5,8 +5,10 @@ import type { RotationTrack } from '../track/rotation-track.js';
 
 /** What may explain a local break: one key beside its neighbours, a step that stays, a change of rate at one key. */
 export const BREAK_KINDS: readonly ['lone-key', 'shelf', 'corner'] = ['lone-key', 'shelf', 'corner'];
+/** What can explain a local break: a key that stands off, a step that stays, a change of speed. */
 export type BreakKind = (typeof BREAK_KINDS)[number];
 
+/** How `localRoughness` looks at a track. */
 export interface LocalRoughnessOptions {
   /** The track repeats, its last key being its first: windows wrap. */
   readonly loop?: boolean;

@@ -1,5 +1,6 @@
 import type { ReadonlyNumberStore } from '../number-store.js';
 
+/** Settings of the spectral arc length; their defaults are the published ones. */
 export interface SpectralArcLengthOptions {
   /** Hz; what lies above counts for nothing. Default 10. */
   readonly highest?: number;

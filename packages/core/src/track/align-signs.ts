@@ -2,11 +2,13 @@ import { valueOffset } from './key-orientation.js';
 import { replaceTrack } from './replace-track.js';
 import { VALUES_PER_KEY, type RotationTrack } from './rotation-track.js';
 
+/** How `alignSigns` goes about it. */
 export interface AlignSignsOptions {
   /** The track repeats: say whether its last key meets its first on the same side. */
   readonly loop?: boolean;
 }
 
+/** A track whose neighbouring keys lie on one side, and what that took. */
 export interface AlignedTrack {
   readonly track: RotationTrack;
   /** Keys that were negated, ascending. */

@@ -4,6 +4,7 @@ import { turnAboutOwn, turnAboutParent } from '../quaternion/turn-about.js';
 import { rotationTrack, type RotationTrack } from './rotation-track.js';
 import { LARGEST_STEP } from './subdivide-angles.js';
 
+/** A steady turn about one axis. */
 export interface Spin {
   /** Three numbers, any length but 0. */
   readonly axis: ReadonlyNumberStore;
