@@ -1,6 +1,6 @@
 import { LitElement, html, nothing, type PropertyDeclarations, type TemplateResult } from 'lit';
 import type { PlaybackId } from '@slewcurve/core';
-import { rankRows } from '@slewcurve/elements/plot';
+import { rankRows, type RosterRow } from '@slewcurve/elements/plot';
 import type { SlewRoster } from '@slewcurve/elements/roster';
 import { askForFiles, droppedFiles, pickedFiles, type ChosenFile } from '../files/chosen-file.js';
 import { saveCopy } from '../files/save-file.js';
@@ -27,6 +27,7 @@ export class SlewApp extends LitElement {
   static override properties: PropertyDeclarations = {
     page: { state: true },
     files: { state: true },
+    rows: { state: true },
     chosen: { state: true },
     notice: { state: true },
     kept: { state: true },
@@ -36,6 +37,7 @@ export class SlewApp extends LitElement {
 
   declare private page: PageName;
   declare private files: readonly FileWork[];
+  declare private rows: readonly RosterRow[];
   declare private chosen: ChosenTrack | undefined;
   declare private notice: string;
   declare private kept: readonly SavedWork[];
@@ -49,6 +51,7 @@ export class SlewApp extends LitElement {
     super();
     this.page = 'roster';
     this.files = [];
+    this.rows = [];
     this.notice = '';
     this.kept = [];
     this.over = false;
@@ -79,6 +82,9 @@ export class SlewApp extends LitElement {
 
   private follow(): void {
     this.files = this.session.files;
+    const { rows, more } = rosterRows(this.files);
+    if (rows.length !== this.rows.length || rows.some((row, i) => row !== this.rows[i])) this.rows = rows;
+    if (more) requestAnimationFrame(() => this.follow());
     const { chosen } = this;
     if (chosen && !this.files.some((file) => file.id === chosen.file))
       [this.chosen, this.byHand] = [undefined, false];
@@ -98,7 +104,7 @@ export class SlewApp extends LitElement {
   /** What the roster puts first, once a survey is through. */
   private worstTrack(): ChosenTrack | undefined {
     if (!this.files.some((file) => file.status === 'ready')) return undefined;
-    const [first] = rankRows(rosterRows(this.files), 'wrong');
+    const [first] = rankRows(this.rows, 'wrong');
     return first && trackOfRow(first.id);
   }
 
@@ -230,7 +236,7 @@ export class SlewApp extends LitElement {
     const { chosen } = this;
     return html`<section class="roster" aria-label="Roster: all tracks">
         <slew-roster
-          .rows=${rosterRows(this.files)}
+          .rows=${this.rows}
           .chosen=${chosen ? rowId(chosen) : undefined}
           .message=${this.files.some((file) => file.status === 'ready') ? 'There is no rotation track in these files.' : 'Reading.'}
           @track-chosen=${(event: CustomEvent<{ id: string }>) => this.choose(trackOfRow(event.detail.id))}

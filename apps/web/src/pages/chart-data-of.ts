@@ -1,5 +1,11 @@
 import { playAs, type PlaybackId, type RotationTrack } from '@slewcurve/core';
-import { curveMotion, rateNames, remedyButton, type ChartData, type MarginNote } from '@slewcurve/elements/plot';
+import {
+  curveMotion,
+  rateNames,
+  remedyButton,
+  type ChartData,
+  type MarginNote,
+} from '@slewcurve/elements/plot';
 import { sayStep } from '@slewcurve/mend';
 import { roleOf, type Finding, type Occurrence } from '@slewcurve/survey';
 import { trackKey, type FileWork } from '../session/file-work.js';

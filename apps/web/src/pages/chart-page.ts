@@ -7,7 +7,7 @@ import {
   type PropertyValues,
   type TemplateResult,
 } from 'lit';
-import { PLAYBACKS, playAs, type PlaybackId } from '@slewcurve/core';
+import { PLAYBACKS, playAs, type PlaybackId, type RotationTrack } from '@slewcurve/core';
 import type { SlewChart } from '@slewcurve/elements/chart';
 import type { SlewPorthole } from '@slewcurve/elements/porthole';
 import type { SlewSentence } from '@slewcurve/elements/sentence';
@@ -182,7 +182,7 @@ export class SlewChartPage extends LitElement {
 
   private playbacks(): TemplateResult {
     const [playback = 'as-written'] = this.session.settings.playbacks;
-    const can = Object.values(PLAYBACKS).filter(({ id }) => this.canPlay(id));
+    const can = this.answer ? playbacksFor(this.answer.after) : [];
     const option = (id: PlaybackId, chosen: boolean): TemplateResult =>
       html`<option value=${id} ?selected=${chosen}>${id.replaceAll('-', ' ')}</option>`;
     return html`<p class="playbacks on-screen">
@@ -191,7 +191,7 @@ export class SlewChartPage extends LitElement {
         <select
           @change=${(event: Event) => this.choosePlayback((event.target as HTMLSelectElement).value as PlaybackId)}
         >
-          ${can.map(({ id }) => option(id, id === playback))}
+          ${can.map((id) => option(id, id === playback))}
         </select></label
       >
       <label
@@ -200,22 +200,11 @@ export class SlewChartPage extends LitElement {
           @change=${(event: Event) => (this.second = ((event.target as HTMLSelectElement).value || undefined) as PlaybackId | undefined)}
         >
           <option value="">nothing</option>
-          ${can.filter(({ id }) => id !== playback).map(({ id }) => option(id, id === this.second))}
+          ${can.filter((id) => id !== playback).map((id) => option(id, id === this.second))}
         </select></label
       >
       <span class="says">${PLAYBACKS[playback].says}</span>
     </p>`;
-  }
-
-  private canPlay(id: PlaybackId): boolean {
-    const { answer } = this;
-    if (!answer) return false;
-    try {
-      playAs(answer.after, id);
-      return true;
-    } catch {
-      return false;
-    }
   }
 
   private choosePlayback(playback: PlaybackId): void {
@@ -279,6 +268,19 @@ export class SlewChartPage extends LitElement {
     this.sentence = undefined;
     void this.updateComplete.then(() => this.focus());
   }
+}
+
+/** Playbacks that need nothing that the track does not store. Asked of its kind alone, without its keys: compiling them costs. */
+function playbacksFor(track: RotationTrack): PlaybackId[] {
+  const kind = { ...track, times: new Float64Array(), values: new Float64Array(), breaks: [] };
+  return Object.values(PLAYBACKS).flatMap(({ id }) => {
+    try {
+      playAs(kind, id);
+      return [id];
+    } catch {
+      return [];
+    }
+  });
 }
 
 /** A clip shorter than a row of ten seconds takes the whole row. */

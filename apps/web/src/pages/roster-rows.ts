@@ -10,11 +10,22 @@ export interface ChosenTrack {
   readonly track: string;
 }
 
-/** Rows of the roster over all open files. */
-export function rosterRows(files: readonly FileWork[]): RosterRow[] {
-  return files.flatMap((file) =>
-    [...file.rows.entries()].map(([key, row]) => rosterRow(file, row, file.findings.get(key) ?? [])),
-  );
+/** Milliseconds of inking between two pictures. */
+const INKING_MS = 8;
+
+/** Rows of the roster over all open files, and whether there are more that are not inked yet: the next picture has them. */
+export function rosterRows(files: readonly FileWork[]): {
+  readonly rows: RosterRow[];
+  readonly more: boolean;
+} {
+  const until = performance.now() + INKING_MS;
+  const rows: RosterRow[] = [];
+  let more = false;
+  for (const file of files)
+    for (const [key, row] of file.rows)
+      if (made.has(row) || performance.now() < until) rows.push(rowOf(file, row, file.findings.get(key)));
+      else more = true;
+  return { rows, more };
 }
 
 export function rowId({ file, clip, track }: ChosenTrack): string {
@@ -26,18 +37,26 @@ export function trackOfRow(id: string): ChosenTrack {
   return { file, clip, track };
 }
 
-// Inking every row at every change would cost more than drawing it.
-const inks = new WeakMap<JobRow, Pyramid>();
-
-function inkOf(row: JobRow): Pyramid {
-  const known = inks.get(row);
-  if (known) return known;
-  const made = trackInk(row.columns, (row.end - row.start) / row.columns.length, row.noiseFloor);
-  inks.set(row, made);
-  return made;
+/** A row as it was made, and of which findings. */
+interface Made {
+  readonly of: readonly Finding[] | undefined;
+  readonly row: RosterRow;
 }
 
-function rosterRow(file: FileWork, row: JobRow, findings: readonly Finding[]): RosterRow {
+// A survey changes the roster many times a second, and one row at a time.
+const made = new WeakMap<JobRow, Made>();
+
+function rowOf(file: FileWork, row: JobRow, findings: readonly Finding[] | undefined): RosterRow {
+  const known = made.get(row);
+  if (known && known.of === findings) return known.row;
+  const ink =
+    known?.row.ink ?? trackInk(row.columns, (row.end - row.start) / row.columns.length, row.noiseFloor);
+  const fresh = rosterRow(file, row, ink, findings ?? []);
+  made.set(row, { of: findings, row: fresh });
+  return fresh;
+}
+
+function rosterRow(file: FileWork, row: JobRow, ink: Pyramid, findings: readonly Finding[]): RosterRow {
   const places = findings.flatMap((finding) => finding.occurrences);
   const count = (level: string): number => findings.filter((finding) => finding.level === level).length;
   return {
@@ -46,7 +65,7 @@ function rosterRow(file: FileWork, row: JobRow, findings: readonly Finding[]): R
     clip: row.clip,
     track: row.track,
     seconds: row.end - row.start,
-    ink: inkOf(row),
+    ink,
     counts: { error: count('error'), warning: count('warning'), note: count('note') },
     families: familiesOf(findings),
     marks: places.map(({ time, level }) => ({ time: time - row.start, level })),

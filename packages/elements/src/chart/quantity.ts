@@ -7,6 +7,12 @@ export function toDegrees(radians: number): number {
   return radians * DEGREES;
 }
 
+// Making one costs a hundred times what using it does.
+const WRITERS = Array.from(
+  { length: 8 },
+  (_, places) => new Intl.NumberFormat('en', { maximumFractionDigits: places }),
+);
+
 /** A number to `digits` significant digits, whole digits kept, thousands apart by commas; "none" where it is not finite. */
 export function sayNumber(value: number, digits = 3): string {
   if (!Number.isFinite(value)) return 'none';
@@ -14,7 +20,7 @@ export function sayNumber(value: number, digits = 3): string {
   if (size !== 0 && size < 5e-7) return value < 0 ? '−0.000001 or less' : 'below 0.000001';
   const whole = size === 0 ? 1 : Math.floor(Math.log10(size)) + 1;
   const places = Math.min(7, Math.max(0, digits - Math.max(whole, size < 1 ? whole : 1)));
-  const text = size.toLocaleString('en', { maximumFractionDigits: places });
+  const text = WRITERS[places].format(size);
   return value < 0 && Number(text.replaceAll(',', '')) !== 0 ? `−${text}` : text;
 }
 

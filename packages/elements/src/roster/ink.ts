@@ -95,17 +95,15 @@ export function inkRow(
   color: readonly [number, number, number],
 ): void {
   const columns = columnMaxima(ink, 0, ink.length, new Float32Array(sheet.width));
+  // A pixel at a time; canvases exist on little-endian machines alone.
+  const pixels = new Uint32Array(sheet.data.buffer, sheet.data.byteOffset, sheet.data.length / 4);
+  const opaque = (color[2] << 16) | (color[1] << 8) | color[0];
+  const end = Math.min(sheet.height, top + height);
   for (let x = 0; x < sheet.width; x++) {
     const density = columns[x];
     if (density === 0) continue;
     const tall = Math.max(1, Math.round(height * (0.35 + 0.65 * density)));
-    const alpha = Math.round(255 * (0.22 + 0.78 * density));
-    for (let y = Math.max(0, top + height - tall); y < Math.min(sheet.height, top + height); y++) {
-      const at = (y * sheet.width + x) * 4;
-      sheet.data[at] = color[0];
-      sheet.data[at + 1] = color[1];
-      sheet.data[at + 2] = color[2];
-      sheet.data[at + 3] = alpha;
-    }
+    const pixel = (Math.round(255 * (0.22 + 0.78 * density)) << 24) | opaque;
+    for (let y = Math.max(0, top + height - tall); y < end; y++) pixels[y * sheet.width + x] = pixel;
   }
 }
