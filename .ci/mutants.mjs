@@ -21,7 +21,11 @@ import ts from 'typescript';
 const SOURCE = 'packages/core/src';
 const FOLDERS = ['quaternion', 'quaternion/euler', 'curve', 'measure', 'sampler'];
 const RESULT = 'test/data/mutants.json';
-/** Tests that bear on a folder, tried first; then all of core's and the references'. */
+/**
+ * Tests that bear on a folder, tried first; then all of core's and the references'.
+ *
+ * @type {Readonly<Record<string, readonly string[]>>}
+ */
 const NEAR = {
   quaternion: ['test/core/quaternion', 'test/reference/conversions', 'test/reference/kernels'],
   curve: [
@@ -34,26 +38,38 @@ const NEAR = {
   measure: ['test/core/measure'],
   sampler: ['test/core/sampler'],
 };
+/** @type {Readonly<Record<string, string>>} */
+const OTHER = { '+': '-', '-': '+', '*': '/', '/': '*', '+=': '-=', '-=': '+=' };
 const ALL = ['test/core/', 'test/reference/'];
 /** Longer than any of these runs take; a mutant that never ends is noticed too. */
 const PATIENCE = 300_000;
 
-const option = (name, fallback) => {
+/**
+ * @param {string} name
+ * @param {string} fallback
+ */
+function option(name, fallback) {
   const at = process.argv.indexOf(name);
-  return at < 0 ? fallback : process.argv[at + 1];
-};
+  return at < 0 ? fallback : (process.argv[at + 1] ?? fallback);
+}
 
-/** Every flip of a sign or constant in a text: where it stands, what was there, what comes instead. */
-function flips(text) {
-  const file = ts.createSourceFile('formula.ts', text, ts.ScriptTarget.Latest, true);
+/**
+ * Every flip of a sign or constant in a text: where it stands, what was there, what comes instead.
+ *
+ * @param {string} source
+ */
+function flips(source) {
+  const file = ts.createSourceFile('formula.ts', source, ts.ScriptTarget.Latest, true);
+  /** @type {{ start: number, end: number, from: string, to: string }[]} */
   const found = [];
-  const flip = (node, to) => found.push({ start: node.getStart(), end: node.end, from: node.getText(), to });
+  /** @type {(node: ts.Node, to: string) => void} */
+  const flip = (node, to) =>
+    void found.push({ start: node.getStart(), end: node.end, from: node.getText(), to });
+  /** @type {(node: ts.Node) => void} */
   const visit = (node) => {
     if (ts.isTypeNode(node)) return;
     if (ts.isBinaryExpression(node)) {
-      const other = { '+': '-', '-': '+', '*': '/', '/': '*', '+=': '-=', '-=': '+=' }[
-        node.operatorToken.getText()
-      ];
+      const other = OTHER[node.operatorToken.getText()];
       const words = ts.isStringLiteralLike(node.left) || ts.isStringLiteralLike(node.right);
       if (other && !words) flip(node.operatorToken, other);
     }
@@ -69,10 +85,19 @@ function flips(text) {
   return found;
 }
 
-/** `count` of the list, evenly spread over it. */
+/**
+ * `count` of the list, evenly spread over it.
+ *
+ * @template T
+ * @param {readonly T[]} list
+ * @param {number} count
+ * @returns {readonly T[]}
+ */
 function spread(list, count) {
   if (list.length <= count) return list;
-  return Array.from({ length: count }, (_, n) => list[Math.floor(((n + 0.5) * list.length) / count)]);
+  return list.filter(
+    (_, i) => Math.floor(((i + 1) * count) / list.length) > Math.floor((i * count) / list.length),
+  );
 }
 
 /** A copy of the repository whose own packages are the copy's. */
@@ -94,7 +119,12 @@ function copyRepository() {
   return { root, copy };
 }
 
-/** Whether the tests pass in the copy. */
+/**
+ * Whether the tests pass in the copy.
+ *
+ * @param {string} copy
+ * @param {readonly string[]} tests
+ */
 function passes(copy, tests) {
   const vitest = path.resolve('node_modules/vitest/vitest.mjs');
   const run = ['run', '--project', 'node', '--bail', '1', '--reporter', 'dot', ...tests];
@@ -126,11 +156,11 @@ try {
   // Tests that fail without a mutant would count every mutant as noticed.
   const folders = new Set(work.map(({ name }) => name.split('/')[0]));
   for (const folder of folders)
-    if (!passes(copy, NEAR[folder]))
+    if (!passes(copy, NEAR[folder ?? ''] ?? ALL))
       throw new Error(`The tests of ${folder} fail in the copy, without any mutant.`);
   if (!passes(copy, ALL)) throw new Error('The tests fail in the copy, without any mutant.');
   for (const { name, text, all } of work) {
-    const near = NEAR[name.split('/')[0]];
+    const near = NEAR[name.split('/')[0] ?? ''] ?? ALL;
     const target = path.join(copy, SOURCE, name);
     const tried = spread(all, perFile);
     const unnoticed = [];

@@ -73,7 +73,7 @@ export function sentenceOf(opening: string, step: Step): string {
 }
 
 /** "key 3", "keys 3 and 5", "keys 3, 5 and 9". */
-export function sayKeys(keys: readonly number[]): string {
+function sayKeys(keys: readonly number[]): string {
   if (keys.length === 1) return `key ${keys[0]}`;
   return `keys ${keys.slice(0, -1).join(', ')} and ${keys.at(-1)}`;
 }

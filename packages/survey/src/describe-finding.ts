@@ -5,7 +5,7 @@ import type { Limits, Place, Remedy, Rule, TrackContext } from './rule.js';
 import { significant } from './significant.js';
 
 /** Places of a finding that are listed; the rest is counted. */
-export const MOST_OCCURRENCES = 100;
+const MOST_OCCURRENCES = 100;
 
 /** The track that places are described of. */
 export interface Subject {

@@ -16,7 +16,7 @@ export function saySeconds(value: number): string {
 }
 
 /** As many decimals as the size needs: none from 1,000 up, one from 1 up, two figures below; more where 180 would hide them. */
-export function sayNumber(value: number): string {
+function sayNumber(value: number): string {
   const size = Math.abs(value);
   if (size >= 1000) return value.toLocaleString('en-GB', { maximumFractionDigits: 0 });
   if (size >= 1 || size === 0) return value.toFixed(1);

@@ -19,7 +19,7 @@ export interface Rules {
 }
 
 const ROLES = ['joint', 'prop', 'camera-screen', 'machine'] as const;
-export type Role = (typeof ROLES)[number];
+type Role = (typeof ROLES)[number];
 
 export interface Track {
   readonly clip: string;

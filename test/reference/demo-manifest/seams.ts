@@ -11,7 +11,7 @@ export function seams(track: Track): Entry[] {
   return [...gap(track), ...kink(track), ...doubledEnd(track)];
 }
 
-export function loopGap(track: Track): number {
+function loopGap(track: Track): number {
   return turnBetween(track.keys[track.keys.length - 1], track.keys[0]);
 }
 

@@ -4,7 +4,7 @@ export type Vec = readonly [number, number, number];
 
 const DEGREES = 180 / Math.PI;
 
-export function times(a: Quat, b: Quat): Quat {
+function times(a: Quat, b: Quat): Quat {
   const [ax, ay, az, aw] = a;
   const [bx, by, bz, bw] = b;
   return [
@@ -15,7 +15,7 @@ export function times(a: Quat, b: Quat): Quat {
   ];
 }
 
-export function inverse([x, y, z, w]: Quat): Quat {
+function inverse([x, y, z, w]: Quat): Quat {
   return [-x, -y, -z, w];
 }
 

@@ -12,7 +12,7 @@ import { type AccessorLayout, AccessorFault } from './accessor-layout.js';
 import { type AccessorReaders, accessorReaders } from './accessor-readers.js';
 import type { Buffers } from './buffers.js';
 import type { Container } from './container.js';
-import { uniqueLabels } from './node-tree.js';
+import { uniqueLabels } from '../node-paths.js';
 import { type Problem, problem, problemOf } from './problem.js';
 import type { ReadTrack } from './track-change.js';
 import { type ColumnsOf, type Columns, readColumns } from './rotation-columns.js';

@@ -5,7 +5,7 @@ import type { Source } from '../source.js';
 import { decodeUtf8 } from '../utf8.js';
 
 /** Part of a file: `length` bytes at `at`. */
-export interface Span {
+interface Span {
   readonly at: number;
   readonly length: number;
 }
@@ -33,7 +33,7 @@ const HEADER = 12;
 const CHUNK_HEADER = 8;
 
 /** Bytes before the JSON text of a GLB: header and chunk header. */
-export const GLB_JSON_AT: number = HEADER + CHUNK_HEADER;
+const GLB_JSON_AT: number = HEADER + CHUNK_HEADER;
 
 export function isGlb(start: Uint8Array): boolean {
   return start.byteLength >= 4 && word(start, 0) === MAGIC;

@@ -1,4 +1,5 @@
 import { type RotationTrack, SlewcurveError, VALUES_PER_KEY } from '@slewcurve/core';
+import { pairTracks } from '../changed-tracks.js';
 import type { AccessorLayout } from './accessor-layout.js';
 import type { Columns } from './rotation-columns.js';
 import { type RotationChannel, samplerPointer } from './rotation-channel.js';
@@ -45,33 +46,7 @@ export function trackChanges(
   tracks: readonly ReadTrack[],
   changed: readonly RotationTrack[],
 ): TrackChange[] {
-  const known = new Map(tracks.map((read) => [keyOf(read.track), read]));
-  const seen = new Set<string>();
-  const changes: TrackChange[] = [];
-  for (const track of changed) {
-    const place = { file, clip: track.clip, track: track.id };
-    const read = known.get(keyOf(track));
-    if (!read)
-      throw new SlewcurveError(
-        'plan.unknown-track',
-        `${file} has no rotation track ${track.id} in ${track.clip}.`,
-        place,
-      );
-    if (seen.has(keyOf(track)))
-      throw new SlewcurveError(
-        'plan.doubled-track',
-        `${track.id} in ${track.clip} is given twice; give each track once.`,
-        place,
-      );
-    seen.add(keyOf(track));
-    const change = trackChange(file, read, track);
-    if (change) changes.push(change);
-  }
-  return changes;
-}
-
-function keyOf({ clip, id }: RotationTrack): string {
-  return JSON.stringify([clip, id]);
+  return pairTracks(file, tracks, changed).flatMap(({ read, track }) => trackChange(file, read, track) ?? []);
 }
 
 function trackChange(file: string, read: ReadTrack, track: RotationTrack): TrackChange | undefined {
