@@ -10,6 +10,8 @@ export interface ErrorPlace {
   readonly pointer?: string;
   /** Byte offset into the file. */
   readonly byte?: number;
+  /** Line of a text file, counted from 1. */
+  readonly line?: number;
 }
 
 /**

@@ -12,7 +12,7 @@ export interface FileProblem {
 
 /** An animation file read into tracks, and the way back. */
 export interface AnimationFile {
-  readonly format: 'glb' | 'gltf';
+  readonly format: 'glb' | 'gltf' | 'bvh' | 'delimited';
   readonly nodes: readonly SceneNode[];
   readonly clips: readonly Clip[];
   /** Faults of single nodes, channels, samplers and accessors, in the file's order. A channel named here may have no track. */

@@ -1,5 +1,6 @@
 import { SlewcurveError } from '@slewcurve/core';
 import type { AnimationFile, OpenOptions } from './animation-file.js';
+import { bvhFile } from './bvh/bvh-file.js';
 import { isGlb, readGlb, readGltf } from './gltf/container.js';
 import { gltfFile } from './gltf/gltf-file.js';
 import { readRange } from './read-range.js';
@@ -23,11 +24,18 @@ export async function openAnimation(source: Source, options: OpenOptions): Promi
   const start = await readRange(source, 0, Math.min(SNIFFED, source.size), name);
   if (isGlb(start)) return gltfFile(await readGlb(source, name), options);
   if (opensJson(start)) return gltfFile(await readGltf(source, name), options);
+  if (opensBvh(start, name)) return bvhFile(source, name);
   throw new SlewcurveError(
     'file.unknown-format',
     `${name}: neither GLB (which starts with "glTF") nor glTF JSON (which starts with "{"); it starts with ${hex(start.subarray(0, 8))}.`,
     { file: name, byte: 0 },
   );
+}
+
+/** Whether the first word is HIERARCHY, or the name says that it should be. */
+function opensBvh(start: Uint8Array, name: string): boolean {
+  const text = String.fromCharCode(...start);
+  return /^(?:\xef\xbb\xbf)?\s*HIERARCHY\b/i.test(text) || /\.bvh$/i.test(name);
 }
 
 /** Whether the first letter after a byte order mark and white space is `{`. */

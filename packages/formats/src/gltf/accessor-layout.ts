@@ -194,10 +194,7 @@ function viewOf(container: Container, json: Json, pointer: string): View {
 }
 
 /** Extensions that put a view's bytes where the core text of glTF does not look. */
-const COMPRESSIONS: readonly string[] = Object.freeze([
-  'EXT_meshopt_compression',
-  'KHR_meshopt_compression',
-]);
+const COMPRESSIONS: readonly string[] = Object.freeze(['EXT_meshopt_compression', 'KHR_meshopt_compression']);
 
 type SparseRuns = NonNullable<AccessorLayout['sparse']>;
 
