@@ -29,6 +29,8 @@ import { paper } from './theme/paper.js';
 
 type Span = readonly [number, number];
 
+const ROWS_A_PICTURE = 2;
+
 /**
  * Chart: one track. Its angular speed as played, on paper folded into rows, with its keys as posts, findings as carets and notes
  * in the margin.
@@ -53,6 +55,8 @@ export class SlewChart extends LitElement {
     width: { state: true },
     inSight: { state: true },
     unfolded: { state: true },
+    inWords: { state: true },
+    asTable: { state: true },
   };
   static override styles: CSSResult[] = [paper, controls, traceStyles, chartStyles];
 
@@ -73,6 +77,11 @@ export class SlewChart extends LitElement {
   declare private width: number;
   declare private inSight: ReadonlySet<number>;
   declare private unfolded: ReadonlySet<number>;
+  /** The words, and the table, are open. */
+  declare private inWords: boolean;
+  declare private asTable: boolean;
+  /** Rows that came into sight and are not drawn yet. */
+  private readonly waiting = new Set<number>();
   private anchor: number | undefined;
   private numbered: readonly NumberedNote[] = [];
   private speedScale: SpeedScale = linearScale(1);
@@ -94,6 +103,8 @@ export class SlewChart extends LitElement {
     this.width = 0;
     this.inSight = new Set();
     this.unfolded = new Set();
+    this.inWords = false;
+    this.asTable = false;
   }
 
   override connectedCallback(): void {
@@ -162,10 +173,18 @@ export class SlewChart extends LitElement {
   }
 
   private see(entries: readonly IntersectionObserverEntry[]): void {
-    const seen = new Set(this.inSight);
     for (const { target, isIntersecting } of entries)
-      if (isIntersecting && target instanceof HTMLElement) seen.add(Number(target.dataset['row']));
-    if (seen.size > this.inSight.size) this.inSight = seen;
+      if (isIntersecting && target instanceof HTMLElement) this.waiting.add(Number(target.dataset['row']));
+    this.drawWaiting();
+  }
+
+  /** A few rows a picture: a long take has many, and the page must go on meanwhile. */
+  private drawWaiting(): void {
+    const next = [...this.waiting].slice(0, ROWS_A_PICTURE);
+    if (next.length === 0) return;
+    for (const row of next) this.waiting.delete(row);
+    if (next.some((row) => !this.inSight.has(row))) this.inSight = new Set([...this.inSight, ...next]);
+    if (this.waiting.size > 0) requestAnimationFrame(() => this.drawWaiting());
   }
 
   private readonly showAll = (): void => {
@@ -207,8 +226,11 @@ export class SlewChart extends LitElement {
           (row) => this.row(data, rows, row, now, here),
         )}
       </ol>
-      ${keyWords()} ${guard([data], () => twinWords(data))}
-      ${guard([data, this.foldNow], () => rowTable(data, this.foldNow))}`;
+      ${keyWords()}
+      ${guard([data, this.inWords], () => twinWords(data, this.inWords, (open) => (this.inWords = open)))}
+      ${guard([data, this.foldNow, this.asTable], () =>
+        rowTable(data, this.foldNow, this.asTable, (open) => (this.asTable = open)),
+      )}`;
   }
 
   private readout(data: ChartData, now: number): TemplateResult {

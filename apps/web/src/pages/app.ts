@@ -22,6 +22,9 @@ const PAGES: readonly { readonly page: PageName; readonly says: string }[] = [
   { page: 'docket', says: 'Docket: report' },
 ];
 
+/** Milliseconds. */
+const DRAWN_EVERY = 150;
+
 /** The whole page: files, and the words at its head that lead to roster, chart and docket. */
 export class SlewApp extends LitElement {
   static override properties: PropertyDeclarations = {
@@ -44,6 +47,7 @@ export class SlewApp extends LitElement {
   /** Something is held over the page to be dropped. */
   declare private over: boolean;
   private readonly session = new Session();
+  private drawnAt = 0;
   /** Somebody chose the track; the page chooses no other. */
   private byHand = false;
 
@@ -82,9 +86,7 @@ export class SlewApp extends LitElement {
 
   private follow(): void {
     this.files = this.session.files;
-    const { rows, more } = rosterRows(this.files);
-    if (rows.length !== this.rows.length || rows.some((row, i) => row !== this.rows[i])) this.rows = rows;
-    if (more) requestAnimationFrame(() => this.follow());
+    this.drawRows();
     const { chosen } = this;
     if (chosen && !this.files.some((file) => file.id === chosen.file))
       [this.chosen, this.byHand] = [undefined, false];
@@ -92,6 +94,17 @@ export class SlewApp extends LitElement {
     const next = this.worstTrack() ?? this.chosen ?? this.firstTrack();
     // The same track is the same object, so that it is not fetched again.
     if (JSON.stringify(next) !== JSON.stringify(this.chosen)) this.chosen = next;
+  }
+
+  /** Rows that are told of, a few at a time: while a survey runs the roster is drawn anew some times a second. */
+  private drawRows(): void {
+    const { rows, more } = rosterRows(this.files);
+    if (more) requestAnimationFrame(() => this.drawRows());
+    const now = performance.now();
+    if (more && now - this.drawnAt < DRAWN_EVERY) return;
+    if (rows.length === this.rows.length && rows.every((row, i) => row === this.rows[i])) return;
+    this.rows = rows;
+    this.drawnAt = now;
   }
 
   /** Drawn before the survey is through. */

@@ -5,6 +5,7 @@ import {
   remedyButton,
   type ChartData,
   type MarginNote,
+  type Motion,
 } from '@slewcurve/elements/plot';
 import { sayStep } from '@slewcurve/mend';
 import { roleOf, type Finding, type Occurrence } from '@slewcurve/survey';
@@ -25,6 +26,18 @@ export interface ChartSubject {
   readonly playback: PlaybackId;
   readonly second?: PlaybackId;
   readonly kept?: readonly number[];
+}
+
+// By track, then by playback: compiling a curve and measuring its segments costs.
+const motions = new WeakMap<RotationTrack, Map<PlaybackId, Motion>>();
+
+/** The motion of a track as a playback plays it; made once. */
+export function motionOf(track: RotationTrack, playback: PlaybackId): Motion {
+  const known = motions.get(track) ?? new Map<PlaybackId, Motion>();
+  motions.set(track, known);
+  const motion = known.get(playback) ?? curveMotion(playAs(track, playback));
+  known.set(playback, motion);
+  return motion;
 }
 
 /** Whether two subjects make the same chart: a file changes at every step of a survey, its one track hardly ever. */
@@ -51,7 +64,7 @@ export function chartDataOf(subject: ChartSubject): ChartData {
     track: chosen.track,
     clip: chosen.clip,
     file: file.name,
-    motion: curveMotion(playAs(shown, playback)),
+    motion: motionOf(shown, playback),
     playback: playback.replaceAll('-', ' '),
     keys: shown.times,
     cuts: shown.breaks,
@@ -60,9 +73,9 @@ export function chartDataOf(subject: ChartSubject): ChartData {
     notes: notesOf(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? []),
     ...(clip?.frameRate !== undefined && { frameRate: clip.frameRate }),
     ...(kept && { kept }),
-    ...(earlier !== shown && { before: { motion: curveMotion(playAs(earlier, playback)), name: 'before' } }),
+    ...(earlier !== shown && { before: { motion: motionOf(earlier, playback), name: 'before' } }),
     ...(second && {
-      second: { motion: curveMotion(playAs(shown, second)), name: second.replaceAll('-', ' ') },
+      second: { motion: motionOf(shown, second), name: second.replaceAll('-', ' ') },
     }),
   };
 }

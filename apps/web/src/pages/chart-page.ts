@@ -18,10 +18,13 @@ import type { FileWork } from '../session/file-work.js';
 import { trackKey } from '../session/file-work.js';
 import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
 import type { Session } from '../session/session.js';
-import { chartDataOf, drawsTheSame, placeOfNote, type ChartSubject } from './chart-data-of.js';
+import { chartDataOf, drawsTheSame, motionOf, placeOfNote, type ChartSubject } from './chart-data-of.js';
 import { jobCardOf } from './job-card-of.js';
 import { pageStyles } from './page-styles.js';
 import type { ChosenTrack } from './roster-rows.js';
+
+/** Milliseconds of measuring between two pictures. */
+const PREPARING_MS = 10;
 
 /**
  * Chart: one track, with its 3-D view, the sentence that edits it, and the job card of its file.
@@ -112,7 +115,13 @@ export class SlewChartPage extends LitElement {
 
   private async fetch(chosen: ChosenTrack): Promise<void> {
     const answer = await this.session.track(chosen.file, chosen.clip, chosen.track).catch(() => undefined);
-    if (this.chosen === chosen && answer) this.answer = answer;
+    if (!answer) return;
+    const [playback = 'as-written'] = this.session.settings.playbacks;
+    for (const track of new Set([answer.before, answer.after])) {
+      const motion = motionOf(track, playback);
+      while (this.chosen === chosen && !motion.prepare(PREPARING_MS)) await nextPicture();
+    }
+    if (this.chosen === chosen) this.answer = answer;
   }
 
   private makeData(): ChartData | undefined {
@@ -268,6 +277,12 @@ export class SlewChartPage extends LitElement {
     this.sentence = undefined;
     void this.updateComplete.then(() => this.focus());
   }
+}
+
+function nextPicture(): Promise<number> {
+  return new Promise((resolve) =>
+    document.hidden ? setTimeout(resolve, 0, 0) : requestAnimationFrame(resolve),
+  );
 }
 
 /** Playbacks that need nothing that the track does not store. Asked of its kind alone, without its keys: compiling them costs. */

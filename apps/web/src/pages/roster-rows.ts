@@ -69,7 +69,8 @@ function rosterRow(file: FileWork, row: JobRow, ink: Pyramid, findings: readonly
     counts: { error: count('error'), warning: count('warning'), note: count('note') },
     families: familiesOf(findings),
     marks: places.map(({ time, level }) => ({ time: time - row.start, level })),
-    peak: row.peak,
+    // Under the floor nothing is claimed.
+    peak: row.peak > row.noiseFloor ? row.peak : 0,
     travel: row.travelled,
     ...(findings[0]?.effect && { effect: findings[0].effect }),
   };

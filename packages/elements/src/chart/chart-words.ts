@@ -1,5 +1,5 @@
 import { html, nothing, svg, type TemplateResult } from 'lit';
-import { trackName, type ChartData } from './chart-data.js';
+import { trackName, type ChartData, type OtherMotion } from './chart-data.js';
 import type { Reading } from './motion.js';
 import { sayAngle, sayCount, sayRate, saySpan, sayTime } from './quantity.js';
 import { tableLines, textTwin } from './text-twin.js';
@@ -41,55 +41,73 @@ export function readingWords(
   data: ChartData,
   span: readonly [number, number] | undefined,
 ): TemplateResult {
-  return html`<b>${sayTime(reading.time)}</b><b>${sayRate(reading.speed, 4)}</b>
-    ${data.rateNames.map((name, i) => html`<span>${name} <i>${sayRate(reading.own[i])}</i></span>`)}
+  return html`<b>${sayTime(reading.time)}</b><b>${sayRate(claimed(reading.speed, data), 4)}</b>
+    ${data.rateNames.map((name, i) => html`<span>${name} <i>${sayRate(claimed(reading.own[i], data))}</i></span>`)}
     <span>odometer <i>${sayAngle(reading.odometer, 4)}</i></span>
-    ${data.before ? other(data.before.name, data.before.motion.read(reading.time)) : nothing}
-    ${data.second ? other(data.second.name, data.second.motion.read(reading.time)) : nothing}
+    ${data.before ? other(data.before, reading.time, data) : nothing}
+    ${data.second ? other(data.second, reading.time, data) : nothing}
     ${span ? html`<span>span <i>${sayTime(span[0])} to ${sayTime(span[1])}</i></span>` : nothing}`;
 }
 
-function other(name: string, reading: Reading): TemplateResult {
-  return html`<span>${name} <i>${sayRate(reading.speed)}</i></span>`;
+function other({ name, motion }: OtherMotion, time: number, data: ChartData): TemplateResult {
+  return html`<span>${name} <i>${sayRate(claimed(motion.read(time).speed, data))}</i></span>`;
 }
 
-/** The chart in words. */
-export function twinWords(data: ChartData): TemplateResult {
-  return html`<details>
+/** Under the noise floor nothing is claimed: it reads 0. */
+function claimed(rate: number, { noiseFloor }: ChartData): number {
+  return Math.abs(rate) < noiseFloor ? 0 : rate;
+}
+
+/** The chart in words; written when somebody opens it. */
+export function twinWords(data: ChartData, open: boolean, opened: (open: boolean) => void): TemplateResult {
+  return html`<details ?open=${open} @toggle=${(event: Event) => opened(isOpen(event))}>
     <summary>The chart in words</summary>
-    ${textTwin(data).map((paragraph) => html`<p>${paragraph}</p>`)}
+    ${open ? textTwin(data).map((paragraph) => html`<p>${paragraph}</p>`) : nothing}
   </details>`;
 }
 
-/** The chart as a table, a line a row. */
-export function rowTable(data: ChartData, fold: number): TemplateResult {
-  return html`<details>
+function isOpen({ currentTarget }: Event): boolean {
+  return currentTarget instanceof HTMLDetailsElement && currentTarget.open;
+}
+
+/** The chart as a table, a line a row; written when somebody opens it. */
+export function rowTable(
+  data: ChartData,
+  fold: number,
+  open: boolean,
+  opened: (open: boolean) => void,
+): TemplateResult {
+  return html`<details ?open=${open} @toggle=${(event: Event) => opened(isOpen(event))}>
     <summary>The chart as a table</summary>
-    <div class="table" tabindex="0" role="region" aria-label="Rows of the chart">
-      <table>
-        <thead>
-          <tr>
-            ${['from', 'to', 'greatest speed', 'turned', 'odometer', 'keys'].map(
-              (head) => html`<th scope="col">${head}</th>`,
-            )}
-          </tr>
-        </thead>
-        <tbody>
-          ${tableLines(data, fold).map(
-            (line) =>
-              html`<tr>
-                <th scope="row">${sayTime(line.from)}</th>
-                <td>${sayTime(line.to)}</td>
-                <td>${sayRate(line.peak, 4)}</td>
-                <td>${sayAngle(line.turned, 4)}</td>
-                <td>${sayAngle(line.odometer, 4)}</td>
-                <td>${line.keys.toLocaleString('en')} keys</td>
-              </tr>`,
-          )}
-        </tbody>
-      </table>
-    </div>
+    ${open ? table(data, fold) : nothing}
   </details>`;
+}
+
+function table(data: ChartData, fold: number): TemplateResult {
+  return html`<div class="table" tabindex="0" role="region" aria-label="Rows of the chart">
+    <table>
+      <thead>
+        <tr>
+          ${['from', 'to', 'greatest speed', 'turned', 'odometer', 'keys'].map(
+            (head) => html`<th scope="col">${head}</th>`,
+          )}
+        </tr>
+      </thead>
+      <tbody>
+        ${tableLines(data, fold).map(
+          (line) =>
+            html`<tr>
+              <th scope="row">${sayTime(line.from)}</th>
+              <td>${sayTime(line.to)}</td>
+              <td>${sayRate(line.peak, 4)}</td>
+              <td>${sayAngle(line.turned, 4)}</td>
+              <td>${sayAngle(line.odometer, 4)}</td>
+              <td>${line.keys.toLocaleString('en')} keys</td>
+            </tr>`,
+        )}
+      </tbody>
+    </table>
+  </div>`;
 }
 
 const KEYS: readonly (readonly [string, string])[] = [

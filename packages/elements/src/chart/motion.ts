@@ -26,9 +26,17 @@ export interface Motion {
   columns(from: number, to: number, count: number): SpeedColumns;
   /** Exact numbers at a moment; held to the motion's ends. */
   read(time: number): Reading;
+  /** Measures ahead what drawing will ask for, for some milliseconds; true where nothing is left to measure. */
+  prepare(milliseconds: number): boolean;
   /** Own to parent, `[x, y, z, w]`. */
   orientation(time: number): readonly [number, number, number, number];
 }
+
+/** Segments measured between two looks at the clock. */
+const MEASURED_AT_ONCE = 256;
+
+/** A column over this many segments is drawn of whole ones. */
+const MANY_SEGMENTS = 4;
 
 /**
  * The motion of a curve. Greatest speeds are exact (`Curve.peak`); least speeds are read at both ends and the middle of a
@@ -44,11 +52,16 @@ export function curveMotion(curve: Curve): Motion {
     for (const t of [from, (from + to) / 2, to]) least = Math.min(least, speedAt(curve, t, scratch));
     return [greatest, least];
   };
+  const tops = new Float32Array(Math.max(0, knots.length - 1));
+  const bottoms = new Float32Array(tops.length);
+  let measured = 0;
+  const measure = (until: number): void => {
+    for (; measured < until; measured++)
+      [tops[measured], bottoms[measured]] = stretch(knots[measured], knots[measured + 1]);
+  };
   const segments = (): Pyramid => {
-    const tops = new Float32Array(Math.max(0, knots.length - 1));
-    const bottoms = new Float32Array(tops.length);
-    for (let i = 0; i < tops.length; i++) [tops[i], bottoms[i]] = stretch(knots[i], knots[i + 1]);
-    return (pyramid = buildPyramid(tops, bottoms));
+    measure(tops.length);
+    return (pyramid ??= buildPyramid(tops, bottoms));
   };
   return {
     start: curve.start,
@@ -62,6 +75,12 @@ export function curveMotion(curve: Curve): Motion {
         if (b < a || knots.length < 2) continue;
         const first = segmentAt(knots, a);
         const last = segmentAt(knots, b);
+        if (last - first >= MANY_SEGMENTS) {
+          // Neighbours share the segment that their border falls in: less than a quarter of a column, and no spike is lost.
+          const whole = queryPyramid(segments(), first, last);
+          [columns.greatest[i], columns.least[i]] = [whole.greatest, whole.least];
+          continue;
+        }
         let [greatest, least] = stretch(a, Math.min(b, knots[first + 1]));
         const take = (top: number, bottom: number): void => {
           greatest = Math.max(greatest, top);
@@ -69,7 +88,7 @@ export function curveMotion(curve: Curve): Motion {
         };
         if (last > first) take(...stretch(knots[last], b));
         if (last > first + 1) {
-          const inner = queryPyramid(pyramid ?? segments(), first + 1, last - 1);
+          const inner = queryPyramid(segments(), first + 1, last - 1);
           take(inner.greatest, inner.least);
         }
         columns.greatest[i] = greatest;
@@ -86,6 +105,12 @@ export function curveMotion(curve: Curve): Motion {
         toDegrees(scratch[2]),
       ];
       return { time: t, speed: Math.hypot(...own), own, odometer: toDegrees(curve.length(curve.start, t)) };
+    },
+    prepare(milliseconds) {
+      const end = performance.now() + milliseconds;
+      while (measured < tops.length && performance.now() < end)
+        measure(Math.min(tops.length, measured + MEASURED_AT_ONCE));
+      return measured === tops.length;
     },
     orientation: (time) => curve.orientation<[number, number, number, number]>([0, 0, 0, 1], time),
   };

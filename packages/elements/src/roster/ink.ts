@@ -98,12 +98,15 @@ export function inkRow(
   // A pixel at a time; canvases exist on little-endian machines alone.
   const pixels = new Uint32Array(sheet.data.buffer, sheet.data.byteOffset, sheet.data.length / 4);
   const opaque = (color[2] << 16) | (color[1] << 8) | color[0];
-  const end = Math.min(sheet.height, top + height);
+  const colors = new Uint32Array(sheet.width);
+  const tops = new Int32Array(sheet.width);
   for (let x = 0; x < sheet.width; x++) {
     const density = columns[x];
-    if (density === 0) continue;
-    const tall = Math.max(1, Math.round(height * (0.35 + 0.65 * density)));
-    const pixel = (Math.round(255 * (0.22 + 0.78 * density)) << 24) | opaque;
-    for (let y = Math.max(0, top + height - tall); y < end; y++) pixels[y * sheet.width + x] = pixel;
+    const tall = density === 0 ? 0 : Math.max(1, Math.round(height * (0.35 + 0.65 * density)));
+    tops[x] = top + height - tall;
+    colors[x] = (Math.round(255 * (0.22 + 0.78 * density)) << 24) | opaque;
   }
+  // Line by line, as the pixels lie in memory.
+  for (let y = Math.max(0, top); y < Math.min(sheet.height, top + height); y++)
+    for (let x = 0; x < sheet.width; x++) if (y >= tops[x]) pixels[y * sheet.width + x] = colors[x];
 }
