@@ -3,28 +3,31 @@ export interface TakePlan {
   readonly joints: number;
   readonly frames: number;
   readonly rate: number;
-  /** Joint, frame and size in degrees of a key that stands off its neighbours. */
-  readonly pop?: { readonly joint: number; readonly frame: number; readonly degrees: number };
+  /** Joint (or every one), frame and size in degrees of a key that stands off its neighbours. */
+  readonly pop?: { readonly joint: number | 'every'; readonly frame: number; readonly degrees: number };
+  /** All joints hang on the first one, not each on the one before. */
+  readonly flat?: boolean;
 }
 
 /** 80 joints, 3 minutes, 120 Hz: 1,728,000 keys, 27.7 MB. */
 export const THREE_MINUTES: TakePlan = { joints: 80, frames: 21_600, rate: 120 };
 
 /** The take as a GLB: one clip, shared key times, float32, joints in a chain of skins' kind. */
-export function generatedTake({ joints, frames, rate, pop }: TakePlan): Uint8Array {
+export function generatedTake({ joints, frames, rate, pop, flat = false }: TakePlan): Uint8Array {
   const times = Float32Array.from({ length: frames }, (_, k) => k / rate);
   const bin = new Uint8Array(times.byteLength + joints * frames * 16);
   bin.set(new Uint8Array(times.buffer));
   for (let joint = 0; joint < joints; joint++) {
     const values = new Float32Array(bin.buffer, times.byteLength + joint * frames * 16, frames * 4);
     for (let k = 0; k < frames; k++) {
-      const popped = pop?.joint === joint && pop.frame === k ? pop.degrees : 0;
+      const pops = pop?.joint === 'every' || pop?.joint === joint;
+      const popped = pops && pop.frame === k ? pop.degrees : 0;
       const half = ((swayAt(joint, k / rate) + popped) * Math.PI) / 360;
       values[4 * k + (joint % 3)] = Math.sin(half);
       values[4 * k + 3] = Math.cos(half);
     }
   }
-  return glbOf(takeJson({ joints, frames, rate }, times, bin.byteLength), bin);
+  return glbOf(takeJson({ joints, frames, rate, flat }, times, bin.byteLength), bin);
 }
 
 /** Degrees: two slow waves, no two joints alike, at most some 60 deg/s. */
@@ -35,16 +38,20 @@ function swayAt(joint: number, t: number): number {
   );
 }
 
-function takeJson({ joints, frames }: TakePlan, times: Float32Array, byteLength: number): object {
+function takeJson({ joints, frames, flat }: TakePlan, times: Float32Array, byteLength: number): object {
   const each = Array.from({ length: joints }, (_, joint) => joint);
   const timeBytes = times.byteLength;
+  const childrenOf = (joint: number): { children?: number[] } => {
+    if (flat) return joint === 0 ? { children: each.slice(1) } : {};
+    return joint + 1 < joints ? { children: [joint + 1] } : {};
+  };
   return {
     asset: { version: '2.0' },
     scene: 0,
     scenes: [{ nodes: [0] }],
     nodes: each.map((joint) => ({
       name: `joint-${joint}`,
-      ...(joint + 1 < joints && { children: [joint + 1] }),
+      ...childrenOf(joint),
     })),
     skins: [{ joints: each }],
     buffers: [{ byteLength }],

@@ -11,10 +11,16 @@ export interface FileActions {
 }
 
 /** The open files, each with how far it is and what can be done with it. */
-export function filesList(files: readonly FileWork[], actions: FileActions): TemplateResult {
-  return html`<ul class="files" aria-label="Open files">
-    ${files.map((file) => html`<li class=${file.status}>${oneFile(file, actions)}</li>`)}
-  </ul>`;
+export function filesList(
+  files: readonly FileWork[],
+  actions: FileActions,
+): TemplateResult | typeof nothing {
+  if (files.length === 0) return nothing;
+  return html`<section aria-label="Open files">
+    <ul class="files">
+      ${files.map((file) => html`<li class=${file.status}>${oneFile(file, actions)}</li>`)}
+    </ul>
+  </section>`;
 }
 
 function oneFile(file: FileWork, actions: FileActions): TemplateResult {
