@@ -30,8 +30,9 @@ export function generatedTake({ joints, frames, rate, pop, flat = false }: TakeP
   return glbOf(takeJson({ joints, frames, rate, flat }, times, bin.byteLength), bin);
 }
 
-/** Degrees: two slow waves, no two joints alike, at most some 60 deg/s. */
-function swayAt(joint: number, t: number): number {
+/** Degrees: two slow waves, alike in no two of 80 joints, at most some 60 deg/s. */
+function swayAt(number: number, t: number): number {
+  const joint = number % 80;
   return (
     12 * Math.sin(2 * Math.PI * (0.3 + 0.01 * joint) * t + joint) +
     2 * Math.sin(2 * Math.PI * 1.1 * t + 2 * joint)

@@ -6,6 +6,7 @@ export const appStyles: CSSResult[] = [
   ...pageStyles,
   css`
     :host {
+      --slew-roster-height: max(20rem, calc(100vh - 17rem));
       min-height: 100vh;
       padding: 0.75rem clamp(0.75rem, 2.5vw, 2.5rem) 2rem;
       box-sizing: border-box;
@@ -69,6 +70,49 @@ export const appStyles: CSSResult[] = [
     .files p {
       margin: 0;
     }
+    .files li + li {
+      border-top: 1px solid var(--_hairline);
+      margin-top: 0.25rem;
+      padding-top: 0.25rem;
+    }
+    .welcome {
+      display: grid;
+      justify-items: start;
+      gap: 1rem;
+      padding: clamp(1rem, 6vh, 4rem) 0 2rem;
+      max-width: 44rem;
+    }
+    .welcome svg {
+      width: 100%;
+      height: auto;
+      overflow: visible;
+    }
+    .welcome path,
+    .welcome text {
+      vector-effect: non-scaling-stroke;
+    }
+    .welcome h2 {
+      font-size: clamp(1.5rem, 4vw, 2.25rem);
+      line-height: 1.25;
+    }
+    .welcome ol {
+      margin: 0;
+      padding-left: 1.5rem;
+      line-height: 1.7;
+    }
+    .welcome .trace {
+      fill: none;
+      stroke: var(--_trace);
+      stroke-width: 2;
+    }
+    .welcome .base {
+      stroke: var(--_rule);
+    }
+    .welcome .caret {
+      fill: none;
+      stroke: var(--_caution);
+      stroke-width: 2;
+    }
     progress {
       width: 8rem;
       accent-color: var(--_trace);
@@ -79,7 +123,7 @@ export const appStyles: CSSResult[] = [
     main.roster > .roster,
     main.chart > .chart,
     main.docket > .docket,
-    main > .empty {
+    main > .welcome {
       display: block;
     }
     .over {

@@ -12,6 +12,7 @@ import type { SlewChartPage } from './chart-page.js';
 import { docketPage } from './docket-page.js';
 import { filesList } from './files-list.js';
 import { keysHelp } from './keys-help.js';
+import { welcome } from './welcome.js';
 import { rosterRows, rowId, trackOfRow, type ChosenTrack } from './roster-rows.js';
 
 type PageName = 'roster' | 'chart' | 'docket';
@@ -229,20 +230,14 @@ export class SlewApp extends LitElement {
     return html`<aside class="kept" aria-label="Work that was left">
       <p>An earlier visit left ${edits === 1 ? '1 edit' : `${edits} edits`} on ${names}.</p>
       <p class="doings">
-        <button class="first" @click=${resume}>Go on with it</button
+        <button class="main" @click=${resume}>Go on with it</button
         ><button @click=${() => (this.kept = [])}>Leave it</button>
       </p>
     </aside>`;
   }
 
   private welcome(): TemplateResult {
-    return html`<section class="empty">
-      <p>
-        Open a glTF file (.glb or .gltf), drop one here, or begin with the demo scene. Every rotation track is
-        drawn as angular speed over time, exactly as a given program will play it; what is wrong with it
-        stands in the margin with its remedy. Files stay on this machine.
-      </p>
-    </section>`;
+    return welcome();
   }
 
   private pages(): TemplateResult {

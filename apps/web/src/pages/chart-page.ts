@@ -44,6 +44,7 @@ export class SlewChartPage extends LitElement {
     note: { state: true },
     busy: { state: true },
     fold: { state: true },
+    narrow: { state: true },
   };
   static override styles = [
     pageStyles,
@@ -51,14 +52,33 @@ export class SlewChartPage extends LitElement {
       :host {
         container: chart-page / inline-size;
       }
+      .sheet {
+        display: flex;
+        flex-direction: column;
+      }
       .figure {
         max-width: 24rem;
       }
-      @container chart-page (min-width: 64rem) {
+      summary {
+        min-height: 44px;
+        line-height: 44px;
+        cursor: default;
+      }
+      @media (width < 40rem) {
+        .figure {
+          order: -1;
+        }
+      }
+      @media (width >= 40rem) {
+        summary {
+          display: none;
+        }
+      }
+      @container chart-page (min-width: 56rem) {
         .sheet {
           display: grid;
-          grid-template-columns: minmax(0, 1fr) 17rem;
-          gap: 2rem;
+          grid-template-columns: minmax(0, 1fr) 16rem;
+          gap: 1.5rem;
           align-items: start;
         }
         .figure {
@@ -82,6 +102,9 @@ export class SlewChartPage extends LitElement {
   declare private busy: boolean;
   /** Seconds a row, where somebody chose. */
   declare private fold: number | undefined;
+  /** The 3-D view is folded away, above the trace. */
+  declare private narrow: boolean;
+  private readonly width = matchMedia('(width < 40rem)');
   private data: ChartData | undefined;
   /** What `data` was made of. */
   private subject: ChartSubject | undefined;
@@ -92,6 +115,8 @@ export class SlewChartPage extends LitElement {
     super();
     this.time = 0;
     this.busy = false;
+    this.narrow = this.width.matches;
+    this.width.addEventListener('change', () => (this.narrow = this.width.matches));
   }
 
   protected override willUpdate(changed: PropertyValues<this>): void {
@@ -177,14 +202,16 @@ export class SlewChartPage extends LitElement {
           @play-asked=${() => this.renderRoot.querySelector<SlewPorthole>('slew-porthole')?.toggle()}
           >${this.sentenceAt()}</slew-chart
         >
-        <slew-porthole
-          class="figure"
-          .data=${data}
-          .time=${this.time}
-          .span=${this.span}
-          ?camera=${data.rateNames[0] === 'tilt'}
-          @time-changed=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
-        ></slew-porthole>
+        <details class="figure" ?open=${!this.narrow}>
+          <summary>3-D view</summary>
+          <slew-porthole
+            .data=${data}
+            .time=${this.time}
+            .span=${this.span}
+            ?camera=${data.rateNames[0] === 'tilt'}
+            @time-changed=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
+          ></slew-porthole>
+        </details>
       </div>
       ${jobCardOf(file, this.session)}`;
   }

@@ -1,4 +1,5 @@
 import { html, nothing, type TemplateResult } from 'lit';
+import { trackName } from '@slewcurve/elements/plot';
 import { sayStep } from '@slewcurve/mend';
 import { linesOf, stepsOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
@@ -46,13 +47,13 @@ function docketOf(file: FileWork, saveText: (name: string, text: string) => void
               ${findings.map(
                 (finding) =>
                   html`<tr>
-                    <td>${finding.level}</td>
-                    <td>${finding.track} in ${finding.clip}</td>
-                    <td>${finding.time.toFixed(3)} s</td>
+                    <td class="whole">${finding.level}</td>
+                    <td>${trackName(finding.track)} <i>${finding.clip}</i></td>
+                    <td class="whole">${finding.time.toFixed(3)} s</td>
                     <td>
                       ${finding.message}${finding.count > 1 ? ` (the worst of ${finding.count} places)` : ''}
                     </td>
-                    <td>${finding.rule}</td>
+                    <td class="whole">${finding.rule}</td>
                   </tr>`,
               )}
             </tbody>

@@ -11,10 +11,7 @@ export interface FileActions {
 }
 
 /** The open files, each with how far it is and what can be done with it. */
-export function filesList(
-  files: readonly FileWork[],
-  actions: FileActions,
-): TemplateResult | typeof nothing {
+export function filesList(files: readonly FileWork[], actions: FileActions): TemplateResult | typeof nothing {
   if (files.length === 0) return nothing;
   return html`<section aria-label="Open files">
     <ul class="files">
@@ -27,7 +24,7 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
   const { id, name, status, error } = file;
   if (status === 'broken')
     return html`<p role="alert">
-        <b>${name}</b> can’t be read. ${error?.message} <code>${error?.code}</code>
+        <b>${name}</b> can’t be read. ${withoutName(error?.message ?? '', name)} <code>${error?.code}</code>
       </p>
       <button @click=${() => actions.close(id)}>Put ${name} away</button>`;
   if (status === 'stopped')
@@ -38,14 +35,18 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
   return html`<p><b>${name}</b>: ${sayFile(file)}</p>
     ${(file.opened?.problems ?? []).map((problem) => html`<p class="problem">${problem.message} <code>${problem.code}</code></p>`)}
     <p class="doings">
-      <button @click=${() => actions.mendAll(id)}>Mend all that is proposed</button>
+      ${
+        [...file.findings.values()].flat().some((finding) => finding.remedy)
+          ? html`<button @click=${() => actions.mendAll(id)}>Mend all that is proposed</button>`
+          : nothing
+      }
       ${
         steps > 0
           ? html`${
                 file.handle
                   ? html`<button @click=${() => actions.save(id, 'in place')}>Save over ${name}</button>`
                   : nothing
-              }<button class="first" @click=${() => actions.save(id, 'download')}>Save a mended copy</button>`
+              }<button class="main" @click=${() => actions.save(id, 'download')}>Save a mended copy</button>`
           : nothing
       }
       <button @click=${() => actions.close(id)}>Put ${name} away</button>
@@ -76,6 +77,11 @@ function sayFile({ opened, report, findings, saved, history }: FileWork): string
   if (steps > 0)
     parts.push(`${counted(steps, 'edit')} on the job card, ${saved ? 'saved' : 'not saved yet'}.`);
   return parts.join(' ');
+}
+
+/** Messages for the terminal begin with the file's name, which stands before it here. */
+function withoutName(message: string, name: string): string {
+  return message.startsWith(`${name}: `) ? message.slice(name.length + 2) : message;
 }
 
 function counted(count: number, what: string): string {

@@ -74,5 +74,26 @@ export const pageStyles: CSSResult[] = [
       color: var(--_soft);
       border-top: 0;
     }
+    .whole {
+      white-space: nowrap;
+    }
+    @media screen and (max-width: 40rem) {
+      thead {
+        display: none;
+      }
+      tr {
+        display: block;
+        border-top: 1px solid var(--_hairline);
+        padding: 0.35rem 0;
+      }
+      td {
+        display: inline;
+        border: 0;
+        padding: 0 0.5rem 0 0;
+      }
+      tr > td:nth-child(4) {
+        display: block;
+      }
+    }
   `,
 ];

@@ -1,5 +1,5 @@
 import type { PlaybackId } from '@slewcurve/core';
-import type { CardAnswer, JobSettings, TrackAnswer } from '@slewcurve/job';
+import { kestrelPointRules, type CardAnswer, type JobSettings, type TrackAnswer } from '@slewcurve/job';
 import type { Step } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, type Finding } from '@slewcurve/survey';
 import type { ChosenFile } from '../files/chosen-file.js';
@@ -103,9 +103,13 @@ export class Session extends EventTarget {
   /** Put the remedy of every finding on the card. */
   async mendAll(id: string): Promise<void> {
     const { steps, declined } = await this.desk.ask('propose', { file: id, allow: [] });
-    for (const { step, why } of declined) this.#say(`Left out: ${step.verb} on ${step.track}: ${why}.`);
-    if (steps.length === 0) this.#say('There is nothing to mend by a proposed remedy.');
-    else await this.apply(id, steps);
+    if (steps.length > 0) await this.apply(id, steps);
+    this.#say(
+      [
+        steps.length === 0 ? 'There is nothing to mend by a proposed remedy.' : '',
+        ...new Set(declined.map(({ step, why }) => leftOut(step, why))),
+      ].join(' '),
+    );
   }
 
   /** Save over the file (`in place`) or as a copy. */
@@ -163,7 +167,7 @@ export class Session extends EventTarget {
     const { settings } = this;
     const report = await this.desk.ask(
       'survey',
-      { file: id, settings },
+      { file: id, settings: settingsOf(this.file(id), settings) },
       {
         signal: stop.signal,
         onProgress: (progress) => this.#put(id, { progress }),
@@ -266,6 +270,17 @@ export class Session extends EventTarget {
   #say(words: string): void {
     this.dispatchEvent(new CustomEvent('notice', { detail: words }));
   }
+}
+
+/** The survey's reasons are worded for the terminal; a choice is made on the chart here. */
+function leftOut({ verb, clip }: Step, why: string): string {
+  const reason = why.includes('--allow') ? `to ${verb} is a choice of yours; make it on its chart` : why;
+  return `Left out in ${clip}: ${reason}.`;
+}
+
+/** The demo scene has house rules of its own. */
+function settingsOf(file: FileWork | undefined, settings: JobSettings): JobSettings {
+  return file && !file.blob ? { ...settings, houseRules: kestrelPointRules } : settings;
 }
 
 /** Pages out of sight draw no pictures, and must go on all the same. */

@@ -21,7 +21,7 @@ export const rosterStyles: CSSResult = css`
   .heads,
   .option {
     display: grid;
-    grid-template-columns: minmax(9rem, 1.1fr) minmax(0, 4fr) 14.5rem 6.5rem 4rem;
+    grid-template-columns: minmax(10rem, 1.6fr) minmax(0, 4fr) 12.5rem 6.5rem 4rem;
     column-gap: 0.875rem;
     align-items: center;
   }
