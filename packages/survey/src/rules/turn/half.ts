@@ -106,7 +106,8 @@ function waysBetween(track: RotationTrack, key: number): readonly Way[] {
   const after = keyOrientation(new Float64Array(4), track, key);
   const turn = logMap(new Float64Array(3), relative(after, before, after));
   const angle = Math.hypot(...turn);
-  const [x = 0, y = 0, z = 0] = turn.map((component) => component / (angle || 1));
+  // Six decimals are far more than it takes to tell the two ways apart, and can be read.
+  const [x = 0, y = 0, z = 0] = turn.map((component) => Number((component / (angle || 1)).toFixed(6)) + 0);
   return [
     { axis: [x, y, z], angle: angle * DEGREES },
     { axis: [0 - x, 0 - y, 0 - z], angle: 360 - angle * DEGREES },
@@ -125,6 +126,12 @@ function sayTurn(degrees: number): string {
 
 function sayWay(way: Way | undefined): string {
   if (way === undefined) return 'no way';
-  const axis = way.axis.map((component) => component.toFixed(2).replace(/^-(0\.00)$/, '$1')).join(', ');
-  return `${sayTurn(way.angle)} about (${axis})`;
+  return `${sayTurn(way.angle)} about ${sayAxis(way.axis)}`;
+}
+
+/** An own axis by its name where it is one; its three components elsewhere. */
+function sayAxis(axis: readonly number[]): string {
+  const along = axis.findIndex((component) => Math.abs(component) > 0.9999);
+  if (along >= 0) return `${(axis[along] ?? 0) < 0 ? 'minus own' : 'own'} ${'xyz'.charAt(along)}`;
+  return `own (${axis.map((component) => component.toFixed(2).replace(/^-(0\.00)$/, '$1')).join(', ')})`;
 }
