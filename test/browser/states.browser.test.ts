@@ -73,7 +73,7 @@ const STATES: readonly State[] = [
     async reach(page) {
       await demo(page);
       await chartOf(page, 'beetle-ankle');
-      await page.getByRole('button', { name: /^Bridge key 22/ }).click();
+      await page.locator('slew-chart .notes button').first().click();
       await page.getByRole('button', { name: 'Apply it' }).waitFor();
     },
   },

@@ -10,7 +10,7 @@ export interface ChosenFile {
 interface LooseFile {
   /** Path within what was chosen. */
   readonly path: string;
-  readonly file: File;
+  readonly file: Blob;
   readonly handle?: FileSystemFileHandle;
 }
 
@@ -45,15 +45,18 @@ export async function droppedFiles(transfer: DataTransfer): Promise<ChosenFile[]
   const items = [...transfer.items].filter((item) => item.kind === 'file');
   const handles = items.map((item) => handleOf(item));
   const entries = items.map((item) => item.webkitGetAsEntry());
+  const plain = items.map((item) => item.getAsFile());
   const loose = await Promise.all(
     items.map(async (_, i) => {
       const handle = await handles[i];
       if (handle?.kind === 'file') {
         const fileHandle = handle as FileSystemFileHandle;
-        return [{ path: handle.name, file: await fileHandle.getFile(), handle: fileHandle }];
+        return [await writable(fileHandle)];
       }
       const entry = entries[i];
-      return entry ? filesUnder(entry, '') : [];
+      if (entry) return filesUnder(entry, '');
+      const file = plain[i];
+      return file ? [{ path: file.name, file }] : [];
     }),
   );
   return chosenFrom(loose.flat());
@@ -72,11 +75,13 @@ export async function askForFiles(): Promise<ChosenFile[] | undefined> {
     if (error instanceof DOMException && error.name === 'AbortError') return [];
     throw error;
   });
-  return chosenFrom(
-    await Promise.all(
-      handles.map(async (handle) => ({ path: handle.name, file: await handle.getFile(), handle })),
-    ),
-  );
+  return chosenFrom(await Promise.all(handles.map(writable)));
+}
+
+/** A file that may be written over is copied: once that is done, the browser gives its old bytes no more. */
+async function writable(handle: FileSystemFileHandle): Promise<LooseFile> {
+  const file = await handle.getFile();
+  return { path: handle.name, file: new Blob([await file.arrayBuffer()]), handle };
 }
 
 function handleOf(item: DataTransferItem): Promise<FileSystemHandle | null> {

@@ -10,8 +10,8 @@ export interface Saved {
 export interface SaveOrder {
   readonly name: string;
   readonly bytes: Uint8Array;
-  /** Size and hash of the file when it was opened. */
-  readonly original: { readonly size: number; readonly sha256: string };
+  /** Size and hash that the file must still have: as it was opened, or as it was last written from here. */
+  readonly onDisk: { readonly size: number; readonly sha256: string };
   readonly handle?: FileSystemFileHandle;
 }
 
@@ -22,11 +22,11 @@ export interface SaveOrder {
  * @throws DeskError `file.changed`, `file.not-allowed`
  */
 export async function saveInPlace(order: SaveOrder, desk: DeskClient): Promise<Saved> {
-  const { handle, original, name } = order;
+  const { handle, onDisk, name } = order;
   if (!handle)
     throw new DeskError('file.not-allowed', `The browser can't write over ${name}; save a copy instead.`);
   const now = await desk.ask('hash', { blob: await handle.getFile() });
-  if (now.size !== original.size || now.sha256 !== original.sha256)
+  if (now.size !== onDisk.size || now.sha256 !== onDisk.sha256)
     throw new DeskError(
       'file.changed',
       `${name} was changed on disk since it was opened here; nothing was written. Save a copy instead, or open it again.`,

@@ -265,6 +265,7 @@ export class SlewApp extends LitElement {
 
   private readonly fileActions = {
     stop: (id: string): void => this.session.stop(id),
+    goOn: (id: string): void => void this.session.goOn(id),
     close: (id: string): void => void this.session.close(id),
     mendAll: (id: string): void => void this.session.mendAll(id),
     save: (id: string, how: 'in place' | 'download'): void => void this.session.save(id, how),

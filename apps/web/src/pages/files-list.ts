@@ -5,6 +5,7 @@ import type { FileWork } from '../session/file-work.js';
 /** What the list of files may ask for. */
 export interface FileActions {
   stop(id: string): void;
+  goOn(id: string): void;
   close(id: string): void;
   mendAll(id: string): void;
   save(id: string, how: 'in place' | 'download'): void;
@@ -29,6 +30,7 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
       <button @click=${() => actions.close(id)}>Put ${name} away</button>`;
   if (status === 'stopped')
     return html`<p><b>${name}</b>: stopped. What was drawn so far stands below.</p>
+      <button @click=${() => actions.goOn(id)}>Go on with ${name}</button>
       <button @click=${() => actions.close(id)}>Put ${name} away</button>`;
   if (status !== 'ready') return inProgress(file, actions);
   const steps = linesOf(file.history).filter((line) => !line.skipped).length;

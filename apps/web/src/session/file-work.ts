@@ -23,6 +23,8 @@ export interface FileWork {
   readonly history: CardHistory;
   readonly proofs: readonly StepReport[];
   readonly raised: readonly Finding[];
+  /** Size and hash of what was last written over the file here. */
+  readonly onDisk?: { readonly size: number; readonly sha256: string };
   /** Whether the card was saved as it is. */
   readonly saved: boolean;
 }

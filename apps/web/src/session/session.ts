@@ -63,8 +63,16 @@ export class Session extends EventTarget {
     );
   }
 
+  /** Stop what is being done with a file, or leave it out if its turn has not come. */
   stop(id: string): void {
-    this.#stops.get(id)?.abort();
+    this.#stopOf(id).abort(new DeskError('job.stopped', 'Stopped.'));
+  }
+
+  /** Take up a file that was stopped. */
+  async goOn(id: string): Promise<void> {
+    this.#stops.delete(id);
+    this.#put(id, { status: 'opening' });
+    await this.#openAndSurvey(id);
   }
 
   async close(id: string): Promise<void> {
@@ -121,14 +129,15 @@ export class Session extends EventTarget {
       const order = {
         name: file.name,
         bytes: answer.bytes,
-        original: answer.original,
+        onDisk: file.onDisk ?? answer.original,
         ...(file.handle && { handle: file.handle }),
       };
       const saved =
         how === 'in place'
           ? await saveInPlace(order, this.desk)
           : saveCopy(mendedName(file.name), answer.bytes);
-      this.#put(id, { saved: true });
+      const written = { size: answer.bytes.length, sha256: answer.sha256 };
+      this.#put(id, { saved: true, ...(how === 'in place' && { onDisk: written }) });
       this.#say(
         how === 'in place'
           ? `${saved.name} is written.`
@@ -140,7 +149,7 @@ export class Session extends EventTarget {
   }
 
   async #take(works: readonly FileWork[]): Promise<void> {
-    this.#set([...this.files, ...works]);
+    for (const work of works) this.#set([...this.files, { ...work, name: freeName(work.name, this.files) }]);
     for (const work of works) await this.#openAndSurvey(work.id);
     await this.#keep();
   }
@@ -149,10 +158,13 @@ export class Session extends EventTarget {
     const file = this.file(id);
     if (!file) return;
     const { name, blob, siblings } = file;
+    const { signal } = this.#stopOf(id);
     try {
+      signal.throwIfAborted();
       const opened = blob
         ? await this.desk.ask('open', { file: id, name, blob, siblings })
         : await this.desk.ask('open-demo', { file: id });
+      signal.throwIfAborted();
       this.#put(id, { opened, status: 'surveying' });
       await this.#survey(id);
     } catch (error) {
@@ -160,16 +172,21 @@ export class Session extends EventTarget {
     }
   }
 
-  async #survey(id: string): Promise<void> {
-    const stop = new AbortController();
+  #stopOf(id: string): AbortController {
+    const stop = this.#stops.get(id) ?? new AbortController();
     this.#stops.set(id, stop);
+    return stop;
+  }
+
+  async #survey(id: string): Promise<void> {
+    const { signal } = this.#stopOf(id);
     const rows = new Map(this.file(id)?.rows);
     const { settings } = this;
     const report = await this.desk.ask(
       'survey',
       { file: id, settings: settingsOf(this.file(id), settings) },
       {
-        signal: stop.signal,
+        signal,
         onProgress: (progress) => this.#put(id, { progress }),
         onRow: (row) => {
           rows.set(trackKey(row.clip, row.track), row);
@@ -269,6 +286,15 @@ export class Session extends EventTarget {
 
   #say(words: string): void {
     this.dispatchEvent(new CustomEvent('notice', { detail: words }));
+  }
+}
+
+/** Two files of one name are told apart: `walk.glb`, `walk (2).glb`. */
+function freeName(name: string, files: readonly FileWork[]): string {
+  const taken = (other: string): boolean => files.some((file) => file.name === other);
+  for (let number = 2, free = name; ; number++) {
+    if (!taken(free)) return free;
+    free = name.replace(/(\.[^./]*)?$/, ` (${number})$1`);
   }
 }
 
