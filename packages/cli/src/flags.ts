@@ -21,6 +21,9 @@ type FlagName =
   | 'fail-at'
   | 'allow-warnings'
   | 'rules'
+  | 'columns'
+  | 'euler'
+  | 'unit'
   | 'card'
   | 'proposed'
   | 'allow'
@@ -52,6 +55,17 @@ const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
   },
   'allow-warnings': { value: 'N', help: 'let so many warnings pass (default 0)', commands: SURVEYING },
   rules: { value: 'FILE', help: 'house rules: limits, levels, exceptions (JSON)', commands: SURVEYING },
+  columns: {
+    value: 'NAME,…',
+    help: 'names of the columns of delimited text, such as timestamp,tx,ty,tz,qx,qy,qz,qw',
+    commands: SURVEYING,
+  },
+  euler: {
+    value: 'SEQUENCE',
+    help: 'sequence of the angles of delimited text: YXZ about the turned axes, yxz about fixed ones',
+    commands: SURVEYING,
+  },
+  unit: { value: 'deg|rad', help: 'unit of the angles of delimited text', commands: SURVEYING },
   card: { value: 'FILE', help: 'job card to run (JSON)', commands: MENDING },
   proposed: { help: 'run the remedy of every finding at or above --fail-at', commands: MENDING },
   allow: {

@@ -1,6 +1,7 @@
 import { readFile } from 'node:fs/promises';
 import { resolve } from 'node:path';
-import { PLAYBACKS, SlewcurveError, type PlaybackId } from '@slewcurve/core';
+import { EULER_SEQUENCES, PLAYBACKS, SlewcurveError, type PlaybackId } from '@slewcurve/core';
+import type { TableOptions } from '@slewcurve/formats';
 import { LEVELS, type JobSettings } from '@slewcurve/job';
 import { nearestWord } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, parseHouseRules, type HouseRules } from '@slewcurve/survey';
@@ -21,10 +22,28 @@ export async function settingsOf(args: Arguments, cwd: string): Promise<JobSetti
   };
 }
 
+/**
+ * What the flags say of a table of delimited text.
+ *
+ * @throws SlewcurveError `usage.bad-value`
+ */
+export function tableOptionsOf(args: Arguments): TableOptions {
+  const columns = args.value('columns');
+  const euler = args.value('euler');
+  const unit = oneOf(args, 'unit', ['deg', 'rad']);
+  const known: readonly string[] = EULER_SEQUENCES;
+  if (euler !== undefined && !known.includes(euler)) throw badValue('euler', euler, known);
+  return {
+    ...(columns !== undefined && { columns: columns.split(',').map((name) => name.trim()) }),
+    ...(euler !== undefined && { euler }),
+    ...(unit !== undefined && { unit }),
+  };
+}
+
 /** The value of a flag that takes one of a few words. */
 export function oneOf<T extends string>(
   args: Arguments,
-  flag: 'format' | 'fail-at',
+  flag: 'format' | 'fail-at' | 'unit',
   allowed: readonly T[],
 ): T | undefined {
   const value = args.value(flag);

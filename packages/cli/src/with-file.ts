@@ -1,6 +1,6 @@
 import { resolve } from 'node:path';
 import { openFile, type OpenedFile } from '@slewcurve/job';
-import type { OpenOptions } from '@slewcurve/formats';
+import type { OpenOptions, TableOptions } from '@slewcurve/formats';
 import { fileSource } from './files/file-source.js';
 import { siblingsOf, type Siblings } from './files/siblings.js';
 
@@ -17,18 +17,24 @@ export interface FileInHand {
  * Open a file, work on it, close it.
  *
  * @param name as given on the command line; reported with forward slashes
+ * @param table what the flags say of a table of delimited text
  * @throws what opening and `work` throw
  */
 export async function withFile<T>(
   name: string,
   cwd: string,
+  table: TableOptions,
   work: (file: FileInHand) => Promise<T>,
 ): Promise<T> {
   const path = resolve(cwd, name);
   const source = await fileSource(path);
   const siblings = siblingsOf(path);
   try {
-    const options: OpenOptions = { name: reportedName(name), sibling: (uri) => siblings.open(uri) };
+    const options: OpenOptions = {
+      name: reportedName(name),
+      sibling: (uri) => siblings.open(uri),
+      table,
+    };
     return await work({ opened: await openFile(source, options), options, siblings, path });
   } finally {
     await Promise.all([source.close(), siblings.close()]);

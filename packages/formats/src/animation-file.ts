@@ -1,4 +1,5 @@
 import type { Clip, ErrorPlace, RotationTrack, SceneNode } from '@slewcurve/core';
+import type { TableOptions } from './delimited/table-options.js';
 import type { PatchPlan } from './patch-plan.js';
 import type { Source } from './source.js';
 
@@ -31,4 +32,6 @@ export interface OpenOptions {
   readonly name: string;
   /** Gives the file that stands beside this one under a relative path (percent-decoded, checked, `/`-separated). */
   readonly sibling?: (path: string) => Promise<Source>;
+  /** What a table of delimited text does not say of itself. */
+  readonly table?: TableOptions;
 }

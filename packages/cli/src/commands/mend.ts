@@ -17,7 +17,7 @@ import { EXIT } from '../exit-code.js';
 import { writeOut } from '../files/write-out.js';
 import { writeWhole } from '../files/write-whole.js';
 import type { Arguments } from '../flags.js';
-import { oneOf, readJson, settingsOf } from '../settings.js';
+import { oneOf, readJson, settingsOf, tableOptionsOf } from '../settings.js';
 import { withFile, type FileInHand } from '../with-file.js';
 import { undo } from './undo.js';
 
@@ -30,7 +30,7 @@ export async function mend(args: Arguments, io: CommandIo): Promise<number> {
   exactlyOne(args, ['o', 'in-place', 'dry-run']);
   const settings = await settingsOf(args, io.cwd());
   const asJson = oneOf(args, 'format', ['text', 'json']) === 'json';
-  return withFile(name, io.cwd(), async (file) => {
+  return withFile(name, io.cwd(), tableOptionsOf(args), async (file) => {
     if (args.given('undo')) return undo(file, args, io);
     const mended = await mendInHand(file, args, settings, io);
     await writeResults(file, mended, args, io);

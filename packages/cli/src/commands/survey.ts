@@ -9,10 +9,11 @@ import {
   type JobSettings,
 } from '@slewcurve/job';
 import { SlewcurveError } from '@slewcurve/core';
+import type { TableOptions } from '@slewcurve/formats';
 import type { CommandIo } from '../command-io.js';
 import { EXIT } from '../exit-code.js';
 import type { Arguments } from '../flags.js';
-import { oneOf, settingsOf } from '../settings.js';
+import { oneOf, settingsOf, tableOptionsOf } from '../settings.js';
 import { reportedName, withFile } from '../with-file.js';
 
 /** `slewcurve survey FILE…`: the roster of tracks, then the findings. */
@@ -33,8 +34,9 @@ async function report(args: Arguments, io: CommandIo, asText: typeof textReport)
     );
   const write = oneOf(args, 'format', ['text', 'json']) === 'json' ? jsonReport : asText;
   const settings = await settingsOf(args, io.cwd());
+  const table = tableOptionsOf(args);
   const files: FileReport[] = [];
-  for (const name of args.words) files.push(await surveyed(name, settings, io));
+  for (const name of args.words) files.push(await surveyed(name, settings, table, io));
   const result = buildReport(files, settings);
   io.stdout.write(write(result));
   if (files.some((file) => file.status === 'unreadable')) return EXIT.unable;
@@ -42,9 +44,16 @@ async function report(args: Arguments, io: CommandIo, asText: typeof textReport)
 }
 
 /** One bad file does not stop the rest: it is reported as unreadable. */
-async function surveyed(name: string, settings: JobSettings, io: CommandIo): Promise<FileReport> {
+async function surveyed(
+  name: string,
+  settings: JobSettings,
+  table: TableOptions,
+  io: CommandIo,
+): Promise<FileReport> {
   try {
-    return await withFile(name, io.cwd(), ({ opened }) => surveyFile(opened.name, opened.file, settings));
+    return await withFile(name, io.cwd(), table, ({ opened }) =>
+      surveyFile(opened.name, opened.file, settings),
+    );
   } catch (error) {
     return unreadableFile(reportedName(name), error);
   }

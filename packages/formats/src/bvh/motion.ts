@@ -1,6 +1,7 @@
 import type { FileProblem } from '../animation-file.js';
 import { type DecimalText, readDecimal } from '../text/decimal-text.js';
 import { lineError, lineProblem, quoted } from '../text/text-fault.js';
+import { type NumberTable, numberTable } from '../text/number-table.js';
 import type { TextLine } from '../text/text-lines.js';
 import { findWords } from './row-words.js';
 
@@ -23,9 +24,6 @@ export interface MotionReader {
   done(): Motion;
 }
 
-/** Numbers in one piece of memory: it grows by what the file has, not by what its header claims. */
-const PIECE = 1 << 15;
-
 /**
  * Reads MOTION: `Frames:`, `Frame Time:`, then a row of numbers a frame.
  *
@@ -42,7 +40,7 @@ export function motionReader(
   wanted: readonly number[],
 ): MotionReader {
   const header = headerReader(file);
-  const store = numberStore(file, columns, wanted);
+  const store = rowStore(file, columns, wanted);
   let cut: { readonly line: TextLine; readonly words: number } | undefined;
   return {
     take(line) {
@@ -64,20 +62,20 @@ export function motionReader(
             `the last row has ${cut.words} numbers and the CHANNELS ask for ${columns}; it is left out.`,
           ),
         );
-      if (frames && frames.count !== store.rows())
+      if (frames && frames.count !== store.table.rows())
         problems.push(
           lineProblem(
             file,
             'bvh.frame-count',
             frames.line,
-            `Frames says ${frames.text} and ${store.rows()} rows follow; the rows are read.`,
+            `Frames says ${frames.text} and ${store.table.rows()} rows follow; the rows are read.`,
           ),
         );
       return {
         frameTime: frameTime.value,
         frameTimeDecimals: frameTime.decimals,
-        rows: store.rows(),
-        value: (row, column) => store.value(row, column),
+        rows: store.table.rows(),
+        value: (row, column) => store.table.value(row, column),
         decimals: store.decimals,
       };
     },
@@ -150,23 +148,20 @@ function frameTimeOf(file: string, line: TextLine, text: string): DecimalText {
   );
 }
 
-interface NumberStore {
+interface RowStore {
+  readonly table: NumberTable;
   /** Takes a row where it is whole. Gives how many words it has. */
   take(line: TextLine): number;
-  rows(): number;
-  value(row: number, column: number): number;
   readonly decimals: readonly number[];
 }
 
-function numberStore(file: string, columns: number, wanted: readonly number[]): NumberStore {
-  const pieceRows = Math.max(1, Math.floor(PIECE / Math.max(1, wanted.length)));
-  const pieces: Float64Array[] = [];
-  const places = wanted.map(() => 0);
+function rowStore(file: string, columns: number, wanted: readonly number[]): RowStore {
+  const table = numberTable(wanted.length);
+  const decimals = wanted.map(() => 0);
   const keep = new Int32Array(columns).fill(-1);
   wanted.forEach((column, i) => (keep[column] = i));
   const read: DecimalText = { value: 0, decimals: 0 };
   const found: number[] = [];
-  let rows = 0;
 
   function readWord(line: TextLine, column: number): void {
     const text = line.text.slice(found[2 * column], found[2 * column + 1]);
@@ -180,24 +175,20 @@ function numberStore(file: string, columns: number, wanted: readonly number[]): 
   }
 
   return {
+    table,
+    decimals,
     take(line) {
       const words = findWords(found, line.text);
       if (words !== columns) return words;
-      const piece = (pieces[Math.floor(rows / pieceRows)] ??= new Float64Array(pieceRows * wanted.length));
-      const at = (rows % pieceRows) * wanted.length;
+      const { piece, at } = table.add();
       for (let column = 0; column < columns; column++) {
         readWord(line, column);
         const kept = keep[column] ?? -1;
         if (kept < 0) continue;
         piece[at + kept] = read.value;
-        if (read.decimals > (places[kept] ?? 0)) places[kept] = read.decimals;
+        if (read.decimals > (decimals[kept] ?? 0)) decimals[kept] = read.decimals;
       }
-      rows++;
       return words;
     },
-    rows: () => rows,
-    value: (row, column) =>
-      pieces[Math.floor(row / pieceRows)]?.[(row % pieceRows) * wanted.length + column] ?? NaN,
-    decimals: places,
   };
 }
