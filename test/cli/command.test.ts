@@ -39,6 +39,21 @@ describe('slewcurve', () => {
       expect(help.stdout).toContain(flag);
   });
 
+  test('--loop says which clips repeat, beside those of the house rules', async () => {
+    const { run } = await withDemo();
+    const gaps = async (...flags: string[]): Promise<string[]> =>
+      reportOf(await run('check', 'demo.glb', '--format', 'json', ...flags)).files.flatMap((file) =>
+        file.findings.filter(({ rule }) => rule === 'seam.loop-gap').map(({ clip }) => clip),
+      );
+    expect(await gaps()).toEqual([]);
+    expect(await gaps('--loop', 'beetle-knee')).toEqual(['beetle-knee']);
+    expect(await gaps('--loop', 'beetle-*', '--loop', 'lens-doubled-end')).toEqual([
+      'lens-doubled-end',
+      'beetle-knee',
+      'beetle-ankle',
+    ]);
+  });
+
   test('names the nearest command, flag and value', async () => {
     const { run } = await commandFolder();
     expect((await run('chek', 'a.glb')).stderr).toContain('Did you mean check?');

@@ -21,6 +21,7 @@ type FlagName =
   | 'fail-at'
   | 'allow-warnings'
   | 'rules'
+  | 'loop'
   | 'columns'
   | 'euler'
   | 'unit'
@@ -66,6 +67,11 @@ const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
     commands: SURVEYING,
   },
   unit: { value: 'deg|rad', help: 'unit of the angles of delimited text', commands: SURVEYING },
+  loop: {
+    value: 'PATTERN',
+    help: 'clips that repeat: their seam is looked at (* stands for anything; again for more)',
+    commands: SURVEYING,
+  },
   card: { value: 'FILE', help: 'job card to run (JSON)', commands: MENDING },
   proposed: { help: 'run the remedy of every finding at or above --fail-at', commands: MENDING },
   allow: {

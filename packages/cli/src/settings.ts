@@ -14,11 +14,12 @@ import { messageOf } from './system-error.js';
  * @throws SlewcurveError `usage.bad-value`, and what `parseHouseRules` throws
  */
 export async function settingsOf(args: Arguments, cwd: string): Promise<JobSettings> {
+  const houseRules = await houseRulesOf(args.value('rules'), cwd);
   return {
     playbacks: playbacksOf(args),
     failAt: oneOf(args, 'fail-at', LEVELS) ?? 'warning',
     allowWarnings: wholeNumber(args.value('allow-warnings')),
-    houseRules: await houseRulesOf(args.value('rules'), cwd),
+    houseRules: { ...houseRules, loops: [...houseRules.loops, ...args.values('loop')] },
   };
 }
 

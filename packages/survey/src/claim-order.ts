@@ -10,7 +10,13 @@ export interface Found {
  * Rules that explain the same kind of trouble, in the order in which they may claim a spot; those on one line are equals, and the
  * higher confidence wins. A rule that is not named here shares its spots.
  */
-const ORDER: readonly (readonly string[])[] = [['jump.shelf', 'jump.lone-key']];
+const ORDER: readonly (readonly string[])[] = [
+  ['jump.cut-smear'],
+  ['jump.freeze'],
+  ['jump.turned-over'],
+  ['jump.first-key'],
+  ['jump.shelf', 'jump.lone-key'],
+];
 
 /** Keys on either side of a place's own that belong to its spot. */
 const SPOT = 3;

@@ -14,6 +14,7 @@ export {
 } from './house-rules.js';
 export { parseHouseRules } from './parse-house-rules.js';
 export type {
+  DeclaredHere,
   Family,
   Limits,
   Place,

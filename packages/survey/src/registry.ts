@@ -1,9 +1,16 @@
 import { notFinite } from './rules/file/not-finite.js';
 import { notNormalised } from './rules/file/not-normalised.js';
 import { timeOrder } from './rules/file/time-order.js';
+import { cutSmear } from './rules/jump/cut-smear.js';
+import { firstKey } from './rules/jump/first-key.js';
+import { freeze } from './rules/jump/freeze.js';
 import { loneKey } from './rules/jump/lone-key.js';
 import { shelf } from './rules/jump/shelf.js';
+import { turnedOver } from './rules/jump/turned-over.js';
 import { elbow } from './rules/pace/elbow.js';
+import { doubledEnd } from './rules/seam/doubled-end.js';
+import { loopGap } from './rules/seam/loop-gap.js';
+import { loopKink } from './rules/seam/loop-kink.js';
 import { half } from './rules/turn/half.js';
 import { signFlip } from './rules/turn/sign-flip.js';
 import type { Rule } from './rule.js';
@@ -15,7 +22,14 @@ export const RULES: readonly Rule[] = Object.freeze([
   timeOrder,
   signFlip,
   half,
+  firstKey,
+  freeze,
+  turnedOver,
+  cutSmear,
   loneKey,
   shelf,
   elbow,
+  loopGap,
+  loopKink,
+  doubledEnd,
 ]);

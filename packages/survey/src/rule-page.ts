@@ -42,6 +42,9 @@ const UNITS: Readonly<Record<Rule['unit'], string>> = {
   deg: 'degrees',
   'deg/s': 'degrees per second',
   s: 'seconds',
+  Hz: 'hertz',
+  '%': 'per cent',
+  times: 'times, a ratio',
   numbers: 'numbers',
   length: 'lengths of a unit quaternion',
 };

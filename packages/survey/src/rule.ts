@@ -20,6 +20,16 @@ export interface PlayedTrack {
   readonly holds: boolean;
 }
 
+/** What people say this track means to do: spans and times in seconds. */
+export interface DeclaredHere {
+  readonly holds: readonly (readonly [number, number])[];
+  readonly whips: readonly (readonly [number, number])[];
+  /** Turns a minute. */
+  readonly spins: readonly number[];
+  /** Of the clip's own marks too. */
+  readonly marks: readonly number[];
+}
+
 /** One track and what its rules need to know of it. */
 export interface TrackContext {
   /** The track as the file has it, faulty keys included; declared cuts are breaks. */
@@ -30,6 +40,7 @@ export interface TrackContext {
   /** Of `track`. */
   readonly regime: Regime;
   readonly loop: boolean;
+  readonly declared: DeclaredHere;
   /** The playbacks chosen, those left out that can't play this track. */
   readonly played: readonly PlayedTrack[];
   readonly clip: Clip;
@@ -87,12 +98,14 @@ export interface Rule {
   readonly family: Family;
   /** The level that most of its findings have. */
   readonly level: Level;
-  readonly unit: 'deg' | 'deg/s' | 's' | 'numbers' | 'length';
+  readonly unit: 'deg' | 'deg/s' | 's' | 'Hz' | '%' | 'times' | 'numbers' | 'length';
   /** What the trade calls it elsewhere; feeds `explain`. */
   readonly alsoCalled: readonly string[];
   /** What it finds, one sentence. */
   readonly summary: string;
   readonly limits: Readonly<Record<Role, RoleLimits>>;
+  /** Declarations that excuse a place at their time; left out: none. */
+  readonly excusedBy?: readonly ('whips' | 'marks')[];
   /** Which track of the context its key numbers are of. */
   readonly reads: 'stored' | 'track';
   /** What its remedy leaves alone. */

@@ -14,6 +14,7 @@ import { claimSpots, type Found } from './claim-order.js';
 import { describeFinding, type Subject } from './describe-finding.js';
 import type { Finding } from './finding.js';
 import { NO_HOUSE_RULES, levelAt, limitsAt, roleAt, type Address, type HouseRules } from './house-rules.js';
+import { declaredHere, isExcused } from './declared-here.js';
 import { keptKeys } from './kept-keys.js';
 import { RULES } from './registry.js';
 import { roleOf } from './roles.js';
@@ -60,7 +61,7 @@ export function surveyTrack(stored: RotationTrack, settings: TrackSurveySettings
     const limits = context.limits(rule.id);
     if (limits === undefined) continue;
     limitsOf.set(rule, limits);
-    const places = rule.find(context, limits);
+    const places = rule.find(context, limits).filter((place) => !isExcused(rule, place, context));
     if (places.length > 0) found.push({ rule, places });
   }
   const keys = context.track === context.stored ? undefined : keptKeys(context.stored, context.track);
@@ -94,6 +95,7 @@ function contextOf(
     role,
     regime: regime(playable, clip.frameRate),
     clip,
+    declared: declaredHere(track, clip, house),
     loop: clip.loop || house.loops.some((pattern) => matchesPattern(pattern, track.clip)),
     played: playable.times.length === 0 ? [] : playbacks.flatMap((id) => played(playable, id)),
     limits: (id) => {

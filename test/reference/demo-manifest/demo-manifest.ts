@@ -24,6 +24,7 @@ export const WORKED_OUT: readonly string[] = [
   'jump.first-key',
   'jump.cut-smear',
   'jump.freeze',
+  'jump.turned-over',
   'pace.elbow',
   'pace.hard-stop',
   'pace.axis-kick',

@@ -2,7 +2,7 @@
 import { entry, isDense, type Entry } from './entry.js';
 import type { Track } from './read-scene.js';
 import { claims, type Claim } from './roughness.js';
-import { isStill, median } from './turns.js';
+import { isStill, median, spread } from './turns.js';
 
 const LONE_KEY = { joint: 1, prop: 1, 'camera-screen': 0.25, machine: 0.25 };
 const SHELF = { joint: 2, prop: 2, 'camera-screen': 0.5, machine: 0.5 };
@@ -15,6 +15,7 @@ export function jumps(track: Track, isCoarse: boolean): Entry[] {
   const found = isDense(track) ? claims(track).filter(free) : [];
   return [
     ...frozen,
+    ...turnedOver(track),
     ...firstKey(track),
     ...cutSmear(track),
     ...jump(track, 'jump.lone-key', found, 'lone key', LONE_KEY[track.role], 16),
@@ -67,6 +68,26 @@ function freezes(track: Track): Entry[] {
     k = end;
   }
   return [];
+}
+
+/** Two steps near 90°, 120° or 180°, each calm on both sides, within 3 s, that lead back to the same side. */
+function turnedOver(track: Track): Entry[] {
+  if (!isDense(track)) return [];
+  const { speeds, steps, times } = track;
+  const wide = steps.flatMap((step, k) => {
+    const turn = Math.hypot(...step);
+    const calm = Math.max(speeds[k - 1] ?? 0, speeds[k + 1] ?? 0) < 0.25 * speeds[k];
+    return calm && [90, 120, 180].some((symmetry) => Math.abs(turn - symmetry) <= 10) ? [k] : [];
+  });
+  const at = wide.findIndex((k, i) => {
+    const off = wide[i + 1];
+    if (off === undefined || times[off + 1] - times[k] >= 3) return false;
+    const [on, back] = [steps[k], steps[off]];
+    return spread(on, [-back[0], -back[1], -back[2]]) < 15;
+  });
+  if (at < 0) return [];
+  const value = Math.hypot(...steps[wide[at]]);
+  return [entry(track, 'jump.turned-over', [wide[at] + 1, wide[at + 1] + 1], value, 'deg', 1)];
 }
 
 function firstKey(track: Track): Entry[] {

@@ -21,6 +21,7 @@ export const loneKey: Rule = Object.freeze({
   }),
   reads: 'track',
   untouched: 'all other keys of the track, byte for byte',
+  excusedBy: ['whips'] as const,
   find(context: TrackContext, { size = 0 }: Limits): readonly Place[] {
     const { times } = context.track;
     return jumpsOf(context)

@@ -29,6 +29,7 @@ export const shelf: Rule = Object.freeze({
   }),
   reads: 'track',
   untouched: 'the keys at both ends of the bridge and all outside it, byte for byte',
+  excusedBy: ['whips'] as const,
   find(context: TrackContext, { size = 0 }: Limits): readonly Place[] {
     const { times } = context.track;
     return jumpsOf(context)
