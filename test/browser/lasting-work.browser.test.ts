@@ -51,6 +51,7 @@ test('a survey is stopped where somebody says so, the files after it go on, and 
   await page.getByText('3 rotation tracks in').waitFor();
   await page.getByRole('button', { name: 'Go on with long.glb' }).click();
   await page.getByText('60 rotation tracks in').waitFor({ timeout: 60_000 });
+  expect(await page.locator('li.ready').count()).toBe(2);
 }, 90_000);
 
 test('work survives a reload: it is offered, and taken up with its card', async () => {
@@ -64,15 +65,17 @@ test('work survives a reload: it is offered, and taken up with its card', async 
   await page.getByText('An earlier visit left 1 edit on scene.glb').waitFor();
   await page.getByRole('button', { name: 'Go on with it' }).click();
   await page.getByText('1 edit on the job card').waitFor();
+  expect(await page.locator('li.ready b').allTextContents()).toEqual(['scene.glb']);
 });
 
 test('Ctrl+Z takes an edit back, Ctrl+Shift+Z does it again', async () => {
   const page = await openApp();
   await openWithAnEdit(page);
+  const edits = page.getByText('1 edit on the job card');
   await page.keyboard.press('Control+z');
-  await page.getByText('on the job card').waitFor({ state: 'detached' });
+  await expect.poll(() => edits.count()).toBe(0);
   await page.keyboard.press('Control+Shift+z');
-  await page.getByText('1 edit on the job card').waitFor();
+  await expect.poll(() => edits.count()).toBe(1);
 });
 
 test('a file is written in place, again after another edit, and is left alone once somebody else changed it', async () => {

@@ -12,9 +12,9 @@ const ARTEFACTS = 'test/browser/artefacts';
 
 interface State {
   readonly name: string;
-  reach(page: Page, place: Awaited<ReturnType<typeof commandFolder>>): Promise<void>;
+  readonly reach: (page: Page, place: Awaited<ReturnType<typeof commandFolder>>) => Promise<void>;
   /** True as long as the page is still in this state. */
-  holds?(page: Page): Promise<boolean>;
+  readonly holds?: (page: Page) => Promise<boolean>;
 }
 
 const demo = async (page: Page): Promise<void> => {

@@ -55,6 +55,7 @@ function watchLoading(): void {
       if (load.chosen !== undefined && !load.surveyed)
         load.longTasks.push({ at: startTime - load.chosen, took: duration });
   }).observe({ type: 'longtask' });
+  // oxlint-disable-next-line unicorn/consistent-function-scoping -- this function goes to the page alone
   const inside = (...path: string[]): Element | undefined => {
     let at: Element | null | undefined = document.querySelector('slew-app');
     for (const step of path) at = at?.shadowRoot?.querySelector(step);

@@ -20,7 +20,7 @@ interface Job {
   readonly name: string;
   readonly file: string;
   readonly absent: boolean;
-  bytes(): Uint8Array;
+  readonly bytes: () => Uint8Array;
   readonly mendings: readonly Mending[];
 }
 

@@ -398,10 +398,9 @@ export class SlewChart extends LitElement {
 
   private stepNote(step: 1 | -1): void {
     const at = this.numbered.findIndex(({ note }) => note.id === this.chosen);
-    const after = this.numbered.findIndex(({ note }) => note.time > this.time + 1e-9);
-    // Without a chosen note: the next or the previous one from the cursor, without going round.
-    const from =
-      step > 0 ? (after < 0 ? this.numbered.length : after) : (after < 0 ? this.numbered.length : after) - 1;
+    // Without a chosen note: the next or the previous one from the cursor, one at the cursor itself first, without going round.
+    const before = this.numbered.filter(({ note }) => note.time < this.time - 1e-9 * step).length;
+    const from = step > 0 ? before : before - 1;
     const next = this.numbered[at < 0 ? from : at + step];
     if (next) this.chooseNote(next.note);
   }

@@ -104,9 +104,11 @@ export class SlewRoster extends LitElement {
     this.renderRoot.querySelector<HTMLElement>('.scroll')?.focus(options);
   }
 
-  /** Puts the keyboard on "Find a track". */
+  /** Puts the keyboard on "Find a track"; what was looked for before gives way to what is typed. */
   focusFind(): void {
-    this.renderRoot.querySelector<HTMLElement>('input')?.focus();
+    const field = this.renderRoot.querySelector('input');
+    field?.focus();
+    field?.select();
   }
 
   /** Draws the ink again, after the page changed its own inks or scheme. */

@@ -1,3 +1,13 @@
+// Not in every browser.
+declare global {
+  interface Window {
+    showOpenFilePicker?: (options: { multiple: boolean }) => Promise<FileSystemFileHandle[]>;
+  }
+  interface DataTransferItem {
+    getAsFileSystemHandle?: () => Promise<FileSystemHandle | null>;
+  }
+}
+
 /** A file that somebody chose, with the files beside it that it may refer to. */
 export interface ChosenFile {
   readonly name: string;
@@ -49,10 +59,7 @@ export async function droppedFiles(transfer: DataTransfer): Promise<ChosenFile[]
   const loose = await Promise.all(
     items.map(async (_, i) => {
       const handle = await handles[i];
-      if (handle?.kind === 'file') {
-        const fileHandle = handle as FileSystemFileHandle;
-        return [await writable(fileHandle)];
-      }
+      if (handle instanceof FileSystemFileHandle) return [await writable(handle)];
       const entry = entries[i];
       if (entry) return filesUnder(entry, '');
       const file = plain[i];
@@ -69,9 +76,8 @@ export function pickedFiles(list: FileList | readonly File[]): ChosenFile[] {
 
 /** Ask for files by the browser's own dialogue, which lets them be written back; undefined where it has none. */
 export async function askForFiles(): Promise<ChosenFile[] | undefined> {
-  if (!('showOpenFilePicker' in window)) return undefined;
-  const pick = window.showOpenFilePicker as (options: object) => Promise<FileSystemFileHandle[]>;
-  const handles = await pick({ multiple: true }).catch((error: unknown) => {
+  if (!window.showOpenFilePicker) return undefined;
+  const handles = await window.showOpenFilePicker({ multiple: true }).catch((error: unknown) => {
     if (error instanceof DOMException && error.name === 'AbortError') return [];
     throw error;
   });
@@ -85,20 +91,17 @@ async function writable(handle: FileSystemFileHandle): Promise<LooseFile> {
 }
 
 function handleOf(item: DataTransferItem): Promise<FileSystemHandle | null> {
-  const get = (item as { getAsFileSystemHandle?: () => Promise<FileSystemHandle | null> })
-    .getAsFileSystemHandle;
-  return get ? get.call(item).catch(() => null) : Promise.resolve(null);
+  return item.getAsFileSystemHandle?.().catch(() => null) ?? Promise.resolve(null);
 }
 
 async function filesUnder(entry: FileSystemEntry, folder: string): Promise<LooseFile[]> {
   const path = `${folder}${entry.name}`;
-  if (entry.isFile) {
-    const file = await new Promise<File>((resolve, reject) =>
-      (entry as FileSystemFileEntry).file(resolve, reject),
-    );
+  if (entry instanceof FileSystemFileEntry) {
+    const file = await new Promise<File>((resolve, reject) => entry.file(resolve, reject));
     return [{ path, file }];
   }
-  const reader = (entry as FileSystemDirectoryEntry).createReader();
+  if (!(entry instanceof FileSystemDirectoryEntry)) return [];
+  const reader = entry.createReader();
   const found: LooseFile[] = [];
   for (;;) {
     // A reader gives a folder in lots, and an empty lot at its end.

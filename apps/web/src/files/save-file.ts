@@ -9,7 +9,7 @@ export interface Saved {
 /** What is saved where. */
 export interface SaveOrder {
   readonly name: string;
-  readonly bytes: Uint8Array;
+  readonly bytes: Uint8Array<ArrayBuffer>;
   /** Size and hash that the file must still have: as it was opened, or as it was last written from here. */
   readonly onDisk: { readonly size: number; readonly sha256: string };
   readonly handle?: FileSystemFileHandle;
@@ -33,7 +33,7 @@ export async function saveInPlace(order: SaveOrder, desk: DeskClient): Promise<S
     );
   const out = await handle.createWritable();
   try {
-    await out.write(order.bytes as Uint8Array<ArrayBuffer>);
+    await out.write(order.bytes);
     await out.close();
   } catch (error) {
     await out.abort().catch(() => {});
@@ -43,8 +43,12 @@ export async function saveInPlace(order: SaveOrder, desk: DeskClient): Promise<S
 }
 
 /** Hand the bytes to the browser as a download. */
-export function saveCopy(name: string, bytes: Uint8Array | string, type = 'application/octet-stream'): Saved {
-  const url = URL.createObjectURL(new Blob([bytes as Uint8Array<ArrayBuffer>], { type }));
+export function saveCopy(
+  name: string,
+  bytes: Uint8Array<ArrayBuffer> | string,
+  type = 'application/octet-stream',
+): Saved {
+  const url = URL.createObjectURL(new Blob([bytes], { type }));
   const link = document.createElement('a');
   link.href = url;
   link.download = name;

@@ -61,7 +61,7 @@ export class SlewApp extends LitElement {
     this.kept = [];
     this.over = false;
     this.session.addEventListener('change', () => this.follow());
-    this.session.addEventListener('notice', (event) => (this.notice = (event as CustomEvent<string>).detail));
+    this.session.addEventListener('notice', () => (this.notice = this.session.notice));
   }
 
   override connectedCallback(): void {
@@ -149,10 +149,14 @@ export class SlewApp extends LitElement {
     }
   };
 
-  private async pick(event: Event): Promise<void> {
+  private async pick(): Promise<void> {
     const chosen = await askForFiles();
     if (chosen) await this.take(chosen);
-    else (event.target as HTMLElement).parentElement?.querySelector<HTMLInputElement>('input.files')?.click();
+    else this.openField('input.files');
+  }
+
+  private openField(which: string): void {
+    this.renderRoot.querySelector<HTMLInputElement>(which)?.click();
   }
 
   private choose(chosen: ChosenTrack): void {
@@ -195,15 +199,12 @@ export class SlewApp extends LitElement {
   }
 
   private openers(): TemplateResult {
-    const picked = (event: Event): void =>
-      void this.take(pickedFiles((event.target as HTMLInputElement).files ?? []));
+    const picked = ({ target }: Event): void => {
+      if (target instanceof HTMLInputElement) void this.take(pickedFiles(target.files ?? []));
+    };
     return html`<div class="openers on-screen">
-      <button @click=${(event: Event) => void this.pick(event)}>Open files</button>
-      <button
-        @click=${(event: Event) => (event.target as HTMLElement).parentElement?.querySelector<HTMLInputElement>('input.folder')?.click()}
-      >
-        Open a folder
-      </button>
+      <button @click=${() => void this.pick()}>Open files</button>
+      <button @click=${() => this.openField('input.folder')}>Open a folder</button>
       <button @click=${() => void this.session.openDemo()}>Open the demo scene</button>
       <input class="files" type="file" multiple hidden aria-hidden="true" tabindex="-1" @change=${picked} />
       <input

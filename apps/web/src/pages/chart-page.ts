@@ -12,6 +12,7 @@ import type { SlewChart } from '@slewcurve/elements/chart';
 import type { SlewPorthole } from '@slewcurve/elements/porthole';
 import type { SlewSentence } from '@slewcurve/elements/sentence';
 import { rowAt, type ChartData } from '@slewcurve/elements/plot';
+import { valueOf } from '@slewcurve/elements/theme/value-of';
 import type { TrackAnswer } from '@slewcurve/job';
 import { sayStep } from '@slewcurve/mend';
 import type { FileWork } from '../session/file-work.js';
@@ -121,8 +122,8 @@ export class SlewChartPage extends LitElement {
 
   protected override willUpdate(changed: PropertyValues<this>): void {
     const { chosen, file } = this;
-    const other = changed.get('chosen') as ChosenTrack | undefined;
-    if (changed.has('chosen') && JSON.stringify(other) !== JSON.stringify(chosen)) this.forget();
+    if (changed.has('chosen') && JSON.stringify(changed.get('chosen')) !== JSON.stringify(chosen))
+      this.forget();
     if (chosen && file?.opened && (changed.has('chosen') || this.fetchedAt !== file.proofs)) {
       this.fetchedAt = file.proofs;
       void this.fetch(chosen);
@@ -131,6 +132,7 @@ export class SlewChartPage extends LitElement {
   }
 
   private forget(): void {
+    this.time = 0;
     this.answer = undefined;
     this.sentence = undefined;
     this.span = undefined;
@@ -219,22 +221,16 @@ export class SlewChartPage extends LitElement {
   private playbacks(): TemplateResult {
     const [playback = 'as-written'] = this.session.settings.playbacks;
     const can = this.answer ? playbacksFor(this.answer.after) : [];
-    const option = (id: PlaybackId, chosen: boolean): TemplateResult =>
-      html`<option value=${id} ?selected=${chosen}>${id.replaceAll('-', ' ')}</option>`;
     return html`<p class="playbacks on-screen">
       <label
         >as played:
-        <select
-          @change=${(event: Event) => this.choosePlayback((event.target as HTMLSelectElement).value as PlaybackId)}
-        >
+        <select @change=${(event: Event) => this.choosePlayback(can.find((id) => id === valueOf(event)))}>
           ${can.map((id) => option(id, id === playback))}
         </select></label
       >
       <label
         >compare with:
-        <select
-          @change=${(event: Event) => (this.second = ((event.target as HTMLSelectElement).value || undefined) as PlaybackId | undefined)}
-        >
+        <select @change=${(event: Event) => (this.second = can.find((id) => id === valueOf(event)))}>
           <option value="">nothing</option>
           ${can.filter((id) => id !== playback).map((id) => option(id, id === this.second))}
         </select></label
@@ -243,7 +239,8 @@ export class SlewChartPage extends LitElement {
     </p>`;
   }
 
-  private choosePlayback(playback: PlaybackId): void {
+  private choosePlayback(playback: PlaybackId | undefined): void {
+    if (!playback) return;
     this.dispatchEvent(
       new CustomEvent('playback-chosen', { detail: { playback }, bubbles: true, composed: true }),
     );
@@ -310,6 +307,10 @@ function nextPicture(): Promise<number> {
   return new Promise((resolve) =>
     document.hidden ? setTimeout(resolve, 0, 0) : requestAnimationFrame(resolve),
   );
+}
+
+function option(id: PlaybackId, chosen: boolean): TemplateResult {
+  return html`<option value=${id} ?selected=${chosen}>${id.replaceAll('-', ' ')}</option>`;
 }
 
 /** Playbacks that need nothing that the track does not store. Asked of its kind alone, without its keys: compiling them costs. */

@@ -1,6 +1,7 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import { trackName } from '@slewcurve/elements/plot';
 import { sayStep } from '@slewcurve/mend';
+import type { Finding } from '@slewcurve/survey';
 import { linesOf, stepsOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
 
@@ -30,35 +31,7 @@ function docketOf(file: FileWork, saveText: (name: string, text: string) => void
       of the file’s own clock.
     </p>
     <h3>Open findings</h3>
-    ${
-      findings.length === 0
-        ? html`<p>None.</p>`
-        : html`<table>
-            <thead>
-              <tr>
-                <th scope="col">level</th>
-                <th scope="col">track</th>
-                <th scope="col">at</th>
-                <th scope="col">what</th>
-                <th scope="col">rule</th>
-              </tr>
-            </thead>
-            <tbody>
-              ${findings.map(
-                (finding) =>
-                  html`<tr>
-                    <td class="whole">${finding.level}</td>
-                    <td>${trackName(finding.track)} <i>${finding.clip}</i></td>
-                    <td class="whole">${finding.time.toFixed(3)} s</td>
-                    <td>
-                      ${finding.message}${finding.count > 1 ? ` (the worst of ${finding.count} places)` : ''}
-                    </td>
-                    <td class="whole">${finding.rule}</td>
-                  </tr>`,
-              )}
-            </tbody>
-          </table>`
-    }
+    ${findings.length === 0 ? html`<p>None.</p>` : findingsTable(findings)}
     <h3>Job card</h3>
     ${
       steps.length === 0
@@ -100,6 +73,32 @@ function docketOf(file: FileWork, saveText: (name: string, text: string) => void
       a standard. No figure here calls a motion safe.
     </p>
   </article>`;
+}
+
+function findingsTable(findings: readonly Finding[]): TemplateResult {
+  return html`<table>
+    <thead>
+      <tr>
+        <th scope="col">level</th>
+        <th scope="col">track</th>
+        <th scope="col">at</th>
+        <th scope="col">what</th>
+        <th scope="col">rule</th>
+      </tr>
+    </thead>
+    <tbody>
+      ${findings.map(
+        (finding) =>
+          html`<tr>
+            <td class="whole">${finding.level}</td>
+            <td>${trackName(finding.track)} <i>${finding.clip}</i></td>
+            <td class="whole">${finding.time.toFixed(3)} s</td>
+            <td>${finding.message}${finding.count > 1 ? ` (the worst of ${finding.count} places)` : ''}</td>
+            <td class="whole">${finding.rule}</td>
+          </tr>`,
+      )}
+    </tbody>
+  </table>`;
 }
 
 function proofWords(file: FileWork, step: unknown): string {

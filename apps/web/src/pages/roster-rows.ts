@@ -33,6 +33,7 @@ export function rowId({ file, clip, track }: ChosenTrack): string {
 }
 
 export function trackOfRow(id: string): ChosenTrack {
+  // oxlint-disable-next-line typescript/no-unsafe-type-assertion -- made by `rowId`
   const [file, clip, track] = JSON.parse(id) as [string, string, string];
   return { file, clip, track };
 }

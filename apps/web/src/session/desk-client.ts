@@ -24,10 +24,12 @@ export class DeskError extends Error {
   }
 }
 
+type Answer = Asks<Blob>[AskName]['answer'];
+
 interface Waiting {
   readonly options: AskOptions;
-  resolve(answer: unknown): void;
-  reject(error: Error): void;
+  readonly resolve: (answer: Answer) => void;
+  readonly reject: (error: Error) => void;
 }
 
 const PING_MS = 1000;
@@ -55,9 +57,11 @@ export class DeskClient extends EventTarget {
   ): Promise<Asks<Blob>[Name]['answer']> {
     const id = this.#next++;
     options.signal?.addEventListener('abort', () => this.#send({ id, name: 'stop' }));
-    const answer = new Promise<Asks<Blob>[Name]['answer']>((resolve, reject) => {
-      this.#waiting.set(id, { options, resolve: resolve as (answer: unknown) => void, reject });
+    const answer = new Promise<Answer>((resolve, reject) => {
+      this.#waiting.set(id, { options, resolve, reject });
     });
+    // The desk answers an ask of a name by the answer of that name; the types of its messages say so one by one.
+    // oxlint-disable-next-line typescript/no-unsafe-type-assertion
     this.#send({ id, name, ask } as ToDesk<Blob>);
     return answer;
   }

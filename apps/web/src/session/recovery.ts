@@ -25,6 +25,7 @@ export async function keepWork(files: readonly SavedWork[]): Promise<void> {
 /** The work that an earlier visit left, if any. */
 export async function keptWork(): Promise<readonly SavedWork[]> {
   const kept: unknown = await inStore('readonly', (store) => store.get(KEY)).catch(() => undefined);
+  // oxlint-disable-next-line typescript/no-unsafe-type-assertion -- nobody but `keepWork` writes there
   return Array.isArray(kept) ? (kept as SavedWork[]) : [];
 }
 

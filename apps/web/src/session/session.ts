@@ -19,10 +19,12 @@ import { DeskClient, DeskError } from './desk-client.js';
 import { trackKey, type FileWork } from './file-work.js';
 import { keepWork, type SavedWork } from './recovery.js';
 
-/** The page's work: files, their surveys and job cards. Fires `change` once a picture at most, `notice` with words for people. */
+/** The page's work: files, their surveys and job cards. Fires `change` once a picture at most, `notice` where there is something to say. */
 export class Session extends EventTarget {
   readonly desk = new DeskClient();
   files: readonly FileWork[] = [];
+  /** What was last said, for people. */
+  notice = '';
   settings: JobSettings = {
     playbacks: ['as-written'],
     failAt: 'warning',
@@ -126,17 +128,16 @@ export class Session extends EventTarget {
     if (!file) return;
     try {
       const answer = await this.desk.ask('bytes', { file: id });
+      const bytes = new Uint8Array(answer.bytes);
       const order = {
         name: file.name,
-        bytes: answer.bytes,
+        bytes,
         onDisk: file.onDisk ?? answer.original,
         ...(file.handle && { handle: file.handle }),
       };
       const saved =
-        how === 'in place'
-          ? await saveInPlace(order, this.desk)
-          : saveCopy(mendedName(file.name), answer.bytes);
-      const written = { size: answer.bytes.length, sha256: answer.sha256 };
+        how === 'in place' ? await saveInPlace(order, this.desk) : saveCopy(mendedName(file.name), bytes);
+      const written = { size: bytes.length, sha256: answer.sha256 };
       this.#put(id, { saved: true, ...(how === 'in place' && { onDisk: written }) });
       this.#say(
         how === 'in place'
@@ -285,7 +286,8 @@ export class Session extends EventTarget {
   }
 
   #say(words: string): void {
-    this.dispatchEvent(new CustomEvent('notice', { detail: words }));
+    this.notice = words;
+    this.dispatchEvent(new Event('notice'));
   }
 }
 

@@ -29,9 +29,7 @@ const answers: {
   open: ({ file, name, blob, siblings }) => here.open(file, blobSource(blob), name, siblingIn(siblings)),
   'open-demo': ({ file }) => here.open(file, bufferSource(kestrelPoint()), 'kestrel-point.glb'),
   survey: ({ file, settings }, watch, id) =>
-    here.survey(file, settings, watch, (row) =>
-      tell({ id, told: 'row', row }, [row.columns.buffer as ArrayBuffer]),
-    ),
+    here.survey(file, settings, watch, (row) => tell({ id, told: 'row', row }, transferable(row.columns))),
   track: ({ file, clip, track }) => here.track(file, clip, track),
   card: ({ file, steps }, watch) => here.card(file, steps, watch),
   propose: ({ file, allow }) => here.propose(file, allow),
@@ -107,6 +105,10 @@ function buffersOf(made: Answer<AskName>): Transferable[] {
     ]);
   if ('bytes' in made) return [made.bytes.buffer];
   return [];
+}
+
+function transferable(numbers: ArrayBufferView): ArrayBuffer[] {
+  return numbers.buffer instanceof ArrayBuffer ? [numbers.buffer] : [];
 }
 
 function blobSource(blob: Blob): Source {

@@ -152,6 +152,8 @@ export const chartStyles: CSSResult = css`
   }
   .notes {
     position: absolute;
+    /* Notes may hang down over the rows below. */
+    z-index: 1;
     top: 0;
     right: 0;
     width: 16.5rem;
@@ -199,6 +201,11 @@ export const chartStyles: CSSResult = css`
     margin: 0;
     color: var(--_soft);
     font-style: italic;
+  }
+  /* What is scrolled to must not stand under the numbers that stay at the top. */
+  .sheet,
+  .notes button {
+    scroll-margin-top: 6rem;
   }
   .notes button {
     display: block;
