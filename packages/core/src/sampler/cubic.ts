@@ -13,7 +13,7 @@ const CUBIC = 16;
  */
 export function cubic(shared: SharedTimes): WriteGroup {
   const { times, values, slots } = shared;
-  const lookup = timeLookup(times, 1, 0, times.length);
+  const lookup = timeLookup(times);
   const [start, end] = lookup.span;
   const records = cubicRecords(shared);
   const stride = CUBIC * values.length;

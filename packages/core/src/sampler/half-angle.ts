@@ -1,13 +1,16 @@
 /*
- * Great-arc weights without a sine, a square root or a division at sampling time. With Ω the angle between two unit quaternions
- * (half the turn between the orientations), h = Ω/2 and k = 2u − 1, K. Shoemake's weights (SIGGRAPH 1985) are
+ * Great arcs without a sine, a square root or a division at sampling time. With Ω the angle between two unit quaternions (half the
+ * turn between the orientations), h = Ω/2 and k = 2u − 1, K. Shoemake's weights (SIGGRAPH 1985) are
  *
  *   sin((1−u)Ω)/sin Ω = cos(hk)/(2 cos h) − sin(hk)/(2 sin h)
  *   sin(uΩ)/sin Ω     = cos(hk)/(2 cos h) + sin(hk)/(2 sin h)
  *
- * (the sine of a sum over the sine of a double angle). h, 1/(2 cos h) and h/(2 sin h) are stored with the segment; cos(hk) and
- * sin(hk)/(hk) are the polynomials below in v = (hk)². Nothing is singular at h = 0, and h is at most π/4: the short way is at
- * most half a turn.
+ * (the sine of a sum over the sine of a double angle), so that the orientation is
+ *
+ *   cos(hk) · (q₀ + q₁)/(2 cos h) + k · sin(hk)/(hk) · (q₁ − q₀)·h/(2 sin h)
+ *
+ * h and the two quaternions are stored with the segment; cos(hk) and sin(hk)/(hk) are the polynomials below in v = (hk)². Nothing
+ * is singular at h = 0, and h is at most π/4: the short way is at most half a turn.
  *
  * The coefficients are fitted, and fitted again by the tests, in test/core/sampler/half-angle.test.ts. Errors are absolute.
  */

@@ -1,104 +1,119 @@
 import type { SquadParts } from '../curve/squad-curve.js';
 import type { NumberStore } from '../number-store.js';
 import { squad } from '../quaternion/squad.js';
-import { NEAR_SINE_64, arcOverSine64, cosineWide64, sineWide64 } from './half-angle.js';
-import { writeWeights } from './segment-weights.js';
+import { ARC, writeArc } from './arc-record.js';
+import {
+  NEAR_64,
+  NEAR_SINE_64,
+  arcOverSine64,
+  cosineNear64,
+  cosineWide64,
+  sineNear64,
+  sineWide64,
+} from './half-angle.js';
 
-/**
- * Numbers a key: its orientation (0), the inner points by which its segment leaves it (4) and arrives at the next key (8), the
- * three weights of the arc between the keys (12) and between the inner points (15), how the segment is played (18), the time (19).
- */
-export const SQUAD_RECORD = 20;
-
-/** Where a segment's kind is kept, and its values. */
-const KIND = 18;
-const HELD = 0;
-/** Both arcs at most half a turn, so that the polynomials hold. */
-const NEAR = 1;
-const FAR = 2;
-
-// Written before they are read in every call.
-const [key, inner, innerNext, keyNext, far] = Array.from({ length: 5 }, () => new Float64Array(4));
-
-/** Records of all keys; one that is identity, at 0 s, where there is none. */
-export function squadRecords({ times, keys, leaving, arriving, breaks }: SquadParts): Float64Array {
-  const records = new Float64Array(SQUAD_RECORD * Math.max(1, times.length));
-  records[3] = 1;
-  for (let i = 0; i < times.length; i++) {
-    const at = i * SQUAD_RECORD;
-    records.set(keys.subarray(4 * i, 4 * i + 4), at);
-    records[at + SQUAD_RECORD - 1] = times[i];
-    if (i + 1 === times.length) break;
-    records.set(leaving.subarray(4 * i, 4 * i + 4), at + 4);
-    records.set(arriving.subarray(4 * i, 4 * i + 4), at + 8);
-    const outerArc = writeWeights(records, at + 12, keys, 4 * i);
-    const innerArc = writeWeights(records, at + 15, records, at + 4);
-    records[at + KIND] = Math.max(outerArc, innerArc) <= Math.PI / 4 ? NEAR : FAR;
-  }
-  for (const held of breaks) records[held * SQUAD_RECORD + KIND] = HELD;
-  return records;
+/** Spherical quadrangles laid out for sampling. */
+export interface SquadRecords {
+  readonly parts: SquadParts;
+  /** For each segment the arc between its keys and the one between its inner points. */
+  readonly arcs: Float64Array;
+  /** For each key how its segment is played. */
+  readonly kinds: Uint8Array;
 }
 
-/** The orientation at the part `u` of the segment whose record is at `from`. */
-export function writeSquad(
-  records: Float64Array,
-  from: number,
-  u: number,
-  out: NumberStore,
-  at: number,
-): void {
-  if (u === 0 || records[from + KIND] === HELD) {
-    for (let i = 0; i < 4; i++) out[at + i] = records[from + i];
+const HELD = 0;
+/** Both arcs turn so little that the short polynomials hold. */
+const NEAR = 1;
+/** Both arcs are at most half a turn, so that the long polynomials hold. */
+const WIDE = 2;
+const FAR = 3;
+
+/**
+ * The part of the segment that is asked for, written before it is read in every call. As an argument it would be a number object
+ * on the heap.
+ */
+export const squadPart: Float64Array = new Float64Array(1);
+
+// Written before they are read in every call.
+const [key, inner, innerNext, keyNext, far, points] = [4, 4, 4, 4, 4, 8].map(
+  (length) => new Float64Array(length),
+);
+
+export function squadRecords(parts: SquadParts): SquadRecords {
+  const { times, keys, leaving, arriving, breaks } = parts;
+  const arcs = new Float64Array(2 * ARC * times.length);
+  const kinds = new Uint8Array(times.length);
+  for (let i = 0; i + 1 < times.length; i++) {
+    points.set(leaving.subarray(4 * i, 4 * i + 4));
+    points.set(arriving.subarray(4 * i, 4 * i + 4), 4);
+    const arc = Math.max(
+      writeArc(arcs, 2 * ARC * i, keys, 4 * i),
+      writeArc(arcs, 2 * ARC * i + ARC, points, 0),
+    );
+    kinds[i] = arc <= NEAR_64 ? NEAR : arc <= Math.PI / 4 ? WIDE : FAR;
+  }
+  for (const held of breaks) kinds[held] = HELD;
+  return { parts, arcs, kinds };
+}
+
+/** The orientation at `squadPart` of a segment. */
+export function writeSquad(records: SquadRecords, segment: number, out: NumberStore, at: number): void {
+  const { parts, arcs, kinds } = records;
+  const u = squadPart[0];
+  const kind = kinds[segment];
+  if (u === 0 || kind === HELD) {
+    for (let i = 0; i < 4; i++) out[at + i] = parts.keys[4 * segment + i];
     return;
   }
-  if (records[from + KIND] === FAR) return writeFar(records, from, u, out, at);
+  if (kind === FAR) return writeFar(parts, segment, out, at);
   const k = 2 * u - 1;
-  const to = from + SQUAD_RECORD;
+  const from = 2 * ARC * segment;
 
-  let x = k * records[from + 12];
-  let even = cosineWide64(x * x) * records[from + 13];
-  let odd = k * sineWide64(x * x) * records[from + 14];
-  let before = even - odd;
-  let after = even + odd;
-  const px = before * records[from] + after * records[to];
-  const py = before * records[from + 1] + after * records[to + 1];
-  const pz = before * records[from + 2] + after * records[to + 2];
-  const pw = before * records[from + 3] + after * records[to + 3];
+  let x = k * arcs[from];
+  let even = kind === NEAR ? cosineNear64(x * x) : cosineWide64(x * x);
+  let odd = k * (kind === NEAR ? sineNear64(x * x) : sineWide64(x * x));
+  const px = even * arcs[from + 1] + odd * arcs[from + 5];
+  const py = even * arcs[from + 2] + odd * arcs[from + 6];
+  const pz = even * arcs[from + 3] + odd * arcs[from + 7];
+  const pw = even * arcs[from + 4] + odd * arcs[from + 8];
 
-  x = k * records[from + 15];
-  even = cosineWide64(x * x) * records[from + 16];
-  odd = k * sineWide64(x * x) * records[from + 17];
-  before = even - odd;
-  after = even + odd;
-  const qx = before * records[from + 4] + after * records[from + 8];
-  const qy = before * records[from + 5] + after * records[from + 9];
-  const qz = before * records[from + 6] + after * records[from + 10];
-  const qw = before * records[from + 7] + after * records[from + 11];
+  x = k * arcs[from + 9];
+  even = kind === NEAR ? cosineNear64(x * x) : cosineWide64(x * x);
+  odd = k * (kind === NEAR ? sineNear64(x * x) : sineWide64(x * x));
+  const qx = even * arcs[from + 10] + odd * arcs[from + 14];
+  const qy = even * arcs[from + 11] + odd * arcs[from + 15];
+  const qz = even * arcs[from + 12] + odd * arcs[from + 16];
+  const qw = even * arcs[from + 13] + odd * arcs[from + 17];
 
   // The arc between the two: sin²h is half of what their product lacks of 1.
   const s = 0.5 - 0.5 * (px * qx + py * qy + pz * qz + pw * qw);
-  if (s > NEAR_SINE_64) return writeFar(records, from, u, out, at);
-  const part = 4 * u * (1 - u) - 1;
+  if (s > NEAR_SINE_64) return writeFar(parts, segment, out, at);
+  const middle = 4 * u * (1 - u) - 1;
   const ratio = arcOverSine64(s);
-  const v = part * part * ratio * ratio * s;
-  even = (0.5 * cosineWide64(v)) / Math.sqrt(1 - s);
-  odd = 0.5 * part * ratio * sineWide64(v);
-  before = even - odd;
-  after = even + odd;
-  out[at] = before * px + after * qx;
-  out[at + 1] = before * py + after * qy;
-  out[at + 2] = before * pz + after * qz;
-  out[at + 3] = before * pw + after * qw;
+  const hh = ratio * ratio * s;
+  const v = middle * middle * hh;
+  const near = hh <= NEAR_64 * NEAR_64;
+  even = (0.5 * (near ? cosineNear64(v) : cosineWide64(v))) / Math.sqrt(1 - s);
+  odd = 0.5 * middle * ratio * (near ? sineNear64(v) : sineWide64(v));
+  out[at] = even * (px + qx) + odd * (qx - px);
+  out[at + 1] = even * (py + qy) + odd * (qy - py);
+  out[at + 2] = even * (pz + qz) + odd * (qz - pz);
+  out[at + 3] = even * (pw + qw) + odd * (qw - pw);
 }
 
 /** By the exact sines: arcs over half a turn, or points further apart than the polynomials reach. */
-function writeFar(records: Float64Array, from: number, u: number, out: NumberStore, at: number): void {
+function writeFar(
+  { keys, leaving, arriving }: SquadParts,
+  segment: number,
+  out: NumberStore,
+  at: number,
+): void {
   for (let i = 0; i < 4; i++) {
-    key[i] = records[from + i];
-    inner[i] = records[from + 4 + i];
-    innerNext[i] = records[from + 8 + i];
-    keyNext[i] = records[from + SQUAD_RECORD + i];
+    key[i] = keys[4 * segment + i];
+    inner[i] = leaving[4 * segment + i];
+    innerNext[i] = arriving[4 * segment + i];
+    keyNext[i] = keys[4 * segment + 4 + i];
   }
-  squad(far, key, inner, innerNext, keyNext, u);
+  squad(far, key, inner, innerNext, keyNext, squadPart[0]);
   for (let i = 0; i < 4; i++) out[at + i] = far[i];
 }

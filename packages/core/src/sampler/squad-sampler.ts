@@ -1,10 +1,11 @@
+import type { SquadParts } from '../curve/squad-curve.js';
 import type { KeyRates } from '../curve/key-rate.js';
 import { splineKeys } from '../curve/spline-keys.js';
 import { squadParts } from '../curve/squad-spline.js';
 import type { NumberStore, ReadonlyNumberStore } from '../number-store.js';
 import type { RotationTrack } from '../track/rotation-track.js';
 import type { Sampler } from './sampler.js';
-import { SQUAD_RECORD, squadRecords, writeSquad } from './squad-record.js';
+import { squadPart, squadRecords, writeSquad } from './squad-record.js';
 import { timeLookup, locate } from './time-lookup.js';
 
 /** How the squad through the keys is made; as `rotationSpline` takes it. */
@@ -19,19 +20,20 @@ export interface SquadSamplerOptions {
  * track states is not looked at. Within 1e-13 degrees of that curve, and nothing is allocated in a call. The track is copied.
  */
 export function squadSampler(track: RotationTrack, options: SquadSamplerOptions): Sampler {
-  const parts = squadParts(splineKeys(track, options.loop === true), options.rates);
-  const count = Math.max(1, parts.times.length);
-  const records = squadRecords(parts);
-  const lookup = timeLookup(records, SQUAD_RECORD, SQUAD_RECORD - 1, count);
+  const records = squadRecords(keyed(squadParts(splineKeys(track, options.loop === true), options.rates)));
+  const { times } = records.parts;
+  const lookup = timeLookup(times);
   const [start, end] = lookup.span;
-  const last = (count - 1) * SQUAD_RECORD;
 
   function write(t: number, out: NumberStore, at: number): void {
-    if (!(t > start)) return writeSquad(records, 0, 0, out, at);
-    if (t >= end) return writeSquad(records, last, 0, out, at);
-    const from = locate(lookup, t) * SQUAD_RECORD;
-    const t0 = records[from + SQUAD_RECORD - 1];
-    writeSquad(records, from, (t - t0) / (records[from + 2 * SQUAD_RECORD - 1] - t0), out, at);
+    let segment = 0;
+    squadPart[0] = 0;
+    if (t >= end) segment = times.length - 1;
+    else if (t > start) {
+      segment = locate(lookup, t);
+      squadPart[0] = (t - times[segment]) / (times[segment + 1] - times[segment]);
+    }
+    writeSquad(records, segment, out, at);
   }
 
   return Object.freeze({
@@ -46,4 +48,10 @@ export function squadSampler(track: RotationTrack, options: SquadSamplerOptions)
       return out;
     },
   });
+}
+
+/** With times of its own, which may be the track's; identity at 0 s where there is no key that can be played. */
+function keyed(parts: SquadParts): SquadParts {
+  if (parts.times.length > 0) return { ...parts, times: parts.times.slice() };
+  return { ...parts, times: new Float64Array(1), keys: Float64Array.of(0, 0, 0, 1) };
 }

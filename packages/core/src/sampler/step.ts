@@ -3,7 +3,7 @@ import { locate, timeLookup } from './time-lookup.js';
 
 /** STEP tracks: the key at or before `t`, to the bit. */
 export function step({ times, values, slots }: SharedTimes): WriteGroup {
-  const lookup = timeLookup(times, 1, 0, times.length);
+  const lookup = timeLookup(times);
   const [start, end] = lookup.span;
   const stride = 4 * values.length;
   const keys = new Float64Array(stride * times.length);
