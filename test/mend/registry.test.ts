@@ -11,6 +11,15 @@ describe('VERBS', () => {
       'bridge',
       're-seat',
       'normalise',
+      'ease in/out',
+      'even out',
+      'cap',
+      'hold',
+      'stretch',
+      'shrink',
+      'reverse',
+      'ease through',
+      'whole turns',
     ]);
     expect(new Set(VERBS.map(({ opening }) => opening)).size).toBe(VERBS.length);
     for (const verb of VERBS) {
@@ -18,8 +27,13 @@ describe('VERBS', () => {
       expect(verb.alsoCalled.length).toBeGreaterThan(2);
       expect(verbNamed(verb.name)).toBe(verb);
     }
-    // `--proposed` never re-seats and never chooses a way round unless allowed by name: both are somebody's decision.
-    expect(VERBS.filter(({ needsAllowing }) => needsAllowing).map(({ name }) => name)).toEqual(['choose side', 're-seat']);
+    // `--proposed` never re-seats, chooses a way round or changes a pace unless allowed by name: that is somebody's decision.
+    expect(VERBS.filter(({ needsAllowing }) => !needsAllowing).map(({ name }) => name)).toEqual([
+      'same side',
+      'lift out',
+      'bridge',
+      'normalise',
+    ]);
   });
 
   it.each([
@@ -29,6 +43,11 @@ describe('VERBS', () => {
     ['Re-Seat', 're-seat'],
     ['half turn', 'choose side'],
     ['fill gap', 'bridge'],
+    ['constant speed', 'even out'],
+    ['easing', 'ease in/out'],
+    ['pause', 'hold'],
+    ['speed limit', 'cap'],
+    ['elbow', 'ease through'],
   ])('asks of %j whether %j is meant', (name, meant) => {
     expect(codeOf(() => verbNamed(name))).toBe('card.unknown-verb');
     expect(() => verbNamed(name)).toThrow(`Did you mean "${meant}"?`);

@@ -34,6 +34,16 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     axis: fc.tuple(number, number, number),
     side: fc.constantFrom('own' as const, 'parent' as const),
     fade: seconds,
+    at: number,
+    turns: fc.integer(),
+    rate: seconds,
+    acceleration: seconds,
+    which: fc.constantFrom('in' as const, 'out' as const),
+    ease: fc.oneof(fc.string(), fc.constantFrom('cubic-bezier(0.42, 0, 0.58, 1)', 'minimum-jerk')),
+    seconds,
+    ends: fc.constantFrom('same' as const, 'run' as const),
+    with: fc.constantFrom('node' as const, 'track' as const, 'clip' as const),
+    store: fc.constantFrom('move' as const, 'frames' as const, 'cubic' as const),
   };
   const read = Object.entries(optional).filter(([key]) => verb.reads.some((name) => name === key));
   return fc.record(
@@ -70,6 +80,19 @@ describe('sentence', () => {
     );
     expect(sayStep({ verb: 'normalise', ...place, span: [0.5, 1.25], shoulders: 0.1 })).toBe(
       'Normalise all keys of Hips/Spine/Neck in Walk, between 0.5 s and 1.25 s, with shoulders of 0.1 s.',
+    );
+  });
+
+  it('says paces as people read them', () => {
+    const place = { clip: 'Flight', track: 'camera' };
+    expect(sayStep({ verb: 'cap', ...place, rate: 20, acceleration: 40, with: 'clip' })).toBe(
+      'Cap the speed of all keys of camera in Flight, to at most 20 deg/s, to at most 40 deg/s², taking its clip along.',
+    );
+    expect(sayStep({ verb: 'ease in/out', ...place, shoulders: 0.5, which: 'out', ends: 'run' })).toBe(
+      'Ease in and out all keys of camera in Flight, at its end alone, letting time run, with shoulders of 0.5 s.',
+    );
+    expect(sayStep({ verb: 'hold', ...place, at: 4, seconds: 1, store: 'frames' })).toBe(
+      'Hold all keys of camera in Flight, at 4 s, lasting 1 s, at the frames.',
     );
   });
 

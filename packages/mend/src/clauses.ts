@@ -14,6 +14,12 @@ interface Clause {
 const NUMBER = String.raw`(-?\d+(?:\.\d+)?(?:e[+-]?\d+)?)`;
 const KEYS = String.raw`keys? (\d+(?:, \d+)*(?: and \d+)?)`;
 
+const STORE_WORDS: Readonly<Record<NonNullable<Step['store']>, string>> = {
+  move: 'moving its keys',
+  frames: 'at the frames',
+  cubic: 'as cubics',
+};
+
 /** In the order in which a sentence has them. */
 export const CLAUSES: readonly Clause[] = [
   {
@@ -39,6 +45,68 @@ export const CLAUSES: readonly Clause[] = [
     say: ({ fade = 0 }) => `fading away over ${sayNumber(fade)} s`,
     pattern: new RegExp(`^, fading away over ${NUMBER} s`),
     read: ([fade]) => ({ fade: Number(fade) }),
+  },
+  {
+    key: 'at',
+    say: ({ at = 0 }) => `at ${sayNumber(at)} s`,
+    pattern: new RegExp(`^, at ${NUMBER} s`),
+    read: ([at]) => ({ at: Number(at) }),
+  },
+  {
+    key: 'turns',
+    say: ({ turns }) => `with ${turns} whole ${turns === 1 ? 'turn' : 'turns'} more`,
+    pattern: /^, with (-?\d+) whole turns? more/,
+    read: ([turns]) => ({ turns: Number(turns) }),
+  },
+  {
+    key: 'rate',
+    say: ({ rate = 0 }) => `to at most ${sayNumber(rate)} deg/s`,
+    pattern: new RegExp(`^, to at most ${NUMBER} deg/s(?!²)`),
+    read: ([rate]) => ({ rate: Number(rate) }),
+  },
+  {
+    key: 'acceleration',
+    say: ({ acceleration = 0 }) => `to at most ${sayNumber(acceleration)} deg/s²`,
+    pattern: new RegExp(`^, to at most ${NUMBER} deg/s²`),
+    read: ([acceleration]) => ({ acceleration: Number(acceleration) }),
+  },
+  {
+    key: 'which',
+    say: ({ which }) => (which === 'in' ? 'at its start alone' : 'at its end alone'),
+    pattern: /^, at its (start|end) alone/,
+    read: ([which]) => ({ which: which === 'start' ? 'in' : 'out' }),
+  },
+  {
+    key: 'ease',
+    say: ({ ease }) => `by ${JSON.stringify(ease)}`,
+    pattern: /^, by ("(?:[^"\\]|\\.)*")/,
+    read: ([ease = '""']) => ({ ease: String(JSON.parse(ease)) }),
+  },
+  {
+    key: 'seconds',
+    say: ({ seconds = 0 }) => `lasting ${sayNumber(seconds)} s`,
+    pattern: new RegExp(`^, lasting ${NUMBER} s`),
+    read: ([seconds]) => ({ seconds: Number(seconds) }),
+  },
+  {
+    key: 'ends',
+    say: ({ ends }) => (ends === 'same' ? 'with the same ends' : 'letting time run'),
+    pattern: /^, (with the same ends|letting time run)/,
+    read: ([ends]) => ({ ends: ends === 'letting time run' ? 'run' : 'same' }),
+  },
+  {
+    key: 'with',
+    say: ({ with: whom }) => `taking its ${whom} along`,
+    pattern: /^, taking its (node|track|clip) along/,
+    read: ([whom]) => ({ with: whom === 'clip' ? 'clip' : whom === 'track' ? 'track' : 'node' }),
+  },
+  {
+    key: 'store',
+    say: ({ store = 'move' }) => STORE_WORDS[store],
+    pattern: /^, (moving its keys|at the frames|as cubics)/,
+    read: ([words]) => ({
+      store: words === 'at the frames' ? 'frames' : words === 'as cubics' ? 'cubic' : 'move',
+    }),
   },
   {
     key: 'span',

@@ -1,6 +1,7 @@
 import { type Curve, type RotationTrack, angleBetween, playAs } from '@slewcurve/core';
 import { DEGREES, pairedKeys, reach, sameNumbers } from './edit-result.js';
 import { isPlayable } from './stored-key.js';
+import { provePace } from './pace/prove-pace.js';
 import type { EditResult } from './verb.js';
 
 /** What an edit is shown to have done, from the two tracks themselves, played as written. Angles in degrees. */
@@ -36,9 +37,10 @@ const OUTSIDE_LIMIT = 1e-7;
 export function proveEdit(
   before: RotationTrack,
   after: RotationTrack,
-  result: Pick<EditResult, 'changed' | 'inserted' | 'span'>,
+  result: Pick<EditResult, 'changed' | 'inserted' | 'span' | 'repaced'>,
   keep: readonly number[] = [],
 ): EditProof {
+  if (result.repaced) return provePace(before, after, result.repaced, keep);
   const changed = new Set(result.changed);
   const strays: number[] = [];
   const keptChanged: number[] = [];

@@ -29,14 +29,28 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
     if (!(Math.hypot(x, y, z) > 0)) throw new Fault('card.bad-number', 'must have a length');
     return { axis: [x, y, z] };
   },
-  side: (value) => {
-    if (value !== 'own' && value !== 'parent') throw new Fault('card.bad-text', 'must be "own" or "parent"');
-    return { side: value };
-  },
+  side: (value) => ({ side: oneOf(value, ['own', 'parent']) }),
   fade: (value) => ({ fade: seconds(value) }),
   steps: (value) => {
     if (!isWhole(value) || value < 2) throw new Fault('card.bad-number', 'must be a whole number from 2 up');
     return { steps: value };
+  },
+  with: (value) => ({ with: oneOf(value, ['node', 'track', 'clip']) }),
+  store: (value) => ({ store: oneOf(value, ['move', 'frames', 'cubic']) }),
+  ends: (value) => ({ ends: oneOf(value, ['same', 'run']) }),
+  seconds: (value) => ({ seconds: above0(value) }),
+  at: (value) => {
+    if (!isFiniteNumber(value)) throw new Fault('card.bad-number', 'must be a finite number of seconds');
+    return { at: value };
+  },
+  rate: (value) => ({ rate: above0(value) }),
+  acceleration: (value) => ({ acceleration: above0(value) }),
+  ease: (value) => ({ ease: text(value) }),
+  which: (value) => ({ which: oneOf(value, ['in', 'out']) }),
+  turns: (value) => {
+    if (!Number.isSafeInteger(value) || typeof value !== 'number')
+      throw new Fault('card.bad-number', 'must be a whole number');
+    return { turns: value };
   },
 };
 
@@ -105,6 +119,19 @@ function seconds(value: unknown): number {
   if (!isFiniteNumber(value) || value < 0)
     throw new Fault('card.bad-number', 'must be a finite number of seconds, 0 or more');
   return value;
+}
+
+function above0(value: unknown): number {
+  if (!isFiniteNumber(value) || !(value > 0))
+    throw new Fault('card.bad-number', 'must be a finite number above 0');
+  return value;
+}
+
+function oneOf<const T extends string>(value: unknown, words: readonly T[]): T {
+  const word = words.find((known) => known === value);
+  if (word === undefined)
+    throw new Fault('card.bad-text', `must be ${words.map((known) => `"${known}"`).join(' or ')}`);
+  return word;
 }
 
 function isFiniteNumber(value: unknown): value is number {

@@ -1,10 +1,18 @@
 import { type ErrorPlace, SlewcurveError } from '@slewcurve/core';
 import { bridge } from './edits/bridge.js';
+import { cap } from './edits/cap.js';
 import { chooseSide } from './edits/choose-side.js';
+import { easeInOut } from './edits/ease-in-out.js';
+import { easeThrough } from './edits/ease-through.js';
+import { evenOut } from './edits/even-out.js';
+import { hold } from './edits/hold.js';
 import { liftOut } from './edits/lift-out.js';
 import { normaliseKeys } from './edits/normalise.js';
 import { reSeat } from './edits/re-seat.js';
+import { reverse } from './edits/reverse.js';
 import { sameSide } from './edits/same-side.js';
+import { shrink, stretch } from './edits/stretch.js';
+import { wholeTurns } from './edits/whole-turns.js';
 import { nearestWord } from './nearest-word.js';
 import type { Verb } from './verb.js';
 
@@ -16,6 +24,15 @@ export const VERBS: readonly Verb[] = Object.freeze([
   bridge,
   reSeat,
   normaliseKeys,
+  easeInOut,
+  evenOut,
+  cap,
+  hold,
+  stretch,
+  shrink,
+  reverse,
+  easeThrough,
+  wholeTurns,
 ]);
 
 /**

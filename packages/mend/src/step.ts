@@ -22,4 +22,27 @@ export interface Step {
   readonly fade?: number;
   /** bridge: number of key steps that the bridge spans. */
   readonly steps?: number;
+  /** Pace verbs: whose times are mapped along, so that what belongs together stays together. Default node. */
+  readonly with?: 'node' | 'track' | 'clip';
+  /**
+   * Pace verbs: how the new pace is stored. `move`: the keys travel, their values stay to the bit. `frames`: the path is read at the frames. `cubic`: as
+   * CUBICSPLINE with exact tangents. Default: what the verb needs.
+   */
+  readonly store?: 'move' | 'frames' | 'cubic';
+  /** Pace verbs: whether both ends keep their times, or what follows comes earlier or later. */
+  readonly ends?: 'same' | 'run';
+  /** hold: for how long; stretch, shrink, even out, ease in/out: how long the span is to last. Seconds. */
+  readonly seconds?: number;
+  /** hold, shape: where, old seconds. */
+  readonly at?: number;
+  /** cap: the most, deg/s. */
+  readonly rate?: number;
+  /** cap: the most with bends counted, deg/s². */
+  readonly acceleration?: number;
+  /** ease in/out: by which law, as `easeOf` reads it: "minimum-jerk", "trapezoid 0.3", "s-curve 0.3", "cubic-bezier(0.42, 0, 0.58, 1)". */
+  readonly ease?: string;
+  /** ease in/out with shoulders: at one end alone. */
+  readonly which?: 'in' | 'out';
+  /** whole turns: how many beside the short way, about its axis; negative ones the other way. */
+  readonly turns?: number;
 }

@@ -15,6 +15,46 @@ export interface EditResult {
   readonly added: number;
   /** First and last time between which the motion as written may differ, seconds; left out where it can't differ anywhere. */
   readonly span?: readonly [number, number];
+  /** Pace verbs alone: how time runs now, and what that costs. */
+  readonly repaced?: Repaced;
+}
+
+/** What a pace verb did to time. */
+export interface Repaced {
+  /** Old time at a new time and the other way round; whoever is taken along follows it. */
+  readonly retiming: TimeMap;
+  /** Old times between which the pace changed; what follows is shifted. */
+  readonly acted: readonly [number, number];
+  readonly with: 'node' | 'track' | 'clip';
+  readonly price: Price;
+  /** Where the new pace takes a bend of the path fast: shown before it is taken. Worst first. */
+  readonly bends: readonly Bend[];
+}
+
+/** A map between the clocks before and after an edit, seconds. Where it runs back, `turnsBack`. */
+export interface TimeMap {
+  oldTime(t: number): number;
+  newTime(old: number): number;
+  /** True where later old times come earlier: played backwards. */
+  readonly turnsBack: boolean;
+}
+
+/** What a new pace costs. */
+export interface Price {
+  /** Seconds added; fewer than 0 where time is saved. */
+  readonly seconds: number;
+  /** How far, in degrees, the motion as stored departs from the old path at the wanted pace, at the worst place. */
+  readonly degrees: number;
+  /** Bytes that times and values take more in the track's own storage. */
+  readonly bytes: number;
+}
+
+/** A place where the turn changes its direction at once, or nearly so. */
+export interface Bend {
+  /** New seconds. */
+  readonly time: number;
+  /** By how much the rate changes there, deg/s: speed × change of direction. */
+  readonly jump: number;
 }
 
 /** A kind of edit: one file under `edits/`, one line in the registry. */

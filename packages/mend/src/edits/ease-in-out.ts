@@ -1,0 +1,54 @@
+import { type RotationTrack, pace, playAs } from '@slewcurve/core';
+import { sentenceOf } from '../clauses.js';
+import { easeOf } from '../pace/ease-of.js';
+import { paceSpan } from '../pace/pace-span.js';
+import { storePaced } from '../pace/store-paced.js';
+import type { Step } from '../step.js';
+import type { EditResult, Verb } from '../verb.js';
+
+/**
+ * Starts from rest and comes to rest. Without shoulders the whole span goes by one law, S*(t) = S_tot·m(t/T), minimum jerk if none is named. With
+ * shoulders only that many old seconds at its ends (or at one, `which`) are ramps, and the pace between them stays; they take twice their time,
+ * which the rest makes up for unless time may run.
+ */
+export const easeInOut: Verb = Object.freeze({
+  name: 'ease in/out',
+  summary: 'Starts and stops softly; the path stays.',
+  alsoCalled: [
+    'easing',
+    'slow in',
+    'slow out',
+    'cubic-bezier',
+    'soft start',
+    'soft stop',
+    'ease in',
+    'ease out',
+  ],
+  opening: 'Ease in and out',
+  reads: ['ease', 'seconds', 'which', 'ends', 'with', 'store'] as const,
+  needsAllowing: true,
+  keysApart: false,
+  insertsKeys: true,
+  say: (step: Step) => sentenceOf('Ease in and out', step),
+  apply(track: RotationTrack, step: Step): EditResult {
+    const span = paceSpan(track, step);
+    const old = span[1] - span[0];
+    const path = playAs(track, 'as-written');
+    if (step.shoulders === undefined || step.shoulders === 0) {
+      const ease = easeOf(step.ease ?? 'minimum-jerk');
+      const paced = pace(path, { kind: 'ease', ease, seconds: step.seconds ?? old, span });
+      return storePaced(track, span, paced, step, 'smooth');
+    }
+    const most = step.which === undefined ? old / 2 : old;
+    const ramp = Math.min(step.shoulders, most);
+    const seconds = step.seconds ?? (step.ends === 'run' ? undefined : old);
+    const paced = pace(path, {
+      kind: 'ramps',
+      rise: step.which === 'out' ? 0 : ramp,
+      fall: step.which === 'in' ? 0 : ramp,
+      span,
+      ...(seconds !== undefined && { seconds }),
+    });
+    return storePaced(track, span, paced, step, 'smooth');
+  },
+});

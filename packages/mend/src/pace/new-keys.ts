@@ -1,0 +1,70 @@
+import { type PacedCurve, type RotationTrack, type Span, frameGrid, medianGap } from '@slewcurve/core';
+
+/** A key of the re-timed track: an old one that travels, or one that is read off the path. */
+export interface NewKey {
+  readonly time: number;
+  /** The old key, where it is one. */
+  readonly old?: number;
+}
+
+/** Frames per second where keys lie on no grid. Common practice, no source. */
+const FRAME_RATE = 30;
+
+/** Nearer than this share of a frame to a key that travels there is no frame beside it. */
+const APART = 0.25;
+
+/** All old keys, at their new times. */
+export function movedKeys(track: RotationTrack, { retiming }: Pick<PacedCurve, 'retiming'>): NewKey[] {
+  return Array.from(track.times, (time, old) => ({ time: stored(track, retiming.newTime(time)), old }));
+}
+
+/** Every frame of a span, and the old keys outside it and at its ends; of those inside it the ones in `keep`, and on sparse tracks all. */
+export function frameKeys(
+  track: RotationTrack,
+  [from, to]: Span,
+  paced: Pick<PacedCurve, 'retiming'>,
+  isDense: boolean,
+  keep: readonly number[] = [],
+): NewKey[] {
+  const kept = new Set(keep);
+  const moved = movedKeys(track, paced).filter(({ old = 0 }) => {
+    const time = track.times[old];
+    return time <= from || time >= to || !isDense || kept.has(old);
+  });
+  const [begin, end] = [paced.retiming.newTime(from), paced.retiming.newTime(to)];
+  const frames = isDense ? denseFrames(track, from, to, end) : evenFrames(track, begin, end);
+  const gap = isDense ? medianGap(track) : 1 / (frameGrid([track.times]) ?? FRAME_RATE);
+  const all: NewKey[] = [...moved];
+  for (const time of frames) {
+    const at = stored(track, time);
+    const isFree = moved.every((key) => Math.abs(key.time - at) > APART * gap);
+    if (at > begin && at < end && isFree) all.push({ time: at });
+  }
+  return ascending(all);
+}
+
+function ascending(keys: NewKey[]): NewKey[] {
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  return keys.sort((a, b) => a.time - b.time);
+}
+
+/** The old key times, and after them more at the same distance. */
+function denseFrames({ times }: RotationTrack, from: number, to: number, end: number): number[] {
+  const frames = Array.from(times.filter((time) => time > from && time <= to));
+  const gap = (to - from) / Math.max(1, frames.length);
+  for (let n = 1; to + n * gap < end; n++) frames.push(to + n * gap);
+  return frames;
+}
+
+function evenFrames({ times }: RotationTrack, begin: number, end: number): number[] {
+  const rate = frameGrid([times]) ?? FRAME_RATE;
+  const frames: number[] = [];
+  for (let n = Math.ceil((begin - times[0]) * rate); times[0] + n / rate < end; n++)
+    frames.push(times[0] + n / rate);
+  return frames;
+}
+
+/** A time as the track's storage holds it. */
+export function stored({ storage }: RotationTrack, time: number): number {
+  return storage.timeComponent === 'float32' ? Math.fround(time) : time;
+}

@@ -1,0 +1,216 @@
+import {
+  type Curve,
+  type PacedCurve,
+  type RotationTrack,
+  SlewcurveError,
+  type Span,
+  VALUES_PER_KEY,
+  angleBetween,
+  dot,
+  playAs,
+  regime,
+  replaceTrack,
+} from '@slewcurve/core';
+import { placeOf } from '../acted-keys.js';
+import { DEGREES, editResult } from '../edit-result.js';
+import type { Step } from '../step.js';
+import { storedValue, tangentFor } from '../stored-key.js';
+import type { EditResult, Price, TimeMap } from '../verb.js';
+import { bendsOf } from './bends.js';
+import { type NewKey, frameKeys, movedKeys } from './new-keys.js';
+
+/** Share of a gap by which the side before a key is looked at. */
+const BEFORE = 1e-6;
+
+/**
+ * Stores the path of a track at a new pace, as the step says, or else by `needs`: `steady` where each segment keeps one speed, so that moved keys say all;
+ * `smooth` where the speed changes between keys.
+ *
+ * Moved keys keep their values to the bit, and each segment its path: under CUBICSPLINE its tangents are scaled by how much faster the segment runs. On
+ * frames keys are read off the path, and the keys at the ends of the span, kept ones and all of a sparse track travel there unchanged. CUBICSPLINE
+ * tangents are ½·q·(ω, 0) there, ω the exact rate at the new pace.
+ *
+ * @throws SlewcurveError `step.no-room`, `step.one-mode`, `step.kept-in-the-way`
+ */
+export function storePaced(
+  track: RotationTrack,
+  span: Span,
+  paced: PacedCurve,
+  step: Step,
+  needs: 'steady' | 'smooth',
+): EditResult {
+  const isDense = regime(track) === 'dense';
+  const fits = needs === 'steady' && !isDense && track.interpolation === 'LINEAR';
+  const store = step.store ?? (fits || track.interpolation === 'STEP' ? 'move' : 'frames');
+  const keys = store === 'move' ? movedKeys(track, paced) : frameKeys(track, span, paced, isDense, step.keep);
+  return storeKeys(track, span, paced, step, store, keys);
+}
+
+/** Stores the path at a new pace by given keys, those of the old track among them unchanged. */
+export function storeKeys(
+  track: RotationTrack,
+  span: Span,
+  paced: PacedCurve,
+  step: Step,
+  store: NonNullable<Step['store']>,
+  keys: readonly NewKey[],
+): EditResult {
+  if (store === 'cubic' && track.interpolation !== 'CUBICSPLINE') checkWholeTrack(track, span);
+  checkRoom(track, keys);
+  const after =
+    store === 'cubic' || (store === 'frames' && track.interpolation === 'CUBICSPLINE')
+      ? cubicTrack(track, span, paced, keys)
+      : plainTrack(track, paced, keys);
+  return pacedResult(track, after, keys, span, paced, paced.retiming, step);
+}
+
+/** The result of a pace edit, with its price and its bends. */
+export function pacedResult(
+  track: RotationTrack,
+  after: RotationTrack,
+  keys: readonly NewKey[],
+  acted: Span,
+  paced: Pick<Curve, 'orientation'>,
+  retiming: Omit<TimeMap, 'turnsBack'>,
+  step: Step,
+  turnsBack = false,
+): EditResult {
+  const isNew = keys.length > track.times.length;
+  const frames = keys.flatMap(({ old }, key) => (old === undefined ? [key] : []));
+  const inserted = isNew ? frames.slice(-(keys.length - track.times.length)) : [];
+  return {
+    ...editResult(track, after, { inserted }),
+    repaced: {
+      retiming: { oldTime: (t) => retiming.oldTime(t), newTime: (old) => retiming.newTime(old), turnsBack },
+      acted,
+      with: step.with ?? 'node',
+      price: priceOf(track, after, paced),
+      bends: bendsOf(after),
+    },
+  };
+}
+
+function plainTrack(track: RotationTrack, paced: Curve, keys: readonly NewKey[]): RotationTrack {
+  const size = VALUES_PER_KEY[track.interpolation];
+  const values = new Float64Array(size * keys.length);
+  let before: Float64Array | undefined;
+  keys.forEach(({ time, old }, key) => {
+    const at = values.subarray(key * size, key * size + size);
+    if (old === undefined) sampled(at, paced, time, before);
+    else at.set(track.values.subarray(old * size, old * size + size));
+    before = size === 4 ? at : undefined;
+  });
+  const times = Float64Array.from(keys, ({ time }) => time);
+  if (track.interpolation === 'CUBICSPLINE') scaleTangents(values, track.times, times);
+  return replaceTrack(track, { times, values, breaks: breaksOf(track, keys) });
+}
+
+/** Scales what leaves and enters each segment by how much faster it runs now, so that it plays the same path. */
+function scaleTangents(values: Float64Array, olds: Float64Array, news: Float64Array): void {
+  for (let key = 0; key + 1 < news.length; key++) {
+    const scale = (olds[key + 1] - olds[key]) / (news[key + 1] - news[key]);
+    if (scale === 1) continue;
+    for (let i = 0; i < 4; i++) {
+      values[12 * key + 8 + i] *= scale;
+      values[12 * (key + 1) + i] *= scale;
+    }
+  }
+}
+
+function cubicTrack(
+  track: RotationTrack,
+  span: Span,
+  paced: PacedCurve,
+  keys: readonly NewKey[],
+): RotationTrack {
+  const values = new Float64Array(12 * keys.length);
+  const isCubic = track.interpolation === 'CUBICSPLINE';
+  let before: Float64Array | undefined;
+  keys.forEach(({ time, old }, key) => {
+    const value = values.subarray(12 * key + 4, 12 * key + 8);
+    if (old === undefined) sampled(value, paced, time, before);
+    else value.set(storedValue(track, old));
+    if (!isCubic && before && dot(value, before) < 0) for (let i = 0; i < 4; i++) value[i] = -value[i];
+    before = value;
+    const kept = isCubic && old !== undefined ? old : undefined;
+    const tangent = (t: number): Float64Array => tangentFor(value, paced.rate(new Float64Array(3), t, 'own'));
+    if (key > 0) values.set(tangent(time - BEFORE * (time - keys[key - 1].time)), 12 * key);
+    if (key < keys.length - 1) values.set(tangent(time), 12 * key + 8);
+    if (kept !== undefined) keepOuterTangents(values, 12 * key, track, kept, span);
+  });
+  return replaceTrack(track, {
+    times: Float64Array.from(keys, ({ time }) => time),
+    values,
+    interpolation: 'CUBICSPLINE',
+    breaks: breaksOf(track, keys),
+  });
+}
+
+/** Puts back the stored tangents of those sides of an old key that play outside the span. */
+function keepOuterTangents(
+  values: Float64Array,
+  at: number,
+  track: RotationTrack,
+  key: number,
+  [from, to]: Span,
+): void {
+  const time = track.times[key];
+  const stored = track.values.subarray(12 * key, 12 * key + 12);
+  if (time <= from || time > to) values.set(stored.subarray(0, 4), at);
+  if (time < from || time >= to) values.set(stored.subarray(8), at + 8);
+}
+
+/** The pose at a new time, on the side of S³ of the key before. */
+function sampled(out: Float64Array, paced: Curve, time: number, before: Float64Array | undefined): void {
+  paced.orientation(out, time);
+  if (before && dot(out, before) < 0) for (let i = 0; i < 4; i++) out[i] = -out[i];
+}
+
+function breaksOf(track: RotationTrack, keys: readonly NewKey[]): number[] {
+  const broken = new Set(track.breaks);
+  return keys.flatMap(({ old }, key) => (old !== undefined && broken.has(old) ? [key] : []));
+}
+
+function priceOf(before: RotationTrack, after: RotationTrack, paced: Pick<Curve, 'orientation'>): Price {
+  const stored = playAs(after, 'as-written');
+  const { times } = after;
+  const [p, q] = [new Float64Array(4), new Float64Array(4)];
+  let degrees = 0;
+  for (let key = 0; key + 1 < times.length; key++)
+    for (let part = 0; part < 4; part++) {
+      const t = times[key] + ((times[key + 1] - times[key]) * part) / 4;
+      degrees = Math.max(degrees, angleBetween(stored.orientation(p, t), paced.orientation(q, t)) * DEGREES);
+    }
+  return { seconds: lastOf(times) - lastOf(before.times), degrees, bytes: bytesOf(after) - bytesOf(before) };
+}
+
+function lastOf(times: Float64Array): number {
+  return times[times.length - 1];
+}
+
+/** Bytes of one number by storage; text counts as eight letters. */
+const BYTES = { float64: 8, float32: 4, int16: 2, uint16: 2, int8: 1, uint8: 1, text: 8 } as const;
+
+function bytesOf({ times, values, storage }: RotationTrack): number {
+  return times.length * BYTES[storage.timeComponent] + values.length * BYTES[storage.component];
+}
+
+function checkRoom(track: RotationTrack, keys: readonly NewKey[]): void {
+  for (let key = 1; key < keys.length; key++) {
+    if (keys[key].time > keys[key - 1].time) continue;
+    throw new SlewcurveError(
+      'step.no-room',
+      `Keys ${keys[key - 1].old ?? key - 1} and ${keys[key].old ?? key} would fall on one time, ${keys[key].time} s: nothing turns between them, or too little for the stored times. Store at the frames, or leave the rest out of the span.`,
+      placeOf(track),
+    );
+  }
+}
+
+function checkWholeTrack(track: RotationTrack, [from, to]: Span): void {
+  if (from === track.times[0] && to === lastOf(track.times)) return;
+  throw new SlewcurveError(
+    'step.one-mode',
+    `A track has one interpolation, and this one is ${track.interpolation}: it becomes cubic as a whole or not at all. Leave the span out, or store at the frames.`,
+    placeOf(track),
+  );
+}
