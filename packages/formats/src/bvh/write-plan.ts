@@ -104,7 +104,7 @@ function checkHolds(file: string, read: ReadJoint, track: RotationTrack): void {
         `${track.id}, key ${place3.key}: a number that is not finite can't be written.`,
         place3,
       );
-    if (i % 3 >= read.columns.length)
+    if (i % 3 >= read.columns.length && track.values[i] !== 0)
       throw new SlewcurveError(
         'bvh.fixed-channels',
         `${track.id}, key ${place3.key} would turn about ${track.sequence?.[i % 3] ?? ''}; the joint has ${read.columns.length} rotation channels.`,
