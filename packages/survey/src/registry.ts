@@ -1,5 +1,9 @@
+import { coarse } from './rules/file/coarse.js';
+import { idle } from './rules/file/idle.js';
 import { notFinite } from './rules/file/not-finite.js';
 import { notNormalised } from './rules/file/not-normalised.js';
+import { ragged } from './rules/file/ragged.js';
+import { timeGrid } from './rules/file/time-grid.js';
 import { timeOrder } from './rules/file/time-order.js';
 import { cutSmear } from './rules/jump/cut-smear.js';
 import { firstKey } from './rules/jump/first-key.js';
@@ -20,6 +24,10 @@ export const RULES: readonly Rule[] = Object.freeze([
   notFinite,
   notNormalised,
   timeOrder,
+  timeGrid,
+  coarse,
+  idle,
+  ragged,
   signFlip,
   half,
   firstKey,

@@ -16,6 +16,7 @@ import type { Finding } from './finding.js';
 import { NO_HOUSE_RULES, levelAt, limitsAt, roleAt, type Address, type HouseRules } from './house-rules.js';
 import { declaredHere, isExcused } from './declared-here.js';
 import { keptKeys } from './kept-keys.js';
+import { latticeOf } from './lattice.js';
 import { RULES } from './registry.js';
 import { roleOf } from './roles.js';
 import type { Limits, PlayedTrack, Rule, TrackContext } from './rule.js';
@@ -87,7 +88,7 @@ function contextOf(
 ): TrackContext {
   const { clip = alone(track), nodes = [], playbacks = ['as-written'] } = settings;
   const role = roleAt(house, track.id) ?? roleOf(track, nodes);
-  const stored = withDeclaredCuts(track, house);
+  const stored = withLattice(withDeclaredCuts(track, house));
   const playable = playableTrack(stored);
   return {
     stored,
@@ -129,6 +130,13 @@ function withDeclaredCuts(track: RotationTrack, { declared }: HouseRules): Rotat
   const sorted = [...breaks];
   sorted.sort((a, b) => a - b);
   return replaceTrack(track, { breaks: sorted });
+}
+
+/** The track, its storage as coarse as its values show: nothing finer is claimed of it. */
+function withLattice(track: RotationTrack): RotationTrack {
+  const lattice = latticeOf(track);
+  if (lattice === 0 || track.storage.lattice !== undefined) return track;
+  return replaceTrack(track, { storage: { ...track.storage, lattice } });
 }
 
 /** The key that a declared time means: the nearest within half the gap to its neighbours; -1 where there is none. */

@@ -16,6 +16,8 @@ export const WORKED_OUT: readonly string[] = [
   'file.time-order',
   'file.coarse',
   'file.idle',
+  'file.ragged',
+  'file.time-grid',
   'turn.sign-flip',
   'turn.half',
   'turn.lost',

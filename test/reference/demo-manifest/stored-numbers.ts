@@ -1,5 +1,5 @@
-// RULES 1, 2, 3, 5, 11 (family file).
-import { entry, type Entry } from './entry.js';
+// RULES 1 to 5, 10, 11 (family file). Each clip of the demo has one rotation track, so that none is ragged.
+import { entry, isDense, type Entry } from './entry.js';
 import type { Track } from './read-scene.js';
 import { ascending, isStill, median, turnBetween } from './turns.js';
 
@@ -10,6 +10,7 @@ export function storedNumbers(track: Track): Entry[] {
     ...timeOrder(track),
     ...idle(track),
     ...coarse(track),
+    ...timeGrid(track),
   ];
 }
 
@@ -41,6 +42,21 @@ function idle(track: Track): Entry[] {
   const travelled = track.steps.reduce((sum, step) => sum + Math.hypot(...step), 0);
   if (track.keys.length <= 2 || travelled >= 2 * track.floor) return [];
   return [entry(track, 'file.idle', [], travelled, 'deg', 2 * track.floor, { level: 'note' })];
+}
+
+/** Frames of the usual rates: none of the demo's dense clocks is a rounded one. */
+function timeGrid(track: Track): Entry[] {
+  const { times } = track;
+  const gaps = times.slice(1).map((time, k) => time - times[k]);
+  const mean = (times[times.length - 1] - times[0]) / gaps.length;
+  const rate = [24, 25, 30, 48, 50, 60, 100, 120].find((one) => Math.abs(one * mean - 1) < 0.01);
+  const thousands = times.every((time) => Math.abs(time * 1e3 - Math.round(time * 1e3)) < 1e-3);
+  if (!isDense(track) || rate === undefined || !thousands) return [];
+  const worst = Math.max(...gaps.map((gap) => Math.abs(gap - mean)));
+  const key = gaps.findIndex((gap) => Math.abs(gap - mean) === worst) + 1;
+  // A float32 time of a minute is good to 4 millionths of a second.
+  if (worst <= 0.01 / rate + 4e-6) return [];
+  return [entry(track, 'file.time-grid', [key], worst, 's', 1e-5)];
 }
 
 /** Share of steps that read zero while the track moves by over 2 deg/s over the quarter second on each side. */

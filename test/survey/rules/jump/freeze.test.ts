@@ -10,7 +10,7 @@ function jumps(track: RotationTrack, houseRules = NO_HOUSE_RULES) {
 
 const sway = (key: number): number => 40 * Math.sin(key / 30);
 const eased = (u: number): number => u * u * u * (10 - 15 * u + 6 * u * u);
-const rest = (key: number): number =>
+const pause = (key: number): number =>
   key < 40 ? 20 * eased(key / 40) : key < 50 ? 20 : 20 + 20 * eased((key - 50) / 40);
 const frozen = turningTrack((key) => sway(key > 60 && key <= 65 ? 60 : key), 150, 60);
 
@@ -30,7 +30,7 @@ describe('jump.freeze', () => {
   });
 
   test('a hold that is eased into and out of is none, nor one that a fast move starts from', () => {
-    expect(jumps(turningTrack((key) => rest(Math.min(key, 90)), 100, 60))).toEqual([]);
+    expect(jumps(turningTrack((key) => pause(Math.min(key, 90)), 100, 60))).toEqual([]);
     const start = turningTrack((key) => (key < 40 ? key : key < 45 ? 40 : 40 + 5 * (key - 44)), 90, 60);
     expect(jumps(start).filter(({ rule }) => rule === 'jump.freeze')).toEqual([]);
   });
