@@ -29,7 +29,7 @@ import { paper } from './theme/paper.js';
 
 type Span = readonly [number, number];
 
-const ROWS_A_PICTURE = 2;
+const ROWS_A_PICTURE = 3;
 
 /**
  * Chart: one track. Its angular speed as played, on paper folded into rows, with its keys as posts, findings as carets and notes
@@ -206,7 +206,7 @@ export class SlewChart extends LitElement {
     const rows = this.rows;
     const now = this.hover ?? this.time;
     const here = rowAt(rows, now);
-    return html`${chartHead(data)}
+    return html`${guard([data], () => chartHead(data))}
       ${chartChoices(
         { data, fold: this.foldNow, scale: this.scale ?? 'usual', opened: this.opened !== undefined },
         {

@@ -138,11 +138,7 @@ export class SlewRoster extends LitElement {
     if (this.rows.length === 0) return html`<p class="empty">${this.message}</p>`;
     return html`${this.tools()}
       <p class="tally" role="status">${tally(this.rows, this.shown)}</p>
-      ${
-        this.shown.length === 0
-          ? html`<p class="empty">No track has ${this.find ? html`“${this.find}”` : 'such a finding'}.</p>`
-          : this.list()
-      }
+      ${this.shown.length === 0 ? html`<p class="empty">${foundNothing(this.find)}</p>` : this.list()}
       <span class="swatch"></span>`;
   }
 
@@ -362,6 +358,10 @@ export class SlewRoster extends LitElement {
     event.preventDefault();
     this.focusFind();
   };
+}
+
+function foundNothing(find: string): string {
+  return find ? `No track has “${find}”. Names are those of the file.` : 'No track has such a finding.';
 }
 
 function tally(rows: readonly RosterRow[], shown: readonly RosterRow[]): string {

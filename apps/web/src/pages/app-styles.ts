@@ -166,7 +166,7 @@ export const appStyles: CSSResult[] = [
       main.roster,
       main.chart {
         display: grid;
-        grid-template-columns: minmax(30rem, 2fr) minmax(48rem, 3fr);
+        grid-template-columns: minmax(28rem, 1fr) minmax(0, 2fr);
         gap: 2.5rem;
         align-items: start;
       }

@@ -27,16 +27,16 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
     return html`<p role="alert">
         <b>${name}</b> can’t be read. ${withoutName(error?.message ?? '', name)} <code>${error?.code}</code>
       </p>
-      <button @click=${() => actions.close(id)}>Put ${name} away</button>`;
+      <button class="on-screen" @click=${() => actions.close(id)}>Put ${name} away</button>`;
   if (status === 'stopped')
     return html`<p><b>${name}</b>: stopped. What was drawn so far stands below.</p>
-      <button @click=${() => actions.goOn(id)}>Go on with ${name}</button>
-      <button @click=${() => actions.close(id)}>Put ${name} away</button>`;
+      <button class="on-screen" @click=${() => actions.goOn(id)}>Go on with ${name}</button>
+      <button class="on-screen" @click=${() => actions.close(id)}>Put ${name} away</button>`;
   if (status !== 'ready') return inProgress(file, actions);
   const steps = linesOf(file.history).filter((line) => !line.skipped).length;
   return html`<p><b>${name}</b>: ${sayFile(file)}</p>
     ${(file.opened?.problems ?? []).map((problem) => html`<p class="problem">${problem.message} <code>${problem.code}</code></p>`)}
-    <p class="doings">
+    <p class="doings on-screen">
       ${
         [...file.findings.values()].flat().some((finding) => finding.remedy)
           ? html`<button @click=${() => actions.mendAll(id)}>Mend all that is proposed</button>`
@@ -64,7 +64,7 @@ function inProgress({ id, name, status, progress }: FileWork, actions: FileActio
       <b>${name}</b>: ${status === 'opening' ? 'opening' : 'surveying'},
       <progress aria-label="Progress of ${name}" max="1" .value=${share ?? 0}></progress> ${words}
     </p>
-    <button @click=${() => actions.stop(id)}>Stop</button>`;
+    <button class="on-screen" @click=${() => actions.stop(id)}>Stop</button>`;
 }
 
 function sayFile({ opened, report, findings, saved, history }: FileWork): string {

@@ -267,7 +267,7 @@ export const chartStyles: CSSResult = css`
   :host(:focus-within) .row.here .sheet {
     box-shadow: -5px 0 0 -2px var(--_ink);
   }
-  @container (max-width: 56rem) {
+  @container (max-width: 48rem) {
     .heads,
     .rows::before {
       display: none;
@@ -303,6 +303,9 @@ export const chartStyles: CSSResult = css`
     }
   }
   @media print {
+    details:not([open]) {
+      display: none;
+    }
     .row {
       break-inside: avoid;
     }

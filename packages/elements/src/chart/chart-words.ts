@@ -1,6 +1,6 @@
 import { html, nothing, svg, type TemplateResult } from 'lit';
-import { trackName, type ChartData, type OtherMotion } from './chart-data.js';
-import type { Reading } from './motion.js';
+import { peakSpeed, trackName, type ChartData, type OtherMotion } from './chart-data.js';
+import type { Motion, Reading } from './motion.js';
 import { sayAngle, sayCount, sayRate, saySpan, sayTime } from './quantity.js';
 import { tableLines, textTwin } from './text-twin.js';
 
@@ -14,7 +14,7 @@ export function chartHead(data: ChartData): TemplateResult {
     <p class="facts">
       As played: ${data.playback}${data.second ? html`; also ${data.second.name}` : nothing}.
       ${sayCount(data.keys.length, 'key')}, ${saySpan(data.motion.end - data.motion.start)}. Noise floor
-      ${sayRate(data.noiseFloor)}.
+      ${sayFloor(data.noiseFloor)}.
     </p>
     ${legend(data)}`;
 }
@@ -29,10 +29,19 @@ function sample(kind: string): TemplateResult {
 function legend(data: ChartData): TemplateResult | typeof nothing {
   if (!data.before && !data.second) return nothing;
   return html`<p class="legend">
-    <span>${sample('trace')}${data.before ? 'after' : data.playback}</span>
-    ${data.before ? html`<span>${sample('before')}${data.before.name}</span>` : nothing}
-    ${data.second ? html`<span>${sample('second')}${data.second.name}</span>` : nothing}
+    <span>${sample('trace')}${data.before ? 'after' : data.playback}, ${upTo(data.motion)}</span>
+    ${data.before ? html`<span>${sample('before')}${data.before.name}, ${upTo(data.before.motion)}</span>` : nothing}
+    ${data.second ? html`<span>${sample('second')}${data.second.name}, ${upTo(data.second.motion)}</span>` : nothing}
   </p>`;
+}
+
+function upTo(motion: Motion): string {
+  return `up to ${sayRate(peakSpeed(motion).speed)}`;
+}
+
+/** Floors so low that nobody minds them need no digits. */
+function sayFloor(floor: number): string {
+  return floor < 0.001 ? 'below 0.001 deg/s' : sayRate(floor);
 }
 
 /** The numbers under the cursor. */

@@ -110,7 +110,7 @@ export const rosterStyles: CSSResult = css`
   @container (max-width: 56rem) {
     .heads,
     .option {
-      grid-template-columns: minmax(0, 1fr) minmax(0, 2fr) 7rem;
+      grid-template-columns: minmax(0, 1.2fr) minmax(0, 2fr) 9.25rem;
     }
     .heads > :nth-child(n + 4),
     .option > .number {

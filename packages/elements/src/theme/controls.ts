@@ -49,6 +49,12 @@ export const controls: CSSResult = css`
     background: var(--_ink);
     color: var(--_paper);
   }
+  @media (forced-colors: active) {
+    /* Else the words get a backing of their own. */
+    button.main {
+      forced-color-adjust: none;
+    }
+  }
   select,
   input:not([type='range'], [type='radio'], [type='checkbox']) {
     min-height: 44px;
