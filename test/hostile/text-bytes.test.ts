@@ -41,7 +41,7 @@ async function survives(bytes: Uint8Array, options: OpenOptions): Promise<'opene
     const file = await openAnimation(bufferSource(bytes), options);
     const tracks = file.clips.flatMap((clip) => clip.tracks);
     const same = await file.plan(tracks);
-    expect(patchedBytes(bytes, same)).toEqual(bytes);
+    expect(same.ranges).toEqual([]);
     const changed = tracks.map((track) => replaceTrack(track, { values: track.values.map((x) => -x) }));
     const made = patchedBytes(bytes, await file.plan(changed));
     const again = await openAnimation(bufferSource(made), options);
