@@ -200,7 +200,5 @@ describe('lift out', () => {
     expect(code({ keys: [2], span: [0, 0.01] })).toBe('step.nothing-left');
     expect(code({ keys: [0, 1, 2, 3, 4] })).toBe('step.no-neighbours');
     expect(code({ keys: [0] }, keyed(WAVE, [0], 'LINEAR'))).toBe('step.no-neighbours');
-    const angles = rotationTrack({ times: [0, 1], values: [0, 0, 0, 1, 0, 0], interpolation: 'EULER' });
-    expect(code({ keys: [0] }, angles)).toBe('step.needs-quaternions');
   });
 });

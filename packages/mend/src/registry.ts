@@ -14,15 +14,16 @@ import { sameSide } from './edits/same-side.js';
 import { shrink, stretch } from './edits/stretch.js';
 import { wholeTurns } from './edits/whole-turns.js';
 import { nearestWord } from './nearest-word.js';
+import { onAngles } from './on-angles.js';
 import type { Verb } from './verb.js';
 
 /** Every edit that is built. */
 export const VERBS: readonly Verb[] = Object.freeze([
   sameSide,
   chooseSide,
-  liftOut,
-  bridge,
-  reSeat,
+  onAngles(liftOut),
+  onAngles(bridge),
+  onAngles(reSeat),
   normaliseKeys,
   easeInOut,
   evenOut,
