@@ -15,6 +15,9 @@ import { elbow } from './rules/pace/elbow.js';
 import { doubledEnd } from './rules/seam/doubled-end.js';
 import { loopGap } from './rules/seam/loop-gap.js';
 import { loopKink } from './rules/seam/loop-kink.js';
+import { creep } from './rules/shake/creep.js';
+import { grain } from './rules/shake/grain.js';
+import { hum } from './rules/shake/hum.js';
 import { half } from './rules/turn/half.js';
 import { signFlip } from './rules/turn/sign-flip.js';
 import type { Rule } from './rule.js';
@@ -37,6 +40,9 @@ export const RULES: readonly Rule[] = Object.freeze([
   loneKey,
   shelf,
   elbow,
+  grain,
+  hum,
+  creep,
   loopGap,
   loopKink,
   doubledEnd,

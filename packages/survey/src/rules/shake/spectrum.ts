@@ -1,0 +1,103 @@
+/** The strongest line of a window of vectors: where it lies, the power within 1 Hz of it and that of the whole window. */
+export type Spectrum = (
+  vectors: Float64Array,
+  from: number,
+) => { readonly hertz: number; readonly near: number; readonly total: number };
+
+/** Hertz on either side of a line that belong to it. */
+const BESIDE = 1;
+/** Places between two bins at which the line is looked for. */
+const FINE = 50;
+
+/**
+ * Discrete Fourier spectrum of `count` vectors at `rate` a second, their mean taken off, no taper; lines above `least` hertz. Power is
+ * |Σ v·e^(−2πifn/rate)|², over all three axes.
+ */
+export function spectrum(count: number, rate: number, least: number): Spectrum {
+  const cosines = Float64Array.from({ length: count }, (_, n) => Math.cos((2 * Math.PI * n) / count));
+  const sines = Float64Array.from({ length: count }, (_, n) => Math.sin((2 * Math.PI * n) / count));
+  const centred = new Float64Array(3 * count);
+  const powers = new Float64Array(Math.floor(count / 2) + 1);
+  const hertzOf = (bin: number): number => (bin * rate) / count;
+
+  /** Power at a bin. */
+  const powerAt = (bin: number): number => {
+    let [rx, ry, rz, ix, iy, iz] = [0, 0, 0, 0, 0, 0];
+    for (let n = 0, turn = 0; n < count; n++, turn += bin) {
+      if (turn >= count) turn -= count;
+      const c = cosines[turn]!;
+      const s = sines[turn]!;
+      const x = centred[3 * n]!;
+      const y = centred[3 * n + 1]!;
+      const z = centred[3 * n + 2]!;
+      rx += c * x;
+      ry += c * y;
+      rz += c * z;
+      ix += s * x;
+      iy += s * y;
+      iz += s * z;
+    }
+    return rx * rx + ry * ry + rz * rz + ix * ix + iy * iy + iz * iz;
+  };
+
+  return (vectors, from) => {
+    centre(centred, vectors, from, count);
+    let total = 0;
+    for (let bin = 1; bin < powers.length; bin++) {
+      powers[bin] = powerAt(bin);
+      total += powers[bin] ?? 0;
+    }
+    const best = strongestLine(powers, (least * count) / rate);
+    if (best === 0) return { hertz: least, near: 0, total };
+    const hertz = Math.max(least, finest(centred, count, rate, hertzOf(best)));
+    let near = 0;
+    for (let bin = 1; bin < powers.length; bin++)
+      if (Math.abs(hertzOf(bin) - hertz) <= BESIDE) near += powers[bin] ?? 0;
+    return { hertz, near, total };
+  };
+}
+
+/** The bin above `least` bins with the most power; 0 where there is none. The skirt of a slower line is no line of its own. */
+function strongestLine(powers: Float64Array, least: number): number {
+  let best = 0;
+  for (let bin = Math.floor(least) + 1; bin < powers.length; bin++) {
+    const power = powers[bin] ?? 0;
+    if (power > (powers[bin - 1] ?? 0) && (best === 0 || power > (powers[best] ?? 0))) best = bin;
+  }
+  return best;
+}
+
+function centre(out: Float64Array, vectors: Float64Array, from: number, count: number): void {
+  for (let axis = 0; axis < 3; axis++) {
+    let sum = 0;
+    for (let n = 0; n < count; n++) sum += vectors[3 * (from + n) + axis] ?? 0;
+    for (let n = 0; n < count; n++) out[3 * n + axis] = (vectors[3 * (from + n) + axis] ?? 0) - sum / count;
+  }
+}
+
+/** The strongest frequency within one bin of `hertz`. */
+function finest(centred: Float64Array, count: number, rate: number, hertz: number): number {
+  let best = hertz;
+  let most = -1;
+  for (let i = -FINE; i <= FINE; i++) {
+    const here = hertz + (i * rate) / count / FINE;
+    const power = linePower(centred, count, (2 * Math.PI * here) / rate);
+    if (power > most) [best, most] = [here, power];
+  }
+  return best;
+}
+
+function linePower(centred: Float64Array, count: number, turn: number): number {
+  const [cosine, sine] = [Math.cos(turn), Math.sin(turn)];
+  const sums = new Float64Array(6);
+  let [c, s] = [1, 0];
+  for (let n = 0; n < count; n++) {
+    for (let axis = 0; axis < 3; axis++) {
+      const value = centred[3 * n + axis] ?? 0;
+      sums[axis] = (sums[axis] ?? 0) + c * value;
+      sums[3 + axis] = (sums[3 + axis] ?? 0) + s * value;
+    }
+    [c, s] = [c * cosine - s * sine, s * cosine + c * sine];
+  }
+  return sums.reduce((all, sum) => all + sum * sum, 0);
+}
