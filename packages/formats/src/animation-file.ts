@@ -19,11 +19,26 @@ export interface AnimationFile {
   /** Faults of single nodes, channels, samplers and accessors, in the file's order. A channel named here may have no track. */
   readonly problems: readonly FileProblem[];
   /**
-   * Plan that writes the given tracks (matched by `clip` and `id`) into the file and changes nothing else.
+   * Plan that writes the given tracks (matched by `clip` and `id`) into the file, lets what follows them travel, and changes nothing
+   * else.
    *
    * @throws SlewcurveError `plan.unknown-track`, `plan.doubled-track`, `plan.cannot-write`
    */
-  plan(changed: readonly RotationTrack[]): Promise<PatchPlan>;
+  plan(changed: readonly RotationTrack[], followers?: readonly Follower[]): Promise<PatchPlan>;
+}
+
+/**
+ * Whatever is no rotation and goes by the clock of one that was re-timed: positions, scales, weights. Its keys travel and its values stay, so that a
+ * camera's place goes with its aim. Several are followed one after the other. A format that holds nothing but rotations has nobody to follow.
+ */
+export interface Follower {
+  readonly clip: string;
+  /** Id of a rotation track: what else moves its node. Left out: all that the clip moves. */
+  readonly track?: string;
+  /** True where later keys come earlier. */
+  readonly turnsBack: boolean;
+  /** When what stood at an old time stands now, seconds. */
+  newTime(old: number): number;
 }
 
 /** What opening needs beside the bytes. */

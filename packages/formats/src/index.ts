@@ -1,4 +1,4 @@
-export type { AnimationFile, FileProblem, OpenOptions } from './animation-file.js';
+export type { AnimationFile, FileProblem, Follower, OpenOptions } from './animation-file.js';
 export { checkPatchPlan, invertPatchPlan, patchedBytes, patchedSource } from './patched-source.js';
 export { openAnimation } from './open.js';
 export type { PatchPlan, PatchRange } from './patch-plan.js';

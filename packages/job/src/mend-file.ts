@@ -2,11 +2,12 @@ import { SlewcurveError, type RotationTrack } from '@slewcurve/core';
 import {
   invertPatchPlan,
   patchedSource,
+  type Follower,
   type OpenOptions,
   type PatchPlan,
   type Source,
 } from '@slewcurve/formats';
-import { applySteps, type JobCard } from '@slewcurve/mend';
+import { applySteps, type AppliedStep, type JobCard } from '@slewcurve/mend';
 import type { Finding } from '@slewcurve/survey';
 import { newFaults } from './new-faults.js';
 import { openFile, type OpenedFile } from './open-file.js';
@@ -51,7 +52,7 @@ export async function mendFile(
   const tracks = opened.file.clips.flatMap((clip) => clip.tracks);
   const applied = applySteps(tracks, card.steps);
   const changed = applied.tracks.filter((track) => !tracks.includes(track));
-  const plan = await opened.file.plan(changed);
+  const plan = await opened.file.plan(changed, followersOf(applied.results));
   const result = patchedSource(opened.source, plan);
   const again = await openFile(result, options);
   assertOthersEqual(tracks, again, changed);
@@ -66,6 +67,16 @@ export async function mendFile(
     steps: stepReports(applied.results),
     raised: newFaults(before.findings, report.findings),
   };
+}
+
+/** What else goes by the new clocks, in the order of the steps. */
+function followersOf(applied: readonly AppliedStep[]): Follower[] {
+  return applied.flatMap(({ before, result: { repaced } }) => {
+    if (!repaced || repaced.with === 'track') return [];
+    const { turnsBack } = repaced.retiming;
+    const newTime = (old: number): number => repaced.retiming.newTime(old);
+    return [{ clip: before.clip, turnsBack, newTime, ...(repaced.with === 'node' && { track: before.id }) }];
+  });
 }
 
 /** Every track that no step named must come back from the new bytes as it was. */

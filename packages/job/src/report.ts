@@ -1,5 +1,5 @@
 import type { Finding, Level } from '@slewcurve/survey';
-import type { Step } from '@slewcurve/mend';
+import type { Bend, Price, Step } from '@slewcurve/mend';
 
 /** One clip of a report. `keys` and `tracks` count rotation tracks. */
 export interface ClipReport {
@@ -61,6 +61,10 @@ export interface StepReport {
   readonly outside: number;
   /** Seconds that the clip became longer. */
   readonly added: number;
+  /** Pace verbs alone, the worst of the tracks: what the new pace costs. Seconds, degrees, bytes. */
+  readonly price?: Price;
+  /** Pace verbs alone: where the new pace takes a bend of the path fast, new seconds and deg/s; worst first. */
+  readonly bends?: readonly Bend[];
 }
 
 /** Finding counts by level, and how many are stamped. */

@@ -1,4 +1,4 @@
-import { proveEdit, type AppliedStep } from '@slewcurve/mend';
+import { proveEdit, type AppliedStep, type Price } from '@slewcurve/mend';
 import type { StepReport } from './report.js';
 import { significant } from '@slewcurve/survey';
 
@@ -19,5 +19,25 @@ function stepReport({ step }: AppliedStep, edits: readonly AppliedStep[]): StepR
       most(({ before, result }) => proveEdit(before, result.track, result, step.keep).outside),
     ),
     added: significant(most(({ result }) => result.added)),
+    ...paceReport(edits),
+  };
+}
+
+/** Worst price and worst bends over the tracks that a pace was given to. */
+function paceReport(edits: readonly AppliedStep[]): Pick<StepReport, 'price' | 'bends'> {
+  const paces = edits.flatMap(({ result: { repaced } }) => (repaced ? [repaced] : []));
+  if (paces.length === 0) return {};
+  const worst = (of: (price: Price) => number): number =>
+    significant(paces.reduce((most, { price }) => Math.max(most, of(price)), -Infinity));
+  const bends = paces.flatMap((pace) => pace.bends);
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  bends.sort((a, b) => b.jump - a.jump);
+  return {
+    price: {
+      seconds: worst(({ seconds }) => seconds),
+      degrees: worst(({ degrees }) => degrees),
+      bytes: paces.reduce((sum, { price }) => sum + price.bytes, 0),
+    },
+    bends: bends.slice(0, 20).map(({ time, jump }) => ({ time, jump: significant(jump) })),
   };
 }

@@ -1,4 +1,5 @@
 import { type RotationTrack, SlewcurveError } from '@slewcurve/core';
+import { follow } from './pace/follow.js';
 import { matchesPattern } from './pattern.js';
 import { verbNamed } from './registry.js';
 import type { Step } from './step.js';
@@ -51,9 +52,9 @@ export function parseJobCard(json: unknown): JobCard {
 
 /**
  * Runs steps in order over a list of tracks. `clip` and `track` of a step are patterns (`*` stands for anything); one that a track
- * has as its very name means that name alone. Tracks that no step names stay the same objects.
+ * has as its very name means that name alone. Tracks that no step names stay the same objects, but for those that a pace takes along: `with: "clip"`.
  *
- * @throws SlewcurveError `step.no-match` and what the verbs throw, with the step's number in the message; the given tracks are never
+ * @throws SlewcurveError `step.no-match`, `step.many-clocks` and what the verbs throw, with the step's number in the message; the given tracks are never
  * written, so nothing is half done.
  */
 export function applySteps(
@@ -63,14 +64,32 @@ export function applySteps(
   const current = [...tracks];
   const results = steps.flatMap((step, number) => {
     const verb = verbNamed(step.verb, { pointer: `/steps/${number}/verb` });
-    return tracksNamed(current, step, number).map((index): AppliedStep => {
+    const found = tracksNamed(current, step, number);
+    checkOneClock(step, number, found.length);
+    const run = (index: number, edit: (before: RotationTrack) => EditResult): AppliedStep => {
       const before = current[index];
-      const result = saysWhichStep(number, step, () => verb.apply(before, step));
+      const result = saysWhichStep(number, step, () => edit(before));
       current[index] = result.track;
       return { step, number, index, before, result };
-    });
+    };
+    const applied = found.map((index) => run(index, (before) => verb.apply(before, step)));
+    const { repaced } = applied[0].result;
+    if (repaced?.with !== 'clip') return applied;
+    const others = [...current.keys()].filter((index) => current[index].clip === current[found[0]].clip);
+    const following = others.filter((index) => index !== found[0]);
+    return [...applied, ...following.map((index) => run(index, (before) => follow(before, repaced, step)))];
   });
   return { tracks: current, results };
+}
+
+/** A clip goes by one clock. @throws SlewcurveError `step.many-clocks` */
+function checkOneClock(step: Step, number: number, count: number): void {
+  if (step.with !== 'clip' || count === 1) return;
+  throw new SlewcurveError(
+    'step.many-clocks',
+    `Step ${number} (${step.verb}) names ${count} tracks, and a clip can go by the clock of one alone. Name that one, or take only their nodes along.`,
+    { clip: step.clip, track: step.track, pointer: `/steps/${number}` },
+  );
 }
 
 function tracksNamed(tracks: readonly RotationTrack[], step: Step, number: number): number[] {

@@ -1,6 +1,6 @@
 /**
- * When, at a new time, the old time is: a map between two clocks that never runs back. Seconds. Before its start and after its end it stands
- * still.
+ * When, at a new time, the old time is: a map between two clocks that never runs back. Seconds. Before its start and after its end both run
+ * alike.
  */
 export interface Retiming {
   /** New seconds. */

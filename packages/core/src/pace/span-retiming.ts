@@ -41,13 +41,13 @@ export function spanRetiming(
     continuity: start < from || to < curve.end ? 0 : inner.continuity,
     oldTime(t) {
       if (!(t > from)) return t;
-      if (t >= end) return curve.end;
+      if (t >= end) return curve.end + (t - end);
       if (t >= innerEnd) return t === innerEnd ? to : Math.min(curve.end, t - shift);
       return Math.max(from, Math.min(to, inner.oldTime(t - from)));
     },
     newTime(old) {
       if (!(old > from)) return old;
-      if (old >= curve.end) return end;
+      if (old >= curve.end) return end + (old - curve.end);
       if (old >= to) return old === to ? innerEnd : old + shift;
       return from + inner.newTime(old);
     },

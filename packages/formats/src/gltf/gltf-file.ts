@@ -1,5 +1,5 @@
 import { type RotationTrack, SlewcurveError } from '@slewcurve/core';
-import type { AnimationFile, OpenOptions } from '../animation-file.js';
+import type { AnimationFile, Follower, OpenOptions } from '../animation-file.js';
 import { member, shown, textMember } from '../json-value.js';
 import { fileBuffers } from './buffers.js';
 import { readClips } from './clips.js';
@@ -23,7 +23,8 @@ export async function gltfFile(container: Container, options: OpenOptions): Prom
     nodes: Object.freeze(nodes),
     clips: Object.freeze(clips),
     problems: Object.freeze(problems),
-    plan: async (changed: readonly RotationTrack[]) => writePlan(container, buffers, tracks, changed),
+    plan: async (changed: readonly RotationTrack[], followers?: readonly Follower[]) =>
+      writePlan(container, buffers, tracks, changed, followers),
   });
 }
 

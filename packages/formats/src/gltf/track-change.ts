@@ -29,7 +29,7 @@ export interface ColumnChange {
 
 /** What one track asks of the file. A column that stays as it is has no change. */
 export interface TrackChange {
-  readonly read: ReadTrack;
+  readonly read: Pick<ReadTrack, 'channel'>;
   readonly interpolation: RotationChannel['interpolation'];
   readonly input?: ColumnChange;
   readonly output?: ColumnChange;
@@ -73,7 +73,8 @@ function trackChange(file: string, read: ReadTrack, track: RotationTrack): Track
   return { read, interpolation, ...(input && { input }), ...(output && { output }) };
 }
 
-function columnChange(
+/** The change of one column; undefined where it stays as it is, once rounded as it is stored. */
+export function columnChange(
   kind: ColumnChange['kind'],
   layout: AccessorLayout,
   original: Float64Array,

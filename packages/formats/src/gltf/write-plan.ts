@@ -1,10 +1,12 @@
 import { type RotationTrack, SlewcurveError } from '@slewcurve/core';
 import { type JsonEditor, type JsonSplice, jsonEditor } from '../json-text.js';
 import type { PatchPlan, PatchRange } from '../patch-plan.js';
+import type { Follower } from '../animation-file.js';
 import { accessorReaders } from './accessor-readers.js';
 import type { Buffers, OpenBuffer } from './buffers.js';
 import { accessorsOnClaimedBytes, countViewUsers } from './claimed-bytes.js';
 import type { Container } from './container.js';
+import { followerChanges } from './follower-changes.js';
 import { type BufferWrite, binRanges, isWritable, spliceDataUri } from './in-place.js';
 import { checkLists, hostOf, newData } from './new-data.js';
 import { placeColumns } from './place-columns.js';
@@ -19,8 +21,12 @@ export async function writePlan(
   buffers: Buffers,
   tracks: readonly ReadTrack[],
   changed: readonly RotationTrack[],
+  followers: readonly Follower[] = [],
 ): Promise<PatchPlan> {
-  const changes = trackChanges(container.file, tracks, changed);
+  const changes = [
+    ...trackChanges(container.file, tracks, changed),
+    ...(await followerChanges(container, buffers, tracks, followers)),
+  ];
   if (changes.length === 0) return { ranges: [], size: container.source.size };
   checkLists(container);
   const editor = jsonEditor(container.jsonBytes);

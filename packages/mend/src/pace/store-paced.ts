@@ -17,6 +17,7 @@ import type { Step } from '../step.js';
 import { storedValue, tangentFor } from '../stored-key.js';
 import type { EditResult, Price, TimeMap } from '../verb.js';
 import { bendsOf } from './bends.js';
+import { scaleTangents } from './scale-tangents.js';
 import { type NewKey, frameKeys, movedKeys } from './new-keys.js';
 
 /** Share of a gap by which the side before a key is looked at. */
@@ -105,18 +106,6 @@ function plainTrack(track: RotationTrack, paced: Curve, keys: readonly NewKey[])
   return replaceTrack(track, { times, values, breaks: breaksOf(track, keys) });
 }
 
-/** Scales what leaves and enters each segment by how much faster it runs now, so that it plays the same path. */
-function scaleTangents(values: Float64Array, olds: Float64Array, news: Float64Array): void {
-  for (let key = 0; key + 1 < news.length; key++) {
-    const scale = (olds[key + 1] - olds[key]) / (news[key + 1] - news[key]);
-    if (scale === 1) continue;
-    for (let i = 0; i < 4; i++) {
-      values[12 * key + 8 + i] *= scale;
-      values[12 * (key + 1) + i] *= scale;
-    }
-  }
-}
-
 function cubicTrack(
   track: RotationTrack,
   span: Span,
@@ -195,7 +184,8 @@ function bytesOf({ times, values, storage }: RotationTrack): number {
   return times.length * BYTES[storage.timeComponent] + values.length * BYTES[storage.component];
 }
 
-function checkRoom(track: RotationTrack, keys: readonly NewKey[]): void {
+/** @throws SlewcurveError `step.no-room` where two keys would have one time */
+export function checkRoom(track: RotationTrack, keys: readonly NewKey[]): void {
   for (let key = 1; key < keys.length; key++) {
     if (keys[key].time > keys[key - 1].time) continue;
     throw new SlewcurveError(
