@@ -94,13 +94,22 @@ function handleOf(item: DataTransferItem): Promise<FileSystemHandle | null> {
   return item.getAsFileSystemHandle?.().catch(() => null) ?? Promise.resolve(null);
 }
 
+// Browsers don't hand out these interfaces by name.
+function isFile(entry: FileSystemEntry): entry is FileSystemFileEntry {
+  return entry.isFile;
+}
+
+function isFolder(entry: FileSystemEntry): entry is FileSystemDirectoryEntry {
+  return entry.isDirectory;
+}
+
 async function filesUnder(entry: FileSystemEntry, folder: string): Promise<LooseFile[]> {
   const path = `${folder}${entry.name}`;
-  if (entry instanceof FileSystemFileEntry) {
+  if (isFile(entry)) {
     const file = await new Promise<File>((resolve, reject) => entry.file(resolve, reject));
     return [{ path, file }];
   }
-  if (!(entry instanceof FileSystemDirectoryEntry)) return [];
+  if (!isFolder(entry)) return [];
   const reader = entry.createReader();
   const found: LooseFile[] = [];
   for (;;) {

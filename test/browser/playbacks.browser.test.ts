@@ -1,0 +1,50 @@
+import { expect, test } from 'vitest';
+import { openApp } from '../support/open-app.js';
+
+test('the address ?demo opens the demo scene, under its own house rules', async () => {
+  const page = await openApp({ address: '?demo' });
+  await page.getByText('12 rotation tracks in').waitFor();
+  // Only the house rules say that the beetle's clips repeat; the knee's end is 3.0° off its start (DEMO).
+  await page.getByRole('searchbox', { name: 'Find a track' }).fill('beetle-knee');
+  await page.locator('slew-roster .option').first().click();
+  expect(await page.locator('slew-chart .notes .message').allTextContents()).toEqual([
+    expect.stringContaining('The loop ends 3.0° off its start'),
+  ]);
+});
+
+test('another playback is surveyed anew, and two stand on one paper with what they differ by', async () => {
+  const page = await openApp({ address: '?demo' });
+  await page.getByText('12 rotation tracks in').waitFor();
+  await page.getByRole('searchbox', { name: 'Find a track' }).fill('beetle-hip');
+  await page.locator('slew-roster .option').first().click();
+  const note = page.locator('slew-chart .notes .level');
+  expect(await note.allTextContents()).toEqual([expect.stringContaining('note turn.sign-flip')]);
+
+  await page.getByLabel('compare with:').selectOption('finite-cubic');
+  const legend = page.locator('slew-chart .legend');
+  // 114 deg/s the short way and 1.08 million as a finite cubic (DEMO, measured in a prototype).
+  expect(await legend.textContent()).toMatch(/as written, up to 114 deg\/s/);
+  expect(await legend.textContent()).toMatch(/finite cubic, up to 1,08\d,\d+ deg\/s/);
+  await page.locator('slew-chart path.second').first().waitFor();
+
+  await page.getByLabel('as played:').selectOption('finite-cubic');
+  await expect
+    .poll(() => note.allTextContents())
+    .toContainEqual(expect.stringContaining('error turn.sign-flip'));
+});
+
+test('Space plays and stops; the cursor and the 3-D view go together', async () => {
+  const page = await openApp({ address: '?demo' });
+  await page.getByText('12 rotation tracks in').waitFor();
+  await page.getByRole('searchbox', { name: 'Find a track' }).fill('lens-thirds');
+  await page.keyboard.press('Enter');
+  const cursor = page.getByRole('slider', { name: /^Cursor on the trace/ });
+  await cursor.waitFor();
+  await page.keyboard.press('Space');
+  await expect.poll(async () => Number(await cursor.getAttribute('aria-valuenow'))).toBeGreaterThan(0.2);
+  await page.keyboard.press('Space');
+  const stoppedAt = await cursor.getAttribute('aria-valuenow');
+  const view = page.getByText(`3-D view at ${Number(stoppedAt).toFixed(2)} s`);
+  await view.waitFor();
+  expect(await cursor.getAttribute('aria-valuenow')).toBe(stoppedAt);
+});
