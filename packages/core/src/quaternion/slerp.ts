@@ -34,8 +34,10 @@ export function slerpAsStored<T extends NumberStore>(
 }
 
 /**
- * `a·(n sin tΩ, cos tΩ)` with `(n sin Ω, cos Ω) = a⁻¹b`. The same curve as K. Shoemake's two sines (SIGGRAPH 1985), but nothing
- * is divided by sin Ω alone, so no small-angle branch is needed and no digit is lost however far `t` runs past the ends.
+ * Between the ends, the short way: with Ω the angle between the two quaternions, h = Ω/2 and k = 2t − 1 the orientation is
+ * `cos(hk)·(a + b)/(2 cos h) + sin(hk)·(b − a)/(2 sin h)`, K. Shoemake's two sines (SIGGRAPH 1985) by the sine of a sum over that
+ * of a double angle; 2 sin h is the length of b − a. Everywhere else: `a·(n sin tΩ, cos tΩ)` with `(n sin Ω, cos Ω) = a⁻¹b`. Neither
+ * divides by sin Ω alone, so no small-angle branch is needed and no digit is lost however far `t` runs past the ends.
  */
 function turnAlong<T extends NumberStore>(
   out: T,
@@ -54,34 +56,59 @@ function turnAlong<T extends NumberStore>(
     by = b[1] * kb,
     bz = b[2] * kb,
     bw = kb === 0 ? 1 : b[3] * kb;
-  let cosine = ax * bx + ay * by + az * bz + aw * bw;
-  if (short && cosine < 0) {
+  let dot = ax * bx + ay * by + az * bz + aw * bw;
+  if (short && dot < 0) {
     bx = -bx;
     by = -by;
     bz = -bz;
     bw = -bw;
-    cosine = -cosine;
+    dot = -dot;
   }
-  let nx = aw * bx - ax * bw - (ay * bz - az * by);
-  let ny = aw * by - ay * bw - (az * bx - ax * bz);
-  let nz = aw * bz - az * bw - (ax * by - ay * bx);
-  const sine = Math.sqrt(nx * nx + ny * ny + nz * nz);
-  if (t === 0 || (sine === 0 && cosine > 0)) return write(out, ax, ay, az, aw);
+  if (t === 0) return write(out, ax, ay, az, aw);
   if (t === 1) return write(out, bx, by, bz, bw);
-  const half = Math.atan2(sine, cosine) * Math.max(-1e300, Math.min(1e300, t));
-  if (sine === 0 && cosine < 0) nx = 1;
-  else if (sine > 0) {
-    nx /= sine;
-    ny /= sine;
-    nz /= sine;
+  let dx = bx - ax,
+    dy = by - ay,
+    dz = bz - az,
+    dw = bw - aw;
+  const s = (dx * dx + dy * dy + dz * dz + dw * dw) / 4;
+  if (s === 0) return write(out, ax, ay, az, aw);
+  let angle: number;
+  let even = 1;
+  let odd: number;
+  if (dot >= 0 && t > 0 && t < 1) {
+    const sine = Math.sqrt(s);
+    angle = Math.asin(sine) * (2 * t - 1);
+    even = 0.5 / Math.sqrt(1 - s);
+    odd = 0.5 / sine;
+    bx += ax;
+    by += ay;
+    bz += az;
+    bw += aw;
+  } else {
+    let nx = aw * bx - ax * bw - (ay * bz - az * by);
+    const ny = aw * by - ay * bw - (az * bx - ax * bz);
+    const nz = aw * bz - az * bw - (ax * by - ay * bx);
+    let sine = Math.sqrt(nx * nx + ny * ny + nz * nz);
+    angle = Math.atan2(sine, dot) * Math.max(-1e300, Math.min(1e300, t));
+    // b = -a: about a's own x axis.
+    if (sine === 0) nx = sine = 1;
+    odd = 1 / sine;
+    bx = ax;
+    by = ay;
+    bz = az;
+    bw = aw;
+    dx = aw * nx + ay * nz - az * ny;
+    dy = aw * ny + az * nx - ax * nz;
+    dz = aw * nz + ax * ny - ay * nx;
+    dw = -ax * nx - ay * ny - az * nz;
   }
-  const s = Math.sin(half);
-  const c = Math.cos(half);
-  const x = ax * c + s * (aw * nx + ay * nz - az * ny);
-  const y = ay * c + s * (aw * ny + az * nx - ax * nz);
-  const z = az * c + s * (aw * nz + ax * ny - ay * nx);
-  const w = aw * c - s * (ax * nx + ay * ny + az * nz);
-  // One Newton step towards unit length takes the rounding of the product away.
+  even *= Math.cos(angle);
+  odd *= Math.sin(angle);
+  const x = even * bx + odd * dx;
+  const y = even * by + odd * dy;
+  const z = even * bz + odd * dz;
+  const w = even * bw + odd * dw;
+  // One Newton step towards unit length takes the rounding away.
   const unit = 1.5 - 0.5 * (x * x + y * y + z * z + w * w);
   return write(out, x * unit, y * unit, z * unit, w * unit);
 }

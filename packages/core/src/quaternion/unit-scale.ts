@@ -5,8 +5,11 @@
  */
 export function unitScale(x: number, y: number, z: number, w: number): number {
   const squared = x * x + y * y + z * z + w * w;
+  const over = squared - 1;
   // 6 eps: a quaternion that was made unit and rounded is off by at most 4.5 (root, quotient, product, this sum of squares).
-  if (Math.abs(squared - 1) <= 6 * Number.EPSILON) return 1;
+  if (Math.abs(over) <= 6 * Number.EPSILON) return 1;
+  // Float32 quaternions: the root's series, whose next term is below 4e-19, is quicker.
+  if (Math.abs(over) < 1e-6) return 1 - over * (0.5 - 0.375 * over);
   if (squared > 1e-200 && squared < 1e200) return 1 / Math.sqrt(squared);
   const largest = Math.max(Math.abs(x), Math.abs(y), Math.abs(z), Math.abs(w));
   if (largest < 1e-300) return 0;

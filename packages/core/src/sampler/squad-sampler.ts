@@ -43,8 +43,8 @@ export function squadSampler(track: RotationTrack, options: SquadSamplerOptions)
       write(t, out, 0);
       return out;
     },
-    sampleMany: <T extends NumberStore>(times: ReadonlyNumberStore, out: T): T => {
-      for (let n = 0; n < times.length; n++) write(times[n], out, 4 * n);
+    sampleMany: <T extends NumberStore>(asked: ReadonlyNumberStore, out: T): T => {
+      for (let n = 0; n < asked.length; n++) write(asked[n], out, 4 * n);
       return out;
     },
   });
