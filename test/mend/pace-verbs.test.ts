@@ -144,6 +144,71 @@ describe('ease in/out', () => {
   });
 });
 
+describe('shape', () => {
+  it('presses the speed and keeps the area: ends stay, keys lie on the path', () => {
+    fc.assert(
+      fc.property(
+        played,
+        fc.double({ min: 0.2, max: 0.8, noNaN: true }),
+        fc.double({ min: -40, max: 40, noNaN: true }),
+        (track, share, by) => {
+          const { times } = track;
+          const length = times[times.length - 1] - times[0];
+          const step = { verb: 'shape', at: times[0] + share * length, by, reach: length / 5 };
+          const code = codeOf(() => repaced(track, step));
+          expect([undefined, 'pace.too-little-to-borrow']).toContain(code);
+          if (code !== undefined) return;
+          const result = repaced(track, step);
+          expect(result.repaced.price.seconds).toBeCloseTo(0, 9);
+          expect(offThePath(track, result)).toBeLessThan(0.001);
+          const lost = Math.abs(travelled(result.track) - travelled(track));
+          expect(result.repaced.price.degrees < 0.005 ? lost : 0).toBeLessThan(0.01);
+        },
+      ),
+      RUNS,
+    );
+  });
+
+  it('lets time run: pressed up, the span gets shorter', () => {
+    const [track] = fc.sample(sparse, { numRuns: 1, seed: 3 });
+    const result = repaced(track, { verb: 'shape', at: 0.8, by: 20, reach: 0.3, ends: 'run' });
+    expect(result.repaced.price.seconds).toBeLessThan(0);
+    expect(codeOf(() => repaced(track, { verb: 'shape', at: 0.8 }))).toBe('step.needs-press');
+  });
+});
+
+describe('set marks', () => {
+  it('puts each mark within half a frame, here within 0.05°, and never runs back', () => {
+    const share = fc.double({ min: 0.1, max: 0.9, noNaN: true });
+    fc.assert(
+      fc.property(played, share, share, (track, from, to) => {
+        const { times } = track;
+        const place = (u: number): number => times[0] + u * (times[times.length - 1] - times[0]);
+        const old = playAs(track, 'as-written');
+        fc.pre(old.length(times[0], place(from)) > 0.01 && old.length(place(from), old.end) > 0.01);
+        const result = repaced(track, { verb: 'set marks', marks: [[place(from), place(to)]] });
+        const now = playAs(result.track, 'as-written');
+        const wanted = old.orientation([], place(from));
+        // Half a frame at 30 frames a second, at the speed there.
+        const [early, late] = [place(to) - 1 / 60, place(to) + 1 / 60];
+        const most = now.length(early, late) * DEGREES + 0.05;
+        expect(angleBetween(now.orientation([], place(to)), wanted) * DEGREES).toBeLessThan(most);
+        expect(offThePath(track, result)).toBeLessThan(0.001);
+        let before = -Infinity;
+        for (const time of result.track.times) {
+          const at = result.repaced.retiming.oldTime(time);
+          expect(at).toBeGreaterThanOrEqual(before);
+          before = at;
+        }
+      }),
+      RUNS,
+    );
+    const [track] = fc.sample(sparse, { numRuns: 1, seed: 3 });
+    expect(codeOf(() => repaced(track, { verb: 'set marks' }))).toBe('step.needs-marks');
+    expect(codeOf(() => repaced(track, { verb: 'set marks', marks: [[99, 1]] }))).toBe('pace.bad-marks');
+  });
+});
+
 describe('hold', () => {
   it('stands still for as long as asked; what follows comes as much later', () => {
     fc.assert(

@@ -53,6 +53,25 @@ export const CLAUSES: readonly Clause[] = [
     read: ([at]) => ({ at: Number(at) }),
   },
   {
+    key: 'by',
+    say: ({ by = 0 }) => `pressed by ${sayNumber(by)} deg/s`,
+    pattern: new RegExp(`^, pressed by ${NUMBER} deg/s`),
+    read: ([by]) => ({ by: Number(by) }),
+  },
+  {
+    key: 'reach',
+    say: ({ reach = 0 }) => `reaching ${sayNumber(reach)} s`,
+    pattern: new RegExp(`^, reaching ${NUMBER} s`),
+    read: ([reach]) => ({ reach: Number(reach) }),
+  },
+  {
+    key: 'marks',
+    say: ({ marks = [] }) =>
+      `with ${marks.map(([old, time]) => `${sayNumber(old)} s at ${sayNumber(time)} s`).join(' and ')}`,
+    pattern: new RegExp(`^, with (${NUMBER} s at ${NUMBER} s(?: and ${NUMBER} s at ${NUMBER} s)*)`),
+    read: ([marks = '']) => ({ marks: marks.split(' and ').map(readMark) }),
+  },
+  {
     key: 'turns',
     say: ({ turns }) => `with ${turns} whole ${turns === 1 ? 'turn' : 'turns'} more`,
     pattern: /^, with (-?\d+) whole turns? more/,
@@ -149,6 +168,11 @@ function sayKeys(keys: readonly number[]): string {
 /** The other way round: the numbers of "3, 5 and 9". */
 export function readKeys(keys: string): number[] {
   return keys.split(/, | and /).map(Number);
+}
+
+function readMark(mark: string): readonly [number, number] {
+  const [old, time] = mark.split(' at ').map((seconds) => Number(seconds.replace(/ s$/, '')));
+  return [old, time];
 }
 
 /** A name as it is, or as a JSON string where white space, a comma, a quote or a last full stop would make it unclear. */

@@ -46,6 +46,21 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
   rate: (value) => ({ rate: above0(value) }),
   acceleration: (value) => ({ acceleration: above0(value) }),
   ease: (value) => ({ ease: text(value) }),
+  by: (value) => {
+    if (!isFiniteNumber(value)) throw new Fault('card.bad-number', 'must be a finite number of deg/s');
+    return { by: value };
+  },
+  reach: (value) => ({ reach: above0(value) }),
+  marks: (value) => {
+    if (!Array.isArray(value) || value.length === 0)
+      throw new Fault('card.bad-number', 'must be a list of pairs of times');
+    return {
+      marks: value.map((pair: unknown) => {
+        const [old, time] = finiteNumbers(pair, 2);
+        return [old, time] as const;
+      }),
+    };
+  },
   which: (value) => ({ which: oneOf(value, ['in', 'out']) }),
   turns: (value) => {
     if (!Number.isSafeInteger(value) || typeof value !== 'number')

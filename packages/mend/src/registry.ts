@@ -11,6 +11,8 @@ import { normaliseKeys } from './edits/normalise.js';
 import { reSeat } from './edits/re-seat.js';
 import { reverse } from './edits/reverse.js';
 import { sameSide } from './edits/same-side.js';
+import { setMarks } from './edits/set-marks.js';
+import { shape } from './edits/shape.js';
 import { shrink, stretch } from './edits/stretch.js';
 import { wholeTurns } from './edits/whole-turns.js';
 import { nearestWord } from './nearest-word.js';
@@ -28,7 +30,9 @@ export const VERBS: readonly Verb[] = Object.freeze([
   easeInOut,
   evenOut,
   cap,
+  shape,
   hold,
+  setMarks,
   stretch,
   shrink,
   reverse,

@@ -45,4 +45,10 @@ export interface Step {
   readonly which?: 'in' | 'out';
   /** whole turns: how many beside the short way, about its axis; negative ones the other way. */
   readonly turns?: number;
+  /** shape: by how much the speed is pressed up or down, deg/s. */
+  readonly by?: number;
+  /** shape: how far the press reaches on either side, seconds. */
+  readonly reach?: number;
+  /** set marks: pairs of an old time and the time at which what stood there is to stand, seconds, ascending. */
+  readonly marks?: readonly (readonly [old: number, time: number])[];
 }

@@ -1,4 +1,11 @@
-import { type PacedCurve, type RotationTrack, type Span, frameGrid, medianGap } from '@slewcurve/core';
+import {
+  type PacedCurve,
+  type RotationTrack,
+  type Span,
+  findSegment,
+  frameGrid,
+  medianGap,
+} from '@slewcurve/core';
 
 /** A key of the re-timed track: an old one that travels, or one that is read off the path. */
 export interface NewKey {
@@ -18,7 +25,7 @@ export function movedKeys(track: RotationTrack, { retiming }: Pick<PacedCurve, '
   return Array.from(track.times, (time, old) => ({ time: stored(track, retiming.newTime(time)), old }));
 }
 
-/** Every frame of a span, and the old keys outside it and at its ends; of those inside it the ones in `keep`, and on sparse tracks all. */
+/** Every frame of a span, and the old keys outside it and at its ends; of those inside it both of a cut, the ones in `keep`, and on sparse tracks all. */
 export function frameKeys(
   track: RotationTrack,
   [from, to]: Span,
@@ -29,7 +36,8 @@ export function frameKeys(
   const kept = new Set(keep);
   const moved = movedKeys(track, paced).filter(({ old = 0 }) => {
     const time = track.times[old];
-    return time <= from || time >= to || !isDense || kept.has(old);
+    const isCut = track.breaks.includes(old) || track.breaks.includes(old - 1);
+    return time <= from || time >= to || !isDense || isCut || kept.has(old);
   });
   const [begin, end] = [paced.retiming.newTime(from), paced.retiming.newTime(to)];
   const frames = isDense ? denseFrames(track, from, to, end) : evenFrames(track, begin, end);
@@ -38,7 +46,9 @@ export function frameKeys(
   for (const time of frames) {
     const at = stored(track, time);
     const isFree = moved.every((key) => Math.abs(key.time - at) > APART * gap);
-    if (at > begin && at < end && isFree) all.push({ time: at });
+    // Before a cut nothing turns, and a key there would be one to interpolate from.
+    const isHeld = track.breaks.includes(findSegment(track.times, paced.retiming.oldTime(at)));
+    if (at > begin && at < end && isFree && !isHeld) all.push({ time: at });
   }
   return ascending(all);
 }
