@@ -18,8 +18,13 @@ import { loopKink } from './rules/seam/loop-kink.js';
 import { creep } from './rules/shake/creep.js';
 import { grain } from './rules/shake/grain.js';
 import { hum } from './rules/shake/hum.js';
+import { eulerFlip } from './rules/turn/euler-flip.js';
+import { gimbal } from './rules/turn/gimbal.js';
 import { half } from './rules/turn/half.js';
+import { longWay } from './rules/turn/long-way.js';
+import { lost } from './rules/turn/lost.js';
 import { signFlip } from './rules/turn/sign-flip.js';
+import { wrap } from './rules/turn/wrap.js';
 import type { Rule } from './rule.js';
 
 /** Every rule that is built. */
@@ -33,6 +38,11 @@ export const RULES: readonly Rule[] = Object.freeze([
   ragged,
   signFlip,
   half,
+  longWay,
+  wrap,
+  eulerFlip,
+  gimbal,
+  lost,
   firstKey,
   freeze,
   turnedOver,
