@@ -1,4 +1,11 @@
-import { type RotationTrack, angleBetween, lookAlong, playAs } from '@slewcurve/core';
+import {
+  type RotationTrack,
+  angleBetween,
+  keyOrientation,
+  lookAlong,
+  playAs,
+  replaceTrack,
+} from '@slewcurve/core';
 import { type AnimationFile, bufferSource, patchedBytes } from '@slewcurve/formats';
 import {
   type JobSettings,
@@ -8,7 +15,7 @@ import {
   openFile,
   surveyFile,
 } from '@slewcurve/job';
-import type { Step } from '@slewcurve/mend';
+import { type Step, applySteps } from '@slewcurve/mend';
 import { NO_HOUSE_RULES } from '@slewcurve/survey';
 import { describe, expect, it } from 'vitest';
 import { codeOf } from '../support/edit-acceptance.js';
@@ -303,5 +310,48 @@ describe('the demo scene', () => {
     expect(peakOf(track)).toBeLessThanOrEqual(20.1);
     // Read off 25 Hz chords in float32: noise floor of the difference 8e-5° · 25² ≈ 0.05 deg/s², and the frames' own sampling.
     expect(most).toBeLessThan(15 * 1.02);
+  });
+
+  it('quay-flight, its cut declared, is eased through and capped at one picture width in 7 s', async () => {
+    const { file } = await openFile(bufferSource(kestrelPoint()), { name: 'flight.glb' });
+    // The cut at 14 s is stored as two keys a thirtieth of a second apart: nothing is interpolated from key 6.
+    const flown = replaceTrack(trackOf(file, 'quay-flight'), { breaks: [6] });
+    // One width in 7 s at 45° upright and 16:9: the level view is 2·atan(16/9·tan 22.5°) = 72.7°, and the middle of the picture runs at
+    // W/(7f), 2·tan(36.4°)/7 = 12.1 deg/s (MATHS 8).
+    const limit = ((2 * (16 / 9) * Math.tan(Math.PI / 8)) / 7) * DEGREES;
+    const place = { clip: 'quay-flight', track: flown.id };
+    const { tracks, results } = applySteps(
+      [flown],
+      [
+        { ...place, verb: 'ease through' },
+        { ...place, verb: 'cap', rate: limit },
+      ],
+    );
+    const curve = playAs(tracks[0], 'as-written');
+    const [peak, added] = [peakOf(tracks[0]), results[1].result.added];
+    measured(
+      `quay-flight: ${peakOf(flown).toFixed(1)} deg/s, capped at ${limit.toFixed(2)}: ${peak.toFixed(3)} deg/s, +${added.toFixed(2)} s, ${flown.times.length} → ${tracks[0].times.length} keys, price ${JSON.stringify(results[1].result.repaced?.price)}`,
+    );
+    expect(peak).toBeLessThanOrEqual(limit * 1.005);
+    expect(added).toBeGreaterThan(0);
+    // The cut is a cut still, and every key is visited.
+    expect(tracks[0].breaks).toHaveLength(1);
+    const { retiming } = results[1].result.repaced ?? {};
+    for (let key = 0; key < flown.times.length; key++) {
+      const at = retiming?.newTime(flown.times[key]) ?? NaN;
+      const off = angleBetween(curve.orientation([], at), keyOrientation([], flown, key)) * DEGREES;
+      expect(off, `key ${key}`).toBeLessThan(0.001);
+    }
+    // No elbow is left: nowhere but at the cut does the rate jump by more than 1 %, or what a frame's change of pace makes.
+    const rateAt = (t: number): number[] => curve.rate([0, 0, 0], t, 'own');
+    let jump = 0;
+    tracks[0].times.forEach((t, key) => {
+      const isCut = [key - 1, key].some((other) => tracks[0].breaks.includes(other));
+      if (key === 0 || key === tracks[0].times.length - 1 || isCut) return;
+      const [before, after] = [rateAt(t - 1e-6), rateAt(t)];
+      jump = Math.max(jump, Math.hypot(...before.map((rate, i) => rate - after[i])) * DEGREES);
+    });
+    measured(`quay-flight: largest jump of the rate left ${jump.toFixed(4)} deg/s`);
+    expect(jump).toBeLessThan(0.01 * limit);
   });
 });

@@ -1,24 +1,14 @@
-import {
-  type Curve,
-  type RotationTrack,
-  SlewcurveError,
-  angleBetween,
-  dot,
-  normalise,
-  replaceTrack,
-  rotationSpline,
-} from '@slewcurve/core';
+import { type RotationTrack, SlewcurveError, dot, replaceTrack, rotationSpline } from '@slewcurve/core';
 import { checkQuaternions, placeOf } from '../acted-keys.js';
 import { sentenceOf } from '../clauses.js';
 import { editResult } from '../edit-result.js';
+import { cubicPlaces } from '../pace/cubic-places.js';
 import type { Step } from '../step.js';
 import { isPlayable, storedValue, tangentFor } from '../stored-key.js';
 import type { EditResult, Verb } from '../verb.js';
 
 /** Keys put in until the stored cubic is within this many radians of the wanted curve. */
 const NEAR = 0.005 * (Math.PI / 180);
-/** Halvings of one segment at the most. */
-const MOST_HALVINGS = 6;
 
 /**
  * Takes the corners out of a LINEAR track: the C² rotation spline through its keys, at their times, stored as CUBICSPLINE with exact tangents. Every key
@@ -56,7 +46,7 @@ export const easeThrough: Verb = Object.freeze({
       olds.set(news.length, key);
       news.push(times[key]);
       if (key + 1 < times.length && !track.breaks.includes(key))
-        news.push(...between(curve, times[key], times[key + 1], 0));
+        news.push(...cubicPlaces(curve, times[key], times[key + 1], NEAR));
     }
     const values = new Float64Array(12 * news.length);
     let before: Float64Array | undefined;
@@ -85,32 +75,3 @@ export const easeThrough: Verb = Object.freeze({
     return editResult(track, after, { inserted });
   },
 });
-
-/** Times between two keys at which the cubic needs keys of its own. */
-function between(curve: Curve, from: number, to: number, halvings: number): number[] {
-  if (halvings === MOST_HALVINGS || cubicMiss(curve, from, to) <= NEAR) return [];
-  const middle = (from + to) / 2;
-  return [...between(curve, from, middle, halvings + 1), middle, ...between(curve, middle, to, halvings + 1)];
-}
-
-/** How far glTF 2.0's cubic with the curve's own ends and tangents is off the curve, radians. */
-function cubicMiss(curve: Curve, from: number, to: number): number {
-  const h = to - from;
-  const a = curve.orientation(new Float64Array(4), from);
-  const b = curve.orientation(new Float64Array(4), to);
-  if (dot(a, b) < 0) b.forEach((part, i) => (b[i] = -part));
-  const leaving = tangentFor(a, curve.rate(new Float64Array(3), from, 'own'));
-  const arriving = tangentFor(b, curve.rate(new Float64Array(3), to - 1e-9 * h, 'own'));
-  let most = 0;
-  for (const u of [0.25, 0.5, 0.75]) {
-    const [p, q] = [u * u * (3 - 2 * u), u * (1 - u)];
-    const cubic = a.map(
-      (part, i) => (1 - p) * part + p * b[i] + h * q * ((1 - u) * leaving[i] - u * arriving[i]),
-    );
-    most = Math.max(
-      most,
-      angleBetween(normalise(cubic, cubic), curve.orientation(new Float64Array(4), from + u * h)),
-    );
-  }
-  return most;
-}

@@ -6,6 +6,7 @@ import {
   frameGrid,
   medianGap,
 } from '@slewcurve/core';
+import { cubicPlaces } from './cubic-places.js';
 
 /** A key of the re-timed track: an old one that travels, or one that is read off the path. */
 export interface NewKey {
@@ -56,6 +57,30 @@ export function frameKeys(
 function ascending(keys: NewKey[]): NewKey[] {
   // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
   return keys.sort((a, b) => a.time - b.time);
+}
+
+/** How near a cubic is kept to the wanted curve, radians: 0.0005°, which over a tenth of a second is 0.02 deg/s of ripple. */
+const NEAR = 0.0005 * (Math.PI / 180);
+
+/** All old keys at their new times, the places in the span where the pace changes its kind, and as many between as cubics need. */
+export function cubicKeys(track: RotationTrack, [from, to]: Span, paced: PacedCurve): NewKey[] {
+  const moved = movedKeys(track, paced);
+  const [begin, end] = [paced.retiming.newTime(from), paced.retiming.newTime(to)];
+  const apart = 1e-4 * (end - begin);
+  const isFree = (time: number): boolean => moved.every((key) => Math.abs(key.time - time) > apart);
+  const turns = Array.from(paced.retiming.knots)
+    .filter((time) => time > begin && time < end && isFree(time))
+    .map((time): NewKey => ({ time: stored(track, time) }));
+  const posts = ascending([...moved, ...turns]);
+  const between = posts.slice(1).flatMap(({ time }, i) => {
+    const before = posts[i].time;
+    const isHeld = track.breaks.includes(
+      findSegment(track.times, paced.retiming.oldTime((before + time) / 2)),
+    );
+    if (before < begin || time > end || isHeld) return [];
+    return cubicPlaces(paced, before, time, NEAR).map((at): NewKey => ({ time: stored(track, at) }));
+  });
+  return ascending([...posts, ...between]);
 }
 
 /** The old key times, and after them more at the same distance. */

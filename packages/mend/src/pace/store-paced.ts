@@ -18,7 +18,7 @@ import { storedValue, tangentFor } from '../stored-key.js';
 import type { EditResult, Price, TimeMap } from '../verb.js';
 import { bendsOf } from './bends.js';
 import { scaleTangents } from './scale-tangents.js';
-import { type NewKey, frameKeys, movedKeys } from './new-keys.js';
+import { type NewKey, cubicKeys, frameKeys, movedKeys } from './new-keys.js';
 
 /** Share of a gap by which the side before a key is looked at. */
 const BEFORE = 1e-6;
@@ -42,8 +42,14 @@ export function storePaced(
 ): EditResult {
   const isDense = regime(track) === 'dense';
   const fits = needs === 'steady' && !isDense && track.interpolation === 'LINEAR';
-  const store = step.store ?? (fits || track.interpolation === 'STEP' ? 'move' : 'frames');
-  const keys = store === 'move' ? movedKeys(track, paced) : frameKeys(track, span, paced, isDense, step.keep);
+  const usual = track.interpolation === 'CUBICSPLINE' && !isDense ? 'cubic' : 'frames';
+  const store = step.store ?? (fits || track.interpolation === 'STEP' ? 'move' : usual);
+  const keys =
+    store === 'move'
+      ? movedKeys(track, paced)
+      : store === 'cubic'
+        ? cubicKeys(track, span, paced)
+        : frameKeys(track, span, paced, isDense, step.keep);
   return storeKeys(track, span, paced, step, store, keys);
 }
 
@@ -167,7 +173,7 @@ function priceOf(before: RotationTrack, after: RotationTrack, paced: Pick<Curve,
   let degrees = 0;
   for (let key = 0; key + 1 < times.length; key++)
     for (let part = 0; part < 4; part++) {
-      const t = times[key] + ((times[key + 1] - times[key]) * part) / 4;
+      const t = times[key] + ((times[key + 1] - times[key]) * (part + 0.5)) / 4;
       degrees = Math.max(degrees, angleBetween(stored.orientation(p, t), paced.orientation(q, t)) * DEGREES);
     }
   return { seconds: lastOf(times) - lastOf(before.times), degrees, bytes: bytesOf(after) - bytesOf(before) };
