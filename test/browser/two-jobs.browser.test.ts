@@ -145,12 +145,11 @@ async function findByKeyboard(page: Page, find: string): Promise<void> {
   await page.keyboard.press('/');
   await page.keyboard.type(find);
   await page.keyboard.press('Enter');
-  await page.waitForFunction(() => document.activeElement !== null);
 }
 
 /** Page Down to the finding, Ctrl+Enter for its remedy, Ctrl+Enter to apply it. */
 async function applyByKeyboard(page: Page, remedy: RegExp): Promise<void> {
-  await tabTo(page, /^Cursor on the trace/);
+  await expect.poll(() => focused(page)).toMatch(/^Cursor on the trace/);
   const chosen = page.locator('slew-chart li.chosen button');
   for (let pressed = 0; pressed < 20; pressed++) {
     await page.keyboard.press('PageDown');

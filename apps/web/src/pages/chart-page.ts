@@ -107,6 +107,8 @@ export class SlewChartPage extends LitElement {
   declare private narrow: boolean;
   private readonly width = matchMedia('(width < 40rem)');
   private data: ChartData | undefined;
+  /** The keyboard waits for the trace. */
+  private awaited = false;
   /** What `data` was made of. */
   private subject: ChartSubject | undefined;
   /** State of the card that the answer belongs to. */
@@ -172,9 +174,14 @@ export class SlewChartPage extends LitElement {
     return chartDataOf(subject);
   }
 
-  /** Put the keyboard on the trace. */
+  /** Put the keyboard on the trace, as soon as there is one. */
   override focus(): void {
+    this.awaited = !this.chart;
     this.chart?.focus();
+  }
+
+  protected override updated(): void {
+    if (this.awaited && this.chart) void this.chart.updateComplete.then(() => this.focus());
   }
 
   private get chart(): SlewChart | null {
