@@ -31,14 +31,15 @@ const SETTINGS: JobSettings = {
   houseRules: NO_HOUSE_RULES,
 };
 
-async function mend(
-  bytes: Uint8Array,
-  ...steps: Step[]
-): Promise<MendedFile & { bytes: Uint8Array; file: AnimationFile }> {
+type Made = MendedFile & { bytes: Uint8Array; file: AnimationFile };
+
+const mend = (bytes: Uint8Array, ...steps: Step[]): Promise<Made> => mendBy(SETTINGS, bytes, ...steps);
+
+async function mendBy(settings: JobSettings, bytes: Uint8Array, ...steps: Step[]): Promise<Made> {
   const options = { name: 'flight.glb' };
   const opened = await openFile(bufferSource(bytes), options);
-  const before = await surveyFile(options.name, opened.file, SETTINGS);
-  const mended = await mendFile(opened, { schemaVersion: 1, steps }, before, SETTINGS, options);
+  const before = await surveyFile(options.name, opened.file, settings);
+  const mended = await mendFile(opened, { schemaVersion: 1, steps }, before, settings, options);
   const made = await mended.result.read(0, mended.result.size);
   // Undo restores the very bytes.
   expect(Buffer.compare(patchedBytes(made, mended.undo), bytes)).toBe(0);
@@ -353,5 +354,26 @@ describe('the demo scene', () => {
     });
     measured(`quay-flight: largest jump of the rate left ${jump.toFixed(4)} deg/s`);
     expect(jump).toBeLessThan(0.01 * limit);
+  });
+
+  it('quay-flight goes the same way by job card, with the cut from the house rules; no pace finding is left', async () => {
+    const cut = { clip: 'quay-flight', track: '*', time: 14 + 1 / 30 };
+    const { declared } = NO_HOUSE_RULES;
+    const settings = {
+      ...SETTINGS,
+      houseRules: { ...NO_HOUSE_RULES, declared: { ...declared, cuts: [cut] } },
+    };
+    const place = { clip: 'quay-flight', track: '*' };
+    const { report, steps, file } = await mendBy(
+      settings,
+      kestrelPoint(),
+      { ...place, verb: 'ease through' },
+      { ...place, verb: 'cap', rate: 12.05 },
+    );
+    const left = report.findings.filter(({ clip }) => clip === 'quay-flight').map(({ rule }) => rule);
+    measured(`quay-flight by card: +${steps[1].added} s, findings left: ${left.join(', ') || 'none'}`);
+    expect(left.filter((rule) => /^(pace|limit|jump)\./.test(rule))).toEqual([]);
+    expect(steps[1].added).toBeGreaterThan(1);
+    expect(trackOf(file, 'quay-flight').interpolation).toBe('CUBICSPLINE');
   });
 });

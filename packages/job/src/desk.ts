@@ -1,8 +1,9 @@
 import { SlewcurveError, type Clip, type RotationTrack } from '@slewcurve/core';
 import type { Source } from '@slewcurve/formats';
 import { applySteps, type Step } from '@slewcurve/mend';
-import { surveyTrack, type Finding } from '@slewcurve/survey';
+import { surveyTrack, withDeclaredCuts, type Finding } from '@slewcurve/survey';
 import { clipReport } from './clip-report.js';
+import { cutsAfter } from './cuts-after.js';
 import { mendFile } from './mend-file.js';
 import { newFaults } from './new-faults.js';
 import { openFile, type OpenedFile } from './open-file.js';
@@ -130,13 +131,24 @@ async function tellRows(
 
 async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Promise<CardAnswer> {
   const { opened, report, settings } = surveyed(folder);
-  const { tracks, results } = applySteps(tracksOf(opened), steps);
+  const stored = tracksOf(opened);
+  const cut = stored.map((track) => withDeclaredCuts(track, settings.houseRules));
+  const { tracks: edited, results } = applySteps(cut, steps);
+  // What no step touched stays the very object that was read.
+  const tracks = edited.map((track, at) => (track === cut[at] ? (stored[at] ?? track) : track));
+  const houseRules = cutsAfter(settings.houseRules, stored, results);
   const answers: CardAnswer['tracks'][number][] = [];
   const raised: Finding[] = [];
   for (const [at, track] of tracks.entries()) {
     const clip = clipOf(opened, track);
     if (track === folder.current[at] || !clip) continue;
-    const findings = surveyTrack(track, { clip, nodes: opened.file.nodes, file: opened.name, ...settings });
+    const findings = surveyTrack(track, {
+      clip,
+      nodes: opened.file.nodes,
+      file: opened.name,
+      ...settings,
+      houseRules,
+    });
     raised.push(...newFaults(report.findings, findings));
     const playback = settings.playbacks[0] ?? 'as-written';
     answers.push({ report: trackReport(track, playback), row: rosterRow(track, clip, playback), findings });

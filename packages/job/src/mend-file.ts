@@ -8,7 +8,8 @@ import {
   type Source,
 } from '@slewcurve/formats';
 import { applySteps, type AppliedStep, type JobCard } from '@slewcurve/mend';
-import type { Finding } from '@slewcurve/survey';
+import { withDeclaredCuts, type Finding } from '@slewcurve/survey';
+import { cutsAfter } from './cuts-after.js';
 import { newFaults } from './new-faults.js';
 import { openFile, type OpenedFile } from './open-file.js';
 import type { FileReport, StepReport } from './report.js';
@@ -35,7 +36,8 @@ export interface MendedFile {
 }
 
 /**
- * Run a job card on an opened file and read the result back from its new bytes.
+ * Run a job card on an opened file and read the result back from its new bytes. Steps act on tracks with their declared cuts; where a pace moves one, the
+ * result is surveyed with the cut at its new time.
  *
  * @param before survey of the file as it was
  * @throws SlewcurveError what `applySteps` and `AnimationFile.plan` throw; `mend.outside-changed` where the result differs from the
@@ -50,13 +52,15 @@ export async function mendFile(
   watch: Watch = UNWATCHED,
 ): Promise<MendedFile> {
   const tracks = opened.file.clips.flatMap((clip) => clip.tracks);
-  const applied = applySteps(tracks, card.steps);
-  const changed = applied.tracks.filter((track) => !tracks.includes(track));
+  const cut = tracks.map((track) => withDeclaredCuts(track, settings.houseRules));
+  const applied = applySteps(cut, card.steps);
+  const changed = applied.tracks.filter((track) => !cut.includes(track));
   const plan = await opened.file.plan(changed, followersOf(applied.results));
   const result = patchedSource(opened.source, plan);
   const again = await openFile(result, options);
   assertOthersEqual(tracks, again, changed);
-  const report = await surveyFile(opened.name, again.file, settings, watch);
+  const houseRules = cutsAfter(settings.houseRules, tracks, applied.results);
+  const report = await surveyFile(opened.name, again.file, { ...settings, houseRules }, watch);
   return {
     opened,
     card,

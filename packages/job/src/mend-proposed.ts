@@ -1,7 +1,7 @@
 import type { Clip, RotationTrack } from '@slewcurve/core';
 import type { OpenOptions } from '@slewcurve/formats';
 import { applySteps, sayStep, type Step } from '@slewcurve/mend';
-import { surveyTrack, type Finding } from '@slewcurve/survey';
+import { surveyTrack, withDeclaredCuts, type Finding } from '@slewcurve/survey';
 import { mendFile, type MendedFile } from './mend-file.js';
 import { newFaults } from './new-faults.js';
 import type { OpenedFile } from './open-file.js';
@@ -77,7 +77,7 @@ function trySteps(
   const declined: Declined[] = [];
   let kept = steps;
   while (kept.length > 0) {
-    const { tracks, results } = applySteps([track], kept);
+    const { tracks, results } = applySteps([withDeclaredCuts(track, settings.houseRules)], kept);
     const raised = newFaults(before, survey(tracks[0] ?? track));
     const worst = raised[0];
     if (worst === undefined) break;

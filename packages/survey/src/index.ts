@@ -26,6 +26,7 @@ export type {
   TrackContext,
 } from './rule.js';
 export { RULES } from './registry.js';
+export { withDeclaredCuts } from './declared-cuts.js';
 export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings } from './survey.js';
 export { explainWord, type Entry, type Explanation } from './explain.js';
 export { rulePage } from './rule-page.js';
