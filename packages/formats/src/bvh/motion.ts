@@ -164,13 +164,14 @@ function rowStore(file: string, columns: number, wanted: readonly number[]): Row
   const found: number[] = [];
 
   function readWord(line: TextLine, column: number): void {
-    const text = line.text.slice(found[2 * column], found[2 * column + 1]);
-    if (!readDecimal(read, text))
+    const from = found[2 * column];
+    const to = found[2 * column + 1];
+    if (!readDecimal(read, line.text, from, to))
       throw lineError(
         file,
         'bvh.bad-number',
         line,
-        `${quoted(text)} stands in column ${column + 1}, which must hold a number.`,
+        `${quoted(line.text.slice(from, to))} stands in column ${column + 1}, which must hold a number.`,
       );
   }
 

@@ -15,24 +15,23 @@ const POWERS = Array.from({ length: 23 }, (_, power) => 10 ** power);
 const MOST_PLACES = 350;
 
 /**
- * Reads `text` as one decimal number, `nan` or `inf`. False, with `out` as it was, where it is none.
+ * Reads `text`, or the part of it up to but not including `to`, as one decimal number, `nan` or `inf`. False, with `out` as it was, where it is none.
  *
  * Up to 15 digits are taken as one whole number over a power of ten: both are exact, so their quotient is the nearest float64
  * (W. D. Clinger, "How to Read Floating Point Numbers Accurately", 1990). Anything else goes the long way.
  */
-export function readDecimal(out: DecimalText, text: string): boolean {
-  return readShort(out, text) || readLong(out, text);
+export function readDecimal(out: DecimalText, text: string, from = 0, to: number = text.length): boolean {
+  return readShort(out, text, from, to) || readLong(out, text.slice(from, to));
 }
 
-function readShort(out: DecimalText, text: string): boolean {
-  const first = text.charCodeAt(0);
+function readShort(out: DecimalText, text: string, from: number, to: number): boolean {
+  const first = text.charCodeAt(from);
   const signed = first === 0x2d || first === 0x2b;
   let whole = 0;
   let digits = 0;
   let point = -1;
-  const length = text.length;
-  if (length > 17) return false;
-  for (let i = signed ? 1 : 0; i < length; i++) {
+  if (to - from > 17) return false;
+  for (let i = signed ? from + 1 : from; i < to; i++) {
     const code = text.charCodeAt(i);
     if (code >= 0x30 && code <= 0x39) {
       whole = whole * 10 + (code - 0x30);
@@ -41,7 +40,7 @@ function readShort(out: DecimalText, text: string): boolean {
     else return false;
   }
   if (digits === 0 || digits > 15) return false;
-  out.decimals = point < 0 ? 0 : length - 1 - point;
+  out.decimals = point < 0 ? 0 : to - 1 - point;
   const size = whole / (POWERS[out.decimals] ?? 1);
   out.value = first === 0x2d ? -size : size;
   return true;

@@ -73,22 +73,26 @@ function linesOf(bytes: Uint8Array, at: number, first: number): TextLine[] {
   const text = new TextDecoder('latin1').decode(bytes);
   const lines: TextLine[] = [];
   const mark = at === 0 && bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf ? 3 : 0;
-  let start = mark;
-  const put = (end: number): void => {
+  const last = bytes.byteLength;
+  let feed = nextOf(bytes, LINE_FEED, mark);
+  let carriage = nextOf(bytes, CARRIAGE_RETURN, mark);
+  for (let start = mark; start < last;) {
+    const end = Math.min(feed, carriage);
     lines.push({
       number: first + lines.length,
       at: at + start,
       bytes: bytes.subarray(start, end),
       text: text.slice(start, end),
     });
-  };
-  for (let i = mark; i < bytes.byteLength; i++) {
-    const byte = bytes[i];
-    if (byte !== LINE_FEED && byte !== CARRIAGE_RETURN) continue;
-    put(i);
-    if (byte === CARRIAGE_RETURN && bytes[i + 1] === LINE_FEED) i++;
-    start = i + 1;
+    start = carriage + 1 === feed ? feed + 1 : end + 1;
+    if (feed < start) feed = nextOf(bytes, LINE_FEED, start);
+    if (carriage < start) carriage = nextOf(bytes, CARRIAGE_RETURN, start);
   }
-  if (start < bytes.byteLength) put(bytes.byteLength);
   return lines;
+}
+
+/** Where the next such byte stands; the end where there is none. */
+function nextOf(bytes: Uint8Array, byte: number, from: number): number {
+  const at = bytes.indexOf(byte, from);
+  return at < 0 ? bytes.byteLength : at;
 }
