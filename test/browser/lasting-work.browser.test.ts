@@ -6,6 +6,9 @@ import { generatedTake } from '../support/generated-take.js';
 import { openApp } from '../support/open-app.js';
 import { commandFolder } from '../support/run-command.js';
 
+/** A page under load may be late. */
+const SOON = { timeout: 10_000 };
+
 // Nothing that goes wrong may cost somebody their work.
 
 const LONG = { joints: 60, frames: 12_000, rate: 120 };
@@ -73,9 +76,9 @@ test('Ctrl+Z takes an edit back, Ctrl+Shift+Z does it again', async () => {
   await openWithAnEdit(page);
   const edits = page.getByText('1 edit on the job card');
   await page.keyboard.press('Control+z');
-  await expect.poll(() => edits.count()).toBe(0);
+  await expect.poll(() => edits.count(), SOON).toBe(0);
   await page.keyboard.press('Control+Shift+z');
-  await expect.poll(() => edits.count()).toBe(1);
+  await expect.poll(() => edits.count(), SOON).toBe(1);
 });
 
 test('a file is written in place, again after another edit, and is left alone once somebody else changed it', async () => {

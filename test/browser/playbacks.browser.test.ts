@@ -2,6 +2,9 @@ import { expect, test } from 'vitest';
 import { focused } from '../support/by-keyboard.js';
 import { openApp } from '../support/open-app.js';
 
+/** A page under load may be late. */
+const SOON = { timeout: 10_000 };
+
 test('the address ?demo opens the demo scene, under its own house rules', async () => {
   const page = await openApp({ address: '?demo' });
   await page.getByText('12 rotation tracks in').waitFor();
@@ -31,7 +34,7 @@ test('another playback is surveyed anew, and two stand on one paper with what th
 
   await page.getByLabel('as played:').selectOption('finite-cubic');
   await expect
-    .poll(() => note.allTextContents())
+    .poll(() => note.allTextContents(), SOON)
     .toContainEqual(expect.stringContaining('error turn.sign-flip'));
 });
 
@@ -41,9 +44,11 @@ test('Space plays and stops; the cursor and the 3-D view go together', async () 
   await page.getByRole('searchbox', { name: 'Find a track' }).fill('lens-thirds');
   await page.keyboard.press('Enter');
   const cursor = page.getByRole('slider', { name: /^Cursor on the trace/ });
-  await expect.poll(() => focused(page)).toMatch(/^Cursor on the trace/);
+  await expect.poll(() => focused(page), SOON).toMatch(/^Cursor on the trace/);
   await page.keyboard.press('Space');
-  await expect.poll(async () => Number(await cursor.getAttribute('aria-valuenow'))).toBeGreaterThan(0.2);
+  await expect
+    .poll(async () => Number(await cursor.getAttribute('aria-valuenow')), SOON)
+    .toBeGreaterThan(0.2);
   await page.keyboard.press('Space');
   const stoppedAt = await cursor.getAttribute('aria-valuenow');
   const view = page.getByText(`3-D view at ${Number(stoppedAt).toFixed(2)} s`);

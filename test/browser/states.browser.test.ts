@@ -10,6 +10,13 @@ import { commandFolder } from '../support/run-command.js';
 
 const ARTEFACTS = 'test/browser/artefacts';
 
+declare global {
+  interface Window {
+    /** Once its source has run on the page. */
+    axe: typeof axe;
+  }
+}
+
 interface State {
   readonly name: string;
   readonly reach: (page: Page, place: Awaited<ReturnType<typeof commandFolder>>) => Promise<void>;
@@ -129,7 +136,7 @@ async function picture(page: Page, name: string): Promise<void> {
 /** What axe finds on the whole page, shadow trees and all: a line for each node. */
 async function axeFindings(page: Page): Promise<string[]> {
   await page.evaluate(axe.source);
-  const { violations } = await page.evaluate(() => globalThis.axe.run({ resultTypes: ['violations'] }));
+  const { violations } = await page.evaluate(() => window.axe.run({ resultTypes: ['violations'] }));
   return violations.flatMap(({ id, nodes }) =>
     nodes.map(({ target, failureSummary }) => `${id}: ${target.join(' ')} ${failureSummary ?? ''}`),
   );

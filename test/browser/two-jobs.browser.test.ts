@@ -7,6 +7,9 @@ import { openApp } from '../support/open-app.js';
 import { commandFolder } from '../support/run-command.js';
 import { sharedFile } from '../support/shared-data.js';
 
+/** A page under load may be late. */
+const SOON = { timeout: 10_000 };
+
 // The page's work against the command's: the same job card must give the same bytes.
 
 /** One track, and the buttons of the remedies to take on it, in order. */
@@ -149,7 +152,7 @@ async function findByKeyboard(page: Page, find: string): Promise<void> {
 
 /** Page Down to the finding, Ctrl+Enter for its remedy, Ctrl+Enter to apply it. */
 async function applyByKeyboard(page: Page, remedy: RegExp): Promise<void> {
-  await expect.poll(() => focused(page)).toMatch(/^Cursor on the trace/);
+  await expect.poll(() => focused(page), SOON).toMatch(/^Cursor on the trace/);
   const chosen = page.locator('slew-chart li.chosen button');
   for (let pressed = 0; pressed < 20; pressed++) {
     await page.keyboard.press('PageDown');

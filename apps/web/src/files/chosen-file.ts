@@ -25,7 +25,7 @@ interface LooseFile {
 }
 
 /** Animation files among what was chosen or dropped, each with the rest as its siblings. */
-export function chosenFrom(files: readonly LooseFile[]): ChosenFile[] {
+function chosenFrom(files: readonly LooseFile[]): ChosenFile[] {
   const animations = files.filter(({ path }) => isAnimation(path));
   // Nothing known by name: let the reader say what is wrong with it.
   const subjects = animations.length > 0 ? animations : files;
@@ -37,8 +37,8 @@ export function chosenFrom(files: readonly LooseFile[]): ChosenFile[] {
   }));
 }
 
-export function isAnimation(path: string): boolean {
-  return /\.(glb|gltf)$/i.test(path);
+function isAnimation(path: string): boolean {
+  return /\.(glb|gltf|bvh|csv|tsv)$/i.test(path);
 }
 
 /** The other files by their path from this one's folder. */
