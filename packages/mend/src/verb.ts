@@ -33,7 +33,9 @@ export interface Repaced {
 
 /** A map between the clocks before and after an edit, seconds. Where it runs back, `turnsBack`. */
 export interface TimeMap {
+  /** The old time that plays at a new one. */
   oldTime(t: number): number;
+  /** The first new time at which an old one plays. */
   newTime(old: number): number;
   /** True where later old times come earlier: played backwards. */
   readonly turnsBack: boolean;

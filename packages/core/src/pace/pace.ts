@@ -14,32 +14,29 @@ import { type InnerClock, type Span, clockOfProfile, spanRetiming } from './span
 import { type Stretch, rampSeconds, stretchesClock } from './stretches-clock.js';
 import { turnedAngle } from './turned-angle.js';
 
-interface InSpan {
+/** How a path is to be travelled. Seconds, radians. */
+export type PaceLaw = {
   /** Old times between which the pace changes; what follows is shifted. Default: from start to end. */
   readonly span?: Span;
-}
-
-/** How a path is to be travelled. Seconds, radians. */
-export type PaceLaw = InSpan &
-  (
-    | { readonly kind: 'constant'; readonly seconds?: number }
-    | { readonly kind: 'ease'; readonly ease: Ease; readonly seconds?: number }
-    /** From rest over the first `rise` old seconds, to rest over the last `fall`; the pace between stays, but for `seconds`. */
-    | { readonly kind: 'ramps'; readonly rise?: number; readonly fall?: number; readonly seconds?: number }
-    | ({ readonly kind: 'cap' } & Limits)
-    | ({ readonly kind: 'press' } & Press)
-    | ({ readonly kind: 'drawn' } & DrawnSpeed)
-    /** To rest at the old time `at` for `seconds`; `shoulders`: old seconds in which it slows down and gets going again. */
-    | {
-        readonly kind: 'hold';
-        readonly at: number;
-        readonly seconds: number;
-        readonly shoulders?: number;
-      }
-    /** What stands at an old time is to stand at a new one; both ascend. The span's ends stay where no mark names them. */
-    | { readonly kind: 'marks'; readonly marks: readonly { readonly old: number; readonly time: number }[] }
-    | { readonly kind: 'stretch'; readonly seconds: number }
-  );
+} & (
+  | { readonly kind: 'constant'; readonly seconds?: number }
+  | { readonly kind: 'ease'; readonly ease: Ease; readonly seconds?: number }
+  /** From rest over the first `rise` old seconds, to rest over the last `fall`; the pace between stays, but for `seconds`. */
+  | { readonly kind: 'ramps'; readonly rise?: number; readonly fall?: number; readonly seconds?: number }
+  | ({ readonly kind: 'cap' } & Limits)
+  | ({ readonly kind: 'press' } & Press)
+  | ({ readonly kind: 'drawn' } & DrawnSpeed)
+  /** To rest at the old time `at` for `seconds`; `shoulders`: old seconds in which it slows down and gets going again. */
+  | {
+      readonly kind: 'hold';
+      readonly at: number;
+      readonly seconds: number;
+      readonly shoulders?: number;
+    }
+  /** What stands at an old time is to stand at a new one; both ascend. The span's ends stay where no mark names them. */
+  | { readonly kind: 'marks'; readonly marks: readonly { readonly old: number; readonly time: number }[] }
+  | { readonly kind: 'stretch'; readonly seconds: number }
+);
 
 /** A curve on another clock. */
 export interface PacedCurve extends Curve {
