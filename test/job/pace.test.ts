@@ -193,6 +193,7 @@ describe('a camera whose place and aim are both keyed', () => {
         // On the frames the aim eases inside the first old gap, where a place whose keys travel runs evenly: 0.15° here. Moved keys stay in step.
         { verb: 'ease in/out', shoulders: 0.8, store: 'move' },
         { verb: 'reverse' },
+        { verb: 'there and back' },
       ] as const) {
         const { bytes: made } = await mend(bytes, { ...CAMERA, ...step });
         const after = await pointingError(made);

@@ -20,6 +20,7 @@ describe('VERBS', () => {
       'stretch',
       'shrink',
       'reverse',
+      'there and back',
       'ease through',
       'whole turns',
     ]);

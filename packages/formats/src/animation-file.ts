@@ -16,6 +16,8 @@ export interface AnimationFile {
   readonly format: 'glb' | 'gltf' | 'bvh' | 'delimited';
   readonly nodes: readonly SceneNode[];
   readonly clips: readonly Clip[];
+  /** Whether keys can only stand at the times that the file has: its tracks share rows. */
+  readonly fixedTimes: boolean;
   /** Faults of single nodes, channels, samplers and accessors, in the file's order. A channel named here may have no track. */
   readonly problems: readonly FileProblem[];
   /**
@@ -37,6 +39,8 @@ export interface Follower {
   readonly track?: string;
   /** True where later keys come earlier. */
   readonly turnsBack: boolean;
+  /** Where everything plays backwards again, seconds; `newTime` gives the way there. */
+  readonly turnsAt?: number;
   /** When what stood at an old time stands now, seconds. */
   newTime(old: number): number;
 }

@@ -77,9 +77,17 @@ export async function mendFile(
 function followersOf(applied: readonly AppliedStep[]): Follower[] {
   return applied.flatMap(({ before, result: { repaced } }) => {
     if (!repaced || repaced.with === 'track') return [];
-    const { turnsBack } = repaced.retiming;
+    const { turnsBack, turnsAt } = repaced.retiming;
     const newTime = (old: number): number => repaced.retiming.newTime(old);
-    return [{ clip: before.clip, turnsBack, newTime, ...(repaced.with === 'node' && { track: before.id }) }];
+    return [
+      {
+        clip: before.clip,
+        turnsBack,
+        newTime,
+        ...(repaced.with === 'node' && { track: before.id }),
+        ...(turnsAt !== undefined && { turnsAt }),
+      },
+    ];
   });
 }
 

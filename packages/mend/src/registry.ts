@@ -14,6 +14,7 @@ import { sameSide } from './edits/same-side.js';
 import { setMarks } from './edits/set-marks.js';
 import { shape } from './edits/shape.js';
 import { shrink, stretch } from './edits/stretch.js';
+import { thereAndBack } from './edits/there-and-back.js';
 import { wholeTurns } from './edits/whole-turns.js';
 import { nearestWord } from './nearest-word.js';
 import { onAngles } from './on-angles.js';
@@ -36,6 +37,7 @@ export const VERBS: readonly Verb[] = Object.freeze([
   stretch,
   shrink,
   reverse,
+  thereAndBack,
   easeThrough,
   wholeTurns,
 ]);

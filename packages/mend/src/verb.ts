@@ -39,6 +39,8 @@ export interface TimeMap {
   newTime(old: number): number;
   /** True where later old times come earlier: played backwards. */
   readonly turnsBack: boolean;
+  /** Where all that was played until then plays backwards again: a new time, seconds. `newTime` gives the way there. */
+  readonly turnsAt?: number;
 }
 
 /** What a new pace costs. */

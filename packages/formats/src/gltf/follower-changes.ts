@@ -125,6 +125,10 @@ function travel(keys: Keys, followers: readonly Follower[]): Keys {
   let now = keys;
   for (const follower of followers) {
     const moved = now.times.map((time) => follower.newTime(time));
+    if (follower.turnsAt !== undefined) {
+      now = thereAndBack(now, follower.turnsAt);
+      continue;
+    }
     now = follower.turnsBack
       ? {
           ...now,
@@ -134,6 +138,20 @@ function travel(keys: Keys, followers: readonly Follower[]): Keys {
       : { ...now, times: moved, values: now.isCubic ? scaledTangents(now, moved) : now.values };
   }
   return now;
+}
+
+/** Keys up to the turn, and then all but the last of them mirrored about it. */
+function thereAndBack(keys: Keys, turn: number): Keys {
+  const { times, values, isCubic } = keys;
+  const last = times.length - 1;
+  const size = values.length / times.length;
+  // A last key that stands before the turn is held until then, and is left as late.
+  const from = times[last] === turn ? 1 : 0;
+  const back = turnedBack(keys);
+  const mirrored = times.map((_, key) => 2 * turn - (times[last - key] ?? 0)).subarray(from);
+  const all = Float64Array.of(...values, ...back.subarray(from * size));
+  if (isCubic && from === 1) all.set(back.subarray((2 * size) / 3, size), last * size + (2 * size) / 3);
+  return { times: Float64Array.of(...times, ...mirrored), values: all, isCubic };
 }
 
 function turnedBack({ times, values, isCubic }: Keys): Float64Array {

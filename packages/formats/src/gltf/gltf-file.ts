@@ -20,6 +20,7 @@ export async function gltfFile(container: Container, options: OpenOptions): Prom
   refuseHidden(problems);
   return Object.freeze({
     format: container.format,
+    fixedTimes: false,
     nodes: Object.freeze(nodes),
     clips: Object.freeze(clips),
     problems: Object.freeze(problems),

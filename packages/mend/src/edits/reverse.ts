@@ -52,8 +52,8 @@ export const reverse: Verb = Object.freeze({
       breaks: breaks.map((_, i) => last - 1 - breaks[breaks.length - 1 - i]).filter((key) => key >= 0),
     });
     const path = playAs(track, 'as-written');
-    const clock = { oldTime: (t: number) => sum - t, newTime: (old: number) => sum - old };
+    const clock = { oldTime: (t: number) => sum - t, newTime: (old: number) => sum - old, turnsBack: true };
     const orientation: Curve['orientation'] = (out, t) => path.orientation(out, sum - t);
-    return pacedResult(track, after, [], span, { orientation }, clock, step, true);
+    return pacedResult(track, after, [], span, { orientation }, clock, step);
   },
 });

@@ -78,17 +78,22 @@ export function pacedResult(
   keys: readonly NewKey[],
   acted: Span,
   paced: Pick<Curve, 'orientation'>,
-  retiming: Omit<TimeMap, 'turnsBack'>,
+  retiming: Omit<TimeMap, 'turnsBack'> & Partial<TimeMap>,
   step: Step,
-  turnsBack = false,
 ): EditResult {
+  const { turnsBack = false, turnsAt } = retiming;
   const isNew = keys.length > track.times.length;
   const frames = keys.flatMap(({ old }, key) => (old === undefined ? [key] : []));
   const inserted = isNew ? frames.slice(-(keys.length - track.times.length)) : [];
   return {
     ...editResult(track, after, { inserted }),
     repaced: {
-      retiming: { oldTime: (t) => retiming.oldTime(t), newTime: (old) => retiming.newTime(old), turnsBack },
+      retiming: {
+        oldTime: (t) => retiming.oldTime(t),
+        newTime: (old) => retiming.newTime(old),
+        turnsBack,
+        ...(turnsAt !== undefined && { turnsAt }),
+      },
       acted,
       with: step.with ?? 'node',
       price: priceOf(track, after, paced),
