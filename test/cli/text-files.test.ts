@@ -98,6 +98,25 @@ describe('the command on delimited text', () => {
     expect(reportOf(named).files[0].tracks[0].peakRate).toBeCloseTo(180 / Math.PI, 3);
   });
 
+  test('leaves out a remedy that the file can not hold, and says why', async () => {
+    const half = 't,qx,qy,qz,qw\n0,0,0,0,1\n0.5,0,0,1,0\n1.0,0,0,0.9,0.5\n';
+    const { run, path } = await folderWith('half.csv', half);
+    const { code, stderr } = await run(
+      'mend',
+      'half.csv',
+      '--proposed',
+      '--allow',
+      'choose side',
+      '--fail-at',
+      'error',
+      '-o',
+      'out.csv',
+    );
+    expect(code).toBe(1);
+    expect(stderr).toContain("left out: choose side on rotation in table: the file's columns share rows");
+    expect(await readFile(path('out.csv'), 'latin1')).toBe(half);
+  });
+
   test('names a flag whose value means nothing', async () => {
     const { run } = await folderWith('vane.csv', CSV);
     expect(await run('check', 'vane.csv', '--euler', 'YXY2')).toMatchObject({ code: 2 });

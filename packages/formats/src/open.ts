@@ -7,8 +7,8 @@ import { gltfFile } from './gltf/gltf-file.js';
 import { readRange } from './read-range.js';
 import type { Source } from './source.js';
 
-/** Enough for a magic number, or for white space and the brace that opens JSON. */
-const SNIFFED = 256;
+/** Enough for a magic number, for white space and the brace that opens JSON, or for a header and a row of a table. */
+const SNIFFED = 1024;
 
 /**
  * Reads an animation file into tracks. Its kind is told by its first bytes; text that opens with nothing of its own goes by its

@@ -1,6 +1,6 @@
 import type { Clip, RotationTrack } from '@slewcurve/core';
 import type { OpenOptions } from '@slewcurve/formats';
-import { applySteps, sayStep, type Step } from '@slewcurve/mend';
+import { applySteps, sayStep, verbNamed, type Step } from '@slewcurve/mend';
 import { surveyTrack, withDeclaredCuts, type Finding } from '@slewcurve/survey';
 import { mendFile, type MendedFile } from './mend-file.js';
 import { newFaults } from './new-faults.js';
@@ -51,7 +51,14 @@ export function declineHarmful(
     for (const track of clip.tracks) {
       const own = proposal.card.steps.filter((step) => step.clip === clip.name && step.track === track.id);
       if (own.length === 0) continue;
-      const tried = trySteps(opened, clip, track, own, settings);
+      const held = own.filter((step) => !(opened.file.fixedTimes && verbNamed(step.verb).insertsKeys));
+      for (const step of own)
+        if (!held.includes(step))
+          declined.push({
+            step,
+            why: `the file's columns share rows, so that no key can be put in (${sayStep(step)})`,
+          });
+      const tried = trySteps(opened, clip, track, held, settings);
       steps.push(...tried.kept);
       declined.push(...tried.declined);
     }

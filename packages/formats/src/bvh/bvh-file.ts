@@ -40,6 +40,7 @@ export async function bvhFile(source: Source, name: string): Promise<AnimationFi
   if (roundedTime) problems.push(roundedTime);
   return Object.freeze({
     format: 'bvh',
+    fixedTimes: true,
     nodes: Object.freeze(nodes),
     clips: Object.freeze([clipOf(joints.map(({ track }) => track))]),
     problems: Object.freeze(problems),

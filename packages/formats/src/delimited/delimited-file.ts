@@ -44,6 +44,7 @@ export async function delimitedFile(
   problems.push(...bodyProblems(name, layout, bodies));
   return Object.freeze({
     format: 'delimited',
+    fixedTimes: true,
     nodes: Object.freeze(nodes),
     clips: Object.freeze([clipOf(bodies.map(({ track }) => track))]),
     problems: Object.freeze(problems),

@@ -8,4 +8,5 @@ export interface TableOptions {
   readonly unit?: AngleUnit;
 }
 
+/** Unit of angles in text. */
 export type AngleUnit = 'deg' | 'rad';
