@@ -63,3 +63,33 @@ test('a cubic with a key that cannot be played plays the rest (A15)', () => {
   const curve = playAs(storedTrack({ ...CUBIC, times: [0, 1, 2], values }), 'stored-cubic');
   expect([curve.start, curve.end]).toEqual([0, 1]);
 });
+
+test.each(['as-written', 'short-way', 'long-way', 'chord', 'raw-chord', 'finite-cubic', 'step'] as const)(
+  '%s is finite at every key gap and turn that float64 can hold, down to 5e-324',
+  (id) => {
+    for (const times of [
+      [0, 5e-324],
+      [0, 1e-310, 1],
+      [0, 1, 1 + 2 ** -52],
+    ])
+      for (const small of [0, 5e-324, 1e-310, 1e-160, 1e-17]) {
+        const values = [
+          [0, 0, 0, 1],
+          [small, 0, 0, 1],
+          [0, 0.6, 0, 0.8],
+        ]
+          .slice(0, times.length)
+          .flat();
+        const curve = playAs(rotationTrack({ times, values }), id);
+        for (const t of [...times, times[1] / 2])
+          for (const frame of ['own', 'parent'] as const)
+            expect(
+              [
+                ...curve.orientation<number[]>([], t),
+                ...curve.rate<number[]>([], t, frame),
+                ...curve.acceleration<number[]>([], t, frame),
+              ].every(Number.isFinite),
+            ).toBe(true);
+      }
+  },
+);

@@ -59,3 +59,12 @@ test('the angle of a segment is the shortest between its keys, 0 to π, whatever
   expect(segmentAngle(track, 0)).toBeCloseTo(Math.PI, 15);
   expect(segmentAngle(track, 1)).toBeCloseTo(Math.PI, 15);
 });
+
+test('cuts among dropped keys fall on the key kept before each, once', () => {
+  const values = [NONE, ONE, NONE, NONE, TURN, NONE, ONE].flat();
+  const track = playableTrack(
+    storedTrack({ times: [0, 1, 2, 3, 4, 5, 6], values, breaks: [0, 1, 2, 3, 5, 6] }),
+  );
+  expect([...track.times]).toEqual([1, 4, 6]);
+  expect(track.breaks).toEqual([0, 1, 2]);
+});

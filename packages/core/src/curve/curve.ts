@@ -11,6 +11,16 @@ export interface Peak {
   time: number;
 }
 
+/** The acceleration inside one segment; sizes, the same in every frame. */
+export interface SegmentAcceleration {
+  /** rad/s². */
+  peak: number;
+  /** Seconds. */
+  time: number;
+  /** Mean over the segment of its square, rad²/s⁴. */
+  meanSquare: number;
+}
+
 /**
  * What plays a track: orientation, angular rate and angular acceleration at any time, exact and in closed form. Interpolations,
  * playbacks and re-timings are all curves. Outside `[start, end]` a curve holds its end orientation at rate 0, as glTF 2.0
@@ -34,4 +44,6 @@ export interface Curve {
   length(t0: number, t1: number): number;
   /** Greatest angular speed in `[t0, t1]`. */
   peak(t0: number, t1: number): Peak;
+  /** The acceleration between knot `segment` and the next, which is not a held one, where the curve has a closed form for it. */
+  readonly segmentAcceleration?: (segment: number) => SegmentAcceleration;
 }

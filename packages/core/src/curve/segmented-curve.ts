@@ -1,7 +1,7 @@
 import type { NumberStore } from '../number-store.js';
 import { rotateVector } from '../quaternion/rotate-vector.js';
 import { findSegment } from '../track/find-segment.js';
-import type { Curve, Frame, Peak } from './curve.js';
+import type { Curve, Frame, Peak, SegmentAcceleration } from './curve.js';
 
 /**
  * How one kind of interpolation moves between key `segment` and the next, at the fraction `u` (0 to 1) of the segment's time.
@@ -15,6 +15,12 @@ export interface SegmentMotion {
   length(segment: number, u0: number, u1: number): number;
   /** Fraction in `[u0, u1]` at which the angular speed is greatest; the earliest of equals. */
   peakAt(segment: number, u0: number, u1: number): number;
+  /** Where there is a closed form: fraction at which the acceleration is greatest, how much, and the mean of its square. */
+  accelerationOver?(segment: number): {
+    readonly u: number;
+    readonly peak: number;
+    readonly meanSquare: number;
+  };
 }
 
 export interface SegmentedCurveParts {
@@ -80,6 +86,8 @@ export function segmentedCurve(parts: SegmentedCurveParts): Curve {
     return rotateVector(out, orientation(orientationNow, t), vectorNow);
   }
 
+  const over = motion.accelerationOver?.bind(motion);
+
   return {
     start: last < 0 ? 0 : times[0],
     end: last < 0 ? 0 : times[last],
@@ -89,6 +97,14 @@ export function segmentedCurve(parts: SegmentedCurveParts): Curve {
     rate: (out, t, frame) => derivative(out, t, frame, 'rate'),
     acceleration: (out, t, frame) => derivative(out, t, frame, 'acceleration'),
     ...turnedOver(times, motion, held),
+    ...(over === undefined
+      ? {}
+      : {
+          segmentAcceleration: (i: number): SegmentAcceleration => {
+            const { u, peak, meanSquare } = over(i);
+            return { peak, time: times[i] + u * (times[i + 1] - times[i]), meanSquare };
+          },
+        }),
   };
 }
 

@@ -37,8 +37,9 @@ export function turnsCurve(track: RotationTrack, wholeTurns: number | ReadonlyNu
       },
       rate(out, i) {
         const angle = shortAngle(i);
-        const scale = angle > 0 ? (1 + (2 * Math.PI * count(i)) / angle) / gaps[i] : 0;
-        for (let k = 0; k < 3; k++) out[k] = short[3 * i + k] * scale;
+        const speed = (angle + 2 * Math.PI * count(i)) / gaps[i];
+        // The axis first: whole turns over an angle next to nothing would leave float64.
+        for (let k = 0; k < 3; k++) out[k] = angle > 0 ? (short[3 * i + k] / angle) * speed : 0;
       },
       acceleration(out) {
         out[0] = 0;

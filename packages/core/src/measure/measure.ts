@@ -123,8 +123,14 @@ function insideAccelerations(
   let peak = 0;
   let at = curve.start;
   let squares = 0;
-  for (const { from, to, held } of segments) {
+  for (const [i, { from, to, held }] of segments.entries()) {
     if (held) continue;
+    if (curve.segmentAcceleration !== undefined) {
+      const own = curve.segmentAcceleration(i);
+      if (own.peak > peak) ({ peak, time: at } = own);
+      squares += own.meanSquare * (to - from);
+      continue;
+    }
     const last = lastBefore(to);
     // The later segment's acceleration belongs to a knot, so a segment is asked up to the time before its end.
     const size = (u: number): number => {

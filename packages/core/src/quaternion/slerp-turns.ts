@@ -39,9 +39,8 @@ export function slerpTurns<T extends NumberStore>(
     out[3] = sign * bw;
     return out;
   }
-  const scale = short > 0 ? t * (1 + (2 * Math.PI * wholeTurns) / short) : 0;
-  turn[0] *= scale;
-  turn[1] *= scale;
-  turn[2] *= scale;
+  const turned = t * (short + 2 * Math.PI * wholeTurns);
+  // The axis first: whole turns over an angle next to nothing would leave float64.
+  for (let k = 0; k < 3; k++) turn[k] = short > 0 ? (turn[k] / short) * turned : 0;
   return normalise(out, multiply(turn, from, expMap(turn, turn)));
 }

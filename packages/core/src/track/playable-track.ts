@@ -42,8 +42,10 @@ function keepKeys(track: RotationTrack, kept: readonly number[]): RotationTrack 
   const values = new Float64Array(kept.length * size);
   kept.forEach((key, i) => values.set(track.values.subarray(key * size, (key + 1) * size), i * size));
   const breaks = new Set<number>();
+  // Breaks and kept keys both ascend.
+  let upTo = 0;
   for (const key of track.breaks) {
-    const upTo = kept.filter((other) => other <= key).length;
+    while (kept[upTo] <= key) upTo++;
     if (upTo > 0) breaks.add(upTo - 1);
   }
   return replaceTrack(track, {
