@@ -57,6 +57,13 @@ function folderOf(specifier: string): string {
   return dirname(fileURLToPath(import.meta.resolve(specifier)));
 }
 
+let loaded = 0;
+
+/** A module of this folder, loaded anew: the loop of a contender, too, must not be compiled for what another one calls. */
+export function again<M>(path: string): Promise<M> {
+  return import(new URL(`${path}?${loaded++}`, import.meta.url).href);
+}
+
 /** Whole, or of its folders and top files only the named `parts`. */
 function copy(from: string, name: string, parts?: readonly string[]): string {
   const to = join(copies, name);

@@ -1,6 +1,9 @@
-import { coreCopy, glMatrixCopy, threeCopy } from '../module-copies.js';
-import { randomOrientation, seeded, turned } from '../motion-data.js';
-import type { BenchCase, Contender } from '../rounds.js';
+import type * as contenders from '../contenders/slerp.js';
+import { again, coreCopy, glMatrixCopy } from '../module-copies.js';
+import { seeded, randomOrientation, turned } from '../motion-data.js';
+import type { BenchCase } from '../rounds.js';
+
+const own = (): Promise<typeof contenders> => again('contenders/slerp.js');
 
 const PAIRS = 2048;
 
@@ -27,7 +30,7 @@ export async function slerpCases(): Promise<BenchCase[]> {
       unit: 'slerp',
       items: PAIRS,
       contenders: [
-        callEach(
+        (await own()).callEach(
           'gl-matrix Float32Array',
           (await glMatrixCopy(`${id}-32`)).slerp,
           from,
@@ -35,7 +38,7 @@ export async function slerpCases(): Promise<BenchCase[]> {
           parts,
           new Float32Array(4),
         ),
-        callEach(
+        (await own()).callEach(
           'gl-matrix number[]',
           (await glMatrixCopy(`${id}-plain`)).slerp,
           fromPlain,
@@ -43,9 +46,9 @@ export async function slerpCases(): Promise<BenchCase[]> {
           parts,
           [0, 0, 0, 0],
         ),
-        await threeObjects(id, from, to, parts),
-        await threeFlat(id, from, to, parts),
-        callEach(
+        await (await own()).threeObjects(id, from, to, parts),
+        await (await own()).threeFlat(id, from, to, parts),
+        (await own()).callEach(
           'ours Float32Array',
           (await coreCopy(`${id}-32`)).slerp,
           from,
@@ -53,7 +56,7 @@ export async function slerpCases(): Promise<BenchCase[]> {
           parts,
           new Float32Array(4),
         ),
-        callEach(
+        (await own()).callEach(
           'ours number[]',
           (await coreCopy(`${id}-plain`)).slerp,
           fromPlain,
@@ -71,67 +74,4 @@ export async function slerpCases(): Promise<BenchCase[]> {
     });
   }
   return cases;
-}
-
-function callEach<Q extends Float32Array | number[]>(
-  name: string,
-  slerp: (out: Q, a: Q, b: Q, t: number) => unknown,
-  from: readonly Q[],
-  to: readonly Q[],
-  parts: Float64Array,
-  out: Q,
-): Contender {
-  return {
-    name,
-    run: () => {
-      let sum = 0;
-      for (let i = 0; i < from.length; i++) {
-        slerp(out, from[i], to[i], parts[i]);
-        sum += out[0];
-      }
-      return sum;
-    },
-  };
-}
-
-async function threeObjects(
-  id: string,
-  from: readonly Float32Array[],
-  to: readonly Float32Array[],
-  parts: Float64Array,
-): Promise<Contender> {
-  const { Quaternion } = await threeCopy(`${id}-objects`);
-  const objects = [from, to].map((list) => list.map(([x, y, z, w]) => new Quaternion(x, y, z, w)));
-  const out = new Quaternion();
-  const [a, b] = objects;
-  return {
-    name: 'three slerpQuaternions',
-    run: () => {
-      let sum = 0;
-      for (let i = 0; i < a.length; i++) sum += out.slerpQuaternions(a[i], b[i], parts[i]).x;
-      return sum;
-    },
-  };
-}
-
-async function threeFlat(
-  id: string,
-  from: readonly Float32Array[],
-  to: readonly Float32Array[],
-  parts: Float64Array,
-): Promise<Contender> {
-  const { Quaternion } = await threeCopy(`${id}-flat`);
-  const [a, b] = [from, to].map((list) => Float32Array.from(list.flatMap((q) => [...q])));
-  const out = new Float32Array(4);
-  return {
-    name: 'three slerpFlat',
-    run: () => {
-      let sum = 0;
-      for (let i = 0; i < parts.length; i++) {
-        Quaternion.slerpFlat(out, 0, a, 4 * i, b, 4 * i, parts[i]);
-        sum += out[0];
-      }
-      return sum;
-    },
-  };
 }
