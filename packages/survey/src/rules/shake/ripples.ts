@@ -36,7 +36,7 @@ export function ripplesOf(
   const step = Math.max(1, Math.round(rate / WINDOWS_A_SECOND + 1e-3));
   if (rate < 2 * hertz || rates.length < 3 * window) return [];
   const gate = gateOf(rates, window, rate, { hertz, share, amplitude });
-  const read = spectrum(window, rate, hertz);
+  const read = spectrum(window, rate, hertz, NEAR);
   const known = new Map<number, Ripple>();
   const count = Math.floor((rates.length / 3 - window) / step) + 1;
   const look = (index: number): Ripple | undefined => {

@@ -10,10 +10,11 @@ const BESIDE = 1;
 const FINE = 50;
 
 /**
- * Discrete Fourier spectrum of `count` vectors at `rate` a second, their mean taken off, no taper; lines above `least` hertz. Power is
+ * Discrete Fourier spectrum of `count` vectors at `rate` a second, their mean taken off, no taper; lines above `least` hertz, placed exactly where they hold a share of at
+ * least `worth`. Power is
  * |Σ v·e^(−2πifn/rate)|², over all three axes.
  */
-export function spectrum(count: number, rate: number, least: number): Spectrum {
+export function spectrum(count: number, rate: number, least: number, worth: number): Spectrum {
   const cosines = Float64Array.from({ length: count }, (_, n) => Math.cos((2 * Math.PI * n) / count));
   const sines = Float64Array.from({ length: count }, (_, n) => Math.sin((2 * Math.PI * n) / count));
   const centred = new Float64Array(3 * count);
@@ -49,12 +50,20 @@ export function spectrum(count: number, rate: number, least: number): Spectrum {
     }
     const best = strongestLine(powers, (least * count) / rate);
     if (best === 0) return { hertz: least, near: 0, total };
+    // A line lies within half a bin of its highest: where those around it hold little, it need not be looked for.
+    const rough = powerWithin(powers, rate / count, hertzOf(best), BESIDE + rate / count);
+    if (rough < worth * total) return { hertz: hertzOf(best), near: rough, total };
     const hertz = Math.max(least, finest(centred, count, rate, hertzOf(best)));
-    let near = 0;
-    for (let bin = 1; bin < powers.length; bin++)
-      if (Math.abs(hertzOf(bin) - hertz) <= BESIDE) near += powers[bin] ?? 0;
-    return { hertz, near, total };
+    return { hertz, near: powerWithin(powers, rate / count, hertz, BESIDE), total };
   };
+}
+
+/** Power of the bins, `width` hertz apart, within a distance of a frequency. */
+function powerWithin(powers: Float64Array, width: number, hertz: number, distance: number): number {
+  let sum = 0;
+  for (let bin = 1; bin < powers.length; bin++)
+    if (Math.abs(bin * width - hertz) <= distance) sum += powers[bin] ?? 0;
+  return sum;
 }
 
 /** The bin above `least` bins with the most power; 0 where there is none. The skirt of a slower line is no line of its own. */
