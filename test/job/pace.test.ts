@@ -163,8 +163,8 @@ async function pointingError(bytes: Uint8Array): Promise<number> {
   const curve = playAs(trackOf(file, 'Flight', 'camera'), 'as-written');
   const place = samplerOf(bytes, 1);
   let worst = 0;
-  for (let i = 0; i <= 2000; i++) {
-    const t = curve.start + (i / 2000) * (curve.end - curve.start);
+  for (let i = 0; i <= 800; i++) {
+    const t = curve.start + (i / 800) * (curve.end - curve.start);
     const at = sampled(place, t);
     const wanted = lookAlong(
       [],
@@ -267,12 +267,12 @@ describe('the demo scene', () => {
       const q = before.values.subarray(4 * key, 4 * key + 4);
       let best = Infinity;
       let bestAt = from;
-      for (let i = 0; i <= 400; i++) {
-        const t = Math.min(curve.end, from + i * 0.0005);
+      for (let i = 0; i <= 150; i++) {
+        const t = Math.min(curve.end, from + i * 0.001);
         const off = angleBetween(curve.orientation([0, 0, 0, 0], t), q);
         if (off < best) [best, bestAt] = [off, t];
       }
-      for (let round = 0, gap = 0.0005; round < 24; round++, gap /= 2)
+      for (let round = 0, gap = 0.001; round < 20; round++, gap /= 2)
         for (const t of [bestAt - gap, bestAt + gap]) {
           const off = angleBetween(curve.orientation([0, 0, 0, 0], t), q);
           if (off < best) [best, bestAt] = [off, t];
