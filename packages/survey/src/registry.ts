@@ -11,7 +11,9 @@ import { freeze } from './rules/jump/freeze.js';
 import { loneKey } from './rules/jump/lone-key.js';
 import { shelf } from './rules/jump/shelf.js';
 import { turnedOver } from './rules/jump/turned-over.js';
+import { axisKick } from './rules/pace/axis-kick.js';
 import { elbow } from './rules/pace/elbow.js';
+import { hardStop } from './rules/pace/hard-stop.js';
 import { doubledEnd } from './rules/seam/doubled-end.js';
 import { loopGap } from './rules/seam/loop-gap.js';
 import { loopKink } from './rules/seam/loop-kink.js';
@@ -50,6 +52,8 @@ export const RULES: readonly Rule[] = Object.freeze([
   loneKey,
   shelf,
   elbow,
+  hardStop,
+  axisKick,
   grain,
   hum,
   creep,

@@ -34,7 +34,7 @@ describe('pace.elbow', () => {
       3,
     );
     expect(finding).toMatchObject({ level: 'warning', unit: 'deg/s', limit: 60, playback: 'as-written' });
-    expect(finding.remedy).toBeUndefined();
+    expect(finding.remedy).toMatchObject({ verb: 'ease through' });
   });
 
   test('the worst step is the one that `measure` reports of the same curve', () => {

@@ -43,8 +43,11 @@ export const elbow: Rule = Object.freeze({
     }
     return places;
   },
-  // `ease through` is not built yet.
-  remedy: (): Remedy | undefined => undefined,
+  remedy({ stored, track }: TrackContext): Remedy | undefined {
+    // One interpolation a track: what has tangents already, or keys that cannot be played, is not eased through.
+    if (stored.interpolation !== 'LINEAR' || stored !== track) return undefined;
+    return { step: { verb: 'ease through', clip: track.clip, track: track.id }, price: 0 };
+  },
   message(place: Place): string {
     const { before = 0, after = 0 } = place.facts ?? {};
     return `at key ${place.keys[0]} the angular rate steps by ${sayRate(place.value)}, from a speed of ${sayRate(before)} to ${sayRate(after)} (limit ${sayRate(place.limit)})`;
@@ -63,7 +66,7 @@ export const elbow: Rule = Object.freeze({
     spares:
       'Dense tracks (baked natural motion steps as much by itself), STEP tracks, declared cuts, playbacks whose rate is continuous.',
     remedy:
-      'A rotation spline through the same keys and times. The verb for it is not built yet; `rotationSpline` of the library is.',
+      '`ease through` runs a smooth rotation spline through the same keys at the same times and stores it as CUBICSPLINE, LINEAR tracks alone.',
   },
 });
 
