@@ -46,18 +46,24 @@ export function curveMotion(curve: Curve): Motion {
   let pyramid: Pyramid | undefined;
   const scratch: [number, number, number, number] = [0, 0, 0, 1];
   const knots = curve.knots;
-  const stretch = (from: number, to: number): [number, number] => {
-    const greatest = toDegrees(curve.peak(from, to).rate);
-    let least = greatest;
-    for (const t of [from, (from + to) / 2, to]) least = Math.min(least, speedAt(curve, t, scratch));
-    return [greatest, least];
-  };
+  const stretch = (from: number, to: number): [number, number] => extremesWithin(curve, from, to, scratch);
   const tops = new Float32Array(Math.max(0, knots.length - 1));
   const bottoms = new Float32Array(tops.length);
+  /** Degrees turned at each knot: the odometer is read at every row and every move of the cursor. */
+  const turned = new Float64Array(tops.length + 1);
   let measured = 0;
   const measure = (until: number): void => {
-    for (; measured < until; measured++)
-      [tops[measured], bottoms[measured]] = stretch(knots[measured], knots[measured + 1]);
+    for (; measured < until; measured++) {
+      const [from, to] = [knots[measured], knots[measured + 1]];
+      [tops[measured], bottoms[measured]] = stretch(from, to);
+      turned[measured + 1] = turned[measured] + toDegrees(curve.length(from, to));
+    }
+  };
+  const odometer = (time: number): number => {
+    if (tops.length === 0) return 0;
+    const segment = segmentAt(knots, time);
+    measure(segment);
+    return turned[segment] + toDegrees(curve.length(knots[segment], time));
   };
   const segments = (): Pyramid => {
     measure(tops.length);
@@ -104,7 +110,7 @@ export function curveMotion(curve: Curve): Motion {
         toDegrees(scratch[1]),
         toDegrees(scratch[2]),
       ];
-      return { time: t, speed: Math.hypot(...own), own, odometer: toDegrees(curve.length(curve.start, t)) };
+      return { time: t, speed: Math.hypot(...own), own, odometer: odometer(t) };
     },
     prepare(milliseconds) {
       const end = performance.now() + milliseconds;
@@ -147,6 +153,19 @@ export function segmentAt(knots: ArrayLike<number>, time: number): number {
     else high = middle - 1;
   }
   return low;
+}
+
+/** Greatest and least speed between two moments, deg/s. */
+function extremesWithin(
+  curve: Curve,
+  from: number,
+  to: number,
+  scratch: [number, number, number, number],
+): [number, number] {
+  const greatest = toDegrees(curve.peak(from, to).rate);
+  let least = greatest;
+  for (const t of [from, (from + to) / 2, to]) least = Math.min(least, speedAt(curve, t, scratch));
+  return [greatest, least];
 }
 
 function speedAt(curve: Curve, time: number, scratch: [number, number, number, number]): number {

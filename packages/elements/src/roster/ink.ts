@@ -81,6 +81,17 @@ function slidingExtreme(
   return out;
 }
 
+const drawn = new WeakMap<Pyramid, Float32Array>();
+
+/** Darkest bin in each column; kept, since a roster is drawn again and again at one width. */
+function columnsOf(ink: Pyramid, width: number): Float32Array {
+  const known = drawn.get(ink);
+  if (known?.length === width) return known;
+  const columns = columnMaxima(ink, 0, ink.length, new Float32Array(width));
+  drawn.set(ink, columns);
+  return columns;
+}
+
 /**
  * Writes one row's ink straight into the sheet: a column a pixel, the darkest bin within it, never the mean, so that a pop of one
  * frame among millions stands out. Column height follows darkness too, so that the row reads in grey and on paper.
@@ -94,7 +105,7 @@ export function inkRow(
   height: number,
   color: readonly [number, number, number],
 ): void {
-  const columns = columnMaxima(ink, 0, ink.length, new Float32Array(sheet.width));
+  const columns = columnsOf(ink, sheet.width);
   // A pixel at a time; canvases exist on little-endian machines alone.
   const pixels = new Uint32Array(sheet.data.buffer, sheet.data.byteOffset, sheet.data.length / 4);
   const opaque = (color[2] << 16) | (color[1] << 8) | color[0];
