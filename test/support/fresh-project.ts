@@ -23,8 +23,6 @@ export function freshProject(): FreshProject {
     mkdirSync(into, { recursive: true });
     execFileSync('tar', ['-xzf', tarball, '-C', into, '--strip-components=1']);
   }
-  const scoped = (scope: string): string[] =>
-    readdirSync(join('node_modules', scope)).map((name) => `${scope}/${name}`);
   for (const name of [
     'gl-matrix',
     'three',
@@ -51,4 +49,8 @@ export function freshProject(): FreshProject {
     node: (...args) => execFileSync(process.execPath, args, { cwd: folder, encoding: 'utf8' }),
     remove: () => rmSync(folder, { recursive: true, force: true }),
   };
+}
+
+function scoped(scope: string): string[] {
+  return readdirSync(join('node_modules', scope)).map((name) => `${scope}/${name}`);
 }

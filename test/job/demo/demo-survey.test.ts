@@ -43,7 +43,7 @@ test('the survey of the demo scene finds what the manifest lists, and nothing el
 
 test.each(expected)('on $clip, $rule is found at the listed keys with the listed value', (entry) => {
   const finding = findings.find((one) => place(one) === place(entry));
-  const keys = finding?.occurrences.flatMap((place) => place.keys) ?? [];
+  const keys = finding?.occurrences.flatMap((occurrence) => occurrence.keys) ?? [];
   expect(new Set(keys)).toEqual(new Set(entry.keys));
   expect(finding?.unit).toBe(entry.unit);
   // Reports round to six significant digits.
