@@ -81,7 +81,7 @@ export function measureCase(bench: BenchCase, rounds: number, random: () => numb
   };
 }
 
-function cpuMicroseconds(contender: Contender, repeats: number): { each: number; checksum: number } {
+export function cpuMicroseconds(contender: Contender, repeats: number): { each: number; checksum: number } {
   let checksum = 0;
   const before = process.cpuUsage();
   for (let i = 0; i < repeats; i++) checksum = contender.run();
@@ -98,7 +98,7 @@ function shuffled(length: number, random: () => number): number[] {
   return order;
 }
 
-function spread(values: readonly number[]): Spread {
+export function spread(values: readonly number[]): Spread {
   const sorted = values.toSorted((a, b) => a - b);
   const at = (part: number): number => sorted[Math.round(part * (sorted.length - 1))];
   return { median: at(0.5), p10: at(0.1), p90: at(0.9) };

@@ -6,6 +6,7 @@ import { squadCases } from './cases/squad.js';
 import { trackCases } from './cases/track.js';
 import { withTable } from './markdown-table.js';
 import { seeded } from './motion-data.js';
+import { nativeResult } from './native-slerp.js';
 import { measureCase, type CaseResult } from './rounds.js';
 
 /*
@@ -27,6 +28,13 @@ for (const make of [slerpCases, trackCases, sharedKeyPoses, ownTimePoses, squadC
     results.push(result);
     print(result);
   }
+if (wanted.length === 0 || wanted.includes('native')) {
+  const native = await nativeResult();
+  if (native !== undefined) {
+    results.push(native);
+    print(native);
+  }
+}
 console.log(`checksum ${checksum(results)}`);
 if (wanted.length === 0) {
   const measured = { node: process.version, rounds: ROUNDS, results };
