@@ -370,9 +370,13 @@ describe('the demo scene', () => {
       kestrelPoint(),
       { ...place, verb: 'ease through' },
       { ...place, verb: 'cap', rate: 12.05 },
+      // The flight starts and stops in motion: that is pace.hard-stop, and no work of a cap.
+      { ...place, verb: 'ease in/out', shoulders: 0.5, ends: 'run' },
     );
     const left = report.findings.filter(({ clip }) => clip === 'quay-flight').map(({ rule }) => rule);
-    measured(`quay-flight by card: +${steps[1].added} s, findings left: ${left.join(', ') || 'none'}`);
+    measured(
+      `quay-flight by card: +${steps[1].added} s capped, +${steps[2].added} s eased, findings left: ${left.join(', ') || 'none'}`,
+    );
     expect(left.filter((rule) => /^(pace|limit|jump)\./.test(rule))).toEqual([]);
     expect(steps[1].added).toBeGreaterThan(1);
     expect(trackOf(file, 'quay-flight').interpolation).toBe('CUBICSPLINE');
