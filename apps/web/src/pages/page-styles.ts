@@ -77,6 +77,9 @@ export const pageStyles: CSSResult[] = [
     .whole {
       white-space: nowrap;
     }
+    td:nth-child(2) {
+      min-width: 8rem;
+    }
     @media screen and (max-width: 40rem) {
       thead {
         display: none;
