@@ -1,4 +1,4 @@
-import type { Family, Place, Rule } from './rule.js';
+import type { Place, Rule } from './rule.js';
 
 /** What a rule found on a track. */
 export interface Found {
@@ -18,9 +18,9 @@ const ORDER: readonly (readonly string[])[] = [
   ['jump.shelf', 'jump.lone-key'],
 ];
 
-/** Where this is found the whole track is explained, and nothing of these families is claimed of it. */
+/** Where this is found the whole track is explained: repeats, tremble and pace are the storage's. Jumps beyond its floor are not. */
 const CLAIMS_ALL = 'file.coarse';
-const CLAIMED: readonly Family[] = ['jump', 'shake', 'pace'];
+const CLAIMED = /^(?:jump\.freeze|shake\..*|pace\..*)$/;
 
 /** Keys on either side of a place's own that belong to its spot. */
 const SPOT = 3;
@@ -28,7 +28,7 @@ const SPOT = 3;
 /** One spot, one finding: what a rule found, less the places at spots that a rule before it in the claim order has taken. */
 export function claimSpots(all: readonly Found[]): Found[] {
   const isClaimed = all.some(({ rule }) => rule.id === CLAIMS_ALL);
-  const found = all.filter(({ rule }) => !(isClaimed && CLAIMED.includes(rule.family)));
+  const found = all.filter(({ rule }) => !(isClaimed && CLAIMED.test(rule.id)));
   const claims = found
     .flatMap(({ rule, places }) => places.map((place) => ({ rank: rankOf(rule), place })))
     .filter(({ rank }) => rank >= 0);

@@ -13,7 +13,9 @@ import { shelf } from './rules/jump/shelf.js';
 import { turnedOver } from './rules/jump/turned-over.js';
 import { axisKick } from './rules/pace/axis-kick.js';
 import { elbow } from './rules/pace/elbow.js';
+import { endTangent } from './rules/pace/end-tangent.js';
 import { hardStop } from './rules/pace/hard-stop.js';
+import { tangentScale } from './rules/pace/tangent-scale.js';
 import { doubledEnd } from './rules/seam/doubled-end.js';
 import { loopGap } from './rules/seam/loop-gap.js';
 import { loopKink } from './rules/seam/loop-kink.js';
@@ -54,6 +56,8 @@ export const RULES: readonly Rule[] = Object.freeze([
   elbow,
   hardStop,
   axisKick,
+  tangentScale,
+  endTangent,
   grain,
   hum,
   creep,

@@ -35,6 +35,9 @@ export const WORKED_OUT: readonly string[] = [
   'pace.elbow',
   'pace.hard-stop',
   'pace.axis-kick',
+  // The demo has no CUBICSPLINE tracks.
+  'pace.tangent-scale',
+  'pace.end-tangent',
   'shake.grain',
   'shake.hum',
   'shake.creep',

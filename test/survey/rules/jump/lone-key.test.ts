@@ -143,7 +143,9 @@ describe('jump.lone-key', () => {
     const placed = rotationTrack({ ...track, source: { ...track.source, node: 0 } });
     expect(surveyTrack(placed, { nodes: [node] })).toEqual([]);
     const camera = { ...node, camera: { verticalView: 1 } };
-    expect(surveyTrack(placed, { nodes: [camera] })).toMatchObject([{ rule: 'jump.lone-key', limit: 0.25 }]);
+    // A camera’s pan that starts and stops at 30 deg/s is another finding.
+    const found = surveyTrack(placed, { nodes: [camera] }).filter(({ rule }) => rule !== 'pace.hard-stop');
+    expect(found).toMatchObject([{ rule: 'jump.lone-key', limit: 0.25 }]);
   });
 
   test('sparse tracks are spared: each of their keys is a decision', () => {

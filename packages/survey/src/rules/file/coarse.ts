@@ -58,7 +58,7 @@ export const coarse: Rule = Object.freeze({
     programs: 'All play what is stored.',
     people:
       'Slow turns that tick. On a motorised head every tick is a blow, and in a headset the world shivers.',
-    test: 'All components of a track of 50 keys or more lie on one lattice, coarser than 1e-5; and of the steps taken while the track moves faster than 2 deg/s, over a quarter of a second on each side, more than 5 % read zero, or the lattice’s own noise of speed (√2 steps a key gap) is above 20 % of the median speed. Then nothing else of the families jump, shake and pace is claimed of the track.',
+    test: 'All components of a track of 50 keys or more lie on one lattice, coarser than 1e-5; and of the steps taken while the track moves faster than 2 deg/s, over a quarter of a second on each side, more than 5 % read zero, or the lattice’s own noise of speed (√2 steps a key gap) is above 20 % of the median speed. Then no freeze and nothing of the families shake and pace is claimed of the track.',
     source:
       'The bounds of storage are arithmetic; the shares are common practice, no source. A vane stored in bytes read zero in 75 % of its moving steps and was up to 0.49° off (measured).',
     spares: 'Tracks that stand still, sparse tracks of a few poses, STEP tracks.',

@@ -31,7 +31,7 @@ const HALF_TURN = 90;
 const known = new WeakMap<TrackContext, readonly AngleStep[]>();
 
 /** Faulty steps of an EULER track that a chosen playback joins as numbers, by ascending key; none of any other track. */
-export function angleFaults(context: TrackContext): readonly AngleStep[] {
+function angleFaults(context: TrackContext): readonly AngleStep[] {
   const before = known.get(context);
   if (before !== undefined) return before;
   const steps = context.track.interpolation === 'EULER' ? measured(context) : [];
