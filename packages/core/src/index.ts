@@ -11,7 +11,7 @@ export {
   type RotationTrackInput,
   type TrackSource,
 } from './track/rotation-track.js';
-export type { Curve, Frame, Peak } from './curve/curve.js';
+export type { Curve, Frame, Peak, SegmentAcceleration } from './curve/curve.js';
 export type { Playback, PlaybackId } from './playback/playback.js';
 export { angleBetween } from './quaternion/angle-between.js';
 export { conjugate } from './quaternion/conjugate.js';
