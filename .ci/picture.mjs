@@ -13,7 +13,7 @@ if (!succeeds('npm run build')) process.exit(1);
 const server = await preview({ configFile: false, root: 'apps/web', logLevel: 'warn' });
 const browser = await chromium.launch({ executablePath: findChromium() });
 const page = await browser.newPage({ viewport: { width: 1160, height: 720 }, reducedMotion: 'reduce' });
-await page.goto(`${server.resolvedUrls.local[0]}?demo`);
+await page.goto(`${server.resolvedUrls?.local[0]}?demo`);
 await page.getByText('12 rotation tracks in').waitFor();
 await page.getByRole('searchbox', { name: 'Find a track' }).fill('beetle-ankle');
 await page.locator('slew-roster .option').first().click();
