@@ -1,5 +1,13 @@
 import { execFileSync } from 'node:child_process';
-import { mkdirSync, mkdtempSync, readdirSync, rmSync, symlinkSync, writeFileSync } from 'node:fs';
+import {
+  mkdirSync,
+  mkdtempSync,
+  readdirSync,
+  readFileSync,
+  rmSync,
+  symlinkSync,
+  writeFileSync,
+} from 'node:fs';
 import { tmpdir } from 'node:os';
 import { dirname, join, resolve } from 'node:path';
 import { packPackages } from './packed.js';
@@ -23,17 +31,7 @@ export function freshProject(): FreshProject {
     mkdirSync(into, { recursive: true });
     execFileSync('tar', ['-xzf', tarball, '-C', into, '--strip-components=1']);
   }
-  for (const name of [
-    'gl-matrix',
-    'three',
-    'lit',
-    'lit-html',
-    'lit-element',
-    ...scoped('@lit'),
-    ...scoped('@noble'),
-    ...scoped('@types'),
-    'typescript',
-  ]) {
+  for (const name of [...dependencies(), ...OTHERS.flatMap(scoped)]) {
     mkdirSync(dirname(join(modules, name)), { recursive: true });
     symlinkSync(resolve('node_modules', name), join(modules, name));
   }
@@ -51,6 +49,22 @@ export function freshProject(): FreshProject {
   };
 }
 
-function scoped(scope: string): string[] {
-  return readdirSync(join('node_modules', scope)).map((name) => `${scope}/${name}`);
+/** What a stranger's project may have besides: a scene, a compiler, types, and what `lit` itself brings. */
+const OTHERS: readonly string[] = ['three', 'typescript', '@types', '@lit', 'lit-html', 'lit-element'];
+
+/** What the packages say they need, ours left out. */
+function dependencies(): string[] {
+  const named = readdirSync('packages').flatMap((name) => {
+    const manifest: { dependencies?: Record<string, string> } = JSON.parse(
+      readFileSync(`packages/${name}/package.json`, 'utf8'),
+    );
+    return Object.keys(manifest.dependencies ?? {});
+  });
+  return [...new Set(named)].filter((name) => !name.startsWith('@slewcurve/'));
+}
+
+/** A package by its name, or every package of a scope. */
+function scoped(name: string): string[] {
+  const isScope = name.startsWith('@');
+  return isScope ? readdirSync(join('node_modules', name)).map((one) => `${name}/${one}`) : [name];
 }
