@@ -1,5 +1,5 @@
 import type { ReadonlyNumberStore } from '../number-store.js';
-import { unitScale } from './unit-scale.js';
+import { unitScaleOf } from './unit-scale.js';
 
 /**
  * Shortest angle between two orientations, radians, 0 to π. `q` and `-q` are the same orientation; inputs need not be unit; one
@@ -9,8 +9,8 @@ import { unitScale } from './unit-scale.js';
  * every digit at 0 and at π, where arc cosines lose half of them.
  */
 export function angleBetween(a: ReadonlyNumberStore, b: ReadonlyNumberStore): number {
-  const ka = unitScale(a[0], a[1], a[2], a[3]);
-  const kb = unitScale(b[0], b[1], b[2], b[3]);
+  const ka = unitScaleOf(a);
+  const kb = unitScaleOf(b);
   let ax = a[0] * ka;
   let ay = a[1] * ka;
   let az = a[2] * ka;

@@ -1,5 +1,5 @@
 import type { NumberStore, ReadonlyNumberStore } from '../number-store.js';
-import { unitScale } from './unit-scale.js';
+import { unitScaleOf } from './unit-scale.js';
 
 /**
  * Rotation vector of `q`, the short way: axis times full angle, radians, at most π long, in own and in parent axes alike (a turn
@@ -21,7 +21,7 @@ export function logMapLong<T extends NumberStore>(out: T, q: ReadonlyNumberStore
 }
 
 function rotationVector<T extends NumberStore>(out: T, q: ReadonlyNumberStore, sign: number): T {
-  const scale = sign * unitScale(q[0], q[1], q[2], q[3]);
+  const scale = sign * unitScaleOf(q);
   const x = q[0] * scale,
     y = q[1] * scale,
     z = q[2] * scale,

@@ -1,5 +1,5 @@
 import type { NumberStore, ReadonlyNumberStore } from '../number-store.js';
-import { unitScale } from './unit-scale.js';
+import { unitScale, unitScaleOf } from './unit-scale.js';
 
 /**
  * The chord between two orientations, made unit: the path of `slerp`, faster in the middle than at the ends. `t` is any finite
@@ -13,8 +13,8 @@ export function nlerp<T extends NumberStore>(
   b: ReadonlyNumberStore,
   t: number,
 ): T {
-  const ka = unitScale(a[0], a[1], a[2], a[3]);
-  const kb = unitScale(b[0], b[1], b[2], b[3]);
+  const ka = unitScaleOf(a);
+  const kb = unitScaleOf(b);
   const ax = a[0] * ka,
     ay = a[1] * ka,
     az = a[2] * ka,

@@ -1,5 +1,5 @@
 import type { NumberStore, ReadonlyNumberStore } from '../number-store.js';
-import { unitScale } from './unit-scale.js';
+import { unitScaleOf } from './unit-scale.js';
 
 /**
  * Great-arc interpolation, the short way, at constant angular speed. `t` is any finite number: past 0 and 1 the turn goes on at
@@ -46,8 +46,8 @@ function turnAlong<T extends NumberStore>(
   t: number,
   short: boolean,
 ): T {
-  const ka = unitScale(a[0], a[1], a[2], a[3]);
-  const kb = unitScale(b[0], b[1], b[2], b[3]);
+  const ka = unitScaleOf(a);
+  const kb = unitScaleOf(b);
   const ax = a[0] * ka,
     ay = a[1] * ka,
     az = a[2] * ka,
@@ -57,21 +57,23 @@ function turnAlong<T extends NumberStore>(
     bz = b[2] * kb,
     bw = kb === 0 ? 1 : b[3] * kb;
   let dot = ax * bx + ay * by + az * bz + aw * bw;
+  let side = 1;
   if (short && dot < 0) {
+    side = -1;
     bx = -bx;
     by = -by;
     bz = -bz;
     bw = -bw;
     dot = -dot;
   }
-  if (t === 0) return write(out, ax, ay, az, aw);
-  if (t === 1) return write(out, bx, by, bz, bw);
+  if (t === 0) return scaled(out, a, ka, 1);
+  if (t === 1) return scaled(out, b, kb, side);
   let dx = bx - ax,
     dy = by - ay,
     dz = bz - az,
     dw = bw - aw;
   const s = (dx * dx + dy * dy + dz * dz + dw * dw) / 4;
-  if (s === 0) return write(out, ax, ay, az, aw);
+  if (s === 0) return scaled(out, a, ka, 1);
   let angle: number;
   let even = 1;
   let odd: number;
@@ -110,13 +112,20 @@ function turnAlong<T extends NumberStore>(
   const w = even * bw + odd * dw;
   // One Newton step towards unit length takes the rounding away.
   const unit = 1.5 - 0.5 * (x * x + y * y + z * z + w * w);
-  return write(out, x * unit, y * unit, z * unit, w * unit);
+  // Written here: numbers handed to a call that is not inlined may be boxed, and boxes are allocation.
+  out[0] = x * unit;
+  out[1] = y * unit;
+  out[2] = z * unit;
+  out[3] = w * unit;
+  return out;
 }
 
-function write<T extends NumberStore>(out: T, x: number, y: number, z: number, w: number): T {
-  out[0] = x;
-  out[1] = y;
-  out[2] = z;
-  out[3] = w;
+/** `q` times its `unitScale`, on a side; identity where it has no length. */
+function scaled<T extends NumberStore>(out: T, q: ReadonlyNumberStore, scale: number, side: number): T {
+  const by = scale * side;
+  out[0] = q[0] * by;
+  out[1] = q[1] * by;
+  out[2] = q[2] * by;
+  out[3] = scale === 0 ? side : q[3] * by;
   return out;
 }

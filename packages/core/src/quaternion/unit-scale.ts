@@ -1,3 +1,5 @@
+import type { ReadonlyNumberStore } from '../number-store.js';
+
 /**
  * What a quaternion's numbers are multiplied by to make it unit: 1 where its squared length is 1 to within the rounding of
  * float64 (its numbers are then used as they stand, so that end points stay exact to the bit), 0 where it has no length.
@@ -14,4 +16,10 @@ export function unitScale(x: number, y: number, z: number, w: number): number {
   const largest = Math.max(Math.abs(x), Math.abs(y), Math.abs(z), Math.abs(w));
   if (largest < 1e-300) return 0;
   return 1 / largest / Math.hypot(x / largest, y / largest, z / largest, w / largest);
+}
+
+/** `unitScale` of a quaternion where it lies: numbers handed to a call that is not inlined may be boxed, a store never is. */
+export function unitScaleOf(q: ReadonlyNumberStore): number {
+  const over = q[0] * q[0] + q[1] * q[1] + q[2] * q[2] + q[3] * q[3] - 1;
+  return Math.abs(over) <= 6 * Number.EPSILON ? 1 : unitScale(q[0], q[1], q[2], q[3]);
 }
