@@ -6,6 +6,9 @@ import { builtStep } from '../../built-step.js';
 
 const DEGREES = 180 / Math.PI;
 
+/** Keys a second below which lively motion reads like noise (0.07 to 0.5° at 24 to 30, measured): no more than a note there. */
+const CAN_TELL = 48;
+
 /** Noise all over a captured track. */
 export const grain: Rule = Object.freeze({
   id: 'shake.grain',
@@ -32,7 +35,16 @@ export const grain: Rule = Object.freeze({
     const limit = Math.max(deviation * scaleAt(rate), angleFloor(storage, interpolation) * DEGREES);
     if (!(value > limit)) return [];
     const [start, end] = [times[0] ?? 0, times.at(-1) ?? 0];
-    return [{ keys: [], time: start, span: [start, end], value, limit, level: 'warning' }];
+    return [
+      {
+        keys: [],
+        time: start,
+        span: [start, end],
+        value,
+        limit,
+        level: rate < CAN_TELL ? 'note' : 'warning',
+      },
+    ];
   },
   remedy: (context: TrackContext): Remedy | undefined => builtStep(context, 'smooth'),
   message({ value, limit }: Place): string {
@@ -48,7 +60,8 @@ export const grain: Rule = Object.freeze({
     test: 'In a dense track, over all keys slower than 60 deg/s, taken over six keys on each side (at least eight such keys): the median of what a cubic through the four neighbours misses, scaled to the standard deviation of one axis. Limits hold from 60 keys a second; at 30 two and a half times, at 24 five times as much, between them in proportion, and never less than the noise floor.',
     source:
       'The scale is that of white noise: √70/6 an axis and 1.538 for the median of three (chi distribution). The limits are common practice, no source; those for slow rates are set so that lively motion, which reads as 0.07 to 0.5° there by itself, stays below them (measured).',
-    spares: 'Sparse and STEP tracks, keys faster than 60 deg/s, tracks with fewer than eight slower ones.',
+    spares:
+      'Sparse and STEP tracks, keys faster than 60 deg/s, tracks with fewer than eight slower ones. Below 48 keys a second lively motion reads like noise, and it is a note.',
     remedy:
       '`smooth`, with guards around fast moves: unguarded it lowers the peak of a whip. The largest turn of a key is told.',
   },
