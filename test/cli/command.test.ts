@@ -76,6 +76,7 @@ describe('slewcurve', () => {
     [['check', 'demo.glb', '--rules', 'none.json'], 'file.not-found'],
     [['mend', 'demo.glb', '--card', 'demo.glb', '-o', 'x.glb'], 'file.not-json'],
     [['explain'], 'usage.no-word'],
+    [['mend', 'demo.glb', '--proposed', '--allow', 'bananas', '--dry-run'], 'card.unknown-verb'],
   ])('%j could not be done: %s', async (argv, code) => {
     const { run } = await withDemo();
     const ran = await run(...argv);

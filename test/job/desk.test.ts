@@ -62,6 +62,15 @@ describe('desk', () => {
     );
   });
 
+  test('proposes from what the card leaves, so that nothing is mended twice', async () => {
+    const here = await surveyedDesk();
+    const { steps } = here.propose('f', []);
+    await here.card('f', steps, UNWATCHED);
+    expect(here.propose('f', []).steps).toEqual([]);
+    await here.card('f', [], UNWATCHED);
+    expect(here.propose('f', []).steps).toEqual(steps);
+  });
+
   test('keeps the card before where a step can’t be done', async () => {
     const here = await surveyedDesk();
     const { steps } = here.propose('f', []);

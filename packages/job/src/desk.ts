@@ -56,6 +56,8 @@ interface Folder {
   steps: readonly Step[];
   /** Tracks as the card leaves them, in the file's order. */
   current: readonly RotationTrack[];
+  /** What is found on the tracks that the card changed, by their place in `current`. */
+  changed: ReadonlyMap<number, readonly Finding[]>;
 }
 
 /** A desk with nothing on it. */
@@ -70,7 +72,15 @@ export function desk(): Desk {
     async open(file, source, name, sibling) {
       const opened = await openFile(source, { name, ...(sibling && { sibling }) });
       const current = tracksOf(opened);
-      folders.set(file, { opened, sibling, settings: undefined, report: undefined, steps: [], current });
+      folders.set(file, {
+        opened,
+        sibling,
+        settings: undefined,
+        report: undefined,
+        steps: [],
+        current,
+        changed: new Map(),
+      });
       return openedAnswer(opened);
     },
     async survey(file, settings, watch, onRow) {
@@ -90,9 +100,9 @@ export function desk(): Desk {
     },
     card: (file, steps, watch) => setCard(folderOf(file), steps, watch),
     propose(file, allow) {
-      const { opened, report, settings } = surveyed(folderOf(file));
-      const { steps, declined } = declineHarmful(opened, propose(report, settings, allow), settings);
-      return { steps, declined };
+      const folder = surveyed(folderOf(file));
+      const proposal = propose(currentReport(folder), folder.settings, allow);
+      return declineHarmful(folder.opened, proposal, folder.settings, folder.current);
     },
     async bytes(file, watch) {
       const { opened, sibling, steps, report, settings } = surveyed(folderOf(file));
@@ -139,8 +149,10 @@ async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Pr
   const houseRules = cutsAfter(settings.houseRules, stored, results);
   const answers: CardAnswer['tracks'][number][] = [];
   const raised: Finding[] = [];
+  const changed = new Map(folder.changed);
   for (const [at, track] of tracks.entries()) {
     const clip = clipOf(opened, track);
+    if (track === stored[at]) changed.delete(at);
     if (track === folder.current[at] || !clip) continue;
     const findings = surveyTrack(track, {
       clip,
@@ -150,12 +162,14 @@ async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Pr
       houseRules,
     });
     raised.push(...newFaults(report.findings, findings));
+    changed.set(at, findings);
     const playback = settings.playbacks[0] ?? 'as-written';
     answers.push({ report: trackReport(track, playback), row: rosterRow(track, clip, playback), findings });
     await betweenSlices(watch, at, tracks.length, 'tracks');
   }
   folder.steps = steps;
   folder.current = tracks;
+  folder.changed = changed;
   return { tracks: answers, steps: stepReports(results), raised };
 }
 
@@ -166,6 +180,14 @@ function surveyed(folder: Folder): Folder & { report: FileReport; settings: JobS
     'job.not-surveyed',
     `${folder.opened.name} is not surveyed yet; wait until it is.`,
   );
+}
+
+/** The survey of the file as the card leaves it. */
+function currentReport({ report, current, changed }: Folder & { report: FileReport }): FileReport {
+  const isChanged = ({ clip, track }: Finding): boolean =>
+    [...changed.keys()].some((at) => current[at]?.clip === clip && current[at].id === track);
+  const kept = report.findings.filter((finding) => !isChanged(finding));
+  return { ...report, findings: [...kept, ...[...changed.values()].flat()] };
 }
 
 function openedAnswer({ name, source, file }: OpenedFile): OpenedAnswer {

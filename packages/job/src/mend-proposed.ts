@@ -39,16 +39,21 @@ export async function mendProposed(
   };
 }
 
-/** The steps of a proposal less those that would leave a warning or an error of their own behind. */
+/**
+ * The steps of a proposal less those that would leave a warning or an error of their own behind.
+ *
+ * @param tracks the file's tracks as the proposal found them, in the file's order
+ */
 export function declineHarmful(
   opened: OpenedFile,
   proposal: Proposal,
   settings: JobSettings,
+  tracks: readonly RotationTrack[] = opened.file.clips.flatMap((clip) => clip.tracks),
 ): { readonly steps: readonly Step[]; readonly declined: readonly Declined[] } {
   const declined = [...proposal.declined];
   const steps: Step[] = [];
   for (const clip of opened.file.clips)
-    for (const track of clip.tracks) {
+    for (const track of tracks.filter((other) => other.clip === clip.name)) {
       const own = proposal.card.steps.filter((step) => step.clip === clip.name && step.track === track.id);
       if (own.length === 0) continue;
       const held = own.filter((step) => !(opened.file.fixedTimes && verbNamed(step.verb).insertsKeys));

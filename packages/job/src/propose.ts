@@ -16,14 +16,14 @@ export interface Proposal {
 }
 
 /**
- * The remedy of every place of every finding at or above `settings.failAt`. A verb that needs allowing is taken only where `allow`
+ * The remedy of every place at or above `settings.failAt`. A verb that needs allowing is taken only where `allow`
  * names it. Steps of one verb on one track that differ in their keys alone become one; steps that insert keys come last on their
  * track and from the last key to the first, so that every key number on the card is that of the file.
  */
 export function propose(report: FileReport, settings: JobSettings, allow: readonly string[] = []): Proposal {
   const wanted = report.findings
     .filter((finding) => isAtLeast(finding.level, settings.failAt))
-    .flatMap(remediesOf);
+    .flatMap((finding) => remediesOf(finding, settings));
   const declined: Declined[] = [];
   const steps: Step[] = [];
   for (const step of wanted)
@@ -36,8 +36,11 @@ export function propose(report: FileReport, settings: JobSettings, allow: readon
   return { card: { schemaVersion: 1, steps: ordered(merged(steps)) }, declined };
 }
 
-function remediesOf(finding: Finding): Step[] {
-  return finding.occurrences.flatMap((place) => place.remedy ?? []);
+/** A finding is as bad as its worst place; a milder place of it is left alone. */
+function remediesOf(finding: Finding, { failAt }: JobSettings): Step[] {
+  return finding.occurrences
+    .filter((place) => isAtLeast(place.level, failAt))
+    .flatMap((place) => place.remedy ?? []);
 }
 
 function sameStep(a: Step, b: Step): boolean {

@@ -1,15 +1,16 @@
+import { PLAYBACKS } from '@slewcurve/core';
 import { VERBS, nearestWord } from '@slewcurve/mend';
 import { RULES } from './registry.js';
 import { rulePage } from './rule-page.js';
 
-/** A rule or an edit that a word leads to. */
+/** A rule, an edit or a playback that a word leads to. */
 export interface Entry {
-  readonly kind: 'rule' | 'verb';
-  /** Rule id, or the edit's name on job cards. */
+  readonly kind: 'rule' | 'verb' | 'playback';
+  /** Rule id, the edit's name on job cards, or the playback's id. */
   readonly name: string;
   readonly summary: string;
   readonly alsoCalled: readonly string[];
-  /** The rule's page in Markdown; of an edit, its name, summary and other names. */
+  /** The rule's page in Markdown; of an edit or a playback, its name, summary and other names. */
   readonly page: string;
 }
 
@@ -21,12 +22,13 @@ export interface Explanation {
 }
 
 /**
- * Rules and edits that a word leads to: by id or name alone where it is one, by family, by what the trade calls them, or by a single
+ * Rules, edits and playbacks that a word leads to: by id or name alone where it is one, by family, by what the trade calls them, or by a single
  * word of that. Case, hyphens and white space don't matter. Where nothing fits, the nearest known words.
  */
 export function explainWord(word: string): Explanation {
   const wanted = plain(word);
-  const named = ENTRIES.filter((entry) => plain(entry.name) === wanted);
+  // A playback's name is a word of the trade as well: what goes wrong by it is shown beside it.
+  const named = ENTRIES.filter(({ kind, name }) => kind !== 'playback' && plain(name) === wanted);
   const entries = named.length > 0 ? named : ENTRIES.filter((entry) => leadsTo(wanted, entry));
   return { word, entries, didYouMean: entries.length > 0 ? [] : wordsMeant(word) };
 }
@@ -45,6 +47,13 @@ const ENTRIES: readonly Entry[] = Object.freeze([
     summary,
     alsoCalled,
     page: `# ${name}\n\n${summary}\n\nAlso called: ${alsoCalled.join(', ')}.\n`,
+  })),
+  ...Object.values(PLAYBACKS).map(({ id, says }) => ({
+    kind: 'playback' as const,
+    name: id,
+    summary: `A playback, how some program plays a file: ${says}.`,
+    alsoCalled: ['playback', 'interpolation'],
+    page: `# ${id}\n\nA playback: how some program plays a file. This one: ${says}.\n`,
   })),
 ]);
 

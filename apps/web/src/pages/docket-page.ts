@@ -1,5 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import { trackName } from '@slewcurve/elements/plot';
+import { LEVELS } from '@slewcurve/job';
 import { sayStep } from '@slewcurve/mend';
 import type { Finding } from '@slewcurve/survey';
 import { linesOf, stepsOf } from '../session/card-history.js';
@@ -20,7 +21,9 @@ export function docketPage(
 
 function docketOf(file: FileWork, saveText: (name: string, text: string) => void): TemplateResult {
   const { report, history, proofs } = file;
-  const findings = [...file.findings.values()].flat();
+  const findings = [...file.findings.values()]
+    .flat()
+    .toSorted((a, b) => LEVELS.indexOf(a.level) - LEVELS.indexOf(b.level));
   const steps = stepsOf(history);
   const card = { schemaVersion: 1, steps };
   return html`<article class="docket" aria-label="Docket of ${file.name}">
@@ -30,8 +33,6 @@ function docketOf(file: FileWork, saveText: (name: string, text: string) => void
       Slewcurve measured every motion exactly, as played by the playback named in each line; degrees, seconds
       of the file’s own clock.
     </p>
-    <h3>Open findings</h3>
-    ${findings.length === 0 ? html`<p>None.</p>` : findingsTable(findings)}
     <h3>Job card</h3>
     ${
       steps.length === 0
@@ -53,6 +54,8 @@ function docketOf(file: FileWork, saveText: (name: string, text: string) => void
           </p>`
         : nothing
     }
+    <h3>Open findings</h3>
+    ${findings.length === 0 ? html`<p>None.</p>` : findingsTable(findings)}
     <h3>The same by command</h3>
     <p><code>${commandOf(file)}</code></p>
     <p class="doings on-screen">
@@ -83,7 +86,7 @@ function findingsTable(findings: readonly Finding[]): TemplateResult {
         <th scope="col">track</th>
         <th scope="col">at</th>
         <th scope="col">what</th>
-        <th scope="col">rule</th>
+        <th scope="col">rule, as played</th>
       </tr>
     </thead>
     <tbody>
@@ -92,9 +95,9 @@ function findingsTable(findings: readonly Finding[]): TemplateResult {
           html`<tr>
             <td class="whole">${finding.level}</td>
             <td>${trackName(finding.track)} <i>${finding.clip}</i></td>
-            <td class="whole">${finding.time.toFixed(3)} s</td>
+            <td class="whole">${finding.keys.length === 0 ? 'all along' : `${finding.time.toFixed(3)} s`}</td>
             <td>${finding.message}${finding.count > 1 ? ` (the worst of ${finding.count} places)` : ''}</td>
-            <td class="whole">${finding.rule}</td>
+            <td>${finding.rule}, ${finding.playback.replaceAll('-', ' ')}</td>
           </tr>`,
       )}
     </tbody>

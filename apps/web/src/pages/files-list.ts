@@ -51,7 +51,9 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
               }<button class="main" @click=${() => actions.save(id, 'download')}>Save a mended copy</button>`
           : nothing
       }
-      <button @click=${() => actions.close(id)}>Put ${name} away</button>
+      <button @click=${() => actions.close(id)}>
+        Put ${name} away${!file.saved && steps > 0 ? ', unsaved edits too' : ''}
+      </button>
     </p>`;
 }
 

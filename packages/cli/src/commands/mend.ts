@@ -11,7 +11,7 @@ import {
   type JobSettings,
   type MendedFile,
 } from '@slewcurve/job';
-import { parseJobCard } from '@slewcurve/mend';
+import { parseJobCard, verbNamed } from '@slewcurve/mend';
 import type { CommandIo } from '../command-io.js';
 import { EXIT } from '../exit-code.js';
 import { writeOut } from '../files/write-out.js';
@@ -28,6 +28,8 @@ export async function mend(args: Arguments, io: CommandIo): Promise<number> {
     throw new SlewcurveError('usage.one-file', `slewcurve mend takes one file; got ${args.words.length}.`);
   exactlyOne(args, ['card', 'proposed', 'undo']);
   exactlyOne(args, ['o', 'in-place', 'dry-run']);
+  // A verb that nobody knows would be allowed to no effect.
+  for (const verb of args.values('allow')) verbNamed(verb);
   const settings = await settingsOf(args, io.cwd());
   const asJson = oneOf(args, 'format', ['text', 'json']) === 'json';
   return withFile(name, io.cwd(), tableOptionsOf(args), async (file) => {

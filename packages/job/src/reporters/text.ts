@@ -27,7 +27,7 @@ function sayFinding(file: FileReport, finding: Finding): string {
   const remedy =
     finding.remedy === undefined ? '' : `; try: ${lowerFirst(sayStep(finding.remedy)).replace(/\.$/, '')}`;
   const more = finding.count > 1 ? ` (the worst of ${finding.count} places)` : '';
-  return `${file.file}: ${finding.track} in ${finding.clip}, ${seconds(finding.time)}: ${finding.message.replace(/\.$/, '')}${more}. ${finding.level} ${finding.rule}${remedy}`;
+  return `${file.file}: ${finding.track} in ${finding.clip}, ${whenOf(finding)}: ${finding.message.replace(/\.$/, '')}${more}. ${finding.level} ${finding.rule}${remedy}`;
 }
 
 function sayDone(step: StepReport): string {
@@ -96,6 +96,11 @@ function number(value: number): string {
   const digits = Math.abs(value) >= 100 ? 0 : Math.abs(value) >= 10 ? 1 : 2;
   if (value !== 0 && Math.abs(value) < 0.005) return value.toPrecision(2);
   return value.toLocaleString('en-GB', { minimumFractionDigits: digits, maximumFractionDigits: digits });
+}
+
+/** A finding of no key is of the whole track. */
+function whenOf({ keys, time }: Finding): string {
+  return keys.length === 0 ? 'all along' : seconds(time);
 }
 
 function seconds(time: number): string {
