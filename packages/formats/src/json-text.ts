@@ -103,7 +103,7 @@ export function jsonEditor(bytes: Uint8Array): JsonEditor {
         insertion(pointer, added.container, added.texts),
       );
       const all = [...splices, ...inserts];
-      // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+      // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
       return all.sort((a, b) => a.at - b.at || a.length - b.length);
     },
   };

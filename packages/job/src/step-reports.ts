@@ -30,7 +30,7 @@ function paceReport(edits: readonly AppliedStep[]): Pick<StepReport, 'price' | '
   const worst = (of: (price: Price) => number): number =>
     significant(paces.reduce((most, { price }) => Math.max(most, of(price)), -Infinity));
   const bends = paces.flatMap((pace) => pace.bends);
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   bends.sort((a, b) => b.jump - a.jump);
   return {
     price: {

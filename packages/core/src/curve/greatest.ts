@@ -51,7 +51,7 @@ function searchGrid(a: number, b: number, narrow: readonly NarrowPlace[]): numbe
   }
   if (narrow.length === 0) return grid;
   const sorted = Float64Array.from(grid.filter((x) => x >= a && x <= b));
-  // oxlint-disable-next-line unicorn/no-array-sort -- ours alone; ES2022 has no toSorted.
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   sorted.sort();
   return [...sorted].filter((x, i, all) => i === 0 || x > all[i - 1]);
 }

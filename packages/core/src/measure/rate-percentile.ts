@@ -20,7 +20,7 @@ export function ratePercentile(curve: Curve, percent: number, steps: number = 64
       speeds.push({ speed: Math.hypot(rate[0], rate[1], rate[2]), time: step });
     }
   }
-  // oxlint-disable-next-line unicorn/no-array-sort -- ours alone; ES2022 has no toSorted.
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   speeds.sort((a, b) => a.speed - b.speed);
   const wanted = (percent / 100) * speeds.reduce((sum, { time }) => sum + time, 0);
   let passed = 0;

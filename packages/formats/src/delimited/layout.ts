@@ -220,7 +220,7 @@ function anglesOf(
     missing.push(`angles that fit ${sequence} (name them r1 r2 r3, in the order in which they turn)`);
     return undefined;
   }
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   placed.sort((a, b) => a.part - b.part);
   const parts = placed.map(({ part }) => part);
   return { form: { kind: 'angles', sequence, parts, unit }, columns: placed.map(({ column }) => column) };

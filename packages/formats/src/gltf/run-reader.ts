@@ -40,7 +40,7 @@ async function readPieces(buffer: OpenBuffer, runs: readonly Run[], file: string
   const spans = runs
     .map((run) => ({ from: run.offset, to: run.offset + runLength(run) }))
     .filter(({ from, to }) => to > from);
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   spans.sort((a, b) => a.from - b.from);
   const pieces: Piece[] = [];
   let open = spans[0];

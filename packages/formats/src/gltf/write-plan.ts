@@ -67,7 +67,7 @@ export async function writePlan(
   ranges.push(...binRanges(container, inBin));
   const tail = added && open.get(added.buffer)?.kind !== 'data' ? added.bytes : undefined;
   ranges.push(...jsonAndTail(container, editor.splices(), tail));
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   ranges.sort((a, b) => a.at - b.at || a.length - b.length);
   return Object.freeze({
     ranges: Object.freeze(ranges),

@@ -30,7 +30,7 @@ export function cellRanges(
   changes: readonly CellChange[],
 ): PatchRange[] {
   const ascending = [...changes];
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   ascending.sort((a, b) => a.cell - b.cell);
   const pieces: { start: number; end: number; text: string; cell: number; what: string }[] = [];
   for (const { cell, value, decimals, what } of ascending) {

@@ -47,7 +47,7 @@ export const wholeTurns: Verb = Object.freeze({
     let after = track;
     const inserted: number[] = [];
     const keys = [...new Set(step.keys)];
-    // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+    // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
     for (const key of keys.sort((a, b) => a - b)) {
       const at = key + inserted.length;
       const more = keysBetween(after, at, step.turns, step.axis);

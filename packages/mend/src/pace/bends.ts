@@ -26,7 +26,7 @@ export function bendsOf(track: RotationTrack): Bend[] {
     if (jump > LEAST_JUMP && jump > LEAST_SHARE * slower) bends.push({ time: times[key], jump });
     before = rate;
   }
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   return bends.sort((p, q) => q.jump - p.jump).slice(0, MOST_TOLD);
 }
 

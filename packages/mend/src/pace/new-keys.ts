@@ -55,7 +55,7 @@ export function frameKeys(
 }
 
 function ascending(keys: NewKey[]): NewKey[] {
-  // oxlint-disable-next-line unicorn/no-array-sort -- our own list; toSorted is newer than ES2022
+  // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   return keys.sort((a, b) => a.time - b.time);
 }
 
