@@ -1,4 +1,14 @@
-import { cumulativeHermite, playAs, rotationSpline, rotationTrack, type Curve } from '@slewcurve/core';
+import {
+  EASES,
+  cubicBezierEase,
+  cumulativeHermite,
+  pace,
+  playAs,
+  rotationSpline,
+  rotationTrack,
+  type Curve,
+  type Ease,
+} from '@slewcurve/core';
 import { describe, expect, test } from 'vitest';
 import { againstSamples } from '../support/against-samples.js';
 import { referenceValues, type ReferenceSample } from '../support/reference-values.js';
@@ -69,4 +79,21 @@ test('the angle turned along a curve meets the 50-digit arc lengths to 1e-11 of 
     // A speed that nearly touches zero is the hard case: adaptive halving stops at 1e-13 of the sum a cell.
     expect(Math.abs(curve.length(0, 1) / total_turned_angle_rad - 1)).toBeLessThan(1e-11);
   }
+});
+
+/** The reference's names of easing laws; the two Bezier ones are CSS's `ease` and `ease-in-out`. */
+const EASE_OF: Readonly<Record<string, Ease>> = {
+  smoothstep: EASES.cubic,
+  quintic: EASES['minimum-jerk'],
+  'half-cosine': EASES['half-cosine'],
+  'cubic-bezier(.25,.1,.25,1)': cubicBezierEase(0.25, 0.1, 0.25, 1),
+  'cubic-bezier(.42,0,.58,1)': cubicBezierEase(0.42, 0, 0.58, 1),
+};
+
+test('slerps under an easing law meet the 50-digit values in orientation, rate and acceleration', () => {
+  const cases = referenceValues('fifty-digit.json', 'eased_slerp').map(({ ease, q0, q1, h, samples }) => {
+    const turn = playAs(rotationTrack({ times: [0, h], values: [...q0, ...q1] }), 'short-way');
+    return [pace(turn, { kind: 'ease', ease: EASE_OF[ease] }), samples] as const;
+  });
+  expect(worstInTolerances(cases)).toBeLessThan(1);
 });

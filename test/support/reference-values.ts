@@ -77,6 +77,13 @@ export interface ReferenceGroups {
       readonly total_angle_rad: number;
       readonly samples: readonly { readonly u: number; readonly quat: readonly number[] }[];
     };
+    readonly eased_slerp: {
+      readonly ease: string;
+      readonly q0: readonly number[];
+      readonly q1: readonly number[];
+      readonly h: number;
+      readonly samples: readonly ReferenceSample[];
+    };
     readonly arc_length: Hermite & {
       readonly total_turned_angle_rad: number;
       readonly geodesic_angle_rad: number;
