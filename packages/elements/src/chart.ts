@@ -10,8 +10,7 @@ import {
 import { guard } from 'lit/directives/guard.js';
 import { repeat } from 'lit/directives/repeat.js';
 import { caretsOfRow, numberNotes, spansOfRow, type NumberedNote } from './chart/carets.js';
-import { peakSpeed, trackName, usualSpeed, type ChartData, type MarginNote } from './chart/chart-data.js';
-import { chartIntent, type ChartIntent } from './chart/chart-keys.js';
+import { peakSpeed, trackName, usualSpeed, type ChartData } from './chart/chart-data.js';
 import { ROW, rowHeight, rowPicture } from './chart/chart-row.js';
 import { chartStyles } from './chart/chart-styles.js';
 import { chartChoices } from './chart/choices.js';
@@ -20,16 +19,16 @@ import { closeUpSpan } from './chart/close-up-span.js';
 import { foldRows, rowAt, type FoldRow } from './chart/fold.js';
 import { marginOf, packNotes } from './chart/margin.js';
 import { sayAngle, sayTime } from './chart/quantity.js';
+import { RowsInSight } from './chart/rows-in-sight.js';
 import { linearScale, speedScale, type ScaleKind, type SpeedScale } from './chart/scale.js';
 import { SheetPointer } from './chart/sheet-pointer.js';
 import { rowSentence, sayReading } from './chart/text-twin.js';
+import { TraceCursor, type CursorHost } from './chart/trace-cursor.js';
 import { traceStyles } from './chart/trace-styles.js';
 import { controls } from './theme/controls.js';
 import { paper } from './theme/paper.js';
 
 type Span = readonly [number, number];
-
-const ROWS_A_PICTURE = 3;
 
 /**
  * Chart: one track. Its angular speed as played, on paper folded into rows, with its keys as posts, findings as carets and notes
@@ -42,7 +41,7 @@ const ROWS_A_PICTURE = 3;
  * @fires play-asked - the space bar
  * @fires fold-chosen - `{ fold: number }` seconds a row
  */
-export class SlewChart extends LitElement {
+export class SlewChart extends LitElement implements CursorHost {
   static override properties: PropertyDeclarations = {
     data: { attribute: false },
     time: { type: Number },
@@ -53,7 +52,6 @@ export class SlewChart extends LitElement {
     opened: { attribute: false },
     hover: { state: true },
     width: { state: true },
-    inSight: { state: true },
     unfolded: { state: true },
     inWords: { state: true },
     asTable: { state: true },
@@ -73,35 +71,30 @@ export class SlewChart extends LitElement {
   declare chosen: string | undefined;
   /** Stretch that the close-up shows; undefined: closed. */
   declare opened: Span | undefined;
-  declare private hover: number | undefined;
+  /** @internal */
+  declare hover: number | undefined;
   declare private width: number;
-  declare private inSight: ReadonlySet<number>;
   declare private unfolded: ReadonlySet<number>;
   /** The words, and the table, are open. */
   declare private inWords: boolean;
   declare private asTable: boolean;
-  /** Rows that came into sight and are not drawn yet. */
-  private readonly waiting = new Set<number>();
-  private anchor: number | undefined;
-  private numbered: readonly NumberedNote[] = [];
+  /** @internal Notes with the numbers that they have on the page. */
+  numbered: readonly NumberedNote[] = [];
   private speedScale: SpeedScale = linearScale(1);
+  private readonly cursor = new TraceCursor(this);
+  private readonly inSight = new RowsInSight(this, () => this.renderRoot.querySelectorAll('.row'));
   private readonly pointer = new SheetPointer({
-    hover: (time) => this.hoverAt(time),
-    go: (time, widen) => this.go(time, widen),
-    drag: (span, settled) => this.dragged(span, settled),
-    note: (id) => {
-      const numbered = this.numbered.find(({ note }) => note.id === id);
-      if (numbered) this.chooseNote(numbered.note);
-    },
+    hover: (time) => this.cursor.hoverAt(time),
+    go: (time, widen) => this.cursor.go(time, widen),
+    drag: (span, settled) => this.cursor.dragged(span, settled),
+    note: (id) => this.cursor.choose(id),
   });
   private readonly resize = new ResizeObserver(() => this.measure());
-  private sight: IntersectionObserver | undefined;
 
   constructor() {
     super();
     this.time = 0;
     this.width = 0;
-    this.inSight = new Set();
     this.unfolded = new Set();
     this.inWords = false;
     this.asTable = false;
@@ -116,8 +109,6 @@ export class SlewChart extends LitElement {
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     this.resize.disconnect();
-    this.sight?.disconnect();
-    this.sight = undefined;
     removeEventListener('beforeprint', this.showAll);
   }
 
@@ -168,27 +159,10 @@ export class SlewChart extends LitElement {
     // The cursor alone moves nothing in the margin; asking for heights on every pointer move would cost frames.
     if ([...changed.keys()].some((name) => name !== 'time' && name !== 'hover' && name !== 'span'))
       packNotes(this.renderRoot);
-    this.sight ??= new IntersectionObserver((entries) => this.see(entries), { rootMargin: '400px' });
-    for (const row of this.renderRoot.querySelectorAll('.row')) this.sight.observe(row);
-  }
-
-  private see(entries: readonly IntersectionObserverEntry[]): void {
-    for (const { target, isIntersecting } of entries)
-      if (isIntersecting && target instanceof HTMLElement) this.waiting.add(Number(target.dataset['row']));
-    this.drawWaiting();
-  }
-
-  /** A few rows a picture: a long take has many, and the page must go on meanwhile. */
-  private drawWaiting(): void {
-    const next = [...this.waiting].slice(0, ROWS_A_PICTURE);
-    if (next.length === 0) return;
-    for (const row of next) this.waiting.delete(row);
-    if (next.some((row) => !this.inSight.has(row))) this.inSight = new Set([...this.inSight, ...next]);
-    if (this.waiting.size > 0) requestAnimationFrame(() => this.drawWaiting());
   }
 
   private readonly showAll = (): void => {
-    this.inSight = new Set(this.rows.keys());
+    this.inSight.show(this.rows.keys());
     this.performUpdate();
   };
 
@@ -212,14 +186,14 @@ export class SlewChart extends LitElement {
         {
           fold: (fold) => this.chooseFold(fold),
           scale: (scale) => (this.scale = scale),
-          closeUp: () => this.act({ kind: this.opened ? 'back' : 'open-close-up' }),
+          closeUp: () => this.cursor.act({ kind: this.opened ? 'back' : 'open-close-up' }),
         },
       )}
       ${this.readout(data, now)}
       <div class="heads" aria-hidden="true">
         <span>time</span><span>angular speed, as played</span><span>odometer</span><span>findings</span>
       </div>
-      <ol class="rows" aria-label="Rows of the trace" @pointerleave=${this.leave}>
+      <ol class="rows" aria-label="Rows of the trace" @pointerleave=${this.cursor.leave}>
         ${repeat(
           rows,
           (row) => row.index,
@@ -246,7 +220,7 @@ export class SlewChart extends LitElement {
       aria-valuemax=${data.motion.end}
       aria-valuenow=${reading.time}
       aria-valuetext=${sayReading(reading, data.rateNames)}
-      @keydown=${this.keyed}
+      @keydown=${this.cursor.keyed}
     >
       ${readingWords(reading, data, this.span)}
     </div>`;
@@ -271,7 +245,7 @@ export class SlewChart extends LitElement {
         @pointerdown=${(event: PointerEvent) => this.pointer.down(event, row)}
         @pointerup=${(event: PointerEvent) => this.pointer.up(event, row) && this.focus({ preventScroll: true })}
         @pointercancel=${() => this.pointer.cancel()}
-        @dblclick=${() => this.act({ kind: 'open-close-up' })}
+        @dblclick=${() => this.cursor.act({ kind: 'open-close-up' })}
       >
         ${guard(
           [data, this.speedScale, this.width, this.chosen, row.from, row.to, this.inSight.has(row.index)],
@@ -287,7 +261,7 @@ export class SlewChart extends LitElement {
       >
       <div class="notes">
         ${marginOf(row.index, notes, this.chosen, this.unfolded.has(row.index), {
-          choose: (note) => this.chooseNote(note),
+          choose: (note) => this.cursor.choose(note.id),
           mend: (note) => this.send('remedy-chosen', { id: note.id }),
           unfold: (index) => (this.unfolded = new Set([...this.unfolded, index])),
         })}
@@ -322,8 +296,8 @@ export class SlewChart extends LitElement {
       .scale=${this.scale ?? 'usual'}
       .chosen=${this.chosen}
       @span-moved=${(event: CustomEvent<{ span: Span }>) => (this.opened = event.detail.span)}
-      @closed=${() => this.act({ kind: 'back' })}
-      @time-chosen=${(event: CustomEvent<{ time: number }>) => this.go(event.detail.time, false)}
+      @closed=${() => this.cursor.act({ kind: 'back' })}
+      @time-chosen=${(event: CustomEvent<{ time: number }>) => this.cursor.go(event.detail.time, false)}
     ></slew-close-up>`;
   }
 
@@ -342,111 +316,40 @@ export class SlewChart extends LitElement {
     return ((time - row.from) / (row.to - row.from)) * this.width;
   }
 
-  private readonly keyed = (event: KeyboardEvent): void => {
-    if (!this.data) return;
-    const intent = chartIntent(event, this.time, this.data, this.rows);
-    if (!intent) return;
-    if (intent.kind === 'back' && !this.opened && !this.span && this.hover === undefined) return;
-    event.preventDefault();
-    event.stopPropagation();
-    this.act(intent);
-  };
-
-  private act(intent: ChartIntent): void {
-    const { data } = this;
-    if (!data) return;
-    switch (intent.kind) {
-      case 'go':
-        return this.go(intent.time, intent.widen);
-      case 'note':
-        return this.stepNote(intent.step);
-      case 'open-close-up':
-        this.opened = closeUpSpan(this.time, this.span, this.foldNow, data);
-        return;
-      case 'back':
-        return this.back();
-      case 'play':
-        this.send('play-asked', undefined);
-    }
+  /** @internal */
+  get pressed(): boolean {
+    return this.pointer.pressed;
   }
 
-  private back(): void {
+  /** @internal */
+  release(): void {
     this.pointer.cancel();
-    if (this.opened) {
-      this.opened = undefined;
-      this.focus({ preventScroll: true });
-    } else if (this.span) this.setSpan(undefined);
-    this.hover = undefined;
   }
 
-  private go(asked: number, widen: boolean): void {
-    const time = this.held(asked);
-    if (widen) {
-      this.anchor ??= this.time;
-      this.setSpan([Math.min(this.anchor, time), Math.max(this.anchor, time)]);
-    } else this.anchor = undefined;
-    this.hover = undefined;
-    this.time = time;
-    this.send('cursor-moved', { time, settled: true });
-    void this.bringHere();
+  /** Opens the close-up at the cursor, or around the span. */
+  openCloseUp(): void {
+    if (this.data) this.opened = closeUpSpan(this.time, this.span, this.foldNow, this.data);
   }
 
-  private async bringHere(): Promise<void> {
+  closeCloseUp(): void {
+    this.opened = undefined;
+    this.focus({ preventScroll: true });
+  }
+
+  /** @internal */
+  async bringHere(): Promise<void> {
     await this.updateComplete;
     this.renderRoot.querySelector('.row.here .sheet')?.scrollIntoView({ block: 'nearest' });
   }
 
-  private stepNote(step: 1 | -1): void {
-    const at = this.numbered.findIndex(({ note }) => note.id === this.chosen);
-    // Without a chosen note: the next or the previous one from the cursor, one at the cursor itself first, without going round.
-    const before = this.numbered.filter(({ note }) => note.time < this.time - 1e-9 * step).length;
-    const from = step > 0 ? before : before - 1;
-    const next = this.numbered[at < 0 ? from : at + step];
-    if (next) this.chooseNote(next.note);
-  }
-
-  private chooseNote(note: MarginNote): void {
-    this.chosen = note.id;
-    this.send('note-chosen', { id: note.id });
-    this.go(note.time, false);
-  }
-
-  private setSpan(span: Span | undefined): void {
-    this.span = span;
-    this.send('span-chosen', { span });
-  }
-
-  private held(time: number): number {
-    const { start = 0, end = 0 } = this.data?.motion ?? {};
-    return Math.min(end, Math.max(start, time));
-  }
-
-  private hoverAt(time: number): void {
-    this.hover = this.held(time);
-    this.send('cursor-moved', { time: this.hover, settled: false });
-  }
-
-  private dragged([from, to]: Span, settled: boolean): void {
-    const span: Span = [this.held(from), this.held(to)];
-    if (settled) this.setSpan(span);
-    else this.span = span;
-  }
-
-  private readonly leave = (): void => {
-    if (this.pointer.pressed) return;
-    this.hover = undefined;
-    this.send('cursor-moved', { time: this.time, settled: true });
-  };
-
   private chooseFold(fold: number): void {
     this.fold = fold;
-    this.inSight = new Set();
-    this.sight?.disconnect();
-    this.sight = undefined;
+    this.inSight.forget();
     this.send('fold-chosen', { fold });
   }
 
-  private send(type: string, detail: unknown): void {
+  /** @internal */
+  send(type: string, detail: unknown): void {
     this.dispatchEvent(new CustomEvent(type, { detail, bubbles: true, composed: true }));
   }
 }
