@@ -7,18 +7,26 @@ export const DEGREES: number = 180 / Math.PI;
 
 /**
  * What an edit did, read off the two tracks and not off what the verb meant to do. `inserted`: keys of `after` that `before` lacks,
- * ascending. `moves`: whether the motion as written may differ.
+ * ascending. `oldKeys`: where keys were dropped or changed places, the old number of every key of `after`, -1 for one that was put in; `inserted`
+ * is then read off it. `moves`: whether the motion as written may differ.
  */
 export function editResult(
   before: RotationTrack,
   after: RotationTrack,
-  { inserted = [], moves = true }: { readonly inserted?: readonly number[]; readonly moves?: boolean } = {},
+  options: {
+    readonly inserted?: readonly number[];
+    readonly oldKeys?: readonly number[];
+    readonly moves?: boolean;
+  } = {},
 ): EditResult {
+  const { oldKeys, moves = true } = options;
+  const inserted = oldKeys?.flatMap((old, key) => (old < 0 ? [key] : [])) ?? options.inserted ?? [];
+  const dropped = oldKeys && droppedKeys(before.times.length, oldKeys);
   const changed = [...inserted];
   let largest = 0;
   const was = new Float64Array(4);
   const is = new Float64Array(4);
-  for (const [key, oldKey] of pairedKeys(after, inserted)) {
+  for (const [key, oldKey] of pairedKeys(after, { inserted, ...(oldKeys && { oldKeys }) })) {
     if (sameNumbers(before, oldKey, after, key)) continue;
     changed.push(key);
     if (isPlayable(before, oldKey))
@@ -27,20 +35,51 @@ export function editResult(
         angleBetween(keyOrientation(was, before, oldKey), keyOrientation(is, after, key)),
       );
   }
-  if (changed.length === 0) return { track: before, changed, inserted, largest: 0, added: 0 };
+  const isKept = !oldKeys || (dropped?.length === 0 && oldKeys.every((old, key) => old === key));
+  if (changed.length === 0 && isKept) return { track: before, changed, inserted, largest: 0, added: 0 };
   changed.sort((a, b) => a - b);
+  const [first, last] = oldKeys
+    ? movedReach(after, oldKeys, changed)
+    : [changed[0], changed[changed.length - 1]];
   return {
     track: after,
     changed,
     inserted,
+    ...(oldKeys && { oldKeys }),
+    ...(dropped && { dropped }),
     largest: largest * DEGREES,
     added: lengthOf(after) - lengthOf(before),
-    ...(moves && { span: withinKeys(after, reach(after, changed[0], changed[changed.length - 1])) }),
+    ...(moves && after.times.length > 0 && { span: withinKeys(after, reach(after, first, last)) }),
   };
 }
 
+function droppedKeys(count: number, oldKeys: readonly number[]): number[] {
+  const kept = new Set(oldKeys);
+  return Array.from({ length: count }, (_, key) => key).filter((key) => !kept.has(key));
+}
+
+/** First and last key of `after` that differs, was put in, or does not follow the key that it followed. */
+function movedReach(
+  after: RotationTrack,
+  oldKeys: readonly number[],
+  changed: readonly number[],
+): readonly [number, number] {
+  const last = after.times.length - 1;
+  const moved = oldKeys.flatMap((old, key) => (old === (key === 0 ? -1 : oldKeys[key - 1]) + 1 ? [] : [key]));
+  const all = [...moved, ...changed];
+  // What is gone from the end is felt at the key that is last now.
+  return [Math.min(last, ...all), all.length === 0 ? last : Math.max(...all)];
+}
+
 /** Every key of `after` that `before` has too, with its number there. */
-export function* pairedKeys(after: RotationTrack, inserted: readonly number[]): Generator<[number, number]> {
+export function* pairedKeys(
+  after: RotationTrack,
+  { inserted, oldKeys }: Pick<EditResult, 'inserted' | 'oldKeys'>,
+): Generator<[number, number]> {
+  if (oldKeys) {
+    for (const [key, old] of oldKeys.entries()) if (old >= 0) yield [key, old];
+    return;
+  }
   let passed = 0;
   for (let key = 0; key < after.times.length; key++) {
     if (inserted[passed] === key) passed++;

@@ -1,10 +1,10 @@
-import { type RotationTrack, SlewcurveError } from '@slewcurve/core';
+import { type RotationTrack, type SceneNode, SlewcurveError } from '@slewcurve/core';
 import { follow } from './pace/follow.js';
 import { matchesPattern } from './pattern.js';
 import { verbNamed } from './registry.js';
 import type { Step } from './step.js';
 import { readStep } from './read-step.js';
-import type { EditResult } from './verb.js';
+import type { EditResult, EditScene } from './verb.js';
 
 /** An ordered list of edits that can be run again, as REPORT writes it: flat JSON. */
 export interface JobCard {
@@ -54,25 +54,33 @@ export function parseJobCard(json: unknown): JobCard {
  * Runs steps in order over a list of tracks. `clip` and `track` of a step are patterns (`*` stands for anything); one that a track
  * has as its very name means that name alone. Tracks that no step names stay the same objects, but for those that a pace takes along: `with: "clip"`.
  *
- * @throws SlewcurveError `step.no-match`, `step.many-clocks` and what the verbs throw, with the step's number in the message; the given tracks are never
+ * @param nodes the file's node tree, for edits that look at parents
+ * @throws SlewcurveError `step.no-match`, `step.many-clocks`, `step.whole-file` and what the verbs throw, with the step's number in the message; the given tracks are never
  * written, so nothing is half done.
  */
 export function applySteps(
   tracks: readonly RotationTrack[],
   steps: readonly Step[],
+  nodes: readonly SceneNode[] = [],
 ): { readonly tracks: readonly RotationTrack[]; readonly results: readonly AppliedStep[] } {
   const current = [...tracks];
   const results = steps.flatMap((step, number) => {
     const verb = verbNamed(step.verb, { pointer: `/steps/${number}/verb` });
     const found = tracksNamed(current, step, number);
     checkOneClock(step, number, found.length);
+    if (verb.wholeFile === true) checkWholeFile(step, number, found.length, current.length);
+    const scene: EditScene = {
+      nodes,
+      tracks: [...current],
+      named: found.map((index) => current[index]),
+    };
     const run = (index: number, edit: (before: RotationTrack) => EditResult): AppliedStep => {
       const before = current[index];
       const result = saysWhichStep(number, step, () => edit(before));
       current[index] = result.track;
       return { step, number, index, before, result };
     };
-    const applied = found.map((index) => run(index, (before) => verb.apply(before, step)));
+    const applied = found.map((index) => run(index, (before) => verb.apply(before, step, scene)));
     const { repaced } = applied[0].result;
     if (repaced?.with !== 'clip') return applied;
     const others = [...current.keys()].filter((index) => current[index].clip === current[found[0]].clip);
@@ -88,6 +96,16 @@ function checkOneClock(step: Step, number: number, count: number): void {
   throw new SlewcurveError(
     'step.many-clocks',
     `Step ${number} (${step.verb}) names ${count} tracks, and a clip can go by the clock of one alone. Name that one, or take only their nodes along.`,
+    { clip: step.clip, track: step.track, pointer: `/steps/${number}` },
+  );
+}
+
+/** @throws SlewcurveError `step.whole-file` */
+function checkWholeFile(step: Step, number: number, count: number, all: number): void {
+  if (count === all) return;
+  throw new SlewcurveError(
+    'step.whole-file',
+    `Step ${number} (${step.verb}) names ${count} of ${all} tracks, and single tracks would no longer fit the rest. Name them all: * in *.`,
     { clip: step.clip, track: step.track, pointer: `/steps/${number}` },
   );
 }

@@ -12,7 +12,7 @@ export interface EditProof {
   readonly strays: readonly number[];
   /** Kept keys, numbered as before the edit, that differ. Should be none. */
   readonly keptChanged: readonly number[];
-  /** Whether every old key stands at its old time. */
+  /** Whether every old key that is not named as dropped stands at its old time. */
   readonly sameTimes: boolean;
   /** Largest change of orientation where none may be, and where that is, seconds. At most 1e-7°. */
   readonly outside: number;
@@ -37,16 +37,17 @@ const OUTSIDE_LIMIT = 1e-7;
 export function proveEdit(
   before: RotationTrack,
   after: RotationTrack,
-  result: Pick<EditResult, 'changed' | 'inserted' | 'span' | 'repaced'>,
+  result: Pick<EditResult, 'changed' | 'inserted' | 'oldKeys' | 'dropped' | 'span' | 'repaced'>,
   keep: readonly number[] = [],
 ): EditProof {
   if (result.repaced) return provePace(before, after, result.repaced, keep);
   const changed = new Set(result.changed);
   const strays: number[] = [];
-  const keptChanged: number[] = [];
-  let sameTimes = after.times.length - result.inserted.length === before.times.length;
   const kept = new Set(keep);
-  for (const [key, oldKey] of pairedKeys(after, result.inserted)) {
+  const { dropped = [] } = result;
+  const keptChanged = dropped.filter((key) => kept.has(key));
+  let sameTimes = after.times.length - result.inserted.length === before.times.length - dropped.length;
+  for (const [key, oldKey] of pairedKeys(after, result)) {
     if (!Object.is(before.times[oldKey], after.times[key])) sameTimes = false;
     if (sameNumbers(before, oldKey, after, key)) continue;
     if (!changed.has(key)) strays.push(oldKey);
@@ -64,13 +65,15 @@ type Span = readonly [number, number];
 function touchedSpans(
   after: RotationTrack,
   before: RotationTrack,
-  { changed, span }: Pick<EditResult, 'changed' | 'span'>,
+  { changed, span, oldKeys }: Pick<EditResult, 'changed' | 'span' | 'oldKeys'>,
 ): Span[] {
   if (!span || before === after) return [];
   const spans: Span[] = [];
   // Outside its keys a track holds its end poses.
   const first = span[0] <= after.times[0] ? -Infinity : span[0];
   const end = span[1] >= after.times[after.times.length - 1] ? Infinity : span[1];
+  // Between keys that changed places or lost a neighbour no key says what plays.
+  if (oldKeys) return [[first, end]];
   for (const key of changed) {
     const [from, to] = reach(after, key, key);
     const last = spans.at(-1);

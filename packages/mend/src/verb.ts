@@ -1,4 +1,4 @@
-import type { RotationTrack } from '@slewcurve/core';
+import type { RotationTrack, SceneNode } from '@slewcurve/core';
 import type { Step } from './step.js';
 
 /** What an edit did to one track, measured by the edit itself. */
@@ -9,6 +9,10 @@ export interface EditResult {
   readonly changed: readonly number[];
   /** Keys of the new track that the old one did not have. Ascending. */
   readonly inserted: readonly number[];
+  /** Where keys were dropped or changed places: the old number of every key of the new track, -1 for one that was put in. */
+  readonly oldKeys?: readonly number[];
+  /** Keys of the old track that the new one lacks. Ascending. */
+  readonly dropped?: readonly number[];
   /** Largest turn of any key of the old track, degrees. Keys that had no orientation before are left out. */
   readonly largest: number;
   /** Seconds added to the clip. 0 for every verb that keeps times. */
@@ -29,6 +33,16 @@ export interface Repaced {
   readonly price: Price;
   /** Where the new pace takes a bend of the path fast: shown before it is taken. Worst first. */
   readonly bends: readonly Bend[];
+}
+
+/** What stands around a track, for edits that look beyond it. */
+export interface EditScene {
+  /** The file's node tree; a track's id is its node's path. */
+  readonly nodes: readonly SceneNode[];
+  /** Every track as the step found it. */
+  readonly tracks: readonly RotationTrack[];
+  /** Those of them that the step names. */
+  readonly named: readonly RotationTrack[];
 }
 
 /** A map between the clocks before and after an edit, seconds. Where it runs back, `turnsBack`. */
@@ -79,10 +93,13 @@ export interface Verb {
   readonly keysApart: boolean;
   /** True where it puts in keys, so that later key numbers shift. */
   readonly insertsKeys: boolean;
+  /** True where it makes sense on all tracks of a file or on none. */
+  readonly wholeFile?: boolean;
   /** The step in a sentence, as people read it. `parseSentence` reads it back. */
   say(step: Step): string;
   /**
+   * @param scene what stands around the track; left out: nothing is known of it
    * @throws SlewcurveError `step.…` where the step can't be applied to this track; nothing is half done.
    */
-  apply(track: RotationTrack, step: Step): EditResult;
+  apply(track: RotationTrack, step: Step, scene?: EditScene): EditResult;
 }
