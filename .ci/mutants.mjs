@@ -171,7 +171,10 @@ try {
     for (const { start, end, from, to } of tried) {
       writeFileSync(target, `${text.slice(0, start)}${to}${text.slice(end)}`);
       const survives = rounds.every((tests) => passes(copy, tests));
-      if (survives) unnoticed.push({ line: text.slice(0, start).split('\n').length, from, to });
+      if (!survives) continue;
+      const line = text.slice(0, start).split('\n').length;
+      unnoticed.push({ line, from, to });
+      console.log(`${name}:${line}: ${to} for ${from} goes unnoticed`);
     }
     writeFileSync(target, text);
     if (tried.length > 0)
