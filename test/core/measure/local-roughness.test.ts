@@ -143,14 +143,24 @@ describe('local roughness', () => {
           key: fc.integer({ min: 5, max: 14 }),
           size: fc.double({ min: 1, max: 150, noNaN: true }),
           tail: fc.boolean(),
+          noise: fc.array(fc.double({ min: -0.2, max: 0.2, noNaN: true }), { minLength: 3, maxLength: 40 }),
         }),
-        (motion, times, { key, size, tail }) => {
+        (motion, times, { key, size, tail, noise }) => {
           const smooth = keyed(motion, times, 'LINEAR');
           const keys = tail ? [...smooth.times.keys()].slice(key) : [key];
-          const track = turned(smooth, keys, [size * 0.6, -size * 0.48, size * 0.64]);
+          const broken = turned(smooth, keys, [size * 0.6, -size * 0.48, size * 0.64]);
+          const track = noise.reduce(
+            (noisy, angle, k) =>
+              turned(
+                noisy,
+                [k % smooth.times.length],
+                [angle, noise[(k + 1) % noise.length], noise[(k + 2) % noise.length]],
+              ),
+            broken,
+          );
           const least = 1 / DEGREES;
           const roughness = localRoughness(track);
-          const passed = new Set(roughness.candidates(least));
+          const passed = new Set(roughness.candidates(least, [16, 8]));
           for (let k = 0; k < track.times.length; k++) {
             if (!roughness.fit(k)) continue;
             const { gains, vectors } = roughness;

@@ -2,6 +2,8 @@ import { angleFloor } from '../track/noise-floor.js';
 import { keyOrientation } from '../track/key-orientation.js';
 import { medianGap } from '../track/regime.js';
 import type { RotationTrack } from '../track/rotation-track.js';
+import { candidateKeys } from './candidate-keys.js';
+import { FOURTH, dividedWeights, isEven } from './fourth-difference.js';
 
 /** What may explain a local break: one key beside its neighbours, a step that stays, a change of rate at one key. */
 export const BREAK_KINDS: readonly ['lone-key', 'shelf', 'corner'] = ['lone-key', 'shelf', 'corner'];
@@ -28,19 +30,19 @@ export interface LocalRoughness {
    * offset of everything from the key on; the change of turn per median gap.
    */
   readonly vectors: Float64Array;
-  /** Keys, ascending, at which a lone key or a shelf of `size` radians or more may stand: a cheap bound that leaves none out. */
-  candidates(size: number): number[];
+  /**
+   * Keys, ascending, at which a lone key or a shelf of `size` radians or more may stand: a cheap bound that leaves none out. With
+   * `gains`, the least of a lone key and of a shelf, keys are left out too that can reach neither.
+   */
+  candidates(size: number, gains?: readonly [number, number]): number[];
 }
 
 /** Keys that a window reaches to either side, positions likewise, and the fewest positions that allow a claim. */
 const REACH = 6;
 const POSITIONS = 4;
 const FEWEST = 7;
-/** Gaps that differ by more than this share of the median need divided differences. */
-const EVEN = 0.02;
 /** A gap beyond this many medians is no neighbourhood. */
 const HOLE = 1.5;
-const FOURTH = Float64Array.of(1, -4, 6, -4, 1);
 
 /**
  * Local roughness of a track and what explains it. Around key k: y_j = log(q_k⁻¹q_{k+j}), j = −6 … 6, carried on past half a turn from
@@ -68,7 +70,7 @@ export function localRoughness(track: RotationTrack, options: LocalRoughnessOpti
       explain(window, positions * noise, gains, vectors);
       return true;
     },
-    candidates: (size) => window.candidates(size),
+    candidates: (size, least) => window.candidates(size, least, noise),
   };
 }
 
@@ -78,7 +80,7 @@ interface KeyWindow {
   readonly patterns: readonly Float64Array[];
   /** Fill both around a key; how many positions could be used (the others are zero in both). */
   differences(key: number): number;
-  candidates(size: number): number[];
+  candidates(size: number, gains: readonly [number, number] | undefined, noise: number): number[];
 }
 
 function explain(window: KeyWindow, noise: number, gains: Float64Array, vectors: Float64Array): void {
@@ -162,26 +164,8 @@ function keyWindow(track: RotationTrack, loop: boolean): KeyWindow {
       }
       return positions;
     },
-    candidates: (least) => {
-      const found: number[] = [];
-      let before = -1;
-      const first = period > 0 ? 0 : 2;
-      const last = period > 0 ? period : count - 2;
-      for (let key = first; key < last; key++) {
-        for (let slot = 0; slot < 5; slot++) place(slot, key + slot - 2);
-        if (isEven(times, 0, 5, gap)) weights.set(FOURTH);
-        else dividedWeights(weights, times, 0, gap);
-        // A lone key of size a that a fit must explain 16 times over leaves |d| ≥ 3.8a at its own position, a shelf explained 8
-        // times ≥ 1.8a at its key or the one before. Turns are twice the chord here; a quarter of the bound is asked for.
-        if (2 * chordDifference(orientations, keys, weights) < 0.45 * least) continue;
-        if (key !== before) found.push(key);
-        const next = period > 0 ? (key + 1) % period : key + 1;
-        if (next > key) found.push(next);
-        before = next;
-      }
-      if (period > 0 && found.length > 0 && found[0] !== 0) found.unshift(0);
-      return found;
-    },
+    candidates: (least, gainsOf, noise) =>
+      candidateKeys({ times: track.times, orientations, broken, gap, period }, least, gainsOf, noise),
   };
 }
 
@@ -208,28 +192,6 @@ function difference(
     step[i] += weight;
     ramp[i] += weight * (even ? slot - REACH : (times[slot] - times[REACH]) / gap);
   }
-}
-
-/** Weights of the fourth divided difference over five slots from `first`, times 24h⁴: 1 −4 6 −4 1 on even gaps. */
-function dividedWeights(weights: Float64Array, times: Float64Array, first: number, gap: number): void {
-  for (let m = 0; m < 5; m++) {
-    let product = 1;
-    for (let other = 0; other < 5; other++)
-      if (other !== m) product *= (times[first + m] - times[first + other]) / gap;
-    weights[m] = 24 / product;
-  }
-}
-
-/** Whether the known gaps between slots differ by at most 2 % of the median gap. */
-function isEven(times: Float64Array, first: number, size: number, gap: number): boolean {
-  let least = Infinity,
-    most = -Infinity;
-  for (let slot = first; slot + 1 < first + size; slot++) {
-    const between = times[slot + 1] - times[slot];
-    if (between < least) least = between;
-    if (between > most) most = between;
-  }
-  return !(most - least > EVEN * gap);
 }
 
 /**
@@ -293,34 +255,15 @@ function carriedTurn(
   y[at + 2] = (v / sine) * angle;
 }
 
-/** Length of the weighted sum of five quaternions; 0 where one is missing. */
-function chordDifference(q: Float64Array, keys: Int32Array, weights: Float64Array): number {
-  let x = 0,
-    y = 0,
-    z = 0,
-    w = 0;
-  let side = 1;
-  for (let m = 0; m < 5; m++) {
-    if (keys[m] < 0) return 0;
-    const at = 4 * keys[m];
-    if (m > 0) {
-      const last = 4 * keys[m - 1];
-      const along =
-        q[at] * q[last] + q[at + 1] * q[last + 1] + q[at + 2] * q[last + 2] + q[at + 3] * q[last + 3];
-      if (along < 0) side = -side;
-    }
-    const weight = side * weights[m];
-    x += weight * q[at];
-    y += weight * q[at + 1];
-    z += weight * q[at + 2];
-    w += weight * q[at + 3];
-  }
-  return Math.sqrt(x * x + y * y + z * z + w * w);
-}
-
+/** Each on the side of the one before. */
 function unitOrientations(track: RotationTrack): Float64Array {
   const all = new Float64Array(4 * track.times.length);
   const one = new Float64Array(4);
-  for (let key = 0; key < track.times.length; key++) all.set(keyOrientation(one, track, key), 4 * key);
+  for (let at = 0; at < all.length; at += 4) {
+    keyOrientation(one, track, at / 4);
+    let along = 0;
+    if (at > 0) for (let i = 0; i < 4; i++) along += one[i] * all[at - 4 + i];
+    for (let i = 0; i < 4; i++) all[at + i] = along < 0 ? -one[i] : one[i];
+  }
   return all;
 }

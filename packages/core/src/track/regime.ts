@@ -23,9 +23,13 @@ export function regime(track: RotationTrack, frameRate?: number): Regime {
   return dense || gap <= (1 / DENSE_RATE) * slack ? 'dense' : 'sparse';
 }
 
+const known = new WeakMap<Float64Array, number>();
+
 /** Median time between neighbouring keys, seconds; the lower of the middle two. NaN gaps are left out; 0 without gaps. */
-export function medianGap(track: RotationTrack): number {
-  const { times } = track;
+export function medianGap({ times }: RotationTrack): number {
+  // Asked for by many measures of one track, and tracks of a clip often share their times.
+  const before = known.get(times);
+  if (before !== undefined) return before;
   const gaps = new Float64Array(Math.max(0, times.length - 1));
   let count = 0;
   for (let key = 0; key + 1 < times.length; key++) {
@@ -34,5 +38,7 @@ export function medianGap(track: RotationTrack): number {
   }
   const sorted = gaps.subarray(0, count);
   sorted.sort();
-  return count === 0 ? 0 : sorted[(count - 1) >> 1];
+  const median = count === 0 ? 0 : sorted[(count - 1) >> 1];
+  known.set(times, median);
+  return median;
 }

@@ -47,6 +47,16 @@ describe('shake.hum', () => {
     expect(finding.span[1]).toBeLessThan(15.5);
   });
 
+  // Windows of 60, 63, 125, 222 (2·3·37) and 445 (5·89) keys: even, odd, and of a large prime.
+  test.each([24, 25, 50, 88.8, 178])('at %d keys a second a hum of 9 Hz is heard as 9.0 Hz', (rate) => {
+    const track = turningTrack(
+      (key) => (5 * key) / rate + 0.3 * Math.sin((2 * Math.PI * 9 * key) / rate),
+      Math.round(10 * rate),
+      rate,
+    );
+    expect(Math.abs(hum(track)!.value - 9)).toBeLessThan(0.05);
+  });
+
   test('slower than 4 Hz, smaller than the limit, or keyed sparsely it is no hum', () => {
     expect(hum(pan(3, 0.3))).toBeUndefined();
     expect(hum(pan(8, 0.03))).toBeUndefined();

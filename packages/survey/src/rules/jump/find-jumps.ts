@@ -50,7 +50,7 @@ export function findJumps(track: RotationTrack, limits: JumpLimits): Jump[] {
   const roughness = localRoughness(track, loop === undefined ? {} : { loop });
   const gainsAt = rememberedGains(roughness, track.times.length);
   const jumps: Jump[] = [];
-  for (const key of roughness.candidates(smallest / DEGREES)) {
+  for (const key of roughness.candidates(smallest / DEGREES, LEAST_GAIN)) {
     if (!roughness.fit(key)) continue;
     for (const kind of [0, 1] as const) {
       const [x = 0, y = 0, z = 0] = roughness.vectors.subarray(3 * kind);

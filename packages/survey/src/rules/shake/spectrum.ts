@@ -1,3 +1,5 @@
+import { fourier } from './fourier.js';
+
 /** The strongest line of a window of vectors: where it lies, the power within 1 Hz of it and that of the whole window. */
 export type Spectrum = (
   vectors: Float64Array,
@@ -15,39 +17,35 @@ const FINE = 50;
  * |Σ v·e^(−2πifn/rate)|², over all three axes.
  */
 export function spectrum(count: number, rate: number, least: number, worth: number): Spectrum {
-  const cosines = Float64Array.from({ length: count }, (_, n) => Math.cos((2 * Math.PI * n) / count));
-  const sines = Float64Array.from({ length: count }, (_, n) => Math.sin((2 * Math.PI * n) / count));
+  const transform = fourier(count);
   const centred = new Float64Array(3 * count);
+  const real = new Float64Array(count);
+  const imaginary = new Float64Array(count);
   const powers = new Float64Array(Math.floor(count / 2) + 1);
   const hertzOf = (bin: number): number => (bin * rate) / count;
 
-  /** Power at a bin. */
-  const powerAt = (bin: number): number => {
-    let [rx, ry, rz, ix, iy, iz] = [0, 0, 0, 0, 0, 0];
-    for (let n = 0, turn = 0; n < count; n++, turn += bin) {
-      if (turn >= count) turn -= count;
-      const c = cosines[turn]!;
-      const s = sines[turn]!;
-      const x = centred[3 * n]!;
-      const y = centred[3 * n + 1]!;
-      const z = centred[3 * n + 2]!;
-      rx += c * x;
-      ry += c * y;
-      rz += c * z;
-      ix += s * x;
-      iy += s * y;
-      iz += s * z;
+  /** Powers of all bins: x and y go as one complex signal, whose power at ±f holds that of both; z as another. */
+  const fillPowers = (): void => {
+    powers.fill(0);
+    for (const pair of [true, false]) {
+      for (let n = 0; n < count; n++) {
+        real[n] = centred[3 * n + (pair ? 0 : 2)] ?? 0;
+        imaginary[n] = pair ? (centred[3 * n + 1] ?? 0) : 0;
+      }
+      transform(real, imaginary);
+      for (let bin = 1; bin < powers.length; bin++) {
+        const [re = 0, im = 0] = [real[bin], imaginary[bin]];
+        const [reBack = 0, imBack = 0] = [real[count - bin], imaginary[count - bin]];
+        powers[bin] = (powers[bin] ?? 0) + (re * re + im * im + reBack * reBack + imBack * imBack) / 2;
+      }
     }
-    return rx * rx + ry * ry + rz * rz + ix * ix + iy * iy + iz * iz;
   };
 
   return (vectors, from) => {
     centre(centred, vectors, from, count);
+    fillPowers();
     let total = 0;
-    for (let bin = 1; bin < powers.length; bin++) {
-      powers[bin] = powerAt(bin);
-      total += powers[bin] ?? 0;
-    }
+    for (let bin = 1; bin < powers.length; bin++) total += powers[bin] ?? 0;
     const best = strongestLine(powers, (least * count) / rate);
     if (best === 0) return { hertz: least, near: 0, total };
     // A line lies within half a bin of its highest: where those around it hold little, it need not be looked for.
