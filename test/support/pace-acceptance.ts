@@ -1,5 +1,13 @@
 import { type RotationTrack, angleBetween, playAs } from '@slewcurve/core';
-import { type EditResult, type Repaced, type Step, proveEdit, verbNamed } from '@slewcurve/mend';
+import {
+  type Bend,
+  type EditResult,
+  type Price,
+  type Repaced,
+  type Step,
+  proveEdit,
+  verbNamed,
+} from '@slewcurve/mend';
 import { expect } from 'vitest';
 
 const DEGREES = 180 / Math.PI;
@@ -7,6 +15,8 @@ const DEGREES = 180 / Math.PI;
 /** A pace edit's result, with what it did to time. */
 export interface PaceResult extends EditResult {
   readonly repaced: Repaced;
+  readonly price: Price;
+  readonly bends: readonly Bend[];
 }
 
 /** Runs a pace step and asserts what every one owes (EDITS' U): nothing but the clock is other outside the span, kept keys keep their values. */
@@ -21,9 +31,10 @@ export function repaced(track: RotationTrack, step: Omit<Step, 'clip' | 'track'>
   expect(proof.holds, `outside the span ${proof.outside}° at ${proof.outsideAt} s`).toBe(true);
   const { times: news } = result.track;
   for (let key = 1; key < news.length; key++) expect(news[key]).toBeGreaterThan(news[key - 1]);
-  if (!result.repaced) throw new Error('a pace verb says how time runs');
-  expect(result.repaced.price.seconds).toBeCloseTo(news[news.length - 1] - times[times.length - 1], 9);
-  return { ...result, repaced: result.repaced };
+  const { repaced: clock, price, bends } = result;
+  if (!clock || !price || !bends) throw new Error('a pace verb says how time runs and what it costs');
+  expect(price.seconds).toBeCloseTo(news[news.length - 1] - times[times.length - 1], 9);
+  return { ...result, repaced: clock, price, bends };
 }
 
 /** Largest distance of a new key from the old path, degrees, at the old time that the retiming says. */

@@ -25,18 +25,18 @@ function stepReport({ step }: AppliedStep, edits: readonly AppliedStep[]): StepR
 
 /** Worst price and worst bends over the tracks that a pace was given to. */
 function paceReport(edits: readonly AppliedStep[]): Pick<StepReport, 'price' | 'bends'> {
-  const paces = edits.flatMap(({ result: { repaced } }) => (repaced ? [repaced] : []));
-  if (paces.length === 0) return {};
+  const prices = edits.flatMap(({ result }) => result.price ?? []);
+  if (prices.length === 0) return {};
   const worst = (of: (price: Price) => number): number =>
-    significant(paces.reduce((most, { price }) => Math.max(most, of(price)), -Infinity));
-  const bends = paces.flatMap((pace) => pace.bends);
+    significant(prices.reduce((most, price) => Math.max(most, of(price)), -Infinity));
+  const bends = edits.flatMap(({ result }) => result.bends ?? []);
   // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   bends.sort((a, b) => b.jump - a.jump);
   return {
     price: {
       seconds: worst(({ seconds }) => seconds),
       degrees: worst(({ degrees }) => degrees),
-      bytes: paces.reduce((sum, { price }) => sum + price.bytes, 0),
+      bytes: prices.reduce((sum, { bytes }) => sum + bytes, 0),
     },
     bends: bends.slice(0, 20).map(({ time, jump }) => ({ time, jump: significant(jump) })),
   };

@@ -23,6 +23,12 @@ const STORE_WORDS: Readonly<Record<NonNullable<Step['store']>, string>> = {
 /** In the order in which a sentence has them. */
 export const CLAUSES: readonly Clause[] = [
   {
+const ENDS_WORDS: Readonly<Record<NonNullable<Step['ends']>, string>> = {
+  same: 'with the same ends',
+  run: 'letting time run',
+  go: 'letting angle go and re-seating what follows',
+};
+
     key: 'steps',
     say: ({ steps }) => `over ${steps} ${steps === 1 ? 'step' : 'steps'}`,
     pattern: /^, over (\d+) steps?/,
@@ -109,9 +115,11 @@ export const CLAUSES: readonly Clause[] = [
   },
   {
     key: 'ends',
-    say: ({ ends }) => (ends === 'same' ? 'with the same ends' : 'letting time run'),
-    pattern: /^, (with the same ends|letting time run)/,
-    read: ([ends]) => ({ ends: ends === 'letting time run' ? 'run' : 'same' }),
+    say: ({ ends = 'same' }) => ENDS_WORDS[ends],
+    pattern: /^, (with the same ends|letting time run|letting angle go and re-seating what follows)/,
+    read: ([words = '']) => ({
+      ends: words.startsWith('letting time') ? 'run' : words.startsWith('letting angle') ? 'go' : 'same',
+    }),
   },
   {
     key: 'with',

@@ -37,7 +37,7 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
   },
   with: (value) => ({ with: oneOf(value, ['node', 'track', 'clip']) }),
   store: (value) => ({ store: oneOf(value, ['move', 'frames', 'cubic']) }),
-  ends: (value) => ({ ends: oneOf(value, ['same', 'run']) }),
+  ends: (value) => ({ ends: oneOf(value, ['same', 'run', 'go']) }),
   seconds: (value) => ({ seconds: above0(value) }),
   at: (value) => {
     if (!isFiniteNumber(value)) throw new Fault('card.bad-number', 'must be a finite number of seconds');

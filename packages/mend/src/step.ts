@@ -29,8 +29,11 @@ export interface Step {
    * CUBICSPLINE with exact tangents. Default: what the verb needs.
    */
   readonly store?: 'move' | 'frames' | 'cubic';
-  /** Pace verbs: whether both ends keep their times, or what follows comes earlier or later. */
-  readonly ends?: 'same' | 'run';
+  /**
+   * Pace verbs: whether both ends keep their times and orientations (`same`), or what follows comes earlier or later (`run`). shape alone: or the times stay
+   * and the angle goes (`go`), so that what follows is re-seated.
+   */
+  readonly ends?: 'same' | 'run' | 'go';
   /** hold: for how long; stretch, shrink, even out, ease in/out: how long the span is to last. Seconds. */
   readonly seconds?: number;
   /** hold, shape: where, old seconds. */

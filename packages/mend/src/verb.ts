@@ -19,8 +19,12 @@ export interface EditResult {
   readonly added: number;
   /** First and last time between which the motion as written may differ, seconds; left out where it can't differ anywhere. */
   readonly span?: readonly [number, number];
-  /** Pace verbs alone: how time runs now, and what that costs. */
+  /** Pace verbs alone: how time runs now. */
   readonly repaced?: Repaced;
+  /** Pace verbs alone: what the new pace costs. */
+  readonly price?: Price;
+  /** Pace verbs alone: where the new pace takes a bend of the path fast: shown before it is taken. Worst first. */
+  readonly bends?: readonly Bend[];
 }
 
 /** What a pace verb did to time. */
@@ -30,9 +34,6 @@ export interface Repaced {
   /** Old times between which the pace changed; what follows is shifted. */
   readonly acted: readonly [number, number];
   readonly with: 'node' | 'track' | 'clip';
-  readonly price: Price;
-  /** Where the new pace takes a bend of the path fast: shown before it is taken. Worst first. */
-  readonly bends: readonly Bend[];
 }
 
 /** What stands around a track, for edits that look beyond it. */
@@ -57,11 +58,11 @@ export interface TimeMap {
   readonly turnsAt?: number;
 }
 
-/** What a new pace costs. */
+/** What a new pace costs. Letting the angle go costs no seconds. */
 export interface Price {
   /** Seconds added; fewer than 0 where time is saved. */
   readonly seconds: number;
-  /** How far, in degrees, the motion as stored departs from the old path at the wanted pace, at the worst place. */
+  /** How far, in degrees, the motion as stored departs from the path at the wanted pace, at the worst place. */
   readonly degrees: number;
   /** Bytes that times and values take more in the track's own storage. */
   readonly bytes: number;

@@ -1,6 +1,6 @@
-import { greatest } from '../curve/greatest.js';
-import type { Curve, Frame, Peak } from '../curve/curve.js';
+import type { Curve, Frame } from '../curve/curve.js';
 import type { NumberStore } from '../number-store.js';
+import { piecewisePeak } from './piecewise-peak.js';
 import type { Retiming } from './retiming.js';
 
 /** Share of a curve's time by which a place without a direction of turn is left to find one. */
@@ -79,33 +79,12 @@ export function retimedCurve(curve: Curve, retiming: Retiming): Curve {
     rate: (out, t, frame) => derivative(out, t, frame, 1),
     acceleration: (out, t, frame) => derivative(out, t, frame, 2),
     length: (t0, t1) => curve.length(oldTime(t0), oldTime(t1)),
-    peak: (t0, t1) => peakOf(speedAt, knots, t0, t1),
+    peak: (t0, t1) => piecewisePeak(speedAt, knots, t0, t1),
   };
 }
 
 function smaller<A extends number, B extends number>(a: A, b: B): A | B {
   return a < b ? a : b;
-}
-
-/** Greatest speed between two times, looked for in every piece. */
-function peakOf(speedAt: (t: number) => number, knots: Float64Array, t0: number, t1: number): Peak {
-  const from = Math.max(knots[0], Math.min(t0, t1));
-  const to = Math.min(knots[knots.length - 1], Math.max(t0, t1));
-  const best: Peak = { rate: 0, time: Math.min(t0, t1) };
-  for (let i = 0; i + 1 < knots.length; i++) {
-    const a = Math.max(from, knots[i]);
-    const b = Math.min(to, knots[i + 1]);
-    if (!(a < b)) continue;
-    // The later piece's speed belongs to a knot, so a piece is asked up to just before its end.
-    const last = b === knots[i + 1] ? b - 1e-9 * (b - knots[i]) : b;
-    const time = greatest(speedAt, a, last);
-    const rate = speedAt(time);
-    if (rate > best.rate) {
-      best.rate = rate;
-      best.time = time;
-    }
-  }
-  return best;
 }
 
 /** New times at which the path or its pace is not smooth, ascending, each once. */

@@ -1,4 +1,5 @@
-import { type RotationTrack, pace, playAs } from '@slewcurve/core';
+import { type RotationTrack, SlewcurveError, pace, playAs } from '@slewcurve/core';
+import { placeOf } from '../acted-keys.js';
 import { sentenceOf } from '../clauses.js';
 import { easeOf } from '../pace/ease-of.js';
 import { paceSpan } from '../pace/pace-span.js';
@@ -33,6 +34,12 @@ export const easeInOut: Verb = Object.freeze({
   apply(track: RotationTrack, step: Step): EditResult {
     const span = paceSpan(track, step);
     const old = span[1] - span[0];
+    if (step.ends === 'go')
+      throw new SlewcurveError(
+        'step.bad-ends',
+        'Easing keeps the angle. Keep the same ends, or let time run.',
+        placeOf(track),
+      );
     const path = playAs(track, 'as-written');
     if (step.shoulders === undefined || step.shoulders === 0) {
       const ease = easeOf(step.ease ?? 'minimum-jerk');

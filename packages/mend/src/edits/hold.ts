@@ -2,7 +2,7 @@ import { type PacedCurve, type RotationTrack, SlewcurveError, pace, playAs, regi
 import { placeOf } from '../acted-keys.js';
 import { sentenceOf } from '../clauses.js';
 import { type NewKey, frameKeys, movedKeys, stored } from '../pace/new-keys.js';
-import { paceSpan } from '../pace/pace-span.js';
+import { keysAround, paceSpan } from '../pace/pace-span.js';
 import { storeKeys } from '../pace/store-paced.js';
 import type { Step } from '../step.js';
 import type { EditResult, Verb } from '../verb.js';
@@ -37,7 +37,7 @@ export const hold: Verb = Object.freeze({
     const keys =
       store === 'move'
         ? movedKeys(track, paced)
-        : frameKeys(track, spanOfKeys(track, around), paced, isDense, step.keep);
+        : frameKeys(track, keysAround(track, around), paced, isDense, step.keep);
     return storeKeys(track, span, paced, step, store, withRest(track, keys, at, paced, seconds));
   },
 });
@@ -60,16 +60,4 @@ function withRest(
     ...rest,
     ...outside.filter(({ time }) => time > ends),
   ];
-}
-
-/** The span drawn out to the keys around it. */
-function spanOfKeys(
-  { times }: RotationTrack,
-  [from, to]: readonly [number, number],
-): readonly [number, number] {
-  let first = times.length - 1;
-  while (first > 0 && times[first] > from) first--;
-  let last = 0;
-  while (last < times.length - 1 && times[last] < to) last++;
-  return [times[first], times[last]];
 }

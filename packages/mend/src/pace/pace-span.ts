@@ -27,3 +27,12 @@ export function paceSpan(track: RotationTrack, step: Step): Span {
     placeOf(track),
   );
 }
+
+/** A stretch of time drawn out to the keys around it. */
+export function keysAround({ times }: RotationTrack, [from, to]: Span): Span {
+  let first = times.length - 1;
+  while (first > 0 && times[first] > from) first--;
+  let last = 0;
+  while (last < times.length - 1 && times[last] < to) last++;
+  return [times[first], times[last]];
+}

@@ -96,13 +96,14 @@ export function pacedResult(
       },
       acted,
       with: step.with ?? 'node',
-      price: priceOf(track, after, paced),
-      bends: bendsOf(after),
     },
+    price: priceOf(track, after, paced),
+    bends: bendsOf(after),
   };
 }
 
-function plainTrack(track: RotationTrack, paced: Curve, keys: readonly NewKey[]): RotationTrack {
+/** A track with keys of one value each: old ones as they are stored, others read off the curve. */
+export function plainTrack(track: RotationTrack, paced: Curve, keys: readonly NewKey[]): RotationTrack {
   const size = VALUES_PER_KEY[track.interpolation];
   const values = new Float64Array(size * keys.length);
   let before: Float64Array | undefined;
@@ -117,7 +118,8 @@ function plainTrack(track: RotationTrack, paced: Curve, keys: readonly NewKey[])
   return replaceTrack(track, { times, values, breaks: breaksOf(track, keys) });
 }
 
-function cubicTrack(
+/** A CUBICSPLINE track with the curve's exact tangents at every key that plays in the span. */
+export function cubicTrack(
   track: RotationTrack,
   span: Span,
   paced: PacedCurve,
@@ -171,7 +173,12 @@ function breaksOf(track: RotationTrack, keys: readonly NewKey[]): number[] {
   return keys.flatMap(({ old }, key) => (old !== undefined && broken.has(old) ? [key] : []));
 }
 
-function priceOf(before: RotationTrack, after: RotationTrack, paced: Pick<Curve, 'orientation'>): Price {
+/** What storing costs, against the curve that was wanted. */
+export function priceOf(
+  before: RotationTrack,
+  after: RotationTrack,
+  paced: Pick<Curve, 'orientation'>,
+): Price {
   const stored = playAs(after, 'as-written');
   const { times } = after;
   const [p, q] = [new Float64Array(4), new Float64Array(4)];
