@@ -11,6 +11,8 @@ export interface FileInHand {
   readonly siblings: Siblings;
   /** Where it is on disk. */
   readonly path: string;
+  /** Whether it is there still as it was opened. */
+  isUnchanged(): Promise<boolean>;
 }
 
 /**
@@ -35,7 +37,8 @@ export async function withFile<T>(
       sibling: (uri) => siblings.open(uri),
       table,
     };
-    return await work({ opened: await openFile(source, options), options, siblings, path });
+    const opened = await openFile(source, options);
+    return await work({ opened, options, siblings, path, isUnchanged: () => source.isUnchanged() });
   } finally {
     await Promise.all([source.close(), siblings.close()]);
   }

@@ -14,9 +14,10 @@ import {
 import { parseJobCard, verbNamed } from '@slewcurve/mend';
 import type { CommandIo } from '../command-io.js';
 import { EXIT } from '../exit-code.js';
-import { writeOut } from '../files/write-out.js';
+import { assertNoInput, writeOut } from '../files/write-out.js';
 import { writeWhole } from '../files/write-whole.js';
 import type { Arguments } from '../flags.js';
+import { sayRanges } from '../say-ranges.js';
 import { oneOf, readJson, settingsOf, tableOptionsOf } from '../settings.js';
 import { withFile, type FileInHand } from '../with-file.js';
 import { undo } from './undo.js';
@@ -28,6 +29,7 @@ export async function mend(args: Arguments, io: CommandIo): Promise<number> {
     throw new SlewcurveError('usage.one-file', `slewcurve mend takes one file; got ${args.words.length}.`);
   exactlyOne(args, ['card', 'proposed', 'undo']);
   exactlyOne(args, ['o', 'in-place', 'dry-run']);
+  assertApart(args, io.cwd());
   // A verb that nobody knows would be allowed to no effect.
   for (const verb of args.values('allow')) verbNamed(verb);
   const settings = await settingsOf(args, io.cwd());
@@ -76,21 +78,31 @@ async function writeResults(
   args: Arguments,
   io: CommandIo,
 ): Promise<void> {
-  for (const range of mended.plan.ranges)
-    io.stderr.write(
-      `${file.opened.name}: bytes ${range.at} to ${range.at + range.length} become ${range.bytes.length}: ${range.what}\n`,
-    );
+  for (const line of sayRanges(file.opened.name, mended.plan.ranges)) io.stderr.write(`${line}\n`);
   if (args.given('dry-run')) return;
   const undoOut = args.value('undo-out');
-  if (undoOut !== undefined) await writeText(resolve(io.cwd(), undoOut), (await undoPlan(mended)).text);
+  if (undoOut !== undefined) await writeText(file, undoOut, (await undoPlan(mended)).text, io);
   const cardOut = args.value('card-out');
-  if (cardOut !== undefined)
-    await writeText(resolve(io.cwd(), cardOut), `${JSON.stringify(mended.card, null, 2)}\n`);
+  if (cardOut !== undefined) await writeText(file, cardOut, `${JSON.stringify(mended.card, null, 2)}\n`, io);
   await writeOut(file, mended.result, args, io);
 }
 
-async function writeText(path: string, text: string): Promise<void> {
+async function writeText(file: FileInHand, name: string, text: string, io: CommandIo): Promise<void> {
+  const path = resolve(io.cwd(), name);
+  await assertNoInput(file, path, name);
   await writeWhole(path, [new TextEncoder().encode(text)]);
+}
+
+/** @throws SlewcurveError `usage.same-output` */
+function assertApart(args: Arguments, cwd: string): void {
+  const flags = (['o', 'undo-out', 'card-out'] as const).filter((flag) => args.given(flag));
+  const paths = flags.map((flag) => resolve(cwd, args.value(flag) ?? ''));
+  const twice = paths.findIndex((path, i) => paths.indexOf(path) < i);
+  if (twice < 0) return;
+  throw new SlewcurveError(
+    'usage.same-output',
+    `--${flags[twice] ?? ''} names the file that another flag writes. Give each a name of its own.`,
+  );
 }
 
 function exactlyOne(

@@ -1,7 +1,9 @@
-import { copyFile, constants, link } from 'node:fs/promises';
+import { createReadStream } from 'node:fs';
+import { link, realpath, stat } from 'node:fs/promises';
 import { parse, join } from 'node:path';
 import { SlewcurveError } from '@slewcurve/core';
 import { messageOf, systemCode } from '../system-error.js';
+import { writeWhole } from './write-whole.js';
 
 /**
  * Keep a file's bytes under another name beside it (`walk.original.glb`, then `walk.original-2.glb`); never over anything.
@@ -10,10 +12,11 @@ import { messageOf, systemCode } from '../system-error.js';
  * @throws SlewcurveError `file.unwritable`
  */
 export async function keepOriginal(path: string): Promise<string> {
-  const { dir, name, ext } = parse(path);
+  const file = await realpath(path);
+  const { dir, name, ext } = parse(file);
   for (let n = 1; n < 1000; n++) {
     const kept = join(dir, `${name}.original${n === 1 ? '' : `-${n}`}${ext}`);
-    if (await takesName(path, kept)) return kept;
+    if (await takesName(file, kept)) return kept;
   }
   throw new SlewcurveError(
     'file.unwritable',
@@ -23,15 +26,18 @@ export async function keepOriginal(path: string): Promise<string> {
 }
 
 /** A second name for the same bytes where the disk knows such, else a copy; false where the name is taken. */
-async function takesName(path: string, kept: string): Promise<boolean> {
+async function takesName(file: string, kept: string): Promise<boolean> {
   try {
-    await link(path, kept).catch((error: unknown) => {
-      if (systemCode(error) === 'EEXIST') throw error;
-      return copyFile(path, kept, constants.COPYFILE_EXCL);
-    });
+    await link(file, kept);
     return true;
   } catch (cause) {
     if (systemCode(cause) === 'EEXIST') return false;
+  }
+  try {
+    if (await exists(kept)) return false;
+    await writeWhole(kept, createReadStream(file));
+    return true;
+  } catch (cause) {
     throw new SlewcurveError(
       'file.unwritable',
       `The original can't be kept as ${kept}: ${messageOf(cause)}`,
@@ -39,4 +45,14 @@ async function takesName(path: string, kept: string): Promise<boolean> {
       { cause },
     );
   }
+}
+
+async function exists(path: string): Promise<boolean> {
+  return stat(path).then(
+    () => true,
+    (error: unknown) => {
+      if (systemCode(error) === 'ENOENT') return false;
+      throw error;
+    },
+  );
 }

@@ -1,13 +1,11 @@
 import { realpath } from 'node:fs/promises';
-import { dirname, resolve } from 'node:path';
+import { dirname, join, resolve } from 'node:path';
 import { SlewcurveError } from '@slewcurve/core';
-import { sha256Of } from '@slewcurve/job';
 import type { Source } from '@slewcurve/formats';
 import type { CommandIo } from '../command-io.js';
 import type { Arguments } from '../flags.js';
 import type { FileInHand } from '../with-file.js';
 import { copyMissingSiblings } from './copy-siblings.js';
-import { fileSource } from './file-source.js';
 import { keepOriginal } from './keep-original.js';
 import { writeWhole } from './write-whole.js';
 
@@ -27,21 +25,40 @@ export async function writeOut(
 ): Promise<void> {
   const out = args.value('o');
   if (out === undefined) {
-    await assertUnchanged(file);
-    io.stderr.write(`original kept as ${await keepOriginal(file.path)}\n`);
-    await writeWhole(file.path, slicesOf(result));
+    await writeWhole(file.path, slicesOf(result), async () => {
+      await assertUnchanged(file);
+      io.stderr.write(`original kept as ${await keepOriginal(file.path)}\n`);
+    });
     return;
   }
   const path = resolve(io.cwd(), out);
+  await assertNoInput(file, path, out);
+  // The new file is made of ranges of the old one, so that one must be what it was.
+  await writeWhole(path, slicesOf(result), () => assertUnchanged(file));
+  for (const copied of await copyMissingSiblings(file, dirname(path)))
+    io.stderr.write(`copied beside it: ${copied}\n`);
+}
+
+/**
+ * Nothing is written over what is read: the file and the files that it refers to.
+ *
+ * @param shown the path as it was typed
+ * @throws SlewcurveError `mend.over-input`
+ */
+export async function assertNoInput(file: FileInHand, path: string, shown: string): Promise<void> {
   if (await isSameFile(path, file.path))
     throw new SlewcurveError(
       'mend.over-input',
-      `${out} is the file itself. Use --in-place to write over it and keep the original, or name another file.`,
-      { file: out },
+      `${shown} is the file itself. Use --in-place to write over it and keep the original, or name another file.`,
+      { file: shown },
     );
-  await writeWhole(path, slicesOf(result));
-  for (const copied of await copyMissingSiblings(file, dirname(path)))
-    io.stderr.write(`copied beside it: ${copied}\n`);
+  for (const uri of file.siblings.opened)
+    if (await isSameFile(path, join(dirname(file.path), uri)))
+      throw new SlewcurveError(
+        'mend.over-input',
+        `${shown} holds data of ${file.opened.name}. Name another file.`,
+        { file: shown },
+      );
 }
 
 async function* slicesOf(source: Source): AsyncIterable<Uint8Array> {
@@ -57,23 +74,12 @@ function realPath(path: string): Promise<string> {
   return realpath(path).catch(() => path);
 }
 
-/** The name on disk must still hold the bytes that were opened. */
+/** The name on disk must still hold what was opened. */
 async function assertUnchanged(file: FileInHand): Promise<void> {
-  const now = await fileSource(file.path);
-  try {
-    if (
-      now.size === file.opened.source.size &&
-      (await sha256Of(now)) === (await sha256Of(file.opened.source))
-    )
-      return;
-  } finally {
-    await now.close();
-  }
+  if (await file.isUnchanged()) return;
   throw new SlewcurveError(
     'file.changed',
     `${file.opened.name} was changed by somebody else meanwhile; nothing was written. Run it again.`,
-    {
-      file: file.opened.name,
-    },
+    { file: file.opened.name },
   );
 }
