@@ -23,6 +23,15 @@ describe('VERBS', () => {
       'there and back',
       'ease through',
       'whole turns',
+      'sort times',
+      're-time to grid',
+      're-grid',
+      'convert',
+      'set tangents',
+      'unwrap',
+      'restate',
+      'change space',
+      'mirror',
     ]);
     expect(new Set(VERBS.map(({ opening }) => opening)).size).toBe(VERBS.length);
     for (const verb of VERBS) {
@@ -36,6 +45,9 @@ describe('VERBS', () => {
       'lift out',
       'bridge',
       'normalise',
+      'sort times',
+      're-time to grid',
+      'unwrap',
     ]);
   });
 
@@ -51,6 +63,10 @@ describe('VERBS', () => {
     ['pause', 'hold'],
     ['speed limit', 'cap'],
     ['elbow', 'ease through'],
+    ['duplicate keys', 'sort times'],
+    ['resample', 're-grid'],
+    ['local', 'change space'],
+    ['Z up', 'restate'],
   ])('asks of %j whether %j is meant', (name, meant) => {
     expect(codeOf(() => verbNamed(name))).toBe('card.unknown-verb');
     expect(() => verbNamed(name)).toThrow(`Did you mean "${meant}"?`);

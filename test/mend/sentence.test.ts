@@ -47,6 +47,21 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     ends: fc.constantFrom('same' as const, 'run' as const),
     with: fc.constantFrom('node' as const, 'track' as const, 'clip' as const),
     store: fc.constantFrom('move' as const, 'frames' as const, 'cubic' as const),
+    axes: fc.constantFrom('x z -y', '-z -x y', 'x y -z'),
+    components: fc.constantFrom('wxyz', 'zyxw'),
+    angles: fc.constantFrom('degrees' as const, 'radians' as const),
+    space: fc.constantFrom('world' as const, 'parent' as const),
+    normal: fc.constantFrom('x' as const, 'y' as const, 'z' as const),
+    pairs: fc.array(fc.tuple(fc.string({ minLength: 1 }), fc.string({ minLength: 1 })), {
+      minLength: 1,
+      maxLength: 3,
+    }),
+    interpolation: fc.constantFrom('LINEAR' as const, 'CUBICSPLINE' as const),
+    within: seconds,
+    fps: seconds,
+    source: seconds,
+    playback: fc.constantFrom('as-written' as const, 'raw-chord' as const, 'chord' as const),
+    tangents: fc.constantFrom('in' as const, 'out' as const),
   };
   const read = Object.entries(optional).filter(([key]) => verb.reads.some((name) => name === key));
   return fc.record(

@@ -44,6 +44,7 @@ export { swing, twist, twistAngle } from './quaternion/swing-twist.js';
 export { turnAboutOwn, turnAboutParent, turnAboutWorld } from './quaternion/turn-about.js';
 export { turnBetween } from './quaternion/turn-between.js';
 export { alignSigns, signChanges, type AlignedTrack, type AlignSignsOptions } from './track/align-signs.js';
+export { exactRate } from './time/exact-rate.js';
 export { findSegment } from './track/find-segment.js';
 export { FRAME_RATES, frameGrid } from './track/frame-grid.js';
 export { keyOrientation } from './track/key-orientation.js';
@@ -70,6 +71,7 @@ export {
 export { cumulativeHermite } from './curve/cumulative-hermite.js';
 export { playAs } from './playback/play-as.js';
 export { PLAYBACKS } from './playback/registry.js';
+export { chartToRate, rateToChart } from './curve/chart-rate.js';
 export type { KeyRates } from './curve/key-rate.js';
 export { nestedBezier } from './curve/nested-bezier.js';
 export {
@@ -91,6 +93,7 @@ export { dimensionlessJerk, logDimensionlessJerk } from './measure/dimensionless
 export { jerk, measureJerk, type JerkMeasures } from './measure/jerk.js';
 export { panPixelsPerFrame, panWidthsPerSecond, sweepRate } from './measure/pan-speed.js';
 export { pathEfficiency } from './measure/path-efficiency.js';
+export { keyGrain } from './measure/key-grain.js';
 export { meanRate, ratePercentile } from './measure/rate-percentile.js';
 export { spectralArcLength, type SpectralArcLengthOptions } from './measure/spectral-arc-length.js';
 export { speedProfile } from './measure/speed-profile.js';
@@ -99,12 +102,12 @@ export type { Limits } from './pace/capped-clock.js';
 export type { DrawnSpeed } from './pace/drawn-profile.js';
 export type { Ease } from './pace/ease.js';
 export { EASES, type EaseName } from './pace/eases.js';
+export { letAngleGo, type FreedCurve, type FreePress } from './pace/let-angle-go.js';
 export { pace, type PacedCurve, type PaceLaw } from './pace/pace.js';
+export type { AddedSpeed } from './pace/pressed-motion.js';
 export { rampEase, type Ramps } from './pace/ramp-ease.js';
 export { retimedCurve } from './pace/retimed-curve.js';
-export { letAngleGo, type FreedCurve, type FreePress } from './pace/let-angle-go.js';
 export type { PaceAt, Retiming } from './pace/retiming.js';
-export type { AddedSpeed } from './pace/pressed-motion.js';
 export type { Press } from './pace/shaped-speed.js';
 export type { Span } from './pace/span-retiming.js';
 export { type TurnedAngle, turnedAngle } from './pace/turned-angle.js';

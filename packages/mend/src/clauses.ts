@@ -1,3 +1,4 @@
+import { PLAYBACKS } from '@slewcurve/core';
 import type { Step } from './step.js';
 
 /** A step's keys that a sentence says at its end, one clause each. `verb`, `clip`, `track` and `keys` have places of their own. */
@@ -12,6 +13,8 @@ interface Clause {
 }
 
 const NUMBER = String.raw`(-?\d+(?:\.\d+)?(?:e[+-]?\d+)?)`;
+/** A JSON string. */
+const TEXT = String.raw`"(?:[^"\\]|\\.)*"`;
 const KEYS = String.raw`keys? (\d+(?:, \d+)*(?: and \d+)?)`;
 
 const STORE_WORDS: Readonly<Record<NonNullable<Step['store']>, string>> = {
@@ -20,15 +23,15 @@ const STORE_WORDS: Readonly<Record<NonNullable<Step['store']>, string>> = {
   cubic: 'as cubics',
 };
 
-/** In the order in which a sentence has them. */
-export const CLAUSES: readonly Clause[] = [
-  {
 const ENDS_WORDS: Readonly<Record<NonNullable<Step['ends']>, string>> = {
   same: 'with the same ends',
   run: 'letting time run',
   go: 'letting angle go and re-seating what follows',
 };
 
+/** In the order in which a sentence has them. */
+export const CLAUSES: readonly Clause[] = [
+  {
     key: 'steps',
     say: ({ steps }) => `over ${steps} ${steps === 1 ? 'step' : 'steps'}`,
     pattern: /^, over (\d+) steps?/,
@@ -94,6 +97,79 @@ const ENDS_WORDS: Readonly<Record<NonNullable<Step['ends']>, string>> = {
     say: ({ acceleration = 0 }) => `to at most ${sayNumber(acceleration)} deg/s²`,
     pattern: new RegExp(`^, to at most ${NUMBER} deg/s²`),
     read: ([acceleration]) => ({ acceleration: Number(acceleration) }),
+  },
+  {
+    key: 'axes',
+    say: ({ axes }) => `in axes ${axes}`,
+    pattern: /^, in axes (-?[xyz] -?[xyz] -?[xyz])/,
+    read: ([axes]) => ({ axes }),
+  },
+  {
+    key: 'components',
+    say: ({ components }) => `with components ${components}`,
+    pattern: /^, with components ([xyzw]{4})/,
+    read: ([components]) => ({ components }),
+  },
+  {
+    key: 'angles',
+    say: ({ angles }) => `with angles in ${angles}`,
+    pattern: /^, with angles in (degrees|radians)/,
+    read: ([angles]) => ({ angles: angles === 'degrees' ? 'degrees' : 'radians' }),
+  },
+  {
+    key: 'space',
+    say: ({ space }) => (space === 'world' ? "into the world's space" : "into its parent's space"),
+    pattern: /^, into (the world's|its parent's) space/,
+    read: ([whose]) => ({ space: whose === "the world's" ? 'world' : 'parent' }),
+  },
+  {
+    key: 'normal',
+    say: ({ normal }) => `across ${normal}`,
+    pattern: /^, across (x|y|z)(?![^,])/,
+    read: ([normal]) => ({ normal: normal === 'x' ? 'x' : normal === 'y' ? 'y' : 'z' }),
+  },
+  {
+    key: 'pairs',
+    say: ({ pairs = [] }) =>
+      `swapping ${pairs.map((pair) => pair.map((name) => JSON.stringify(name)).join(' with ')).join(' and ')}`,
+    pattern: new RegExp(`^, swapping (${TEXT} with ${TEXT}(?: and ${TEXT} with ${TEXT})*)`),
+    read: ([pairs = '']) => ({ pairs: readPairs(pairs) }),
+  },
+  {
+    key: 'interpolation',
+    say: ({ interpolation }) => `to ${interpolation}`,
+    pattern: /^, to (LINEAR|CUBICSPLINE)/,
+    read: ([mode]) => ({ interpolation: mode === 'LINEAR' ? 'LINEAR' : 'CUBICSPLINE' }),
+  },
+  {
+    key: 'fps',
+    say: ({ fps = 0 }) => `to ${sayNumber(fps)} frames a second`,
+    pattern: new RegExp(`^, to ${NUMBER} frames a second`),
+    read: ([fps]) => ({ fps: Number(fps) }),
+  },
+  {
+    key: 'source',
+    say: ({ source = 0 }) => `from keys at ${sayNumber(source)} frames a second`,
+    pattern: new RegExp(`^, from keys at ${NUMBER} frames a second`),
+    read: ([source]) => ({ source: Number(source) }),
+  },
+  {
+    key: 'playback',
+    say: ({ playback }) => `as played by ${playback}`,
+    pattern: new RegExp(`^, as played by (${Object.keys(PLAYBACKS).join('|')})(?![a-z-])`),
+    read: ([id]) => ({ playback: Object.values(PLAYBACKS).find((playback) => playback.id === id)?.id }),
+  },
+  {
+    key: 'tangents',
+    say: ({ tangents }) => `its ${tangents}-tangents alone`,
+    pattern: /^, its (in|out)-tangents alone/,
+    read: ([side]) => ({ tangents: side === 'in' ? 'in' : 'out' }),
+  },
+  {
+    key: 'within',
+    say: ({ within = 0 }) => `within ${sayNumber(within)} degrees`,
+    pattern: new RegExp(`^, within ${NUMBER} degrees`),
+    read: ([within]) => ({ within: Number(within) }),
   },
   {
     key: 'which',
@@ -176,6 +252,11 @@ function sayKeys(keys: readonly number[]): string {
 /** The other way round: the numbers of "3, 5 and 9". */
 export function readKeys(keys: string): number[] {
   return keys.split(/, | and /).map(Number);
+}
+
+function readPairs(pairs: string): [string, string][] {
+  const names = [...pairs.matchAll(new RegExp(TEXT, 'g'))].map(([name]) => String(JSON.parse(name)));
+  return Array.from({ length: names.length / 2 }, (_, i) => [names[2 * i], names[2 * i + 1]]);
 }
 
 function readMark(mark: string): readonly [number, number] {

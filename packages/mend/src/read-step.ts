@@ -1,12 +1,12 @@
-import { SlewcurveError } from '@slewcurve/core';
+import { PLAYBACKS, type PlaybackId, SlewcurveError, axisChange } from '@slewcurve/core';
 import { verbNamed } from './registry.js';
 import type { Step } from './step.js';
 
 /** What is wrong with one value; `readKey` adds the step and the key. */
 class Fault extends Error {
   readonly code: string;
-  constructor(code: string, message: string) {
-    super(message);
+  constructor(code: string, message: string, cause?: unknown) {
+    super(message, { cause });
     this.code = code;
   }
 }
@@ -67,7 +67,42 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
       throw new Fault('card.bad-number', 'must be a whole number');
     return { turns: value };
   },
+  axes: (value) => {
+    const words = text(value);
+    try {
+      axisChange(words);
+    } catch (error) {
+      throw new Fault(
+        'card.bad-text',
+        error instanceof Error ? error.message : 'must name x, y and z',
+        error,
+      );
+    }
+    return { axes: words.trim().replace(/\s+/g, ' ') };
+  },
+  components: (value) => {
+    const letters = text(value);
+    if (!/^[xyzw]{4}$/.test(letters) || new Set(letters).size !== 4)
+      throw new Fault('card.bad-text', 'must have x, y, z and w once each, as in "wxyz"');
+    return { components: letters };
+  },
+  angles: (value) => ({ angles: oneOf(value, ['degrees', 'radians']) }),
+  space: (value) => ({ space: oneOf(value, ['world', 'parent']) }),
+  normal: (value) => ({ normal: oneOf(value, ['x', 'y', 'z']) }),
+  pairs: (value) => {
+    if (!Array.isArray(value) || value.length === 0 || !value.every(isPair))
+      throw new Fault('card.bad-text', 'must be a list of pairs of names, neither empty nor alike');
+    return { pairs: value.map(([a, b]) => [a, b] as const) };
+  },
+  interpolation: (value) => ({ interpolation: oneOf(value, ['LINEAR', 'CUBICSPLINE']) }),
+  within: (value) => ({ within: above0(value) }),
+  fps: (value) => ({ fps: above0(value) }),
+  source: (value) => ({ source: above0(value) }),
+  playback: (value) => ({ playback: oneOf(value, PLAYBACK_IDS) }),
+  tangents: (value) => ({ tangents: oneOf(value, ['in', 'out']) }),
 };
+
+const PLAYBACK_IDS: readonly PlaybackId[] = Object.values(PLAYBACKS).map(({ id }) => id);
 
 const EVERY_VERB_READS: readonly (keyof Step)[] = ['verb', 'clip', 'track', 'span', 'shoulders', 'keep'];
 
@@ -151,6 +186,12 @@ function oneOf<const T extends string>(value: unknown, words: readonly T[]): T {
 
 function isFiniteNumber(value: unknown): value is number {
   return Number.isFinite(value);
+}
+
+function isPair(value: unknown): value is readonly [string, string] {
+  if (!Array.isArray(value) || value.length !== 2) return false;
+  const [a, b]: readonly unknown[] = value;
+  return typeof a === 'string' && typeof b === 'string' && a !== '' && b !== '' && a !== b;
 }
 
 function isWhole(value: unknown): value is number {

@@ -16,6 +16,15 @@ import { shape } from './edits/shape.js';
 import { shrink, stretch } from './edits/stretch.js';
 import { thereAndBack } from './edits/there-and-back.js';
 import { wholeTurns } from './edits/whole-turns.js';
+import { changeSpace } from './edits/change-space.js';
+import { convert } from './edits/convert.js';
+import { mirror } from './edits/mirror.js';
+import { reGrid } from './edits/re-grid.js';
+import { reTimeToGrid } from './edits/re-time-to-grid.js';
+import { restate } from './edits/restate.js';
+import { setTangents } from './edits/set-tangents.js';
+import { sortTimes } from './edits/sort-times.js';
+import { unwrap } from './edits/unwrap.js';
 import { nearestWord } from './nearest-word.js';
 import { onAngles } from './on-angles.js';
 import type { Verb } from './verb.js';
@@ -40,6 +49,15 @@ export const VERBS: readonly Verb[] = Object.freeze([
   thereAndBack,
   easeThrough,
   wholeTurns,
+  sortTimes,
+  reTimeToGrid,
+  reGrid,
+  convert,
+  setTangents,
+  unwrap,
+  restate,
+  changeSpace,
+  mirror,
 ]);
 
 /**

@@ -1,3 +1,5 @@
+import type { PlaybackId } from '@slewcurve/core';
+
 /**
  * One edit, as a job card writes it (flat JSON): what to do, on which clip and track, and the verb's own numbers. Keys are
  * zero-based, times seconds of the file's own clock, angles degrees.
@@ -54,4 +56,28 @@ export interface Step {
   readonly reach?: number;
   /** set marks: pairs of an old time and the time at which what stood there is to stand, seconds, ascending. */
   readonly marks?: readonly (readonly [old: number, time: number])[];
+  /** restate: the new axes out of the old ones, as `axisChange` reads it: "x z -y". */
+  readonly axes?: string;
+  /** restate: what the four stored numbers really are, in their order; they were read as xyzw. */
+  readonly components?: string;
+  /** restate: what unit the stored angles really have; they were read in the other one. */
+  readonly angles?: 'degrees' | 'radians';
+  /** change space: in whose axes the orientations are to be written. */
+  readonly space?: 'world' | 'parent';
+  /** mirror: the axis that stands square to the mirror, in parent's axes. */
+  readonly normal?: 'x' | 'y' | 'z';
+  /** mirror: parts of names that change places, so that left takes what right does. */
+  readonly pairs?: readonly (readonly [string, string])[];
+  /** convert: how the keys are to be joined. */
+  readonly interpolation?: 'LINEAR' | 'CUBICSPLINE';
+  /** convert, re-grid: the most that the motion may differ, degrees. */
+  readonly within?: number;
+  /** re-grid, re-time to grid: frames per second. */
+  readonly fps?: number;
+  /** re-grid: frames per second of the motion before frames were repeated to fill a faster grid. */
+  readonly source?: number;
+  /** re-grid: the playback whose motion is sampled. Default as written. */
+  readonly playback?: PlaybackId;
+  /** set tangents: those that arrive at keys, or those that leave them, alone. */
+  readonly tangents?: 'in' | 'out';
 }

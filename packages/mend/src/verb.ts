@@ -94,6 +94,8 @@ export interface Verb {
   readonly keysApart: boolean;
   /** True where it puts in keys, so that later key numbers shift. */
   readonly insertsKeys: boolean;
+  /** True where keys get other times or another order, so that a format whose tracks share rows may not hold the result. */
+  readonly movesTimes?: boolean;
   /** True where it makes sense on all tracks of a file or on none. */
   readonly wholeFile?: boolean;
   /** The step in a sentence, as people read it. `parseSentence` reads it back. */
