@@ -1,4 +1,4 @@
-import { buildPyramid, habitOf, inkDensity, inkRow, keptUp, trackInk } from '@slewcurve/elements/plot';
+import { columnMaxima, habitOf, inkDensity, inkRow, keptUp, trackInk } from '@slewcurve/elements/plot';
 import * as fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
@@ -35,12 +35,13 @@ describe('the ink of a track', () => {
     const speeds = swinging();
     speeds.fill(900, 9000, 9000 + Math.round(0.35 / FRAME));
     const ink = trackInk(speeds, FRAME, 0.1);
-    expect(Math.max(...ink.greatest[0])).toBeLessThan(0.35);
+    expect(ink.darkest).toBeLessThan(0.35);
+    expect(ink.darkest).toBe(Math.max(...ink.density));
   });
 
   test('is nothing at the noise floor and below', () => {
     expect(inkDensity(0.1, 50, 0.1)).toBe(0);
-    expect(Math.max(...trackInk(new Float32Array(100), FRAME, 0.1).greatest[0])).toBe(0);
+    expect(trackInk(new Float32Array(100), FRAME, 0.1).darkest).toBe(0);
   });
 
   test('grows with speed and stays within 0 and 1', () => {
@@ -77,7 +78,33 @@ describe('the ink of a track', () => {
 
   test('an empty track has no ink', () => {
     const sheet = { width: 4, height: 2, data: new Uint8ClampedArray(32) };
-    inkRow(sheet, buildPyramid([]), 0, 2, [0, 0, 0]);
+    inkRow(sheet, trackInk([], FRAME, 0.1), 0, 2, [0, 0, 0]);
     expect(Math.max(...sheet.data)).toBe(0);
+  });
+
+  test('loses no one-bin spike at any width', () => {
+    fc.assert(
+      fc.property(
+        fc.integer({ min: 1, max: 5000 }),
+        fc.nat(),
+        fc.integer({ min: 1, max: 3000 }),
+        (length, where, width) => {
+          const values = new Float32Array(length).fill(0.25);
+          values[where % length] = 1;
+          const columns = columnMaxima(values, width);
+          expect(columns[Math.min(width - 1, Math.floor(((where % length) / length) * width))]).toBe(1);
+          expect(Math.min(...columns)).toBeGreaterThanOrEqual(0.25);
+        },
+      ),
+    );
+  });
+
+  test('draws a spike in the column where it stands', () => {
+    const values = new Float32Array(1000);
+    values[250] = 1;
+    const columns = columnMaxima(values, 100);
+    expect(columns[25]).toBe(1);
+    // The border of columns 24 and 25 lies in its bin, so both have it and the line stays joined.
+    expect([...columns].filter((value) => value > 0)).toHaveLength(2);
   });
 });

@@ -1,5 +1,4 @@
 import {
-  buildPyramid,
   countWords,
   familiesOf,
   findRows,
@@ -17,7 +16,7 @@ const row = (id: string, counts: Partial<RosterRow['counts']>, more: Partial<Ros
   clip: '1H_Melee_Attack_Chop',
   track: `rig/${id}`,
   seconds: 1.2,
-  ink: buildPyramid([0.3]),
+  ink: { density: Float32Array.of(0.3), darkest: 0.3 },
   counts: { error: 0, warning: 0, note: 0, ...counts },
   families: {},
   marks: [],
@@ -40,7 +39,11 @@ describe('the roster', () => {
   });
 
   test('ranks clean tracks by their darkest ink, and keeps the order of those that tie', () => {
-    const rows = [row('a', {}), row('b', {}, { ink: buildPyramid([0.1, 1]) }), row('c', {})];
+    const rows = [
+      row('a', {}),
+      row('b', {}, { ink: { density: Float32Array.of(0.1, 1), darkest: 1 } }),
+      row('c', {}),
+    ];
     expect(rankRows(rows, 'wrong').map(({ id }) => id)).toEqual(['b', 'a', 'c']);
     expect(rankRows(rows, 'file').map(({ id }) => id)).toEqual(['a', 'b', 'c']);
   });

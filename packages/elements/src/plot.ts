@@ -18,6 +18,7 @@ export * from './porthole/describe.js';
 export * from './porthole/play-clock.js';
 export * from './porthole/view.js';
 export * from './roster/ink.js';
+export * from './roster/inked.js';
 export * from './roster/rank.js';
 export * from './roster/roster-row.js';
 export * from './roster/window.js';

@@ -10,12 +10,13 @@ import {
 import { repeat } from 'lit/directives/repeat.js';
 import { trackName } from './chart/chart-data.js';
 import { sayCount, sayRate, saySpan } from './chart/quantity.js';
-import { drawInk, type InkPlace } from './roster/draw-ink.js';
+import { drawInk, type InkPlace, type RosterInks } from './roster/draw-ink.js';
 import { ROSTER_ORDERS, familiesOf, findRows, rankRows, type RosterOrder } from './roster/rank.js';
 import { countWords, rowWords, worstLevel, type RosterRow } from './roster/roster-row.js';
 import { rosterStyles } from './roster/roster-styles.js';
 import { rowWindow, scrollToRow, type RowWindow } from './roster/window.js';
 import { controls } from './theme/controls.js';
+import { inTurn, updateInTurn } from './theme/in-turn.js';
 import { inkOf } from './theme/ink-of.js';
 import { paper } from './theme/paper.js';
 import { valueOf } from './theme/value-of.js';
@@ -23,10 +24,12 @@ import { valueOf } from './theme/value-of.js';
 /** Rosters longer than this begin with their rows close together, so that eighty joints are seen at one look. */
 const CLOSE_FROM = 40;
 const WIDE: InkPlace = { width: 0, pitch: 30, top: 7, height: 12 };
-const CLOSE: InkPlace = { width: 0, pitch: 15, top: 1, height: 10 };
+const CLOSE: InkPlace = { width: 0, pitch: 15, top: 0, height: 9 };
 const NARROW: InkPlace = { width: 0, pitch: 52, top: 29, height: 12 };
 /** Width below which a row takes two lines, px; the styles' own 32rem. */
 const TWO_LINES = 512;
+/** Milliseconds of drawing ink in one go. */
+const DRAWING_MS = 8;
 
 /**
  * Roster: all tracks of all files, one ink row each, ranked by what is wrong. How dark the ink is says how fast the track turns
@@ -70,7 +73,11 @@ export class SlewRoster extends LitElement {
   declare private inkWidth: number;
   declare private narrow: boolean;
   private shown: readonly RosterRow[] = [];
-  private readonly resize = new ResizeObserver(() => this.measure());
+  private inkLeft = 0;
+  /** Read once: asking for a colour makes the browser work out all styles. */
+  private inks: RosterInks | undefined;
+  // Not within the observer's own step: what follows from a size may change another.
+  private readonly resize = new ResizeObserver(() => requestAnimationFrame(() => this.measure()));
 
   constructor() {
     super();
@@ -112,7 +119,14 @@ export class SlewRoster extends LitElement {
   }
 
   /** Draws the ink again, after the page changed its own inks or scheme. */
-  readonly redraw = (): void => this.requestUpdate();
+  readonly redraw = (): void => {
+    this.inks = undefined;
+    this.requestUpdate();
+  };
+
+  protected override scheduleUpdate(): Promise<void> {
+    return updateInTurn(() => this.performUpdate());
+  }
 
   private get place(): InkPlace {
     if (this.narrow) return { ...NARROW, width: this.inkWidth };
@@ -210,6 +224,7 @@ export class SlewRoster extends LitElement {
         @focus=${this.entered}
       >
         <div class="list" role="presentation" .style=${`height:${this.shown.length * pitch}px`}>
+          <div class="gauge" role="presentation"><span></span><span class="ink"></span></div>
           <canvas aria-hidden="true" .style=${`top:${first * pitch}px`}></canvas>
           ${repeat(
             this.shown.slice(first, last),
@@ -250,38 +265,41 @@ export class SlewRoster extends LitElement {
     return `row-${id}`;
   }
 
-  protected override updated(): void {
-    this.measure();
+  protected override updated(changed: PropertyValues<this>): void {
+    // Measuring lays the page out; later sizes come from the observer, after the browser has done that by itself.
+    if (this.inkWidth === 0 || changed.has('spacing')) this.measure();
+    for (const part of this.renderRoot.querySelectorAll('.scroll, .gauge .ink')) this.resize.observe(part);
     this.draw();
   }
 
   private measure(): void {
     this.narrow = this.clientWidth > 0 && this.clientWidth < TWO_LINES;
-    const ink = this.renderRoot.querySelector<HTMLElement>('.option .ink');
+    const ink = this.renderRoot.querySelector<HTMLElement>('.gauge .ink');
     const scroll = this.renderRoot.querySelector('.scroll');
     if (!ink || !scroll) return;
     this.inkWidth = ink.clientWidth;
+    this.inkLeft = ink.offsetLeft;
     this.height = scroll.clientHeight;
   }
 
-  private draw(): void {
+  private readonly draw = (): void => {
     const canvas = this.renderRoot.querySelector('canvas');
-    const ink = this.renderRoot.querySelector<HTMLElement>('.option .ink');
     const swatch = this.renderRoot.querySelector<HTMLElement>('.swatch');
-    if (!canvas || !ink || !swatch || this.inkWidth === 0) return;
+    if (!canvas || !swatch || this.inkWidth === 0) return;
     const { first, last } = this.window;
     const { place } = this;
-    canvas.style.left = `${ink.offsetLeft}px`;
+    canvas.style.left = `${this.inkLeft}px`;
     canvas.style.width = `${place.width}px`;
     canvas.style.height = `${(last - first) * place.pitch}px`;
-    drawInk(canvas, this.shown.slice(first, last), place, {
+    this.inks ??= {
       trace: inkOf(swatch, '--_trace'),
       limit: inkOf(swatch, '--_limit'),
       caution: inkOf(swatch, '--_caution'),
       soft: inkOf(swatch, '--_soft'),
       hairline: inkOf(swatch, '--_hairline'),
-    });
-  }
+    };
+    if (!drawInk(canvas, this.shown.slice(first, last), place, this.inks, DRAWING_MS)) inTurn(this.draw);
+  };
 
   private readonly scrolled = (): void => {
     this.top = this.renderRoot.querySelector('.scroll')?.scrollTop ?? 0;

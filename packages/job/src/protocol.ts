@@ -30,10 +30,10 @@ export interface TrackAnswer {
 }
 
 /** What became of a card: the tracks that read otherwise than under the card before, and each step's proof. */
-export interface CardAnswer {
+export interface CardAnswer<Row = RosterRow> {
   readonly tracks: readonly {
     readonly report: TrackReport;
-    readonly row: RosterRow;
+    readonly row: Row;
     readonly findings: readonly Finding[];
   }[];
   readonly steps: readonly StepReport[];
@@ -51,8 +51,8 @@ export interface BytesAnswer {
   readonly card: JobCard;
 }
 
-/** Everything that can be asked of the desk, and what it answers. `Blob` is what the caller has for bytes. */
-export interface Asks<Blob> {
+/** Everything that can be asked of the desk, and what it answers. `Blob` is what the caller has for bytes, `Row` what it makes of a row. */
+export interface Asks<Blob, Row = RosterRow> {
   open: {
     ask: { file: string; name: string; blob: Blob; siblings: Readonly<Record<string, Blob>> };
     answer: OpenedAnswer;
@@ -61,7 +61,7 @@ export interface Asks<Blob> {
   /** Rows are told as they come; the answer is the whole report. */
   survey: { ask: { file: string; settings: JobSettings }; answer: FileReport };
   track: { ask: { file: string; clip: string; track: string }; answer: TrackAnswer };
-  card: { ask: { file: string; steps: readonly Step[] }; answer: CardAnswer };
+  card: { ask: { file: string; steps: readonly Step[] }; answer: CardAnswer<Row> };
   propose: {
     ask: { file: string; allow: readonly string[] };
     answer: { steps: readonly Step[]; declined: readonly { step: Step; why: string }[] };
@@ -85,7 +85,7 @@ export type ToDesk<Blob> =
   | { readonly id: number; readonly name: 'stop' };
 
 /** From the desk, always about the ask of that id. */
-export type FromDesk =
+export type FromDesk<Row = RosterRow> =
   | {
       readonly id: number;
       readonly told: 'progress';
@@ -93,6 +93,6 @@ export type FromDesk =
       readonly total: number;
       readonly what: string;
     }
-  | { readonly id: number; readonly told: 'row'; readonly row: RosterRow }
-  | { readonly id: number; readonly told: 'answer'; readonly answer: Asks<unknown>[AskName]['answer'] }
+  | { readonly id: number; readonly told: 'row'; readonly row: Row }
+  | { readonly id: number; readonly told: 'answer'; readonly answer: Asks<unknown, Row>[AskName]['answer'] }
   | { readonly id: number; readonly told: 'error'; readonly code: string; readonly message: string };

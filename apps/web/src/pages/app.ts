@@ -23,7 +23,7 @@ const PAGES: readonly { readonly page: PageName; readonly says: string }[] = [
   { page: 'docket', says: 'Docket: report' },
 ];
 
-/** Milliseconds. */
+/** Milliseconds: while rows arrive, the roster is drawn anew some times a second. */
 const DRAWN_EVERY = 150;
 
 /** The whole page: files, and the words at its head that lead to roster, chart and docket. */
@@ -49,6 +49,7 @@ export class SlewApp extends LitElement {
   declare private over: boolean;
   private readonly session = new Session();
   private drawnAt = 0;
+  private later: ReturnType<typeof setTimeout> | undefined;
   /** Somebody chose the track; the page chooses no other. */
   private byHand = false;
 
@@ -97,15 +98,19 @@ export class SlewApp extends LitElement {
     if (JSON.stringify(next) !== JSON.stringify(this.chosen)) this.chosen = next;
   }
 
-  /** Rows that are told of, a few at a time: while a survey runs the roster is drawn anew some times a second. */
   private drawRows(): void {
-    const { rows, more } = rosterRows(this.files);
-    if (more) requestAnimationFrame(() => this.drawRows());
-    const now = performance.now();
-    if (more && now - this.drawnAt < DRAWN_EVERY) return;
+    const early = this.drawnAt + DRAWN_EVERY - performance.now();
+    if (early > 0) {
+      this.later ??= setTimeout(() => {
+        this.later = undefined;
+        this.follow();
+      }, early);
+      return;
+    }
+    const rows = rosterRows(this.files);
     if (rows.length === this.rows.length && rows.every((row, i) => row === this.rows[i])) return;
     this.rows = rows;
-    this.drawnAt = now;
+    this.drawnAt = performance.now();
   }
 
   /** Drawn before the survey is through. */

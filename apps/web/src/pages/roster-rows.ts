@@ -1,7 +1,6 @@
-import type { RosterRow as JobRow } from '@slewcurve/job';
-import { trackInk, type Pyramid, type RosterRow } from '@slewcurve/elements/plot';
+import type { RosterRow } from '@slewcurve/elements/plot';
 import type { Finding } from '@slewcurve/survey';
-import type { FileWork } from '../session/file-work.js';
+import type { FileWork, InkedRow } from '../session/file-work.js';
 
 /** A track among all open files. */
 export interface ChosenTrack {
@@ -10,22 +9,11 @@ export interface ChosenTrack {
   readonly track: string;
 }
 
-/** Milliseconds of inking between two pictures. */
-const INKING_MS = 8;
-
-/** Rows of the roster over all open files, and whether there are more that are not inked yet: the next picture has them. */
-export function rosterRows(files: readonly FileWork[]): {
-  readonly rows: RosterRow[];
-  readonly more: boolean;
-} {
-  const until = performance.now() + INKING_MS;
-  const rows: RosterRow[] = [];
-  let more = false;
-  for (const file of files)
-    for (const [key, row] of file.rows)
-      if (made.has(row) || performance.now() < until) rows.push(rowOf(file, row, file.findings.get(key)));
-      else more = true;
-  return { rows, more };
+/** Rows of the roster over all open files. A row of which nothing changed is the same object. */
+export function rosterRows(files: readonly FileWork[]): RosterRow[] {
+  return files.flatMap((file) =>
+    [...file.rows].map(([key, row]) => rowOf(file, row, file.findings.get(key))),
+  );
 }
 
 export function rowId({ file, clip, track }: ChosenTrack): string {
@@ -45,19 +33,17 @@ interface Made {
 }
 
 // A survey changes the roster many times a second, and one row at a time.
-const made = new WeakMap<JobRow, Made>();
+const made = new WeakMap<InkedRow, Made>();
 
-function rowOf(file: FileWork, row: JobRow, findings: readonly Finding[] | undefined): RosterRow {
+function rowOf(file: FileWork, row: InkedRow, findings: readonly Finding[] | undefined): RosterRow {
   const known = made.get(row);
   if (known && known.of === findings) return known.row;
-  const ink =
-    known?.row.ink ?? trackInk(row.columns, (row.end - row.start) / row.columns.length, row.noiseFloor);
-  const fresh = rosterRow(file, row, ink, findings ?? []);
+  const fresh = rosterRow(file, row, findings ?? []);
   made.set(row, { of: findings, row: fresh });
   return fresh;
 }
 
-function rosterRow(file: FileWork, row: JobRow, ink: Pyramid, findings: readonly Finding[]): RosterRow {
+function rosterRow(file: FileWork, row: InkedRow, findings: readonly Finding[]): RosterRow {
   const places = findings.flatMap((finding) => finding.occurrences);
   const count = (level: string): number => findings.filter((finding) => finding.level === level).length;
   return {
@@ -66,7 +52,7 @@ function rosterRow(file: FileWork, row: JobRow, ink: Pyramid, findings: readonly
     clip: row.clip,
     track: row.track,
     seconds: row.end - row.start,
-    ink,
+    ink: row.ink,
     counts: { error: count('error'), warning: count('warning'), note: count('note') },
     families: familiesOf(findings),
     marks: places.map(({ time, level }) => ({ time: time - row.start, level })),

@@ -1,4 +1,5 @@
-import type { AskName, Asks, FromDesk, RosterRow, ToDesk } from '@slewcurve/job';
+import type { AskName, Asks, FromDesk, ToDesk } from '@slewcurve/job';
+import type { InkedRow } from './file-work.js';
 
 /** How far an ask is. */
 export interface Progress {
@@ -10,7 +11,7 @@ export interface Progress {
 /** What an ask may be given besides its words. */
 export interface AskOptions {
   readonly onProgress?: (progress: Progress) => void;
-  readonly onRow?: (row: RosterRow) => void;
+  readonly onRow?: (row: InkedRow) => void;
   /** Stops the ask. */
   readonly signal?: AbortSignal;
 }
@@ -24,7 +25,7 @@ export class DeskError extends Error {
   }
 }
 
-type Answer = Asks<Blob>[AskName]['answer'];
+type Answer = Asks<Blob, InkedRow>[AskName]['answer'];
 
 interface Waiting {
   readonly options: AskOptions;
@@ -54,7 +55,7 @@ export class DeskClient extends EventTarget {
     name: Name,
     ask: Asks<Blob>[Name]['ask'],
     options: AskOptions = {},
-  ): Promise<Asks<Blob>[Name]['answer']> {
+  ): Promise<Asks<Blob, InkedRow>[Name]['answer']> {
     const id = this.#next++;
     options.signal?.addEventListener('abort', () => this.#send({ id, name: 'stop' }));
     const answer = new Promise<Answer>((resolve, reject) => {
@@ -72,11 +73,13 @@ export class DeskClient extends EventTarget {
 
   #listen(): void {
     this.#heard = performance.now();
-    this.#worker.addEventListener('message', ({ data }: MessageEvent<FromDesk>) => this.#hear(data));
+    this.#worker.addEventListener('message', ({ data }: MessageEvent<FromDesk<InkedRow>>) =>
+      this.#hear(data),
+    );
     this.#worker.addEventListener('error', () => this.#lose());
   }
 
-  #hear(message: FromDesk): void {
+  #hear(message: FromDesk<InkedRow>): void {
     this.#heard = performance.now();
     const waiting = this.#waiting.get(message.id);
     if (!waiting) return;

@@ -1,7 +1,11 @@
+import type { Inked } from '@slewcurve/elements/plot';
 import type { OpenedAnswer, FileReport, RosterRow, StepReport } from '@slewcurve/job';
 import type { Finding } from '@slewcurve/survey';
 import type { CardHistory } from './card-history.js';
 import type { Progress } from './desk-client.js';
+
+/** A track's row with its ink, as the worker makes it. */
+export type InkedRow = Inked<RosterRow>;
 
 /** Everything that the page holds of one file. A new object for every change. */
 export interface FileWork {
@@ -18,7 +22,7 @@ export interface FileWork {
   readonly opened?: OpenedAnswer;
   readonly report?: FileReport;
   /** By `trackKey`, as the job card leaves the tracks. */
-  readonly rows: ReadonlyMap<string, RosterRow>;
+  readonly rows: ReadonlyMap<string, InkedRow>;
   readonly findings: ReadonlyMap<string, readonly Finding[]>;
   readonly history: CardHistory;
   readonly proofs: readonly StepReport[];

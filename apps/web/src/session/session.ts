@@ -1,6 +1,7 @@
 import type { PlaybackId } from '@slewcurve/core';
 import { kestrelPointRules, type CardAnswer, type JobSettings, type TrackAnswer } from '@slewcurve/job';
 import type { Step } from '@slewcurve/mend';
+import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { NO_HOUSE_RULES, type Finding } from '@slewcurve/survey';
 import type { ChosenFile } from '../files/chosen-file.js';
 import { mendedName, saveCopy, saveInPlace, type Saved } from '../files/save-file.js';
@@ -16,7 +17,7 @@ import {
   type CardLine,
 } from './card-history.js';
 import { DeskClient, DeskError } from './desk-client.js';
-import { trackKey, type FileWork } from './file-work.js';
+import { trackKey, type FileWork, type InkedRow } from './file-work.js';
 import { keepWork, type SavedWork } from './recovery.js';
 
 /** The page's work: files, their surveys and job cards. Fires `change` once a picture at most, `notice` where there is something to say. */
@@ -245,7 +246,7 @@ export class Session extends EventTarget {
     }
   }
 
-  #applyAnswer(id: string, { tracks, steps, raised }: CardAnswer): void {
+  #applyAnswer(id: string, { tracks, steps, raised }: CardAnswer<InkedRow>): void {
     const file = this.file(id);
     if (!file) return;
     const rows = new Map(file.rows);
@@ -314,7 +315,7 @@ function settingsOf(file: FileWork | undefined, settings: JobSettings): JobSetti
 /** Pages out of sight draw no pictures, and must go on all the same. */
 function inNextPicture(work: () => void): void {
   if (document.hidden) setTimeout(work);
-  else requestAnimationFrame(work);
+  else requestAnimationFrame(() => inTurn(work));
 }
 
 function newWork(id: string, file: Omit<ChosenFile, 'blob'> & { readonly blob?: Blob }): FileWork {

@@ -7,18 +7,23 @@ import {
   type AskName,
   type Asks,
   type FromDesk,
+  type RosterRow,
   type ToDesk,
   type Watch,
 } from '@slewcurve/job';
 import { bufferSource } from '@slewcurve/formats';
+import { inked, type Inked } from '@slewcurve/elements/plot';
 
 // The job desk in a worker: bytes, tracks and surveys live here, and the page stays free to draw.
 
+type InkedRow = Inked<RosterRow>;
 type Ask<Name extends AskName> = Asks<Blob>[Name]['ask'];
-type Answer<Name extends AskName> = Asks<Blob>[Name]['answer'];
+type Answer<Name extends AskName> = Asks<Blob, InkedRow>[Name]['answer'];
 
 /** Milliseconds of work between two looks at what else was asked. */
 const SLICE_MS = 12;
+/** Milliseconds between two words on how far the work is: nobody reads faster. */
+const TOLD_EVERY_MS = 100;
 
 const here = desk();
 const stopped = new Set<number>();
@@ -29,9 +34,15 @@ const answers: {
   open: ({ file, name, blob, siblings }) => here.open(file, blobSource(blob), name, siblingIn(siblings)),
   'open-demo': ({ file }) => here.open(file, bufferSource(kestrelPoint()), 'kestrel-point.glb'),
   survey: ({ file, settings }, watch, id) =>
-    here.survey(file, settings, watch, (row) => tell({ id, told: 'row', row }, transferable(row.columns))),
+    here.survey(file, settings, watch, (told) => {
+      const row = inked(told);
+      tell({ id, told: 'row', row }, inkOf(row));
+    }),
   track: ({ file, clip, track }) => here.track(file, clip, track),
-  card: ({ file, steps }, watch) => here.card(file, steps, watch),
+  card: async ({ file, steps }, watch) => {
+    const made = await here.card(file, steps, watch);
+    return { ...made, tracks: made.tracks.map((track) => ({ ...track, row: inked(track.row) })) };
+  },
   propose: ({ file, allow }) => here.propose(file, allow),
   bytes: ({ file }, watch) => here.bytes(file, watch),
   hash: async ({ blob }, watch) => ({ size: blob.size, sha256: await sha256Of(blobSource(blob), watch) }),
@@ -62,13 +73,15 @@ async function answer<Name extends AskName>(id: number, name: Name, ask: Ask<Nam
 
 function watchOf(id: number): Watch {
   let since = performance.now();
+  let told = 0;
   return {
     get stopped() {
       return stopped.has(id);
     },
     report(done, total, what) {
-      if (performance.now() - since >= SLICE_MS || done === total)
-        tell({ id, told: 'progress', done, total, what });
+      if (performance.now() - told < TOLD_EVERY_MS && done < total) return;
+      told = performance.now();
+      tell({ id, told: 'progress', done, total, what });
     },
     async pause() {
       if (performance.now() - since < SLICE_MS) return;
@@ -91,7 +104,7 @@ function nextTurn(): Promise<void> {
   });
 }
 
-function tell(message: FromDesk, transfer: Transferable[] = []): void {
+function tell(message: FromDesk<InkedRow>, transfer: Transferable[] = []): void {
   postMessage(message, { transfer });
 }
 
@@ -104,11 +117,12 @@ function buffersOf(made: Answer<AskName>): Transferable[] {
       track.values.buffer,
     ]);
   if ('bytes' in made) return [made.bytes.buffer];
+  if ('raised' in made) return made.tracks.flatMap(({ row }) => inkOf(row));
   return [];
 }
 
-function transferable(numbers: ArrayBufferView): ArrayBuffer[] {
-  return numbers.buffer instanceof ArrayBuffer ? [numbers.buffer] : [];
+function inkOf({ ink }: InkedRow): Transferable[] {
+  return ink.density.buffer instanceof ArrayBuffer ? [ink.density.buffer] : [];
 }
 
 function blobSource(blob: Blob): Source {

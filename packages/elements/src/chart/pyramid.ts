@@ -57,20 +57,6 @@ export function queryPyramid(pyramid: Pyramid, from: number, to: number): Extrem
   return { greatest, least };
 }
 
-/**
- * Greatest number of each of `out.length` equal columns over the numbers from `from` to `to` (fractions allowed: `to` is the end,
- * not counted in where it is whole). Columns share the bin that their border falls in, so no single number is ever lost.
- */
-export function columnMaxima(pyramid: Pyramid, from: number, to: number, out: Float32Array): Float32Array {
-  const step = (to - from) / out.length;
-  for (let column = 0; column < out.length; column++) {
-    const first = Math.floor(from + column * step);
-    const last = Math.max(first, Math.min(Math.ceil(to) - 1, Math.floor(from + (column + 1) * step)));
-    out[column] = queryPyramid(pyramid, first, last).greatest;
-  }
-  return out;
-}
-
 function reduce(level: Float32Array, pick: (...values: number[]) => number): Float32Array {
   const above = new Float32Array(Math.ceil(level.length / FACTOR));
   for (let i = 0; i < above.length; i++) {

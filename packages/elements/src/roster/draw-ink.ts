@@ -6,7 +6,7 @@ import { worstLevel, type RosterRow } from './roster-row.js';
 /** Where the ink stands on the canvas, CSS pixels. */
 export interface InkPlace {
   readonly width: number;
-  /** Distance of two rows. */
+  /** Distance of two rows; what is drawn of a row stays within it. */
   readonly pitch: number;
   /** From a row's top to its ink, and the ink's height. */
   readonly top: number;
@@ -22,36 +22,60 @@ export interface RosterInks {
   readonly hairline: string;
 }
 
-/** Draws the ink rows and the carets of their findings; `rows` are those on screen, the first at the canvas's top. */
+/** What stands on a canvas: where and in which inks, and which row in each place. */
+interface Drawn {
+  readonly how: string;
+  readonly rows: (RosterRow | undefined)[];
+}
+
+const onCanvas = new WeakMap<HTMLCanvasElement, Drawn>();
+
+/**
+ * Draws the ink rows and the carets of their findings; `rows` are those on screen, the first at the canvas's top. Rows that stand
+ * there already are left alone. True where all is drawn; false where the milliseconds were over before: call again.
+ */
 export function drawInk(
   canvas: HTMLCanvasElement,
   rows: readonly RosterRow[],
   place: InkPlace,
   inks: RosterInks,
-): void {
+  milliseconds: number,
+): boolean {
+  const until = performance.now() + milliseconds;
   const ratio = canvas.ownerDocument.defaultView?.devicePixelRatio ?? 1;
-  const width = Math.max(1, Math.round(place.width * ratio));
-  const height = Math.max(1, Math.round(rows.length * place.pitch * ratio));
-  if (canvas.width !== width) canvas.width = width;
-  if (canvas.height !== height) canvas.height = height;
   const context = canvas.getContext('2d');
-  if (!context) return;
-  const sheet = context.createImageData(width, height);
+  if (!context) return true;
+  const width = Math.max(1, Math.round(place.width * ratio));
+  const topOf = (i: number): number => Math.round(i * place.pitch * ratio);
+  const drawn = drawnOn(canvas, width, topOf(rows.length), JSON.stringify([place, inks, ratio]));
+  const sheet = context.createImageData(width, Math.ceil(place.pitch * ratio));
   const ink = inkBytes(inks.trace);
-  rows.forEach((row, i) =>
-    inkRow(
-      sheet,
-      row.ink,
-      Math.round((i * place.pitch + place.top) * ratio),
-      Math.max(1, Math.round(place.height * ratio)),
-      ink,
-    ),
-  );
-  context.putImageData(sheet, 0, 0);
-  context.save();
-  context.scale(ratio, ratio);
-  rows.forEach((row, i) => drawMarks(context, row, i * place.pitch, place, inks));
-  context.restore();
+  for (const [i, row] of rows.entries()) {
+    if (drawn.rows[i] === row) continue;
+    if (performance.now() > until) return false;
+    drawn.rows[i] = row;
+    sheet.data.fill(0);
+    inkRow(sheet, row.ink, Math.round(place.top * ratio), Math.max(1, Math.round(place.height * ratio)), ink);
+    context.putImageData(sheet, 0, topOf(i), 0, 0, width, topOf(i + 1) - topOf(i));
+    context.save();
+    context.scale(ratio, ratio);
+    drawMarks(context, row, i * place.pitch, place, inks);
+    context.restore();
+  }
+  return true;
+}
+
+/** What stands on the canvas; nothing, where it has another size or is to look otherwise. */
+function drawnOn(canvas: HTMLCanvasElement, width: number, height: number, how: string): Drawn {
+  const known = onCanvas.get(canvas);
+  const tall = Math.max(1, height);
+  if (known?.how === how && canvas.width === width && canvas.height === tall) return known;
+  // Giving a size empties it.
+  canvas.width = width;
+  canvas.height = tall;
+  const fresh = { how, rows: [] };
+  onCanvas.set(canvas, fresh);
+  return fresh;
 }
 
 function drawMarks(
@@ -65,10 +89,10 @@ function drawMarks(
   context.fillStyle = inks.hairline;
   context.fillRect(0, foot, place.width, 1);
   if (!worstLevel(row)) return;
-  const size = Math.min(7, place.pitch - place.top - place.height + 2);
+  const size = Math.min(7, place.pitch - place.top - place.height - 1);
   for (const mark of row.marks) {
     const x = row.seconds > 0 ? (mark.time / row.seconds) * place.width : 0;
-    const held = Math.min(place.width - size * 0.6, Math.max(size * 0.6, x));
+    const held = Math.min(place.width - size * 0.7, Math.max(size * 0.7, x));
     const path = new Path2D(caretPath(mark.level, held, foot - 1, size));
     context.fillStyle = mark.level === 'error' ? inks.limit : inks.soft;
     context.strokeStyle = inks.caution;

@@ -1,4 +1,10 @@
-import { buildPyramid, columnMaxima, type Pyramid } from '../chart/pyramid.js';
+/** The ink of a track's row, to be drawn at any width without losing a bin. */
+export interface TrackInk {
+  /** How dark each of equal bins of time is, 0 to 1. */
+  readonly density: Float32Array;
+  /** The darkest of them. */
+  readonly darkest: number;
+}
 
 /** Pixels as a canvas holds them: four bytes each, row by row. */
 export interface InkSheet {
@@ -15,19 +21,23 @@ const BLACK_AT = 6;
 const KEPT_UP = 0.1;
 
 /**
- * The ink of a track: how dark each bin is, 0 to 1, as a pyramid, to be drawn at any width without losing a bin.
+ * The ink of a track.
  *
  * @param speeds greatest speed of equal bins of time, deg/s; a bin should be about a frame
  * @param bin seconds
  * @param noiseFloor deg/s
  */
-export function trackInk(speeds: ArrayLike<number>, bin: number, noiseFloor: number): Pyramid {
+export function trackInk(speeds: ArrayLike<number>, bin: number, noiseFloor: number): TrackInk {
   const habit = habitOf(speeds);
   // A pop of one frame may touch two bins; the length must be longer, else it would count as kept up.
   const kept = keptUp(speeds, Math.max(3, Math.round(KEPT_UP / bin)));
-  return buildPyramid(
-    Float32Array.from(speeds, (speed, i) => inkDensity(speed, Math.max(habit, kept[i]), noiseFloor)),
-  );
+  const density = new Float32Array(speeds.length);
+  let darkest = 0;
+  for (let i = 0; i < density.length; i++) {
+    density[i] = inkDensity(speeds[i], Math.max(habit, kept[i]), noiseFloor);
+    darkest = Math.max(darkest, density[i]);
+  }
+  return { density, darkest };
 }
 
 /**
@@ -81,13 +91,28 @@ function slidingExtreme(
   return out;
 }
 
-const drawn = new WeakMap<Pyramid, Float32Array>();
+/**
+ * Greatest number in each of `width` equal columns. Columns share the bin that their border falls in, so no number is ever lost.
+ */
+export function columnMaxima(values: Float32Array, width: number): Float32Array {
+  const columns = new Float32Array(width);
+  const step = values.length / width;
+  for (let column = 0; column < width; column++) {
+    const last = Math.min(values.length - 1, Math.floor((column + 1) * step));
+    let most = 0;
+    for (let bin = Math.floor(column * step); bin <= last; bin++) most = Math.max(most, values[bin]);
+    columns[column] = most;
+  }
+  return columns;
+}
+
+const drawn = new WeakMap<TrackInk, Float32Array>();
 
 /** Darkest bin in each column; kept, since a roster is drawn again and again at one width. */
-function columnsOf(ink: Pyramid, width: number): Float32Array {
+function columnsOf(ink: TrackInk, width: number): Float32Array {
   const known = drawn.get(ink);
   if (known?.length === width) return known;
-  const columns = columnMaxima(ink, 0, ink.length, new Float32Array(width));
+  const columns = columnMaxima(ink.density, width);
   drawn.set(ink, columns);
   return columns;
 }
@@ -100,7 +125,7 @@ function columnsOf(ink: Pyramid, width: number): Float32Array {
  */
 export function inkRow(
   sheet: InkSheet,
-  ink: Pyramid,
+  ink: TrackInk,
   top: number,
   height: number,
   color: readonly [number, number, number],

@@ -40,8 +40,7 @@ const STANDS_OUT = 0.5;
 
 /** How far a row's greatest speed stands above what is usual there: its darkest ink. */
 function darkest(row: RosterRow): number {
-  const ink = row.ink.greatest[row.ink.greatest.length - 1][0] ?? 0;
-  return ink > STANDS_OUT ? ink : 0;
+  return row.ink.darkest > STANDS_OUT ? row.ink.darkest : 0;
 }
 
 /** Rows that hold every word of `text` in file, clip, track or a family of their findings, whatever the case. */

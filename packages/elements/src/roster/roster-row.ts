@@ -1,6 +1,6 @@
-import type { Pyramid } from '../chart/pyramid.js';
 import { sayAngle, sayCount, sayRate } from '../chart/quantity.js';
 import { trackName, type NoteLevel } from '../chart/chart-data.js';
+import type { TrackInk } from './ink.js';
 
 /** One track as the roster shows it. */
 export interface RosterRow {
@@ -11,7 +11,7 @@ export interface RosterRow {
   readonly track: string;
   readonly seconds: number;
   /** From `trackInk`. */
-  readonly ink: Pyramid;
+  readonly ink: TrackInk;
   readonly counts: Readonly<Record<NoteLevel, number>>;
   /** Findings by family: `{ jump: 2, turn: 1 }`. */
   readonly families: Readonly<Record<string, number>>;

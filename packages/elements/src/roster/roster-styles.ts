@@ -19,6 +19,7 @@ export const rosterStyles: CSSResult = css`
     font-size: 0.9375rem;
   }
   .heads,
+  .gauge,
   .option {
     display: grid;
     grid-template-columns: minmax(10rem, 1.6fr) minmax(0, 4fr) 12.5rem 6.5rem 4rem;
@@ -49,16 +50,22 @@ export const rosterStyles: CSSResult = css`
     position: absolute;
     pointer-events: none;
   }
+  .gauge,
   .option {
     position: absolute;
     left: 0;
     right: 0;
     padding: 0 0.5rem;
     box-sizing: border-box;
+  }
+  .option {
     cursor: pointer;
     font-size: 0.875rem;
     line-height: 1;
     white-space: nowrap;
+  }
+  .gauge {
+    visibility: hidden;
   }
   .close .option {
     font-size: 0.6875rem;
@@ -109,6 +116,7 @@ export const rosterStyles: CSSResult = css`
   }
   @container (max-width: 56rem) {
     .heads,
+    .gauge,
     .option {
       grid-template-columns: minmax(0, 1.2fr) minmax(0, 2fr) 9.25rem;
     }
@@ -121,11 +129,12 @@ export const rosterStyles: CSSResult = css`
     .heads {
       display: none;
     }
+    .gauge,
     .option {
       grid-template-columns: minmax(0, 1fr) auto;
       grid-template-rows: 1fr 1fr;
     }
-    .option > .ink {
+    .ink {
       grid-column: 1 / -1;
       grid-row: 2;
     }
