@@ -39,6 +39,13 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     reach: seconds,
     marks: fc.array(fc.tuple(number, number), { minLength: 1, maxLength: 3 }),
     turns: fc.integer(),
+    sigma: seconds,
+    grain: seconds,
+    guard: seconds,
+    guards: fc.array(fc.tuple(number, number), { minLength: 1, maxLength: 3 }),
+    hertz: seconds,
+    spread: fc.constantFrom('tail' as const, 'evenly' as const),
+    anchor: fc.constantFrom('start' as const, 'end' as const, 'both' as const),
     rate: seconds,
     acceleration: seconds,
     which: fc.constantFrom('in' as const, 'out' as const),
@@ -111,6 +118,27 @@ describe('sentence', () => {
     );
     expect(sayStep({ verb: 'hold', ...place, at: 4, seconds: 1, store: 'frames' })).toBe(
       'Hold all keys of camera in Flight, at 4 s, lasting 1 s, at the frames.',
+    );
+  });
+
+  it('says what is smoothed away as people read it', () => {
+    const place = { clip: 'Take', track: 'head' };
+    expect(
+      sayStep({ verb: 'smooth', ...place, sigma: 0.1, within: 0.4, guard: 60, guards: [[5, 5.5]] }),
+    ).toBe(
+      'Smooth all keys of head in Take, within 0.4 degrees, averaging with a sigma of 0.1 s, guarding what turns faster than 60 deg/s, guarding 5 s to 5.5 s.',
+    );
+    expect(sayStep({ verb: 'smooth', ...place, grain: 0.02 })).toBe(
+      'Smooth all keys of head in Take, down to a grain of 0.02°.',
+    );
+    expect(sayStep({ verb: 'take out hum', ...place, hertz: 11, span: [26, 31] })).toBe(
+      'Take the hum out of all keys of head in Take, at 11 Hz, between 26 s and 31 s.',
+    );
+    expect(sayStep({ verb: 'take out drift', ...place, anchor: 'both' })).toBe(
+      'Take the drift out of all keys of head in Take, holding both its ends.',
+    );
+    expect(sayStep({ verb: 'close loop', ...place, spread: 'evenly' })).toBe(
+      'Close the loop of all keys of head in Take, spread evenly.',
     );
   });
 

@@ -10,7 +10,8 @@ import {
   replaceTrack,
 } from '@slewcurve/core';
 import { placeOf } from './acted-keys.js';
-import { isJoined, isPlayable, playableNeighbour, storedValue, valueAt, writeKey } from './stored-key.js';
+import { isJoined, isPlayable, playableNeighbour, storedValue, writeKey } from './stored-key.js';
+import { tangentRate } from './tangent-rate.js';
 
 /** What a bridge spans. Where `from` is `to` there is one neighbour alone, and `keys` take its pose. */
 export interface BridgeEnds {
@@ -144,7 +145,7 @@ function withKeys(
 
 /** Own-frame rate, rad/s, with which the motion outside a bridge meets its end; undefined where there is none. */
 function rateOutside(track: RotationTrack, key: number, way: 1 | -1): Float64Array | undefined {
-  if (track.interpolation === 'CUBICSPLINE') return tangentRate(track, key, way);
+  if (track.interpolation === 'CUBICSPLINE') return tangentRate(track, key, way === -1 ? 'out' : 'in');
   const other = playableNeighbour(track, key, way);
   if (other === undefined) return undefined;
   const [earlier, later] = way === 1 ? [key, other] : [other, key];
@@ -155,16 +156,6 @@ function rateOutside(track: RotationTrack, key: number, way: 1 | -1): Float64Arr
   );
   const seconds = track.times[later] - track.times[earlier];
   return logMap(new Float64Array(3), turn).map((angle) => angle / seconds);
-}
-
-/** What the tangent that faces the bridge plays at its key: ω = 2·(v⁻¹·v′), the vector part. Own frame, rad/s. */
-function tangentRate(track: RotationTrack, key: number, way: 1 | -1): Float64Array {
-  const value = storedValue(track, key);
-  const at = valueAt(track, key) + (way === -1 ? 4 : -4);
-  const square = value.reduce((sum, component) => sum + component * component, 0);
-  return relative(new Float64Array(4), value, track.values.subarray(at, at + 4))
-    .subarray(0, 3)
-    .map((component) => (2 * component) / square);
 }
 
 /** Mean speed of the segment just outside, rad/s; 0 where there is none. */

@@ -78,7 +78,7 @@ export const CLAUSES: readonly Clause[] = [
     say: ({ marks = [] }) =>
       `with ${marks.map(([old, time]) => `${sayNumber(old)} s at ${sayNumber(time)} s`).join(' and ')}`,
     pattern: new RegExp(`^, with (${NUMBER} s at ${NUMBER} s(?: and ${NUMBER} s at ${NUMBER} s)*)`),
-    read: ([marks = '']) => ({ marks: marks.split(' and ').map(readMark) }),
+    read: ([marks = '']) => ({ marks: marks.split(' and ').map((mark) => readPair(mark, ' at ')) }),
   },
   {
     key: 'turns',
@@ -190,6 +190,51 @@ export const CLAUSES: readonly Clause[] = [
     read: ([seconds]) => ({ seconds: Number(seconds) }),
   },
   {
+    key: 'hertz',
+    say: ({ hertz = 0 }) => `at ${sayNumber(hertz)} Hz`,
+    pattern: new RegExp(`^, at ${NUMBER} Hz`),
+    read: ([hertz]) => ({ hertz: Number(hertz) }),
+  },
+  {
+    key: 'sigma',
+    say: ({ sigma = 0 }) => `averaging with a sigma of ${sayNumber(sigma)} s`,
+    pattern: new RegExp(`^, averaging with a sigma of ${NUMBER} s`),
+    read: ([sigma]) => ({ sigma: Number(sigma) }),
+  },
+  {
+    key: 'grain',
+    say: ({ grain = 0 }) => `down to a grain of ${sayNumber(grain)}°`,
+    pattern: new RegExp(`^, down to a grain of ${NUMBER}°`),
+    read: ([grain]) => ({ grain: Number(grain) }),
+  },
+  {
+    key: 'guard',
+    say: ({ guard = 0 }) => `guarding what turns faster than ${sayNumber(guard)} deg/s`,
+    pattern: new RegExp(`^, guarding what turns faster than ${NUMBER} deg/s`),
+    read: ([guard]) => ({ guard: Number(guard) }),
+  },
+  {
+    key: 'guards',
+    say: ({ guards = [] }) =>
+      `guarding ${guards.map(([from, to]) => `${sayNumber(from)} s to ${sayNumber(to)} s`).join(' and ')}`,
+    pattern: new RegExp(`^, guarding (${NUMBER} s to ${NUMBER} s(?: and ${NUMBER} s to ${NUMBER} s)*)`),
+    read: ([guards = '']) => ({ guards: guards.split(' and ').map((span) => readPair(span, ' to ')) }),
+  },
+  {
+    key: 'spread',
+    say: ({ spread }) => (spread === 'evenly' ? 'spread evenly' : 'spread over its tail'),
+    pattern: /^, spread (evenly|over its tail)/,
+    read: ([how]) => ({ spread: how === 'evenly' ? 'evenly' : 'tail' }),
+  },
+  {
+    key: 'anchor',
+    say: ({ anchor = 'start' }) => (anchor === 'both' ? 'holding both its ends' : `holding its ${anchor}`),
+    pattern: /^, holding (both its ends|its start|its end)/,
+    read: ([which]) => ({
+      anchor: which === 'both its ends' ? 'both' : which === 'its start' ? 'start' : 'end',
+    }),
+  },
+  {
     key: 'ends',
     say: ({ ends = 'same' }) => ENDS_WORDS[ends],
     pattern: /^, (with the same ends|letting time run|letting angle go and re-seating what follows)/,
@@ -259,9 +304,9 @@ function readPairs(pairs: string): [string, string][] {
   return Array.from({ length: names.length / 2 }, (_, i) => [names[2 * i], names[2 * i + 1]]);
 }
 
-function readMark(mark: string): readonly [number, number] {
-  const [old, time] = mark.split(' at ').map((seconds) => Number(seconds.replace(/ s$/, '')));
-  return [old, time];
+function readPair(pair: string, between: string): readonly [number, number] {
+  const [first, second] = pair.split(between).map((seconds) => Number(seconds.replace(/ s$/, '')));
+  return [first, second];
 }
 
 /** A name as it is, or as a JSON string where white space, a comma, a quote or a last full stop would make it unclear. */

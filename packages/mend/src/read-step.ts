@@ -51,16 +51,14 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
     return { by: value };
   },
   reach: (value) => ({ reach: above0(value) }),
-  marks: (value) => {
-    if (!Array.isArray(value) || value.length === 0)
-      throw new Fault('card.bad-number', 'must be a list of pairs of times');
-    return {
-      marks: value.map((pair: unknown) => {
-        const [old, time] = finiteNumbers(pair, 2);
-        return [old, time] as const;
-      }),
-    };
-  },
+  marks: (value) => ({ marks: pairs(value, 'pairs of times') }),
+  sigma: (value) => ({ sigma: above0(value) }),
+  grain: (value) => ({ grain: above0(value) }),
+  guard: (value) => ({ guard: above0(value) }),
+  guards: (value) => ({ guards: pairs(value, 'spans') }),
+  hertz: (value) => ({ hertz: above0(value) }),
+  spread: (value) => ({ spread: oneOf(value, ['tail', 'evenly']) }),
+  anchor: (value) => ({ anchor: oneOf(value, ['start', 'end', 'both']) }),
   which: (value) => ({ which: oneOf(value, ['in', 'out']) }),
   turns: (value) => {
     if (!Number.isSafeInteger(value) || typeof value !== 'number')
@@ -157,6 +155,15 @@ function keyNumbers(value: unknown): readonly number[] {
   if (!Array.isArray(value) || value.length === 0 || !value.every(isWhole))
     throw new Fault('card.bad-number', 'must be a list of key numbers, whole and from 0 up');
   return value;
+}
+
+function pairs(value: unknown, what: string): (readonly [number, number])[] {
+  if (!Array.isArray(value) || value.length === 0)
+    throw new Fault('card.bad-number', `must be a list of ${what}`);
+  return value.map((pair: unknown) => {
+    const [first, second] = finiteNumbers(pair, 2);
+    return [first, second] as const;
+  });
 }
 
 function finiteNumbers(value: unknown, count: number): readonly number[] {

@@ -2,6 +2,7 @@ import { type ErrorPlace, SlewcurveError } from '@slewcurve/core';
 import { bridge } from './edits/bridge.js';
 import { cap } from './edits/cap.js';
 import { chooseSide } from './edits/choose-side.js';
+import { closeLoop } from './edits/close-loop.js';
 import { easeInOut } from './edits/ease-in-out.js';
 import { easeThrough } from './edits/ease-through.js';
 import { evenOut } from './edits/even-out.js';
@@ -13,7 +14,10 @@ import { reverse } from './edits/reverse.js';
 import { sameSide } from './edits/same-side.js';
 import { setMarks } from './edits/set-marks.js';
 import { shape } from './edits/shape.js';
+import { smooth } from './edits/smooth.js';
 import { shrink, stretch } from './edits/stretch.js';
+import { takeOutDrift } from './edits/take-out-drift.js';
+import { takeOutHum } from './edits/take-out-hum.js';
 import { thereAndBack } from './edits/there-and-back.js';
 import { wholeTurns } from './edits/whole-turns.js';
 import { changeSpace } from './edits/change-space.js';
@@ -37,6 +41,10 @@ export const VERBS: readonly Verb[] = Object.freeze([
   onAngles(bridge),
   onAngles(reSeat),
   normaliseKeys,
+  onAngles(takeOutHum),
+  onAngles(smooth),
+  onAngles(takeOutDrift),
+  onAngles(closeLoop),
   easeInOut,
   evenOut,
   cap,

@@ -70,7 +70,7 @@ export interface Step {
   readonly pairs?: readonly (readonly [string, string])[];
   /** convert: how the keys are to be joined. */
   readonly interpolation?: 'LINEAR' | 'CUBICSPLINE';
-  /** convert, re-grid: the most that the motion may differ, degrees. */
+  /** convert, re-grid, smooth: the most that the motion may differ, degrees. */
   readonly within?: number;
   /** re-grid, re-time to grid: frames per second. */
   readonly fps?: number;
@@ -80,4 +80,18 @@ export interface Step {
   readonly playback?: PlaybackId;
   /** set tangents: those that arrive at keys, or those that leave them, alone. */
   readonly tangents?: 'in' | 'out';
+  /** smooth: standard deviation of the average, seconds. */
+  readonly sigma?: number;
+  /** smooth, instead of `sigma`: the grain that may be left, degrees an axis. */
+  readonly grain?: number;
+  /** smooth: what turns faster is guarded, deg/s. */
+  readonly guard?: number;
+  /** smooth: guarded spans (whips, contacts), seconds. */
+  readonly guards?: readonly (readonly [from: number, to: number])[];
+  /** take out hum: its frequency. */
+  readonly hertz?: number;
+  /** close loop: over its tail, or in proportion to time. */
+  readonly spread?: 'tail' | 'evenly';
+  /** take out drift: the end or ends of the span whose pose is kept. */
+  readonly anchor?: 'start' | 'end' | 'both';
 }
