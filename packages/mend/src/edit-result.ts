@@ -87,9 +87,10 @@ export function* pairedKeys(
   }
 }
 
-/** Whether two keys are stored alike to the bit, time included. */
+/** Whether two keys are stored alike to the bit, time included, and mean the same. */
 export function sameNumbers(a: RotationTrack, keyA: number, b: RotationTrack, keyB: number): boolean {
   const size = VALUES_PER_KEY[a.interpolation];
+  if (a.interpolation !== b.interpolation || a.sequence !== b.sequence) return false;
   if (!Object.is(a.times[keyA], b.times[keyB])) return false;
   for (let i = 0; i < size; i++)
     if (!Object.is(a.values[keyA * size + i], b.values[keyB * size + i])) return false;

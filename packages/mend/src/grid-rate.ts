@@ -9,17 +9,21 @@ import {
 import { placeOf } from './acted-keys.js';
 import type { Step } from './step.js';
 
+/** Share of a frame by which a gap may miss whole frames and still tell them: two decimals at 60 frames a second miss by 0.4. */
+export const TELLS = 0.45;
+
 /** How far a usual rate may lie from the mean gap, as a share: 0.033 s is 1.01 % off 30 a second. */
 const NEAR = 0.0102;
 
 /**
- * Frames per second that a step means, in full (30000/1001 for 29.97): its own `fps`, or else that of the grid that the keys lie on, or else the usual one
- * that is nearest to their mean gap, which rounding hardly moves.
+ * Frames per second that a step means, in full (30000/1001 for 29.97): its own `fps`, or else the usual one nearest to the mean gap, which
+ * rounding hardly moves, where every gap tells its frames by it (times of two decimals lie on a grid of 100 a second, whatever they were), or else that of the
+ * grid that the keys lie on.
  *
  * @throws SlewcurveError `step.needs-fps` where nothing tells
  */
 export function gridRate(track: RotationTrack, { fps }: Step): number {
-  const rate = fps ?? frameGrid([track.times]) ?? rateOfMeanGap(track);
+  const rate = fps ?? rateOfMeanGap(track) ?? frameGrid([track.times]);
   if (rate !== undefined) return exactRate(rate);
   throw new SlewcurveError(
     'step.needs-fps',
@@ -47,5 +51,10 @@ function rateOfMeanGap(track: RotationTrack): number | undefined {
   const frame = meanFrame(track);
   const miss = (rate: number): number => Math.abs(rate * frame - 1);
   const near = FRAME_RATES.filter((rate) => miss(rate) <= NEAR);
-  return near.length === 0 ? undefined : near.reduce((best, rate) => (miss(rate) < miss(best) ? rate : best));
+  if (near.length === 0) return undefined;
+  const isTold = track.times.every((time, key) => {
+    const frames = key === 0 ? 1 : (time - track.times[key - 1]) / frame;
+    return Math.round(frames) >= 1 && Math.abs(frames - Math.round(frames)) <= TELLS;
+  });
+  return isTold ? near.reduce((best, rate) => (miss(rate) < miss(best) ? rate : best)) : undefined;
 }

@@ -2,7 +2,7 @@ import { type Curve, type RotationTrack, SlewcurveError, playAs, replaceTrack } 
 import { placeOf } from '../acted-keys.js';
 import { sentenceOf } from '../clauses.js';
 import { editResult } from '../edit-result.js';
-import { gridRate, meanFrame } from '../grid-rate.js';
+import { TELLS, gridRate, meanFrame } from '../grid-rate.js';
 import { stored } from '../pace/new-keys.js';
 import { scaleTangents } from '../pace/scale-tangents.js';
 import { pacedResult } from '../pace/store-paced.js';
@@ -10,8 +10,6 @@ import type { Step } from '../step.js';
 import type { EditResult, Verb } from '../verb.js';
 import { checkSound, refuseParts } from '../whole-track.js';
 
-/** Share of a frame by which a gap may miss whole frames and still be told: two decimals at 60 frames a second miss by 0.4. */
-const TELLS = 0.45;
 /** Share of a frame within which the first key is taken to stand on the grid that begins at 0 s. */
 const AT_FRAME = 0.25;
 
