@@ -1,38 +1,73 @@
-import type { Finding } from '@slewcurve/survey';
-import { LEVELS, isAtLeast, type FileReport, type Report, type StepReport, type Totals } from './report.js';
+import {
+  LEVELS,
+  isAtLeast,
+  type FileReport,
+  type GonePlace,
+  type Report,
+  type ReportedFinding,
+  type Shard,
+  type StepReport,
+  type Totals,
+} from './report.js';
 import type { JobSettings } from './settings.js';
 import { VERSION } from './version.js';
 
-/** The report over several files: totals and verdict from their findings. A file that can't be read never passes. */
+/** What a report may be of besides files. */
+export interface ReportParts {
+  readonly steps?: readonly StepReport[];
+  readonly shard?: Shard;
+  /** What a baseline knew and is gone, and whether that fails the run. */
+  readonly baseline?: { readonly gone: readonly GonePlace[]; readonly exact: boolean };
+}
+
+/**
+ * The report over several files: totals and verdict from their open findings. A file that can't be read never passes; nor does an exact
+ * baseline that knows more than there is.
+ */
 export function buildReport(
   files: readonly FileReport[],
-  settings: JobSettings,
-  steps?: readonly StepReport[],
+  settings: Pick<JobSettings, 'playbacks' | 'failAt' | 'allowWarnings'>,
+  { steps, shard, baseline }: ReportParts = {},
 ): Report {
   const findings = files.flatMap((file) => file.findings);
+  const fits = baseline === undefined || !baseline.exact || baseline.gone.length === 0;
+  const readable = files.every((file) => file.status === 'surveyed');
   return {
     schemaVersion: 1,
     tool: { name: 'slewcurve', version: VERSION },
     playbacks: settings.playbacks,
     failAt: settings.failAt,
+    ...(shard !== undefined && { shard }),
     files,
-    totals: totalsOf(findings),
-    verdict:
-      files.every((file) => file.status === 'surveyed') && passes(findings, settings) ? 'pass' : 'fail',
+    totals: { ...totalsOf(findings), ...(baseline !== undefined && { known: muted(findings, 'known') }) },
+    verdict: readable && fits && passes(findings.filter(isOpenFinding), settings) ? 'pass' : 'fail',
+    ...(baseline !== undefined && { gone: baseline.gone }),
     ...(steps !== undefined && { steps }),
   };
 }
 
-function totalsOf(findings: readonly Finding[]): Totals {
+function totalsOf(findings: readonly ReportedFinding[]): Totals {
+  const open = findings.filter(isOpenFinding);
   const [error = 0, warning = 0, note = 0] = LEVELS.map(
-    (level) => findings.filter((finding) => finding.level === level).length,
+    (level) => open.filter((finding) => finding.level === level).length,
   );
-  return { error, warning, note, stamped: 0 };
+  return { error, warning, note, stamped: muted(findings, 'stamped') };
+}
+
+function isOpenFinding({ muted: how }: ReportedFinding): boolean {
+  return how === undefined;
+}
+
+function muted(findings: readonly ReportedFinding[], how: ReportedFinding['muted']): number {
+  return findings.filter((finding) => finding.muted === how).length;
 }
 
 /** `failAt` and `allowWarnings` alone decide: the first so many warnings are let pass, errors and notes never. */
-function passes(findings: readonly Finding[], settings: JobSettings): boolean {
-  const failing = findings.filter((finding) => isAtLeast(finding.level, settings.failAt));
+function passes(
+  findings: readonly ReportedFinding[],
+  { failAt, allowWarnings }: Pick<JobSettings, 'failAt' | 'allowWarnings'>,
+): boolean {
+  const failing = findings.filter((finding) => isAtLeast(finding.level, failAt));
   const warnings = failing.filter((finding) => finding.level === 'warning').length;
-  return failing.length - warnings + Math.max(0, warnings - settings.allowWarnings) === 0;
+  return failing.length - warnings + Math.max(0, warnings - allowWarnings) === 0;
 }

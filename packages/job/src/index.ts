@@ -1,10 +1,13 @@
-export { buildReport } from './build-report.js';
+export { baselineJson, baselineOf, parseBaseline, withBaseline, type Baseline } from './baseline.js';
+export { buildReport, type ReportParts } from './build-report.js';
 export { kestrelPointRules } from './demo/house-rules.js';
 export { kestrelPoint } from './demo/kestrel-point.js';
 export { desk, type Desk } from './desk.js';
 export { explanationText } from './explanation-text.js';
 export { mendFile, type MendedFile } from './mend-file.js';
 export { mendProposed, type ProposedMend } from './mend-proposed.js';
+export { mergeReports, type NamedReport } from './merge-reports.js';
+export type { NamedPlace } from './named-place.js';
 export { openFile, type OpenedFile } from './open-file.js';
 export { propose, type Declined, type Proposal } from './propose.js';
 export type {
@@ -23,17 +26,34 @@ export {
   isAtLeast,
   type ClipReport,
   type FileReport,
+  type GonePlace,
   type ProblemReport,
   type Report,
+  type ReportedFinding,
+  type ReportedOccurrence,
+  type Shard,
+  type StampWords,
   type StepReport,
   type Totals,
   type TrackReport,
 } from './report.js';
+export { csvReport } from './reporters/csv.js';
 export { jsonReport } from './reporters/json.js';
-export { textReport, textRoster } from './reporters/text.js';
+export { markdownReport } from './reporters/markdown.js';
+export { sarifReport } from './reporters/sarif.js';
+export { textReport, textRoster, type Paint } from './reporters/text.js';
 export { rosterRow, type RosterRow } from './roster-row.js';
 export type { JobSettings } from './settings.js';
 export { sha256Of } from './sha256-of.js';
+export {
+  addStamps,
+  parseStamps,
+  stampsFileName,
+  stampsFor,
+  stampsJson,
+  withStamps,
+  type Stamp,
+} from './stamps.js';
 export { surveyFile, unreadableFile } from './survey-file.js';
 export { takeBack, undoPlan, type UndoPlan } from './undo-plan.js';
 export { VERSION } from './version.js';

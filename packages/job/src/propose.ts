@@ -1,6 +1,6 @@
 import { verbNamed, type JobCard, type Step } from '@slewcurve/mend';
-import type { Finding } from '@slewcurve/survey';
-import { isAtLeast, type FileReport } from './report.js';
+import { isAtLeast, type FileReport, type ReportedFinding } from './report.js';
+import { isOpen } from './settle-finding.js';
 import type { JobSettings } from './settings.js';
 
 /** A remedy that was not taken, and why. */
@@ -36,10 +36,10 @@ export function propose(report: FileReport, settings: JobSettings, allow: readon
   return { card: { schemaVersion: 1, steps: ordered(merged(steps)) }, declined };
 }
 
-/** A finding is as bad as its worst place; a milder place of it is left alone. */
-function remediesOf(finding: Finding, { failAt }: JobSettings): Step[] {
+/** A finding is as bad as its worst place; a milder place of it is left alone, and so is one that somebody accepted. */
+function remediesOf(finding: ReportedFinding, { failAt }: JobSettings): Step[] {
   return finding.occurrences
-    .filter((place) => isAtLeast(place.level, failAt))
+    .filter((place) => isAtLeast(place.level, failAt) && isOpen(place))
     .flatMap((place) => place.remedy ?? []);
 }
 

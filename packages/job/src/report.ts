@@ -1,4 +1,4 @@
-import type { Finding, Level } from '@slewcurve/survey';
+import type { Finding, Level, Occurrence } from '@slewcurve/survey';
 import type { Bend, Price, Step } from '@slewcurve/mend';
 
 /** One clip of a report. `keys` and `tracks` count rotation tracks. */
@@ -39,6 +39,41 @@ export interface ProblemReport {
   readonly message: string;
 }
 
+/** Who accepted a place, when and why. */
+export interface StampWords {
+  readonly reason: string;
+  readonly by: string;
+  /** A day, as ISO 8601 writes it. */
+  readonly date: string;
+}
+
+/** A place of a finding, and whether somebody accepted it or the baseline knows it. */
+export interface ReportedOccurrence extends Occurrence {
+  readonly stamp?: StampWords;
+  readonly known?: true;
+}
+
+/** A finding, muted once all its places are stamped, or stamped and known from the baseline. */
+export interface ReportedFinding extends Finding {
+  readonly occurrences: readonly ReportedOccurrence[];
+  readonly muted?: 'stamped' | 'known';
+}
+
+/** A place that the baseline knows and that nobody finds any more. */
+export interface GonePlace {
+  readonly file: string;
+  readonly fingerprint: string;
+  readonly rule: string;
+  readonly clip: string;
+  readonly track: string;
+}
+
+/** Which part of all files a report is of: the `number`th of `of`, counted from 1. */
+export interface Shard {
+  readonly number: number;
+  readonly of: number;
+}
+
 /** One file of a report. */
 export interface FileReport {
   readonly file: string;
@@ -47,7 +82,7 @@ export interface FileReport {
   readonly problems?: readonly ProblemReport[];
   readonly clips: readonly ClipReport[];
   readonly tracks: readonly TrackReport[];
-  readonly findings: readonly Finding[];
+  readonly findings: readonly ReportedFinding[];
 }
 
 /** What one step of a job card did. Degrees and seconds. */
@@ -67,12 +102,14 @@ export interface StepReport {
   readonly bends?: readonly Bend[];
 }
 
-/** Finding counts by level, and how many are stamped. */
+/** Counts of open findings by level, and of muted ones: how many are stamped, how many known from the baseline. */
 export interface Totals {
   readonly error: number;
   readonly warning: number;
   readonly note: number;
   readonly stamped: number;
+  /** Only with a baseline. */
+  readonly known?: number;
 }
 
 /** What `check --format json` prints: see the published schema `schema/report.json`. */
@@ -84,6 +121,10 @@ export interface Report {
   readonly files: readonly FileReport[];
   readonly totals: Totals;
   readonly verdict: 'pass' | 'fail';
+  /** A part alone: the files of one machine of several. */
+  readonly shard?: Shard;
+  /** With a baseline alone: what it knows and is gone. */
+  readonly gone?: readonly GonePlace[];
   /** `mend` alone: what each step did. */
   readonly steps?: readonly StepReport[];
 }

@@ -37,10 +37,19 @@ export function describeFinding(
   );
   // Key numbers on a card are those of the stored track; a remedy for a track with holes waits until the holes are mended.
   const sound = rule.reads === 'stored' || subject.keys === undefined;
+  const limit = significant(ranked[0]!.place.limit);
+  const playback = ranked[0]!.place.playback ?? subject.playback;
   const described = ranked.slice(0, MOST_OCCURRENCES).map(({ place, index }) => {
     const remedy = sound ? rule.remedy(subject.context, place, limits) : undefined;
     const shown = renumbered(rule, place, subject);
-    return { shown, remedy, occurrence: occurrence(rule, shown, remedy, fingerprints(index), subject) };
+    const own = occurrence(rule, shown, remedy, fingerprints(index), subject);
+    const others = {
+      ...(significant(place.limit) !== limit && { limit: significant(place.limit) }),
+      ...((place.playback ?? subject.playback) !== playback && {
+        playback: place.playback ?? subject.playback,
+      }),
+    };
+    return { remedy, occurrence: { ...own, ...others } };
   });
   const worst = described[0]!;
   const { fingerprint: _, level, ...numbers } = worst.occurrence;
@@ -51,8 +60,8 @@ export function describeFinding(
     track,
     ...numbers,
     unit: rule.unit,
-    limit: significant(worst.shown.limit),
-    playback: worst.shown.playback ?? subject.playback,
+    limit,
+    playback,
     owner: track,
     count: places.length,
     occurrences: described.map((one) => one.occurrence),

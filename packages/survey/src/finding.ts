@@ -10,6 +10,10 @@ export interface Occurrence {
   readonly frame?: number;
   readonly span: readonly [number, number];
   readonly value: number;
+  /** Where it is another than the finding's. */
+  readonly limit?: number;
+  /** Where it is another than the finding's. */
+  readonly playback?: string;
   readonly level: Level;
   readonly confidence?: number;
   readonly remedy?: Step;

@@ -1,48 +1,64 @@
 import { sayStep } from '@slewcurve/mend';
-import type { Finding } from '@slewcurve/survey';
-import type { FileReport, Report, StepReport, TrackReport } from '../report.js';
+import type { Level } from '@slewcurve/survey';
+import type { FileReport, GonePlace, Report, ReportedFinding, StepReport, TrackReport } from '../report.js';
+import { sayFault, sayPlace, sayRemedy } from './say-finding.js';
+import { counted, sayVerdict } from './say-verdict.js';
 
-/** The report as people read it: one sentence a finding, the verdict last. */
-export function textReport(report: Report): string {
+/** How words of a level, or of the verdict, are coloured for a terminal; elsewhere they stand as they are. */
+export type Paint = (text: string, as: Level | Report['verdict']) => string;
+
+const PLAIN: Paint = (text) => text;
+
+/** The report as people read it: one sentence an open finding, the verdict last. */
+export function textReport(report: Report, paint: Paint = PLAIN): string {
   return [
     ...(report.steps ?? []).map(sayDone),
-    ...report.files.flatMap(sayFile),
-    sayVerdict(report),
+    ...report.files.flatMap((file) => sayFile(file, paint)),
+    ...(report.gone ?? []).map(sayGone),
+    paint(sayVerdict(report), report.verdict),
     '',
   ].join('\n');
 }
 
 /** The roster as text: one row a track, then what `textReport` says. */
-export function textRoster(report: Report): string {
-  return [...report.files.flatMap(fileRoster), textReport(report)].join('\n');
+export function textRoster(report: Report, paint: Paint = PLAIN): string {
+  return [...report.files.flatMap(fileRoster), textReport(report, paint)].join('\n');
 }
 
-function sayFile(file: FileReport): string[] {
-  if (file.error) return [`${file.file}: can't be read. ${file.error.message} error ${file.error.code}`];
-  const problems = (file.problems ?? []).map(({ code, message }) => `${file.file}: ${message} ${code}`);
-  return [...problems, ...file.findings.map((finding) => sayFinding(file, finding))];
+function sayFile(file: FileReport, paint: Paint): string[] {
+  if (file.error)
+    return [
+      `${printable(`${file.file}: can't be read. ${file.error.message}`)} ${paint(`error ${file.error.code}`, 'error')}`,
+    ];
+  const problems = (file.problems ?? []).map(({ code, message }) =>
+    printable(`${file.file}: ${message} ${code}`),
+  );
+  const open = file.findings.filter(({ muted }) => muted === undefined);
+  return [...problems, ...open.map((finding) => sayFinding(file, finding, paint))];
 }
 
-function sayFinding(file: FileReport, finding: Finding): string {
-  const remedy =
-    finding.remedy === undefined ? '' : `; try: ${lowerFirst(sayStep(finding.remedy)).replace(/\.$/, '')}`;
-  const more = finding.count > 1 ? ` (the worst of ${finding.count} places)` : '';
-  return `${file.file}: ${finding.track} in ${finding.clip}, ${whenOf(finding)}: ${finding.message.replace(/\.$/, '')}${more}. ${finding.level} ${finding.rule}${remedy}`;
+function sayFinding(file: FileReport, finding: ReportedFinding, paint: Paint): string {
+  const remedy = sayRemedy(finding);
+  const said = printable(`${file.file}: ${sayPlace(finding)}: ${sayFault(finding)}.`);
+  const kind = paint(`${finding.level} ${finding.rule}`, finding.level);
+  return `${said} ${kind}${remedy === '' ? '' : printable(`; try: ${remedy}`)}`;
+}
+
+function sayGone({ file, rule, clip, track }: GonePlace): string {
+  return printable(`${file}: ${track} in ${clip}: gone since the baseline was written. ${rule}`);
+}
+
+/** Names come from strangers' files: a control character in one neither moves the cursor nor ends the line. */
+function printable(line: string): string {
+  return line.replace(
+    /[\p{Cc}\u2028\u2029]/gu,
+    (letter) => `\\u${letter.charCodeAt(0).toString(16).padStart(4, '0')}`,
+  );
 }
 
 function sayDone(step: StepReport): string {
   const keys = step.changed === 1 ? '1 key changed' : `${step.changed} keys changed`;
   return `${sayStep(step.step)} ${keys}, the largest by ${number(step.largest)}°; outside its span ${number(step.outside)}°; ${number(step.added)} s added.`;
-}
-
-function sayVerdict({ files, totals, verdict }: Report): string {
-  const unreadable = files.filter((file) => file.status === 'unreadable').length;
-  const counts = [
-    counted(totals.error, 'error'),
-    counted(totals.warning, 'warning'),
-    counted(totals.note, 'note'),
-  ].join(', ');
-  return `verdict: ${verdict}. ${counts} in ${counted(files.length, 'file')}, ${totals.stamped} stamped${unreadable === 0 ? '' : `; ${unreadable} could not be read`}`;
 }
 
 const COLUMNS: readonly { readonly head: string; cell(track: TrackReport): string }[] = [
@@ -60,7 +76,7 @@ function fileRoster(file: FileReport): string[] {
   if (file.error) return [];
   const rows = file.tracks.map((track) => ({
     cells: [...COLUMNS.map((column) => column.cell(track)), faultsOf(file, track)],
-    name: `${track.track} in ${track.clip}`,
+    name: printable(`${track.track} in ${track.clip}`),
   }));
   const heads = [...COLUMNS.map((column) => column.head), 'found'];
   const widths = heads.map((head, i) =>
@@ -69,7 +85,7 @@ function fileRoster(file: FileReport): string[] {
   const line = (cells: readonly string[], name: string): string =>
     `${cells.map((cell, i) => cell.padStart(widths[i] ?? 0)).join('  ')}  ${name}`;
   return [
-    `${file.file}: ${counted(file.tracks.length, 'rotation track')} in ${counted(file.clips.length, 'clip')}`,
+    `${printable(file.file)}: ${counted(file.tracks.length, 'rotation track')} in ${counted(file.clips.length, 'clip')}`,
     line(heads, 'track'),
     ...rows.map((row) => line(row.cells, row.name)),
     '',
@@ -87,26 +103,9 @@ function faultsOf(file: FileReport, track: TrackReport): string {
   return parts.join(' ') || '-';
 }
 
-function counted(count: number, what: string): string {
-  return `${count} ${what}${count === 1 ? '' : 's'}`;
-}
-
 /** At most six significant digits, without an exponent for anything a person meets. */
 function number(value: number): string {
   const digits = Math.abs(value) >= 100 ? 0 : Math.abs(value) >= 10 ? 1 : 2;
   if (value !== 0 && Math.abs(value) < 0.005) return value.toPrecision(2);
   return value.toLocaleString('en-GB', { minimumFractionDigits: digits, maximumFractionDigits: digits });
-}
-
-/** A finding of no key is of the whole track. */
-function whenOf({ keys, time }: Finding): string {
-  return keys.length === 0 ? 'all along' : seconds(time);
-}
-
-function seconds(time: number): string {
-  return `${time.toFixed(3)} s`;
-}
-
-function lowerFirst(text: string): string {
-  return text.charAt(0).toLowerCase() + text.slice(1);
 }
