@@ -52,6 +52,10 @@ describe('shape', () => {
   });
 });
 
+function half(degrees: number): number {
+  return degrees / DEGREES / 2;
+}
+
 /** Presses and lets the angle go, at a place, and asserts what every edit owes. */
 function freed(track: RotationTrack, step: object): EditResult {
   return applied(track, { verb: 'shape', ends: 'go', ...step });
@@ -117,9 +121,8 @@ describe('shape, letting angle go', () => {
         [0, 90, 0],
         [30, 90, 0],
       ].flatMap(([x, y]) => {
-        const turn = (angle: number): number => angle / DEGREES / 2;
-        const pan = [0, Math.sin(turn(y)), 0, Math.cos(turn(y))];
-        return multiply([], pan, [Math.sin(turn(x)), 0, 0, Math.cos(turn(x))]);
+        const pan = [0, Math.sin(half(y)), 0, Math.cos(half(y))];
+        return multiply([], pan, [Math.sin(half(x)), 0, 0, Math.cos(half(x))]);
       }),
     });
     const step = { at: 1, by: 20, reach: 0.5 };

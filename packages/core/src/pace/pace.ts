@@ -2,17 +2,19 @@ import type { Curve } from '../curve/curve.js';
 import { greatest } from '../curve/greatest.js';
 import { SlewcurveError } from '../errors.js';
 import { type Limits, cappedClock } from './capped-clock.js';
+import { copiedProfile } from './copied-profile.js';
 import type { DrawnSpeed } from './drawn-profile.js';
 import type { Ease } from './ease.js';
 import { easedProfile } from './eased-profile.js';
 import { EASES } from './eases.js';
+import { type Match, matchedClock } from './matched-clock.js';
 import { marksProfile } from './marks-profile.js';
 import { retimedCurve } from './retimed-curve.js';
 import type { Retiming } from './retiming.js';
 import { type Press, drawnClock, pressedClock } from './shaped-speed.js';
 import { type InnerClock, type Span, clockOfProfile, spanRetiming } from './span-retiming.js';
 import { type Stretch, rampSeconds, stretchesClock } from './stretches-clock.js';
-import { turnedAngle } from './turned-angle.js';
+import { type TurnedAngle, turnedAngle } from './turned-angle.js';
 
 /** How a path is to be travelled. Seconds, radians. */
 export type PaceLaw = {
@@ -36,7 +38,16 @@ export type PaceLaw = {
   /** What stands at an old time is to stand at a new one; both ascend. The span's ends stay where no mark names them. */
   | { readonly kind: 'marks'; readonly marks: readonly { readonly old: number; readonly time: number }[] }
   | { readonly kind: 'stretch'; readonly seconds: number }
+  | ({ readonly kind: 'match' } & Match)
+  | ({ readonly kind: 'copy' } & Copied)
 );
+
+/** The pace of another curve, between two of its times: default from its start to its end. */
+export interface Copied {
+  readonly of: Curve;
+  readonly ofSpan?: Span;
+  readonly seconds?: number;
+}
 
 /** A curve on another clock. */
 export interface PacedCurve extends Curve {
@@ -47,32 +58,34 @@ export interface PacedCurve extends Curve {
  * The same path of orientations at another pace, with exact rate and acceleration. No orientation is left out or visited twice.
  *
  * @throws SlewcurveError `pace.bad-span`, `pace.bad-number`, `pace.no-turn`, `pace.runs-back`, `pace.bad-marks`, `pace.unknown-law`,
- * `pace.bad-press`, `pace.too-little-to-borrow`, `pace.stands-still`
+ * `pace.bad-press`, `pace.too-little-to-borrow`, `pace.stands-still`, `pace.bad-match`
  */
 export function pace(curve: Curve, law: PaceLaw): PacedCurve {
   const span = law.span ?? ([curve.start, curve.end] as const);
-  if (!(span[0] >= curve.start && span[1] <= curve.end && span[0] < span[1]))
-    throw new SlewcurveError(
-      'pace.bad-span',
-      `The span from ${span[0]} s to ${span[1]} s does not lie within the curve's ${curve.start} s to ${curve.end} s.`,
-    );
+  checkWithin(curve, span);
   const retiming = spanRetiming(curve, span, clockOf(curve, span, law));
   return { ...retimedCurve(curve, retiming), retiming };
+}
+
+function checkWithin({ start, end }: Curve, [from, to]: Span): void {
+  if (from >= start && to <= end && from < to) return;
+  throw new SlewcurveError(
+    'pace.bad-span',
+    `The span from ${from} s to ${to} s does not lie within the curve's ${start} s to ${end} s.`,
+  );
 }
 
 function clockOf(curve: Curve, span: Span, law: PaceLaw): InnerClock {
   const old = span[1] - span[0];
   switch (law.kind) {
     case 'constant':
-      return easedClock(curve, span, EASES.constant, law.seconds ?? old);
+      return easedClock(curve, span, EASES.constant, law.seconds);
     case 'ease':
-      return easedClock(curve, span, law.ease, law.seconds ?? old);
+      return easedClock(curve, span, law.ease, law.seconds);
     case 'ramps':
       return rampsClock(span, law.rise ?? 0, law.fall ?? 0, law.seconds);
     case 'cap':
-      positive('The limit of the rate', law.rate);
-      if (law.acceleration !== undefined) positive('The limit of the acceleration', law.acceleration);
-      return cappedClock(curve, span, law);
+      return limitedClock(curve, span, law);
     case 'press':
       return pressedClock(curve, turnedAngle(curve), span, law);
     case 'drawn':
@@ -83,24 +96,49 @@ function clockOf(curve: Curve, span: Span, law: PaceLaw): InnerClock {
       return marksClock(curve, span, law.marks);
     case 'stretch':
       return stretchesClock(span[0], [{ kind: 'steady', seconds: positive('The time', law.seconds), old }]);
+    case 'match':
+      return matchedClock(curve, turnedAngle(curve), span, law);
+    case 'copy':
+      return copiedClock(curve, span, law);
     default:
       throw new SlewcurveError(
         'pace.unknown-law',
-        'The kind of a pace is one of constant, ease, ramps, cap, press, drawn, hold, marks, stretch.',
+        'The kind of a pace is one of constant, ease, ramps, cap, press, drawn, hold, marks, stretch, match, copy.',
       );
   }
 }
 
-function easedClock(curve: Curve, span: Span, ease: Ease, seconds: number): InnerClock {
+function limitedClock(curve: Curve, span: Span, limits: Limits): InnerClock {
+  positive('The limit of the rate', limits.rate);
+  if (limits.acceleration !== undefined) positive('The limit of the acceleration', limits.acceleration);
+  return cappedClock(curve, span, limits);
+}
+
+function easedClock(curve: Curve, span: Span, ease: Ease, seconds = span[1] - span[0]): InnerClock {
   positive('The time', seconds);
   const back = (u: number): number => -ease.speed(u);
   if (back(greatest(back, 0, 1)) > 1e-9)
     throw new SlewcurveError('pace.runs-back', `${ease.name} runs back for a while, which a pace cannot.`);
   const turned = turnedAngle(curve);
-  const angle = turned.angleAt(span[1]) - turned.angleAt(span[0]);
-  if (!(angle > 0))
-    throw new SlewcurveError('pace.no-turn', `Nothing turns between ${span[0]} s and ${span[1]} s.`);
-  return clockOfProfile(turned, span, easedProfile(angle, seconds, ease));
+  return clockOfProfile(turned, span, easedProfile(angleOver(turned, span), seconds, ease));
+}
+
+function copiedClock(
+  curve: Curve,
+  span: Span,
+  { of, ofSpan = [of.start, of.end], seconds = span[1] - span[0] }: Copied,
+): InnerClock {
+  positive('The time', seconds);
+  checkWithin(of, ofSpan);
+  const [turned, other] = [turnedAngle(curve), turnedAngle(of)];
+  angleOver(other, ofSpan);
+  return clockOfProfile(turned, span, copiedProfile(of, other, ofSpan, angleOver(turned, span), seconds));
+}
+
+function angleOver(turned: TurnedAngle, [from, to]: Span): number {
+  const angle = turned.angleAt(to) - turned.angleAt(from);
+  if (angle > 0) return angle;
+  throw new SlewcurveError('pace.no-turn', `Nothing turns between ${from} s and ${to} s.`);
 }
 
 function rampsClock([from, to]: Span, rise: number, fall: number, seconds: number | undefined): InnerClock {

@@ -72,10 +72,11 @@ export function pressedClock(curve: Curve, turned: TurnedAngle, span: Span, pres
       `The press takes ${degrees(taken)}° and the rest of the span has ${degrees(lendable)}° to lend. Press less, widen the span, or let time run.`,
     );
   const speeds = pressed.map((speed, i) => speed * (1 - share * rest[i]));
-  // Of the many pieces these alone are told as knots; the path's own come with the curve.
+  // Of the many pieces these alone are told as knots: there the press has its corners, and the old speed its jumps.
   const bends = [at - reach - from, at - from, at + reach - from, shoulders, to - from - shoulders];
   const emptied = drawn.times.filter((_, i) => i > 0 && (pressed[i] === 0) !== (pressed[i - 1] === 0));
-  const inside = [...bends, ...emptied].filter((since) => since > 0 && since < to - from);
+  const jumps = Array.from(curve.knots, (knot) => knot - from);
+  const inside = [...bends, ...emptied, ...jumps].filter((since) => since > 0 && since < to - from);
   inside.sort((a, b) => a - b);
   const profile = drawnProfile({ times: drawn.times, speeds }, angle, [0, ...inside, to - from]);
   return clockOfProfile(turned, span, profile);
