@@ -2,7 +2,7 @@
 // that bear on it, and counts the mutants that no test notices. Part of `npm run long`; the result is test/data/mutants.json.
 //
 //   node .ci/mutants.mjs [--per-file 5] [--only quaternion/mean.ts] [--dry-run]
-import { spawnSync } from 'node:child_process';
+import { fork } from 'node:child_process';
 import {
   cpSync,
   existsSync,
@@ -14,7 +14,7 @@ import {
   symlinkSync,
   writeFileSync,
 } from 'node:fs';
-import { tmpdir } from 'node:os';
+import { availableParallelism, tmpdir } from 'node:os';
 import path from 'node:path';
 import ts from 'typescript';
 
@@ -22,7 +22,7 @@ const SOURCE = 'packages/core/src';
 const FOLDERS = ['quaternion', 'quaternion/euler', 'curve', 'pace', 'measure', 'sampler'];
 const RESULT = 'test/data/mutants.json';
 /**
- * Tests that bear on a folder, tried after the file's own; then all of core's and the references'.
+ * Tests that bear on a folder, tried first; then all of core's, and the references' for it.
  *
  * @type {Readonly<Record<string, readonly string[]>>}
  */
@@ -41,8 +41,16 @@ const NEAR = {
 };
 /** @type {Readonly<Record<string, string>>} */
 const OTHER = { '+': '-', '-': '+', '*': '/', '/': '*', '+=': '-=', '-=': '+=' };
-const ALL = ['test/core/', 'test/reference/'];
-/** Longer than any of these runs take; a mutant that never ends is noticed too. */
+const ALL = [
+  'test/core/',
+  'test/reference/conversions',
+  'test/reference/curves',
+  'test/reference/interpolation',
+  'test/reference/kernels',
+  'test/reference/slerp',
+  'test/reference/smooth',
+];
+/** Milliseconds; longer than any of these runs take. A mutant that never ends is noticed too. */
 const PATIENCE = 300_000;
 
 /**
@@ -52,6 +60,16 @@ const PATIENCE = 300_000;
 function option(name, fallback) {
   const at = process.argv.indexOf(name);
   return at < 0 ? fallback : (process.argv[at + 1] ?? fallback);
+}
+
+/**
+ * Whether a number is the size or the first content of a store that is written before it is read: no test can notice another.
+ *
+ * @param {ts.Node} number
+ */
+function isScratch({ parent }) {
+  if (ts.isArrayLiteralExpression(parent)) return parent.elements.every((each) => each.getText() === '0');
+  return ts.isNewExpression(parent) && parent.expression.getText().endsWith('Array');
 }
 
 /**
@@ -76,7 +94,7 @@ function flips(source) {
     }
     if (ts.isPrefixUnaryExpression(node) && node.operator === ts.SyntaxKind.MinusToken)
       found.push({ start: node.getStart(), end: node.operand.getStart(), from: '-', to: '' });
-    if (ts.isNumericLiteral(node)) {
+    if (ts.isNumericLiteral(node) && !isScratch(node)) {
       const value = Number(node.getText());
       flip(node, Number.isInteger(value) ? String(value + 1) : String(value * 1.1));
     }
@@ -101,10 +119,14 @@ function spread(list, count) {
   );
 }
 
-/** A copy of the repository whose own packages are the copy's. */
-function copyRepository() {
-  const root = mkdtempSync(path.join(tmpdir(), 'mutants-'));
-  const copy = path.join(root, 'repository');
+/**
+ * A copy of the repository whose own packages are the copy's.
+ *
+ * @param {string} root
+ * @param {number} number
+ */
+function copyRepository(root, number) {
+  const copy = path.join(root, `repository-${number}`);
   mkdirSync(path.join(copy, 'node_modules/@slewcurve'), { recursive: true });
   for (const name of ['package.json', 'tsconfig.json', 'vite.config.ts', '.ci', 'packages', 'test'])
     cpSync(name, path.join(copy, name), {
@@ -116,81 +138,153 @@ function copyRepository() {
       symlinkSync(path.resolve('node_modules', name), path.join(copy, 'node_modules', name));
   for (const name of readdirSync('packages'))
     symlinkSync(path.join(copy, 'packages', name), path.join(copy, 'node_modules/@slewcurve', name));
-  if (existsSync('../shared')) symlinkSync(path.resolve('../shared'), path.join(root, 'shared'));
-  return { root, copy };
+  return copy;
 }
 
 /**
- * Whether the tests pass in the copy.
+ * @typedef {{ name: string, text: string, rounds: readonly (readonly string[])[] }} Order a text that takes a formula file's place, and
+ * the tests to run round by round until one fails
+ */
+
+/** The process of one copy: does orders, says of each whether all tests passed. */
+async function serveOrders() {
+  const { createVitest } = await import('vitest/node');
+  const vitest = await createVitest('test', {
+    root: process.cwd(),
+    project: ['node'],
+    watch: false,
+    bail: 1,
+    reporters: [{}],
+    maxWorkers: 1,
+  });
+  /** @param {readonly string[]} tests */
+  const passes = async (tests) => {
+    const specifications = await vitest.globTestSpecifications([...tests]);
+    const { testModules, unhandledErrors } = await vitest.runTestSpecifications(specifications, false);
+    return testModules.length > 0 && unhandledErrors.length === 0 && testModules.every((each) => each.ok());
+  };
+  process.on('message', (/** @type {Order} */ { name, text, rounds }) => {
+    const target = path.resolve(SOURCE, name);
+    const original = readFileSync(target, 'utf8');
+    const work = async () => {
+      writeFileSync(target, text);
+      vitest.invalidateFile(target);
+      for (const tests of rounds) if (!(await passes(tests))) return false;
+      return true;
+    };
+    void work()
+      .catch(() => false)
+      .then((survives) => {
+        writeFileSync(target, original);
+        vitest.invalidateFile(target);
+        process.send?.(survives);
+      });
+  });
+}
+
+/**
+ * Does orders in a copy, one after the other. A process that does not answer is ended, and its mutant counts as noticed.
  *
  * @param {string} copy
- * @param {readonly string[]} tests
  */
-function passes(copy, tests) {
-  const vitest = path.resolve('node_modules/vitest/vitest.mjs');
-  const run = ['run', '--project', 'node', '--bail', '1', '--reporter', 'dot', ...tests];
-  return (
-    spawnSync(process.execPath, [vitest, ...run], { cwd: copy, timeout: PATIENCE, stdio: 'ignore' })
-      .status === 0
-  );
+function lane(copy) {
+  const start = () =>
+    fork(path.resolve('.ci/mutants.mjs'), ['--orders'], { cwd: copy, detached: true, stdio: 'ignore' });
+  let child = start();
+  const stop = () => {
+    if (child.pid !== undefined && child.exitCode === null) process.kill(-child.pid, 'SIGKILL');
+  };
+  /** @type {(order: Order) => Promise<boolean>} */
+  const survives = (order) =>
+    new Promise((resolve) => {
+      const answer = (/** @type {boolean} */ value) => {
+        clearTimeout(timer);
+        child.removeAllListeners();
+        resolve(value);
+      };
+      const again = () => {
+        stop();
+        const text = readFileSync(`${SOURCE}/${order.name}`, 'utf8');
+        writeFileSync(path.join(copy, SOURCE, order.name), text);
+        answer(false);
+        child = start();
+      };
+      const timer = setTimeout(again, PATIENCE);
+      child.once('message', answer);
+      child.once('exit', again);
+      child.send(order);
+    });
+  return { survives, stop };
 }
 
-const perFile = Number(option('--per-file', '5'));
-const only = option('--only', '');
-const files = FOLDERS.flatMap((folder) =>
-  readdirSync(`${SOURCE}/${folder}`)
-    .filter((name) => name.endsWith('.ts'))
-    .map((name) => `${folder}/${name}`),
-).filter((name) => name.includes(only));
-const work = files.map((name) => {
-  const text = readFileSync(`${SOURCE}/${name}`, 'utf8');
-  return { name, text, all: flips(text) };
-});
-if (process.argv.includes('--dry-run')) {
-  for (const { name, all } of work) console.log(name, all.length);
-  process.exit(0);
-}
-
-const { root, copy } = copyRepository();
-const results = [];
-try {
-  // Tests that fail without a mutant would count every mutant as noticed.
-  const folders = new Set(work.map(({ name }) => name.split('/')[0]));
-  for (const folder of folders)
-    if (!passes(copy, NEAR[folder ?? ''] ?? ALL))
-      throw new Error(`The tests of ${folder} fail in the copy, without any mutant.`);
-  if (!passes(copy, ALL)) throw new Error('The tests fail in the copy, without any mutant.');
-  for (const { name, text, all } of work) {
+async function main() {
+  const perFile = Number(option('--per-file', '5'));
+  const only = option('--only', '');
+  const files = FOLDERS.flatMap((folder) =>
+    readdirSync(`${SOURCE}/${folder}`)
+      .filter((name) => name.endsWith('.ts'))
+      .map((name) => `${folder}/${name}`),
+  ).filter((name) => name.includes(only));
+  const mutants = files.flatMap((name) => {
+    const text = readFileSync(`${SOURCE}/${name}`, 'utf8');
     const near = NEAR[name.split('/')[0] ?? ''] ?? ALL;
-    const target = path.join(copy, SOURCE, name);
-    const own = `test/core/${name.replace(/\.ts$/, '.test.ts')}`;
-    // The quickest first: most mutants are noticed by the test of their own file.
-    const rounds = [...(existsSync(path.join(copy, own)) ? [[own]] : []), near, ALL];
-    const tried = spread(all, perFile);
-    const unnoticed = [];
-    for (const { start, end, from, to } of tried) {
-      writeFileSync(target, `${text.slice(0, start)}${to}${text.slice(end)}`);
-      const survives = rounds.every((tests) => passes(copy, tests));
-      if (!survives) continue;
-      const line = text.slice(0, start).split('\n').length;
-      unnoticed.push({ line, from, to });
-      console.log(`${name}:${line}: ${to} for ${from} goes unnoticed`);
-    }
-    writeFileSync(target, text);
-    if (tried.length > 0)
-      results.push({ file: `${SOURCE}/${name}`, possible: all.length, tried: tried.length, unnoticed });
-    console.log(`${name}: ${tried.length - unnoticed.length} of ${tried.length} noticed`);
+    const all = flips(text);
+    return spread(all, perFile).map(({ start, end, from, to }) => ({
+      name,
+      possible: all.length,
+      line: text.slice(0, start).split('\n').length,
+      from,
+      to,
+      order: { name, text: `${text.slice(0, start)}${to}${text.slice(end)}`, rounds: [near, ALL] },
+      survives: false,
+    }));
+  });
+  console.log(`${mutants.length} mutants of ${files.length} files`);
+  const [first] = mutants;
+  if (process.argv.includes('--dry-run') || first === undefined) return 0;
+
+  const root = mkdtempSync(path.join(tmpdir(), 'mutants-'));
+  if (existsSync('../shared')) symlinkSync(path.resolve('../shared'), path.join(root, 'shared'));
+  const lanes = Array.from({ length: availableParallelism() }, (_, i) => lane(copyRepository(root, i)));
+  try {
+    // Tests that fail without a mutant would count every mutant as noticed.
+    const text = readFileSync(`${SOURCE}/${first.name}`, 'utf8');
+    const rounds = [...Object.values(NEAR), ALL];
+    if (!(await lanes[0].survives({ name: first.name, text, rounds })))
+      throw new Error('The tests fail in the copy, without any mutant.');
+    let next = 0;
+    await Promise.all(
+      lanes.map(async ({ survives }) => {
+        for (let mutant = mutants[next++]; mutant; mutant = mutants[next++]) {
+          mutant.survives = await survives(mutant.order);
+          const { name, line, from, to } = mutant;
+          if (mutant.survives) console.log(`${name}:${line}: ${to} for ${from} goes unnoticed`);
+          if (next % 50 === 0) console.log(`${next} of ${mutants.length} tried`);
+        }
+      }),
+    );
+  } finally {
+    for (const { stop } of lanes) stop();
+    rmSync(root, { recursive: true, force: true });
   }
-} finally {
-  rmSync(root, { recursive: true, force: true });
-}
-const tried = results.reduce((sum, { tried: count }) => sum + count, 0);
-const missed = results.reduce((sum, { unnoticed }) => sum + unnoticed.length, 0);
-const share = tried > 0 ? (tried - missed) / tried : 1;
-console.log(`${tried - missed} of ${tried} mutants noticed: ${(100 * share).toFixed(1)} %`);
-if (only === '')
-  writeFileSync(
-    RESULT,
-    `${JSON.stringify({ perFile, tried, noticed: tried - missed, share, results }, null, 1)}\n`,
+  const results = files.map((name) => {
+    const tried = mutants.filter((mutant) => mutant.name === name);
+    const unnoticed = tried
+      .filter(({ survives }) => survives)
+      .map(({ line, from, to }) => ({ line, from, to }));
+    return { file: `${SOURCE}/${name}`, possible: tried[0]?.possible ?? 0, tried: tried.length, unnoticed };
+  });
+  const missed = mutants.filter(({ survives }) => survives).length;
+  const share = (mutants.length - missed) / mutants.length;
+  console.log(
+    `${mutants.length - missed} of ${mutants.length} mutants noticed: ${(100 * share).toFixed(1)} %`,
   );
-process.exit(share >= 0.95 ? 0 : 1);
+  if (only === '') {
+    const counts = { perFile, tried: mutants.length, noticed: mutants.length - missed, share };
+    writeFileSync(RESULT, `${JSON.stringify({ ...counts, results }, null, 1)}\n`);
+  }
+  return share >= 0.95 ? 0 : 1;
+}
+
+if (process.argv.includes('--orders')) await serveOrders();
+else process.exit(await main());
