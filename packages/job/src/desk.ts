@@ -143,7 +143,7 @@ async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Pr
   const { opened, report, settings } = surveyed(folder);
   const stored = tracksOf(opened);
   const cut = stored.map((track) => withDeclaredCuts(track, settings.houseRules));
-  const { tracks: edited, results } = applySteps(cut, steps);
+  const { tracks: edited, results } = applySteps(cut, steps, opened.file.nodes);
   // What no step touched stays the very object that was read.
   const tracks = edited.map((track, at) => (track === cut[at] ? (stored[at] ?? track) : track));
   const houseRules = cutsAfter(settings.houseRules, stored, results);

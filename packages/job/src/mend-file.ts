@@ -53,7 +53,7 @@ export async function mendFile(
 ): Promise<MendedFile> {
   const tracks = opened.file.clips.flatMap((clip) => clip.tracks);
   const cut = tracks.map((track) => withDeclaredCuts(track, settings.houseRules));
-  const applied = applySteps(cut, card.steps);
+  const applied = applySteps(cut, card.steps, opened.file.nodes);
   const changed = applied.tracks.filter((track) => !cut.includes(track));
   const plan = await opened.file.plan(changed, followersOf(applied.results));
   const result = patchedSource(opened.source, plan);

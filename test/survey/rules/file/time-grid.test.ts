@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { applySteps } from '@slewcurve/mend';
 import { surveyTrack } from '@slewcurve/survey';
 import { turningTrack } from '../../../support/turning-track.js';
 
@@ -30,6 +31,19 @@ describe('file.time-grid', () => {
     expect(Math.abs(finding.value - drift)).toBeLessThan(0.001 * drift);
     expect(finding.message).toContain('a rounded frame of 30 a second');
   });
+
+  test.each([decimals(3, 60), decimals(2, 60), (key: number) => 0.033 * key])(
+    're-timing to the grid is proposed and clears the finding, values to the bit',
+    (time) => {
+      const turn = turningTrack((key) => key, 2000);
+      const track = { ...turn, times: turn.times.map((_, key) => time(key)) };
+      const { remedy } = surveyTrack(track).find(({ rule }) => rule === 'file.time-grid')!;
+      expect(remedy?.verb).toBe('re-time to grid');
+      const [after] = applySteps([track], [remedy!]).tracks;
+      expect(after.values).toEqual(track.values);
+      expect(surveyTrack(after).filter(({ rule }) => rule === 'file.time-grid')).toEqual([]);
+    },
+  );
 
   test('exact times, float32 times of ten minutes, and stamps that no rounding explains are clean', () => {
     expect(grid((key) => key / 60, 200)).toBeUndefined();

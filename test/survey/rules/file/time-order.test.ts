@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { playAs, storedTrack } from '@slewcurve/core';
+import { applySteps } from '@slewcurve/mend';
 import { surveyTrack } from '@slewcurve/survey';
 import { grid, keyed } from '../../../support/smooth-track.js';
 import { seededRandom } from '../../../support/seeded-random.js';
@@ -51,6 +52,18 @@ describe('file.time-order', () => {
       times: CLEAN.times.map((time, key) => (key === 20 ? 19.009 : key) || time),
     });
     expect(orders(slow)).toMatchObject([{ level: 'warning', limit: 0.01, keys: [20] }]);
+  });
+
+  test('sorting is proposed for keys out of order and exact repeats, and leaves no finding; two values at one time are left to people', () => {
+    const values = Float64Array.from(CLEAN.values);
+    values.copyWithin(80, 76, 80);
+    for (const track of [timed({ 20: 0.51 }), timed({ 20: CLEAN.times[19] }, values)]) {
+      const { remedy } = orders(track)[0];
+      expect(remedy).toEqual({ verb: 'sort times', clip: 'Wave', track: 'Arm' });
+      expect(orders(applySteps([track], [remedy!]).tracks[0])).toEqual([]);
+    }
+    expect(orders(timed({ 20: CLEAN.times[19] }))[0].remedy).toBeUndefined();
+    expect(orders(timed({ 20: 0.5, 21: Number.NaN }))[0].remedy).toBeUndefined();
   });
 
   test('no order of times makes a survey or a playback throw or give NaN (seed 15)', () => {

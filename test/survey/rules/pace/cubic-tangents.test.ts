@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { rotationTrack, type RotationTrack } from '@slewcurve/core';
+import { applySteps } from '@slewcurve/mend';
 import { surveyTrack } from '@slewcurve/survey';
 import { grid, keyed } from '../../../support/smooth-track.js';
 
@@ -46,5 +47,19 @@ describe('tangents of cubic tracks', () => {
     const finding = found(rotationTrack({ ...cubic, values }), 'pace.end-tangent')!;
     expect(finding.count).toBe(40);
     expect(finding.message).toContain('the identity (0, 0, 0, 1)');
+  });
+
+  test('setting tangents is proposed, clears the finding and keeps every value to the bit', () => {
+    for (const [track, rule] of [
+      [scaled(100), 'pace.tangent-scale'],
+      [cubic, 'pace.end-tangent'],
+    ] as const) {
+      const steps = found(track, rule)!.occurrences.map(({ remedy }) => remedy!);
+      const [after] = applySteps([track], steps).tracks;
+      expect(found(after, rule)).toBeUndefined();
+      expect(after.values.filter((_, i) => isValue(i))).toEqual(track.values.filter((_, i) => isValue(i)));
+      if (rule === 'pace.end-tangent')
+        after.values.forEach((value, i) => expect(value).toBe(isUnused(i) ? 0 : track.values[i]));
+    }
   });
 });

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { rotationTrack, toEuler, type RotationTrack } from '@slewcurve/core';
+import { applySteps } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, surveyTrack, type TrackSurveySettings } from '@slewcurve/survey';
 import { grid, poseAt } from '../../../support/smooth-track.js';
 
@@ -45,6 +46,23 @@ describe('rules of angle tracks', () => {
     expect(finding).toMatchObject({ rule: 'turn.euler-flip', keys: [2] });
     expect(finding.value).toBeGreaterThan(150);
     expect(finding.limit).toBeLessThan(1e-6);
+  });
+
+  test('unwrapping is proposed for both, and clears them without moving a key', () => {
+    const track = angles([
+      [340, 0, 0],
+      [355, 0, 0],
+      [5, 0, 0],
+      [20, 0, 0],
+      [200, 180, 180],
+      [202, 179, 181],
+    ]);
+    const found = turns(track);
+    expect(found.map(({ rule }) => rule)).toEqual(['turn.wrap', 'turn.euler-flip']);
+    const steps = found.flatMap(({ occurrences }) => occurrences.map(({ remedy }) => remedy!));
+    const { tracks, results } = applySteps([track], steps);
+    expect(turns(tracks[0])).toEqual([]);
+    for (const { result } of results) expect(result.largest).toBeLessThan(1e-5);
   });
 
   test('within 5° of the pole angles that race are named, and the detour between keys makes it a warning', () => {

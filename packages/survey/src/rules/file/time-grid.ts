@@ -1,6 +1,7 @@
 import { FRAME_RATES, medianGap } from '@slewcurve/core';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
 import { saySeconds } from '../../say-number.js';
+import { triedStep } from '../../tried-step.js';
 
 /** Fewer keys say nothing of a grid. */
 const LEAST_KEYS = 10;
@@ -25,12 +26,14 @@ export const timeGrid: Rule = Object.freeze({
     if (times.length < LEAST_KEYS || context.regime !== 'dense') return [];
     const decimals = decimalsOf(times);
     const frame = meanFrame(times, medianGap(context.track));
-    const rate = FRAME_RATES.find((one) => Math.abs(1 / one - frame) <= NEAR * frame);
+    const rate = FRAME_RATES.filter((one) => Math.abs(1 / one - frame) <= NEAR * frame).toSorted(
+      (a, b) => Math.abs(1 / a - frame) - Math.abs(1 / b - frame),
+    )[0];
     if (decimals === undefined || rate === undefined) return [];
-    return offFrames(times, frame, limits) ?? drifted(times, frame, decimals, limits) ?? [];
+    return offFrames(times, frame, rate, limits) ?? drifted(times, frame, decimals, limits) ?? [];
   },
-  // `re-time to grid` is not built yet.
-  remedy: (): Remedy | undefined => undefined,
+  remedy: ({ track }: TrackContext, { facts }: Place): Remedy | undefined =>
+    triedStep(track, { verb: 're-time to grid', fps: facts?.['rate'] ?? 0 }),
   message({ keys: [key = 0], value, limit, facts }: Place): string {
     const rate = facts?.['rate'] ?? 0;
     if (facts?.['drift'] === 1)
@@ -50,7 +53,7 @@ export const timeGrid: Rule = Object.freeze({
       'Common practice, no source. Three decimals at 60 frames a second read −2.0 to +4.2 % of the speed, two −17 to +67 %; a frame time of 0.0333 drifts by 180 ms in 3 minutes (measured).',
     spares: 'Uneven times that no rounding explains: hand-set keys, true stamps of a capture.',
     remedy:
-      'Set the times to the frames they belong to; values stay. The verb `re-time to grid` is not built yet.',
+      '`re-time to grid` sets each time to the frame that it belongs to, counted gap by gap; values stay to the bit, and what else moves the node goes along.',
   },
 });
 
@@ -80,7 +83,12 @@ function meanFrame(times: Float64Array, usual: number): number {
   return sum / count;
 }
 
-function offFrames(times: Float64Array, frame: number, limits: Limits): readonly Place[] | undefined {
+function offFrames(
+  times: Float64Array,
+  frame: number,
+  rate: number,
+  limits: Limits,
+): readonly Place[] | undefined {
   const { warning = 0, error = 0 } = limits;
   let value = 0;
   let worst = 0;
@@ -94,7 +102,7 @@ function offFrames(times: Float64Array, frame: number, limits: Limits): readonly
   if (!(value > warning * frame)) return undefined;
   const span = [times[worst - 1] ?? 0, times[worst] ?? 0] as const;
   const level = value > error * frame ? 'error' : 'warning';
-  return [{ keys: [worst], time: span[1], span, value, limit: warning * frame, level }];
+  return [{ keys: [worst], time: span[1], span, value, limit: warning * frame, level, facts: { rate } }];
 }
 
 function drifted(

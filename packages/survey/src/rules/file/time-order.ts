@@ -45,8 +45,12 @@ export const timeOrder: Rule = Object.freeze({
     }
     return places;
   },
-  // `sort times` and `declare cut` are not built yet.
-  remedy: (): Remedy | undefined => undefined,
+  remedy({ stored }: TrackContext, { value, facts }: Place): Remedy | undefined {
+    // Sorting helps neither keys that nearly meet nor two values at one time: which is meant is for people to say.
+    const sortable = value < 0 || facts?.['twin'] === 1;
+    if (!sortable || !stored.times.every(Number.isFinite)) return undefined;
+    return { step: { verb: 'sort times', clip: stored.clip, track: stored.id }, price: 0 };
+  },
   message({ keys, time, value, limit, facts }: Place): string {
     const [key = 0] = keys;
     if (value > 0)
@@ -68,7 +72,7 @@ export const timeOrder: Rule = Object.freeze({
     source: 'glTF 2.0 for the order; common practice, no source, for the least gap.',
     spares: 'Times that are not finite: those are `file.not-finite`.',
     remedy:
-      'Drop exact repeats at the source. Two values at one time may be a cut that is meant: declare it. The verbs `sort times` and `declare` are not built yet.',
+      '`sort times` puts keys in order and drops exact repeats; it lists every drop and changes no number of a key that stays. Two values at one time may be a cut that is meant: declare it in the house rules, or drop one.',
   },
 });
 

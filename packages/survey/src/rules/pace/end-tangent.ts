@@ -35,8 +35,11 @@ export const endTangent: Rule = Object.freeze({
     }
     return places;
   },
-  // `set tangents` is not built yet.
-  remedy: (): Remedy | undefined => undefined,
+  remedy({ track }: TrackContext, { keys, facts }: Place): Remedy {
+    const step = { verb: 'set tangents', clip: track.clip, track: track.id, keys };
+    if (facts?.['identity'] === 1 || track.times.length === 1) return { step, price: 0 };
+    return { step: { ...step, tangents: keys[0] === 0 ? 'in' : 'out' }, price: 0 };
+  },
   message({ keys, value, facts }: Place): string {
     if (facts?.['identity'] === 1)
       return `both tangents of key ${keys[0]} are the identity (0, 0, 0, 1), which is an orientation and no tangent`;
@@ -52,7 +55,8 @@ export const endTangent: Rule = Object.freeze({
     test: 'In a CUBICSPLINE track, the first in-tangent or the last out-tangent longer than 1e-6, or both tangents of a key equal to (0, 0, 0, 1). Always a note.',
     source: 'glTF 2.0.',
     spares: 'Tracks that are not CUBICSPLINE.',
-    remedy: 'Set them to zero. The verb `set tangents` is not built yet.',
+    remedy:
+      '`set tangents` sets those that are not used to zero, so that nothing plays otherwise, and lays identities anew from the turns beside them.',
   },
 });
 

@@ -19,8 +19,9 @@ export const eulerFlip: Rule = Object.freeze({
       limit: direct,
       level: 'warning',
     })),
-  // `unwrap` is not built yet.
-  remedy: (): Remedy | undefined => undefined,
+  remedy({ track }: TrackContext, { keys }: Place): Remedy {
+    return { step: { verb: 'unwrap', clip: track.clip, track: track.id, keys }, price: 0 };
+  },
   message({ keys: [key = 0], value, limit }: Place): string {
     return `keys ${key - 1} and ${key} write nearly one orientation with different angles: played as numbers it turns ${sayDegrees(value)} for a true ${sayDegrees(limit)}`;
   },
@@ -38,6 +39,6 @@ export const eulerFlip: Rule = Object.freeze({
       'Geometry of the two triples; the tenth is common practice, no source. Up to 157° travelled for none (measured).',
     spares: 'Real tumbling, quaternion tracks, playbacks that go by quaternions.',
     remedy:
-      'Take the triple nearest to the key before. The verb `unwrap` is not built yet; `unwrapEuler` of the library is.',
+      '`unwrap` takes the other triple from the key that jumps on, where that lies nearer to the key before; no orientation changes.',
   },
 });

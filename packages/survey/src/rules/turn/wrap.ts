@@ -15,8 +15,9 @@ export const wrap: Rule = Object.freeze({
   untouched: 'the orientation of every key',
   find: (context: TrackContext, { channel = 0 }: Limits): readonly Place[] =>
     placesOf(context, 'wrap', (step) => ({ value: step.channel, limit: channel, level: 'warning' })),
-  // `unwrap` is not built yet.
-  remedy: (): Remedy | undefined => undefined,
+  remedy({ track }: TrackContext, { keys }: Place): Remedy {
+    return { step: { verb: 'unwrap', clip: track.clip, track: track.id, keys }, price: 0 };
+  },
   message({ keys: [key = 0], value, limit, facts }: Place): string {
     const { travelled = 0, direct = 0 } = facts ?? {};
     return `from key ${key - 1} to key ${key} an angle steps by ${sayDegrees(value)} (limit ${sayDegrees(limit)}): played as numbers it turns ${sayDegrees(travelled)} for a true ${sayDegrees(direct)}`;
@@ -35,6 +36,6 @@ export const wrap: Rule = Object.freeze({
     spares:
       'Declared spins, whose whole turns are meant; quaternion tracks; playbacks that go by quaternions.',
     remedy:
-      'Add or take whole turns so that each key follows the one before. The verb `unwrap` is not built yet; `unwrapEuler` of the library is.',
+      '`unwrap` adds whole turns at the key that jumps, and to all that follow it; no orientation changes.',
   },
 });
