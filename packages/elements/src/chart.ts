@@ -26,6 +26,7 @@ import { rowSentence, sayReading } from './chart/text-twin.js';
 import { TraceCursor, type CursorHost } from './chart/trace-cursor.js';
 import { traceStyles } from './chart/trace-styles.js';
 import { controls } from './theme/controls.js';
+import { inTurn } from './theme/in-turn.js';
 import { paper } from './theme/paper.js';
 
 type Span = readonly [number, number];
@@ -81,6 +82,10 @@ export class SlewChart extends LitElement implements CursorHost {
   /** @internal Notes with the numbers that they have on the page. */
   numbered: readonly NumberedNote[] = [];
   private speedScale: SpeedScale = linearScale(1);
+  /** Width of the whole, px; asking the browser anew would make it lay the page out. */
+  private across = 0;
+  /** The sheet whose size is followed. */
+  private watched: Element | undefined;
   private readonly cursor = new TraceCursor(this);
   private readonly inSight = new RowsInSight(this, () => this.renderRoot.querySelectorAll('.row'));
   private readonly pointer = new SheetPointer({
@@ -123,7 +128,12 @@ export class SlewChart extends LitElement implements CursorHost {
   }
 
   private get narrow(): boolean {
-    return this.clientWidth > 0 && this.clientWidth < 560;
+    const across = this.across || this.clientWidth;
+    return across > 0 && across < 560;
+  }
+
+  protected override scheduleUpdate(): Promise<void> {
+    return inTurn(() => this.performUpdate());
   }
 
   /** Puts the keyboard on the trace. */
@@ -155,7 +165,11 @@ export class SlewChart extends LitElement implements CursorHost {
   }
 
   protected override updated(changed: PropertyValues<this>): void {
-    this.measure();
+    // Measuring lays the page out; later sizes come from the observer, after the browser has done that by itself.
+    if (this.width === 0) this.measure();
+    const sheet = this.renderRoot.querySelector('.sheet') ?? undefined;
+    if (sheet && sheet !== this.watched) this.resize.observe(sheet);
+    this.watched = sheet;
     // The cursor alone moves nothing in the margin; asking for heights on every pointer move would cost frames.
     if ([...changed.keys()].some((name) => name !== 'time' && name !== 'hover' && name !== 'span'))
       packNotes(this.renderRoot);
@@ -167,6 +181,7 @@ export class SlewChart extends LitElement implements CursorHost {
   };
 
   private measure(): void {
+    this.across = this.clientWidth;
     const sheet = this.renderRoot.querySelector('.sheet');
     if (sheet && Math.abs(sheet.clientWidth - this.width) >= 1) this.width = sheet.clientWidth;
   }

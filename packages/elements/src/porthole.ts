@@ -16,6 +16,7 @@ import { PLAY_SPEEDS, playOn } from './porthole/play-clock.js';
 import { portholeStyles } from './porthole/porthole-styles.js';
 import { FIRST_VIEW, turnView, type View } from './porthole/view.js';
 import { controls } from './theme/controls.js';
+import { inTurn } from './theme/in-turn.js';
 import { inkOf } from './theme/ink-of.js';
 import { holdPointer } from './theme/hold-pointer.js';
 import { paper } from './theme/paper.js';
@@ -263,8 +264,13 @@ export class SlewPorthole extends LitElement {
     event.preventDefault();
   };
 
+  protected override scheduleUpdate(): Promise<void> {
+    return inTurn(() => this.performUpdate());
+  }
+
   protected override updated(): void {
-    this.measure();
+    // Measuring lays the page out; later sizes come from the observer, after the browser has done that by itself.
+    if (this.size === 0) this.measure();
     this.draw();
   }
 

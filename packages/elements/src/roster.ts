@@ -16,7 +16,7 @@ import { countWords, rowWords, worstLevel, type RosterRow } from './roster/roste
 import { rosterStyles } from './roster/roster-styles.js';
 import { rowWindow, scrollToRow, type RowWindow } from './roster/window.js';
 import { controls } from './theme/controls.js';
-import { inTurn, updateInTurn } from './theme/in-turn.js';
+import { inTurn } from './theme/in-turn.js';
 import { inkOf } from './theme/ink-of.js';
 import { paper } from './theme/paper.js';
 import { valueOf } from './theme/value-of.js';
@@ -74,6 +74,8 @@ export class SlewRoster extends LitElement {
   declare private narrow: boolean;
   private shown: readonly RosterRow[] = [];
   private inkLeft = 0;
+  /** The list whose size is followed. */
+  private watched: Element | undefined;
   /** Read once: asking for a colour makes the browser work out all styles. */
   private inks: RosterInks | undefined;
   // Not within the observer's own step: what follows from a size may change another.
@@ -125,7 +127,7 @@ export class SlewRoster extends LitElement {
   };
 
   protected override scheduleUpdate(): Promise<void> {
-    return updateInTurn(() => this.performUpdate());
+    return inTurn(() => this.performUpdate());
   }
 
   private get place(): InkPlace {
@@ -268,6 +270,9 @@ export class SlewRoster extends LitElement {
   protected override updated(changed: PropertyValues<this>): void {
     // Measuring lays the page out; later sizes come from the observer, after the browser has done that by itself.
     if (this.inkWidth === 0 || changed.has('spacing')) this.measure();
+    const scroll = this.renderRoot.querySelector('.scroll') ?? undefined;
+    if (scroll === this.watched) return this.draw();
+    this.watched = scroll;
     for (const part of this.renderRoot.querySelectorAll('.scroll, .gauge .ink')) this.resize.observe(part);
     this.draw();
   }
@@ -298,7 +303,7 @@ export class SlewRoster extends LitElement {
       soft: inkOf(swatch, '--_soft'),
       hairline: inkOf(swatch, '--_hairline'),
     };
-    if (!drawInk(canvas, this.shown.slice(first, last), place, this.inks, DRAWING_MS)) inTurn(this.draw);
+    if (!drawInk(canvas, this.shown.slice(first, last), place, this.inks, DRAWING_MS)) void inTurn(this.draw);
   };
 
   private readonly scrolled = (): void => {

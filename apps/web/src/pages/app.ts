@@ -2,6 +2,7 @@ import { LitElement, html, nothing, type PropertyDeclarations, type TemplateResu
 import type { PlaybackId } from '@slewcurve/core';
 import { rankRows, type RosterRow } from '@slewcurve/elements/plot';
 import type { SlewRoster } from '@slewcurve/elements/roster';
+import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { askForFiles, droppedFiles, pickedFiles, type ChosenFile } from '../files/chosen-file.js';
 import { saveCopy } from '../files/save-file.js';
 import type { FileWork } from '../session/file-work.js';
@@ -76,6 +77,10 @@ export class SlewApp extends LitElement {
     super.disconnectedCallback();
     removeEventListener('keydown', this.keyed);
     for (const name of ['dragover', 'dragleave', 'drop'] as const) removeEventListener(name, this.dragged);
+  }
+
+  protected override scheduleUpdate(): Promise<void> {
+    return inTurn(() => this.performUpdate());
   }
 
   /** The demo scene where the address says so; work that an earlier visit left is offered. */

@@ -12,6 +12,7 @@ import type { SlewChart } from '@slewcurve/elements/chart';
 import type { SlewPorthole } from '@slewcurve/elements/porthole';
 import type { SlewSentence } from '@slewcurve/elements/sentence';
 import { rowAt, type ChartData } from '@slewcurve/elements/plot';
+import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { valueOf } from '@slewcurve/elements/theme/value-of';
 import type { TrackAnswer } from '@slewcurve/job';
 import { sayStep } from '@slewcurve/mend';
@@ -147,8 +148,8 @@ export class SlewChartPage extends LitElement {
     if (!answer) return;
     const [playback = 'as-written'] = this.session.settings.playbacks;
     for (const track of new Set([answer.before, answer.after])) {
-      const motion = motionOf(track, playback);
-      while (this.chosen === chosen && !motion.prepare(PREPARING_MS)) await nextPicture();
+      const motion = await inTurn(() => motionOf(track, playback));
+      while (this.chosen === chosen && !(await inTurn(() => motion.prepare(PREPARING_MS))));
     }
     if (this.chosen === chosen) this.answer = answer;
   }
@@ -178,6 +179,10 @@ export class SlewChartPage extends LitElement {
   override focus(): void {
     this.awaited = !this.chart;
     this.chart?.focus();
+  }
+
+  protected override scheduleUpdate(): Promise<void> {
+    return inTurn(() => this.performUpdate());
   }
 
   protected override updated(): void {
@@ -308,12 +313,6 @@ export class SlewChartPage extends LitElement {
     this.sentence = undefined;
     void this.updateComplete.then(() => this.focus());
   }
-}
-
-function nextPicture(): Promise<number> {
-  return new Promise((resolve) =>
-    document.hidden ? setTimeout(resolve, 0, 0) : requestAnimationFrame(resolve),
-  );
 }
 
 function option(id: PlaybackId, chosen: boolean): TemplateResult {

@@ -315,7 +315,7 @@ function settingsOf(file: FileWork | undefined, settings: JobSettings): JobSetti
 /** Pages out of sight draw no pictures, and must go on all the same. */
 function inNextPicture(work: () => void): void {
   if (document.hidden) setTimeout(work);
-  else requestAnimationFrame(() => inTurn(work));
+  else requestAnimationFrame(() => void inTurn(work));
 }
 
 function newWork(id: string, file: Omit<ChosenFile, 'blob'> & { readonly blob?: Blob }): FileWork {

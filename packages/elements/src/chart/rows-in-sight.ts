@@ -56,6 +56,7 @@ export class RowsInSight implements ReactiveController {
     if (next.length === 0) return;
     for (const row of next) this.waiting.delete(row);
     if (next.some((row) => !this.drawn.has(row))) this.show([...this.drawn, ...next]);
-    if (this.waiting.size > 0) requestAnimationFrame(() => this.drawWaiting());
+    if (this.waiting.size > 0)
+      void this.host.updateComplete.then(() => requestAnimationFrame(() => this.drawWaiting()));
   }
 }

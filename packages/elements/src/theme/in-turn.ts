@@ -9,25 +9,20 @@ let busy = false;
 
 /**
  * Does work at once while there is room before the next picture, else before a later one, in turn: where much is to be drawn, the
- * page goes on drawing and answering meanwhile. One piece of work is never split; whoever has much cuts it up.
+ * page goes on drawing and answering meanwhile. One piece of work is never split; whoever has much cuts it up. Resolves to what the
+ * work gives; rejects where it throws.
  */
-export function inTurn(work: () => void): void {
-  waiting.push(work);
-  if (!busy && waiting.length === 1 && spent < FOR_ONE_PICTURE) doNext();
-  askForPicture();
-}
-
-/** `inTurn` for the `scheduleUpdate` of an element: its update, done when its turn comes. */
-export function updateInTurn(update: () => void): Promise<void> {
+export function inTurn<Made>(work: () => Made): Promise<Made> {
   return new Promise((resolve, reject) => {
-    inTurn(() => {
+    waiting.push(() => {
       try {
-        update();
-        resolve();
+        resolve(work());
       } catch (error) {
         reject(error instanceof Error ? error : new Error(String(error)));
       }
     });
+    if (!busy && waiting.length === 1 && spent < FOR_ONE_PICTURE) doNext();
+    askForPicture();
   });
 }
 
@@ -35,23 +30,16 @@ function doNext(): void {
   const work = waiting.shift();
   const from = performance.now();
   busy = true;
-  try {
-    work?.();
-  } finally {
-    busy = false;
-    spent += performance.now() - from;
-  }
+  work?.();
+  busy = false;
+  spent += performance.now() - from;
 }
 
 function nextPicture(): void {
   asked = false;
   spent = 0;
-  try {
-    while (waiting.length > 0 && spent < FOR_ONE_PICTURE) doNext();
-  } finally {
-    // Also where a piece of work failed: the others have their turn.
-    askForPicture();
-  }
+  while (waiting.length > 0 && spent < FOR_ONE_PICTURE) doNext();
+  askForPicture();
 }
 
 /** Pages out of sight draw no pictures, and must go on all the same. */
