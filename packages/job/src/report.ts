@@ -96,6 +96,12 @@ export interface StepReport {
   readonly outside: number;
   /** Seconds that the clip became longer. */
   readonly added: number;
+  /** Keys that are gone, as numbered before the step, by track; left out where none are. */
+  readonly dropped?: readonly {
+    readonly clip: string;
+    readonly track: string;
+    readonly keys: readonly number[];
+  }[];
   /** Pace verbs alone, the worst of the tracks: what the new pace costs. Seconds, degrees, bytes. */
   readonly price?: Price;
   /** Pace verbs alone: where the new pace takes a bend of the path fast, new seconds and deg/s; worst first. */

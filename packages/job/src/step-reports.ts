@@ -19,8 +19,18 @@ function stepReport({ step }: AppliedStep, edits: readonly AppliedStep[]): StepR
       most(({ before, result }) => proveEdit(before, result.track, result, step.keep).outside),
     ),
     added: significant(most(({ result }) => result.added)),
+    ...droppedKeys(edits),
     ...paceReport(edits),
   };
+}
+
+function droppedKeys(edits: readonly AppliedStep[]): Pick<StepReport, 'dropped'> {
+  const dropped = edits.flatMap(({ before: { clip, id: track }, result }) =>
+    result.dropped === undefined || result.dropped.length === 0
+      ? []
+      : [{ clip, track, keys: result.dropped }],
+  );
+  return dropped.length === 0 ? {} : { dropped };
 }
 
 /** Worst price and worst bends over the tracks that a pace was given to. */

@@ -58,7 +58,13 @@ function printable(line: string): string {
 
 function sayDone(step: StepReport): string {
   const keys = step.changed === 1 ? '1 key changed' : `${step.changed} keys changed`;
-  return `${sayStep(step.step)} ${keys}, the largest by ${number(step.largest)}°; outside its span ${number(step.outside)}°; ${number(step.added)} s added.`;
+  return `${sayStep(step.step)} ${keys}, the largest by ${number(step.largest)}°; outside its span ${number(step.outside)}°; ${number(step.added)} s added.${(step.dropped ?? []).map(sayDropped).join('')}`;
+}
+
+function sayDropped({ track, keys }: NonNullable<StepReport['dropped']>[number]): string {
+  const listed =
+    keys.length > 20 ? `${keys.slice(0, 20).join(', ')} and ${keys.length - 20} more` : keys.join(', ');
+  return ` Dropped of ${track}: ${keys.length === 1 ? 'key' : 'keys'} ${listed}.`;
 }
 
 const COLUMNS: readonly { readonly head: string; cell(track: TrackReport): string }[] = [
