@@ -51,7 +51,11 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     which: fc.constantFrom('in' as const, 'out' as const),
     ease: fc.oneof(fc.string(), fc.constantFrom('cubic-bezier(0.42, 0, 0.58, 1)', 'minimum-jerk')),
     seconds,
-    ends: fc.constantFrom('same' as const, 'run' as const),
+    ends: fc.constantFrom('same' as const, 'run' as const, 'go' as const),
+    fromTrack: names,
+    fromClip: names,
+    fromSpan: fc.tuple(number, number),
+    meet: seconds,
     with: fc.constantFrom('node' as const, 'track' as const, 'clip' as const),
     store: fc.constantFrom('move' as const, 'frames' as const, 'cubic' as const),
     axes: fc.constantFrom('x z -y', '-z -x y', 'x y -z'),
@@ -158,6 +162,27 @@ describe('sentence', () => {
       track: 'Neck',
       keys: [3, 5],
     });
+  });
+
+  it('reads times as frames and timecode on the clip’s grid, and leaves names and rates alone', () => {
+    const parse = (text: string): Step => parseSentence(text, 30);
+    expect(parse('Hold all keys of camera in Flight, at 00:00:04:00, lasting 15 frames.')).toMatchObject({
+      at: 4,
+      seconds: 0.5,
+    });
+    expect(parse('Normalise all keys of "frame 3" in Walk, between frame 15 and 00:00:01:15.')).toMatchObject(
+      {
+        track: 'frame 3',
+        span: [0.5, 1.5],
+      },
+    );
+    expect(parse('Re-grid all keys of camera in Flight, to 24 frames a second.').fps).toBe(24);
+    expect(codeOf(() => parseSentence('Hold all keys of camera in Flight, at frame 30, lasting 1 s.'))).toBe(
+      'time.needs-grid',
+    );
+    expect(
+      parseSentence('Hold all keys of camera in Flight, at 00:01:00;02, lasting 1 s.', 29.97).at,
+    ).toBeCloseTo(60.06, 9);
   });
 
   it('says where a sentence stops making sense', () => {

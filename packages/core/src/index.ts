@@ -45,6 +45,7 @@ export { turnAboutOwn, turnAboutParent, turnAboutWorld } from './quaternion/turn
 export { turnBetween } from './quaternion/turn-between.js';
 export { alignSigns, signChanges, type AlignedTrack, type AlignSignsOptions } from './track/align-signs.js';
 export { exactRate } from './time/exact-rate.js';
+export { readTime, sayTime, TIME_FORMS, type TimeForm } from './time/time-text.js';
 export { findSegment } from './track/find-segment.js';
 export { FRAME_RATES, frameGrid } from './track/frame-grid.js';
 export { keyOrientation } from './track/key-orientation.js';

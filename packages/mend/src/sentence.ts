@@ -2,6 +2,7 @@ import { SlewcurveError } from '@slewcurve/core';
 import { CLAUSES, KEYS_PATTERN, readKeys } from './clauses.js';
 import { VERBS, verbNamed } from './registry.js';
 import type { Step } from './step.js';
+import { timesInSeconds } from './times-in-seconds.js';
 import type { Verb } from './verb.js';
 
 /**
@@ -14,11 +15,12 @@ export function sayStep(step: Step): string {
 }
 
 /**
- * The step that a sentence says; undoes `sayStep`. The final full stop may be left out and the first word may begin small.
+ * The step that a sentence says; undoes `sayStep`. The final full stop may be left out and the first word may begin small. Times may be seconds, or as
+ * frames or timecode ("between frame 15 and 00:00:01:00") where the clip's frames per second are given.
  *
- * @throws SlewcurveError `sentence.unknown-opening`, `sentence.unreadable`
+ * @throws SlewcurveError `sentence.unknown-opening`, `sentence.unreadable`, and what `readTime` throws of a frame
  */
-export function parseSentence(text: string): Step {
+export function parseSentence(text: string, fps?: number): Step {
   const sentence = text.trim().replace(/\.$/, '');
   const verb = verbOpening(sentence);
   let rest = sentence.slice(verb.opening.length);
@@ -28,7 +30,7 @@ export function parseSentence(text: string): Step {
   const [track, afterTrack] = takeName(rest);
   if (!afterTrack.startsWith(' in ')) throw unreadable(afterTrack, '" in " and the name of the clip');
   const [clip, afterClip] = takeName(afterTrack.slice(4));
-  rest = afterClip;
+  rest = timesInSeconds(afterClip, fps);
   let step: Step = {
     verb: verb.name,
     clip,
