@@ -19,6 +19,8 @@ describe('VERBS', () => {
       'even out',
       'cap',
       'shape',
+      'copy pace',
+      'match',
       'hold',
       'set marks',
       'stretch',

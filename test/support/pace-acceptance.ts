@@ -2,6 +2,7 @@ import { type RotationTrack, angleBetween, playAs } from '@slewcurve/core';
 import {
   type Bend,
   type EditResult,
+  type EditScene,
   type Price,
   type Repaced,
   type Step,
@@ -20,9 +21,13 @@ export interface PaceResult extends EditResult {
 }
 
 /** Runs a pace step and asserts what every one owes (EDITS' U): nothing but the clock is other outside the span, kept keys keep their values. */
-export function repaced(track: RotationTrack, step: Omit<Step, 'clip' | 'track'>): PaceResult {
+export function repaced(
+  track: RotationTrack,
+  step: Omit<Step, 'clip' | 'track'>,
+  scene?: EditScene,
+): PaceResult {
   const [times, values] = [track.times.slice(), track.values.slice()];
-  const result = verbNamed(step.verb).apply(track, { clip: track.clip, track: track.id, ...step });
+  const result = verbNamed(step.verb).apply(track, { clip: track.clip, track: track.id, ...step }, scene);
   expect(track.times, 'the given track is not written').toEqual(times);
   expect(track.values, 'the given track is not written').toEqual(values);
   const proof = proveEdit(track, result.track, result, step.keep);

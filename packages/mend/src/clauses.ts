@@ -15,6 +15,8 @@ interface Clause {
 const NUMBER = String.raw`(-?\d+(?:\.\d+)?(?:e[+-]?\d+)?)`;
 /** A JSON string. */
 const TEXT = String.raw`"(?:[^"\\]|\\.)*"`;
+/** A name as `sayName` says it. */
+const NAME = String.raw`${TEXT}|[^\s",]+`;
 const KEYS = String.raw`keys? (\d+(?:, \d+)*(?: and \d+)?)`;
 
 const STORE_WORDS: Readonly<Record<NonNullable<Step['store']>, string>> = {
@@ -85,6 +87,30 @@ export const CLAUSES: readonly Clause[] = [
     say: ({ turns }) => `with ${turns} whole ${turns === 1 ? 'turn' : 'turns'} more`,
     pattern: /^, with (-?\d+) whole turns? more/,
     read: ([turns]) => ({ turns: Number(turns) }),
+  },
+  {
+    key: 'fromTrack',
+    say: ({ fromTrack = '' }) => `from track ${sayName(fromTrack)}`,
+    pattern: new RegExp(`^, from track (${NAME})`),
+    read: ([name = '']) => ({ fromTrack: readName(name) }),
+  },
+  {
+    key: 'fromClip',
+    say: ({ fromClip = '' }) => `from clip ${sayName(fromClip)}`,
+    pattern: new RegExp(`^, from clip (${NAME})`),
+    read: ([name = '']) => ({ fromClip: readName(name) }),
+  },
+  {
+    key: 'fromSpan',
+    say: ({ fromSpan = [0, 0] }) => `from ${sayNumber(fromSpan[0])} s to ${sayNumber(fromSpan[1])} s there`,
+    pattern: new RegExp(`^, from ${NUMBER} s to ${NUMBER} s there`),
+    read: ([from, to]) => ({ fromSpan: [Number(from), Number(to)] }),
+  },
+  {
+    key: 'meet',
+    say: ({ meet = 0 }) => `meeting at ${sayNumber(meet)} deg/s`,
+    pattern: new RegExp(`^, meeting at ${NUMBER} deg/s`),
+    read: ([meet]) => ({ meet: Number(meet) }),
   },
   {
     key: 'rate',
@@ -312,6 +338,10 @@ function readPair(pair: string, between: string): readonly [number, number] {
 /** A name as it is, or as a JSON string where white space, a comma, a quote or a last full stop would make it unclear. */
 function sayName(name: string): string {
   return /^[^\s",\p{C}]*[^\s",.\p{C}]$/u.test(name) ? name : JSON.stringify(name);
+}
+
+function readName(name: string): string {
+  return name.startsWith('"') ? String(JSON.parse(name)) : name;
 }
 
 function sayNumber(value: number): string {

@@ -1,5 +1,5 @@
 export type { Step } from './step.js';
-export type { Bend, EditResult, EditScene, Price, Repaced, TimeMap, Verb } from './verb.js';
+export type { Bend, EditResult, EditScene, Meeting, Price, Repaced, TimeMap, Verb } from './verb.js';
 export { VERBS, verbNamed } from './registry.js';
 export { nearestWord } from './nearest-word.js';
 export { type AppliedStep, type JobCard, applySteps, parseJobCard } from './job-card.js';

@@ -17,11 +17,7 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
   clip: (value) => ({ clip: text(value) }),
   track: (value) => ({ track: text(value) }),
   keys: (value) => ({ keys: keyNumbers(value) }),
-  span: (value) => {
-    const [from, to] = finiteNumbers(value, 2);
-    if (from > to) throw new Fault('card.bad-number', 'must not end before it starts');
-    return { span: [from, to] };
-  },
+  span: (value) => ({ span: spanOf(value) }),
   shoulders: (value) => ({ shoulders: seconds(value) }),
   keep: (value) => ({ keep: keyNumbers(value) }),
   axis: (value) => {
@@ -64,6 +60,14 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
     if (!Number.isSafeInteger(value) || typeof value !== 'number')
       throw new Fault('card.bad-number', 'must be a whole number');
     return { turns: value };
+  },
+  fromTrack: (value) => ({ fromTrack: text(value) }),
+  fromClip: (value) => ({ fromClip: text(value) }),
+  fromSpan: (value) => ({ fromSpan: spanOf(value) }),
+  meet: (value) => {
+    if (!isFiniteNumber(value) || value < 0)
+      throw new Fault('card.bad-number', 'must be a finite number of deg/s, 0 or more');
+    return { meet: value };
   },
   axes: (value) => {
     const words = text(value);
@@ -164,6 +168,12 @@ function pairs(value: unknown, what: string): (readonly [number, number])[] {
     const [first, second] = finiteNumbers(pair, 2);
     return [first, second] as const;
   });
+}
+
+function spanOf(value: unknown): readonly [number, number] {
+  const [from, to] = finiteNumbers(value, 2);
+  if (from > to) throw new Fault('card.bad-number', 'must not end before it starts');
+  return [from, to];
 }
 
 function finiteNumbers(value: unknown, count: number): readonly number[] {

@@ -3,11 +3,13 @@ import { bridge } from './edits/bridge.js';
 import { cap } from './edits/cap.js';
 import { chooseSide } from './edits/choose-side.js';
 import { closeLoop } from './edits/close-loop.js';
+import { copyPace } from './edits/copy-pace.js';
 import { easeInOut } from './edits/ease-in-out.js';
 import { easeThrough } from './edits/ease-through.js';
 import { evenOut } from './edits/even-out.js';
 import { hold } from './edits/hold.js';
 import { liftOut } from './edits/lift-out.js';
+import { match } from './edits/match.js';
 import { normaliseKeys } from './edits/normalise.js';
 import { reSeat } from './edits/re-seat.js';
 import { reverse } from './edits/reverse.js';
@@ -50,6 +52,8 @@ export const VERBS: readonly Verb[] = Object.freeze([
   cap,
   shape,
   hold,
+  copyPace,
+  match,
   setMarks,
   stretch,
   shrink,

@@ -56,6 +56,14 @@ export interface Step {
   readonly reach?: number;
   /** set marks: pairs of an old time and the time at which what stood there is to stand, seconds, ascending. */
   readonly marks?: readonly (readonly [old: number, time: number])[];
+  /** copy pace, match: the other track, by its name or a pattern that fits one alone. Default: the track itself. */
+  readonly fromTrack?: string;
+  /** copy pace, match: the clip of the other track. Default: the track's own. */
+  readonly fromClip?: string;
+  /** copy pace: between which of the other's times. Default: all of it. */
+  readonly fromSpan?: readonly [number, number];
+  /** match: the speed that both sides are to have, deg/s. Default: the mean of both; that of another track, where one is named. */
+  readonly meet?: number;
   /** restate: the new axes out of the old ones, as `axisChange` reads it: "x z -y". */
   readonly axes?: string;
   /** restate: what the four stored numbers really are, in their order; they were read as xyzw. */

@@ -23,6 +23,8 @@ export interface EditResult {
   readonly repaced?: Repaced;
   /** Pace verbs alone: what the new pace costs. */
   readonly price?: Price;
+  /** match alone: what both sides of the join turn at now. */
+  readonly meeting?: Meeting;
   /** Pace verbs alone: where the new pace takes a bend of the path fast: shown before it is taken. Worst first. */
   readonly bends?: readonly Bend[];
 }
@@ -66,6 +68,15 @@ export interface Price {
   readonly degrees: number;
   /** Bytes that times and values take more in the track's own storage. */
   readonly bytes: number;
+}
+
+/** Both sides of a join. */
+export interface Meeting {
+  /** Speeds just before and just after it, deg/s. */
+  readonly before: number;
+  readonly after: number;
+  /** Angle between the axes that they turn about, own axes, degrees: no pace can change it. 0 where a side rests. */
+  readonly axis: number;
 }
 
 /** A place where the turn changes its direction at once, or nearly so. */
