@@ -25,6 +25,12 @@ import { SheetPointer } from './chart/sheet-pointer.js';
 import { rowSentence, sayReading } from './chart/text-twin.js';
 import { TraceCursor, type CursorHost } from './chart/trace-cursor.js';
 import { traceStyles } from './chart/trace-styles.js';
+import { ChartHands, type HandName } from './gesture/chart-hands.js';
+import { hatching } from './gesture/hand-picture.js';
+import { handStyles } from './gesture/hand-styles.js';
+import { handWords } from './gesture/hand-words.js';
+import type { HandEdit } from './gesture/hand.js';
+import { placeAt, type Paper } from './gesture/paper-place.js';
 import { controls } from './theme/controls.js';
 import { inTurn } from './theme/in-turn.js';
 import { paper } from './theme/paper.js';
@@ -40,6 +46,9 @@ type Span = readonly [number, number];
  * @fires note-chosen - `{ id: string }`
  * @fires remedy-chosen - `{ id: string }` the button of a note's remedy
  * @fires play-asked - the space bar
+ * @fires edit-sketched - `{ edit: HandEdit, settled: boolean, idle: boolean, motion?: Motion }` an edit is made by hand
+ * @fires edit-taken - the edit at hand is to be done
+ * @fires edit-dropped - it was let go
  * @fires fold-chosen - `{ fold: number }` seconds a row
  */
 export class SlewChart extends LitElement implements CursorHost {
@@ -51,13 +60,14 @@ export class SlewChart extends LitElement implements CursorHost {
     span: { attribute: false },
     chosen: { type: String },
     opened: { attribute: false },
+    edit: { attribute: false },
     hover: { state: true },
     width: { state: true },
     unfolded: { state: true },
     inWords: { state: true },
     asTable: { state: true },
   };
-  static override styles: CSSResult[] = [paper, controls, traceStyles, chartStyles];
+  static override styles: CSSResult[] = [paper, controls, traceStyles, chartStyles, handStyles];
 
   declare data: ChartData | undefined;
   /** The cursor, seconds. */
@@ -72,6 +82,8 @@ export class SlewChart extends LitElement implements CursorHost {
   declare chosen: string | undefined;
   /** Stretch that the close-up shows; undefined: closed. */
   declare opened: Span | undefined;
+  /** The step at hand, but for its names: its handle stands on the trace. Undefined: none, or one that no hand makes. */
+  declare edit: HandEdit | undefined;
   /** @internal */
   declare hover: number | undefined;
   declare private width: number;
@@ -87,12 +99,24 @@ export class SlewChart extends LitElement implements CursorHost {
   /** The sheet whose size is followed. */
   private watched: Element | undefined;
   private readonly cursor = new TraceCursor(this);
+  private readonly hands = new ChartHands(this);
   private readonly inSight = new RowsInSight(this, () => this.renderRoot.querySelectorAll('.row'));
   private readonly pointer = new SheetPointer({
     hover: (time) => this.cursor.hoverAt(time),
     go: (time, widen) => this.cursor.go(time, widen),
     drag: (span, settled) => this.cursor.dragged(span, settled),
     note: (id) => this.cursor.choose(id),
+    catches: (row, { x, y }) => this.hands.catches(this.paperOf(row), x, y),
+    grab: (row, grip, { x, y }) => {
+      const on = this.paperOf(row);
+      this.hands.grab(on, grip, placeAt(on, x, y));
+    },
+    pull: (row, { x, y }) => this.hands.work.drag(placeAt(this.paperOf(row), x, y)),
+    rest: (lost) => {
+      if (lost) this.hands.work.letGo();
+      else this.hands.work.rest();
+      this.focusGrip();
+    },
   });
   private readonly resize = new ResizeObserver(() => this.measure());
 
@@ -153,6 +177,7 @@ export class SlewChart extends LitElement implements CursorHost {
       }
       this.time = Math.min(data.motion.end, Math.max(data.motion.start, this.time));
     }
+    if (changed.has('edit')) this.hands.follow(this.edit);
     if (changed.has('data') || changed.has('scale')) this.speedScale = this.chooseScale(data);
   }
 
@@ -176,7 +201,7 @@ export class SlewChart extends LitElement implements CursorHost {
   }
 
   private readonly showAll = (): void => {
-    this.inSight.show(this.rows.keys());
+    this.inSight.showAll(this.rows.length);
     this.performUpdate();
   };
 
@@ -204,13 +229,22 @@ export class SlewChart extends LitElement implements CursorHost {
           closeUp: () => this.cursor.act({ kind: this.opened ? 'back' : 'open-close-up' }),
         },
       )}
-      ${this.readout(data, now)}
+      ${
+        data.keys.length < 2
+          ? nothing
+          : handWords(this.hands.ends, {
+              begin: (name) => this.begin(name),
+              ends: (law) => this.hands.chooseEnds(law),
+            })
+      }
+      ${this.readout(data, now)} ${hatching}
+      <p class="unseen" role="status">${this.hands.spoken}</p>
       <div class="heads" aria-hidden="true">
         <span>time</span><span>angular speed, as played</span><span>odometer</span><span>findings</span>
       </div>
       <ol class="rows" aria-label="Rows of the trace" @pointerleave=${this.cursor.leave}>
         ${repeat(
-          rows,
+          rows.slice(0, this.inSight.builtOf(rows.length)),
           (row) => row.index,
           (row) => this.row(data, rows, row, now, here),
         )}
@@ -223,7 +257,7 @@ export class SlewChart extends LitElement implements CursorHost {
   }
 
   private readout(data: ChartData, now: number): TemplateResult {
-    const reading = data.motion.read(now);
+    const reading = (this.hands.shown ?? data.motion).read(now);
     return html`<div
       class="readout"
       role="slider"
@@ -251,11 +285,14 @@ export class SlewChart extends LitElement implements CursorHost {
     const last = row.index === rows.length - 1;
     const notes = this.numbered.filter(({ note }) => rowAt(rows, note.time) === row.index);
     const open = this.opened && rowAt(rows, (this.opened[0] + this.opened[1]) / 2) === row.index;
-    const carried = data.motion.read(Math.min(row.to, data.motion.end)).odometer;
+    const shown = this.hands.shown ?? data.motion;
+    const carried = shown.read(Math.min(row.to, shown.end)).odometer;
+    const on = this.paperOf(row);
+    const sketched = this.hands.work.sketch && !data.tried;
     return html`<li class="row ${row.index === here ? 'here' : ''}" data-row=${row.index}>
       <span class="from">${sayTime(row.from, row.from % 1 === 0 ? 0 : 2)}</span>
       <div
-        class="sheet"
+        class="sheet ${sketched ? 'sketched' : ''}"
         @pointermove=${(event: PointerEvent) => this.pointer.move(event, row)}
         @pointerdown=${(event: PointerEvent) => this.pointer.down(event, row)}
         @pointerup=${(event: PointerEvent) => this.pointer.up(event, row) && this.focus({ preventScroll: true })}
@@ -266,8 +303,9 @@ export class SlewChart extends LitElement implements CursorHost {
           [data, this.speedScale, this.width, this.chosen, row.from, row.to, this.inSight.has(row.index)],
           () => this.picture(data, row),
         )}
-        ${this.spanMark(row)}
+        ${this.spanMark(row)} ${this.hands.picture(on, row.index === rowAt(rows, this.time))}
         ${row.index === here ? html`<div class="cursor" .style=${`left:${this.left(row, now)}px`}></div>` : nothing}
+        ${this.hands.grips(on, row.index === rowAt(rows, this.time))}
       </div>
       <span class="carried"
         ><span class="unseen">odometer </span>${sayAngle(carried, 4)}<span class="unseen"
@@ -339,6 +377,22 @@ export class SlewChart extends LitElement implements CursorHost {
   /** @internal */
   release(): void {
     this.pointer.cancel();
+  }
+
+  private paperOf(row: FoldRow): Paper {
+    return { row, width: this.width, bands: ROW, scale: this.speedScale };
+  }
+
+  private begin(name: HandName): void {
+    const { rows } = this;
+    this.hands.begin(this.paperOf(rows[rowAt(rows, this.time)]), name);
+  }
+
+  /** @internal */
+  focusGrip(): void {
+    void this.updateComplete.then(() =>
+      this.renderRoot.querySelector<HTMLElement>('.grip.at-work')?.focus({ preventScroll: true }),
+    );
   }
 
   /** Opens the close-up at the cursor, or around the span. */

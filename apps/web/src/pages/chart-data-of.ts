@@ -73,7 +73,10 @@ export function chartDataOf(subject: ChartSubject): ChartData {
     notes: notesOf(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? []),
     ...(clip?.frameRate !== undefined && { frameRate: clip.frameRate }),
     ...(kept && { kept }),
-    ...(earlier !== shown && { before: { motion: motionOf(earlier, playback), name: 'before' } }),
+    ...(earlier !== shown && {
+      before: { motion: motionOf(earlier, playback), name: 'before', keys: earlier.times },
+    }),
+    ...(subject.preview && subject.preview !== subject.after && { tried: true }),
     ...(second && {
       second: { motion: motionOf(shown, second), name: second.replaceAll('-', ' ') },
     }),

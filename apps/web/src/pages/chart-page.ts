@@ -11,11 +11,11 @@ import { PLAYBACKS, playAs, type PlaybackId, type RotationTrack } from '@slewcur
 import type { SlewChart } from '@slewcurve/elements/chart';
 import type { SlewPorthole } from '@slewcurve/elements/porthole';
 import type { SlewSentence } from '@slewcurve/elements/sentence';
-import { rowAt, type ChartData } from '@slewcurve/elements/plot';
+import { rowAt, type ChartData, type HandEdit, type Motion } from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { valueOf } from '@slewcurve/elements/theme/value-of';
 import type { TrackAnswer } from '@slewcurve/job';
-import { sayStep } from '@slewcurve/mend';
+import { sayStep, type Step } from '@slewcurve/mend';
 import type { FileWork } from '../session/file-work.js';
 import { trackKey } from '../session/file-work.js';
 import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
@@ -43,6 +43,8 @@ export class SlewChartPage extends LitElement {
     time: { state: true },
     span: { state: true },
     sentence: { state: true },
+    edit: { state: true },
+    sketched: { state: true },
     note: { state: true },
     busy: { state: true },
     fold: { state: true },
@@ -100,6 +102,10 @@ export class SlewChartPage extends LitElement {
   declare private time: number;
   declare private span: readonly [number, number] | undefined;
   declare private sentence: SentenceAtHand | undefined;
+  /** The step of the sentence, or of the hand that is making one. */
+  declare private edit: HandEdit | undefined;
+  /** What the hand that is at work would make of the motion. */
+  declare private sketched: Motion | undefined;
   declare private note: string | undefined;
   declare private busy: boolean;
   /** Seconds a row, where somebody chose. */
@@ -138,6 +144,8 @@ export class SlewChartPage extends LitElement {
     this.time = 0;
     this.answer = undefined;
     this.sentence = undefined;
+    this.edit = undefined;
+    this.sketched = undefined;
     this.span = undefined;
     this.note = undefined;
     this.fold = undefined;
@@ -208,6 +216,10 @@ export class SlewChartPage extends LitElement {
           .time=${this.time}
           .span=${this.span}
           .chosen=${this.note}
+          .edit=${this.edit}
+          @edit-sketched=${(event: CustomEvent<Sketched>) => this.follow(event.detail)}
+          @edit-taken=${() => void this.applySentence()}
+          @edit-dropped=${() => this.leaveSentence()}
           @fold-chosen=${(event: CustomEvent<{ fold: number }>) => (this.fold = event.detail.fold)}
           @cursor-moved=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
           @span-chosen=${(event: CustomEvent<{ span: [number, number] | undefined }>) => (this.span = event.detail.span)}
@@ -219,7 +231,7 @@ export class SlewChartPage extends LitElement {
         <details class="figure" ?open=${!this.narrow}>
           <summary>3-D view</summary>
           <slew-porthole
-            .data=${data}
+            .data=${this.sketched ? sketchedData(data, this.sketched) : data}
             .time=${this.time}
             .span=${this.span}
             ?camera=${data.rateNames[0] === 'tilt'}
@@ -296,7 +308,20 @@ export class SlewChartPage extends LitElement {
   }
 
   private rewrite(text: string): void {
-    if (this.sentence && this.answer) this.sentence = tryOut(text, this.sentence.time, this.answer.after);
+    if (!this.sentence || !this.answer) return;
+    this.sentence = tryOut(text, this.sentence.time, this.answer.after);
+    if (this.sentence.step) this.edit = this.sentence.step;
+  }
+
+  /** An edit is made by hand: the porthole follows it, and at rest it is a sentence. */
+  private follow({ edit, settled, idle, motion }: Sketched): void {
+    const { answer, chosen } = this;
+    if (!answer || !chosen) return;
+    this.sketched = settled ? undefined : motion;
+    if (!settled) return;
+    this.edit = edit;
+    const step: Step = { ...edit, clip: chosen.clip, track: chosen.track };
+    this.sentence = idle ? undefined : tryOut(sayStep(step), edit.at ?? this.time, answer.after);
   }
 
   /** Apply what is written. The keyboard goes back to the trace. */
@@ -311,8 +336,23 @@ export class SlewChartPage extends LitElement {
 
   private leaveSentence(): void {
     this.sentence = undefined;
+    this.edit = undefined;
+    this.sketched = undefined;
     void this.updateComplete.then(() => this.focus());
   }
+}
+
+/** What the chart says of an edit by hand. */
+interface Sketched {
+  readonly edit: HandEdit;
+  readonly settled: boolean;
+  readonly idle: boolean;
+  readonly motion?: Motion;
+}
+
+function sketchedData(data: ChartData, motion: Motion): ChartData {
+  const motionBefore = data.tried ? data.before?.motion : data.motion;
+  return { ...data, motion, ...(motionBefore && { before: { motion: motionBefore, name: 'before' } }) };
 }
 
 function option(id: PlaybackId, chosen: boolean): TemplateResult {

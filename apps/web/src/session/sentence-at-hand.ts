@@ -1,5 +1,12 @@
 import type { RotationTrack } from '@slewcurve/core';
-import { applySteps, parseSentence, type EditResult, type Step } from '@slewcurve/mend';
+import {
+  applySteps,
+  parseSentence,
+  type Bend,
+  type EditResult,
+  type Price,
+  type Step,
+} from '@slewcurve/mend';
 
 /** A sentence that is being written, read, and tried on the track before it is applied. */
 export interface SentenceAtHand {
@@ -35,10 +42,27 @@ export function tryOut(text: string, time: number, track: RotationTrack): Senten
   }
 }
 
-function priceOf({ changed, largest, added, span }: EditResult): string {
+function priceOf(result: EditResult): string {
+  const { changed, largest, added, span, price, bends = [] } = result;
   if (changed.length === 0) return 'Nothing would change.';
-  const keys = changed.length === 1 ? '1 key changes' : `${changed.length} keys change`;
-  const turn = largest > 0 ? `the largest turns by ${largest.toPrecision(3)}°` : 'none turns';
+  const keys = changed.length === 1 ? '1 key changes' : `${changed.length.toLocaleString('en')} keys change`;
   const where = span ? `between ${span[0].toFixed(3)} and ${span[1].toFixed(3)} s` : 'and no motion changes';
+  if (price) return `${keys} ${where}. ${paceWords(price, bends)}`;
+  const turn = largest > 0 ? `the largest turns by ${largest.toPrecision(3)}°` : 'none turns';
   return `${keys}, ${turn}, ${where}; ${added === 0 ? 'no time is added' : `${added.toFixed(3)} s are added`}.`;
+}
+
+/** Bends are told before they are taken. */
+function paceWords({ seconds, degrees, bytes }: Price, bends: readonly Bend[]): string {
+  const time = Math.abs(seconds) < 5e-4 ? 'no time' : `${signed(seconds.toFixed(3))} s`;
+  const size = bytes === 0 ? 'no bytes' : `${signed(bytes.toLocaleString('en'))} bytes`;
+  const [worst] = bends;
+  const bend = worst
+    ? ` ${bends.length === 1 ? 'A bend is' : `${bends.length} bends are`} taken at speed: at ${worst.time.toFixed(2)} s the rate jumps by ${worst.jump.toPrecision(3)} deg/s.`
+    : '';
+  return `It costs ${time}, ${degrees < 5e-4 ? 'less than 0.001' : degrees.toPrecision(2)}° off the path, ${size}.${bend}`;
+}
+
+function signed(number: string): string {
+  return number.startsWith('-') ? `−${number.slice(1)}` : `+${number}`;
 }

@@ -35,6 +35,8 @@ export interface OtherMotion {
   readonly motion: Motion;
   /** "before", or the playback: "finite cubic". */
   readonly name: string;
+  /** Times of its keys, seconds, ascending, where they are not the chart's. */
+  readonly keys?: Float64Array;
 }
 
 /** One track as the chart shows it. Immutable: a change is a new object. */
@@ -61,6 +63,8 @@ export interface ChartData {
   readonly limit?: { readonly speed: number; readonly name: string };
   /** Before the edits. */
   readonly before?: OtherMotion;
+  /** The motion is what the edit at hand would make of `before`; nothing is done yet. */
+  readonly tried?: boolean;
   /** The same keys under another playback. */
   readonly second?: OtherMotion;
   /** Seconds of one loop, where the clip repeats. */

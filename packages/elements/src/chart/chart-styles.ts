@@ -125,6 +125,7 @@ export const chartStyles: CSSResult = css`
     position: relative;
     min-width: 0;
     cursor: crosshair;
+    user-select: none;
   }
   .cursor {
     position: absolute;

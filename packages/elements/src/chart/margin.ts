@@ -82,6 +82,11 @@ export function packNotes(root: ParentNode): void {
   const blocks = [...root.querySelectorAll<HTMLElement>('.notes')];
   const list = root.querySelector<HTMLElement>('.rows');
   if (!list) return;
+  // Asking for sizes makes the browser lay the page out.
+  if (blocks.every((block) => block.childElementCount === 0)) {
+    list.style.minHeight = '';
+    return;
+  }
   // On narrow paper the styles put notes under their row, where nothing needs pushing.
   const beside = blocks[0] !== undefined && getComputedStyle(blocks[0]).position === 'absolute';
   const sizes = blocks.map((block) => ({

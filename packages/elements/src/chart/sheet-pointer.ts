@@ -6,6 +6,12 @@ type Span = readonly [number, number];
 /** A drag shorter than this is a click, px. */
 const DRAG = 4;
 
+/** A point on a row's paper, px. */
+export interface Point {
+  readonly x: number;
+  readonly y: number;
+}
+
 /** What mouse, pen and finger do on the paper. Times in seconds, not held to the motion. */
 export interface SheetEvents {
   hover(time: number): void;
@@ -14,11 +20,22 @@ export interface SheetEvents {
   /** A drag along the row; settled when let go. */
   drag(span: Span, settled: boolean): void;
   note(id: string): void;
+  /** Whether a drag that sets out upright from a point takes hold of the trace there. */
+  catches(row: FoldRow, point: Point): boolean;
+  /** A drag takes hold: of a handle by its name, or of the trace. */
+  grab(row: FoldRow, grip: string | undefined, point: Point): void;
+  pull(row: FoldRow, point: Point): void;
+  /** What was held is at rest, or, `lost`, was taken away by the browser. */
+  rest(lost: boolean): void;
 }
 
-/** One pointer on the rows of the trace: hover reads, click sets the cursor, drag chooses a span, a caret chooses its note. */
+/**
+ * One pointer on the rows of the trace: hover reads, click sets the cursor, a drag along the row chooses a span, one up or down presses the trace,
+ * a handle is drawn wherever it leads, a caret chooses its note.
+ */
 export class SheetPointer {
-  private press: { x: number; time: number } | undefined;
+  private press: { from: Point; time: number; grip: string | undefined } | undefined;
+  private doing: 'span' | 'hand' | undefined;
   private readonly events: SheetEvents;
 
   constructor(events: SheetEvents) {
@@ -31,34 +48,58 @@ export class SheetPointer {
   }
 
   move(event: PointerEvent, row: FoldRow): void {
+    const { press } = this;
     const time = timeAt(event, row);
-    this.events.hover(time);
-    if (this.press && Math.abs(event.clientX - this.press.x) >= DRAG)
-      this.events.drag(between(this.press.time, time), false);
+    if (!press) return this.events.hover(time);
+    const point = pointAt(event);
+    this.doing ??= this.begun(press, point, row);
+    if (this.doing === 'hand') this.events.pull(row, point);
+    else this.events.hover(time);
+    if (this.doing === 'span') this.events.drag(between(press.time, time), false);
   }
 
   down(event: PointerEvent, row: FoldRow): void {
     if (event.button !== 0) return;
     const note = noteUnder(event);
-    if (note !== undefined) return this.events.note(note);
+    const grip = gripUnder(event);
+    if (note !== undefined && grip === undefined) return this.events.note(note);
     holdPointer(event);
-    this.press = { x: event.clientX, time: timeAt(event, row) };
+    this.doing = undefined;
+    this.press = { from: pointAt(event), time: timeAt(event, row), grip };
   }
 
   /** Whether something was settled. */
   up(event: PointerEvent, row: FoldRow): boolean {
-    const { press } = this;
+    const { press, doing } = this;
     this.press = undefined;
+    this.doing = undefined;
     if (!press) return false;
     const time = timeAt(event, row);
-    if (Math.abs(event.clientX - press.x) >= DRAG) this.events.drag(between(press.time, time), true);
+    if (doing === 'span') this.events.drag(between(press.time, time), true);
+    else if (doing === 'hand') this.events.rest(false);
     else this.events.go(time, event.shiftKey);
-    return true;
+    return doing !== 'hand';
   }
 
   /** Escape, or a pointer that the browser took away. */
   cancel(): void {
+    if (this.doing === 'hand') this.events.rest(true);
     this.press = undefined;
+    this.doing = undefined;
+  }
+
+  /** What a drag turns out to be, once it is one. */
+  private begun(
+    { from, grip }: NonNullable<SheetPointer['press']>,
+    point: Point,
+    row: FoldRow,
+  ): 'span' | 'hand' | undefined {
+    const across = Math.abs(point.x - from.x);
+    const upright = Math.abs(point.y - from.y);
+    if (Math.max(across, upright) < DRAG) return undefined;
+    if (grip === undefined && (across >= upright || !this.events.catches(row, from))) return 'span';
+    this.events.grab(row, grip, from);
+    return 'hand';
   }
 }
 
@@ -66,12 +107,28 @@ function timeAt(event: PointerEvent, row: FoldRow): number {
   return row.from + shareAcross(event) * (row.to - row.from);
 }
 
+/** From the top left of the element that listens. */
+function pointAt({ currentTarget, clientX, clientY }: PointerEvent): Point {
+  if (!(currentTarget instanceof Element)) return { x: 0, y: 0 };
+  const { left, top } = currentTarget.getBoundingClientRect();
+  return { x: clientX - left, y: clientY - top };
+}
+
 function between(a: number, b: number): Span {
   return [Math.min(a, b), Math.max(a, b)];
 }
 
 function noteUnder(event: PointerEvent): string | undefined {
+  return named(event, 'note');
+}
+
+function gripUnder(event: PointerEvent): string | undefined {
+  return named(event, 'grip');
+}
+
+function named(event: PointerEvent, name: string): string | undefined {
   for (const node of event.composedPath())
-    if (node instanceof SVGElement && node.dataset['note'] !== undefined) return node.dataset['note'];
+    if ((node instanceof SVGElement || node instanceof HTMLElement) && node.dataset[name] !== undefined)
+      return node.dataset[name];
   return undefined;
 }
