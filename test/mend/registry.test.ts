@@ -29,6 +29,7 @@ describe('VERBS', () => {
       'there and back',
       'ease through',
       'whole turns',
+      'trim',
       'sort times',
       're-time to grid',
       're-grid',

@@ -1,11 +1,11 @@
-import type { Clip, RotationTrack } from '@slewcurve/core';
+import { SlewcurveError, type Clip, type RotationTrack } from '@slewcurve/core';
 import type { OpenOptions } from '@slewcurve/formats';
-import { applySteps, sayStep, verbNamed, type Step } from '@slewcurve/mend';
+import { applySteps, sayStep, type Step } from '@slewcurve/mend';
 import { surveyTrack, withDeclaredCuts, type Finding } from '@slewcurve/survey';
 import { mendFile, type MendedFile } from './mend-file.js';
 import { newFaults } from './new-faults.js';
 import type { OpenedFile } from './open-file.js';
-import { propose, type Declined, type Proposal } from './propose.js';
+import { shiftsKeys, propose, type Declined, type Proposal } from './propose.js';
 import type { FileReport } from './report.js';
 import type { JobSettings } from './settings.js';
 import { UNWATCHED, type Watch } from './watch.js';
@@ -56,12 +56,12 @@ export function declineHarmful(
     for (const track of tracks.filter((other) => other.clip === clip.name)) {
       const own = proposal.card.steps.filter((step) => step.clip === clip.name && step.track === track.id);
       if (own.length === 0) continue;
-      const held = own.filter((step) => !(opened.file.fixedTimes && verbNamed(step.verb).insertsKeys));
+      const held = own.filter((step) => !(opened.file.fixedTimes && shiftsKeys(step)));
       for (const step of own)
         if (!held.includes(step))
           declined.push({
             step,
-            why: `the file's columns share rows, so that no key can be put in (${sayStep(step)})`,
+            why: `the file's columns share rows, so that no key can be put in, dropped or moved (${sayStep(step)})`,
           });
       const tried = trySteps(opened, clip, track, held, settings);
       steps.push(...tried.kept);
@@ -89,7 +89,14 @@ function trySteps(
   const declined: Declined[] = [];
   let kept = steps;
   while (kept.length > 0) {
-    const { tracks, results } = applySteps([withDeclaredCuts(track, settings.houseRules)], kept);
+    const attempt = applied(withDeclaredCuts(track, settings.houseRules), kept);
+    if ('refused' in attempt) {
+      const { refused, why } = attempt;
+      kept = kept.filter((step) => step !== refused);
+      declined.push({ step: refused, why: `${why} (${sayStep(refused)})` });
+      continue;
+    }
+    const { tracks, results } = attempt;
     const raised = newFaults(before, survey(tracks[0] ?? track));
     const worst = raised[0];
     if (worst === undefined) break;
@@ -105,6 +112,22 @@ function trySteps(
       });
   }
   return { kept, declined };
+}
+
+/** Steps applied, or the first that can't be: a step that mends what it needs may have been declined before. */
+function applied(
+  track: RotationTrack,
+  steps: readonly Step[],
+): ReturnType<typeof applySteps> | { readonly refused: Step; readonly why: string } {
+  try {
+    return applySteps([track], steps);
+  } catch (error) {
+    const number =
+      error instanceof SlewcurveError ? /^\/steps\/(\d+)/.exec(error.place.pointer ?? '')?.[1] : '';
+    const refused = steps[Number(number ?? NaN)];
+    if (!(error instanceof SlewcurveError) || number === '' || refused === undefined) throw error;
+    return { refused, why: error.message };
+  }
 }
 
 function overlaps(a: readonly [number, number] | undefined, b: readonly [number, number]): boolean {

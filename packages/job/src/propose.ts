@@ -1,4 +1,4 @@
-import { verbNamed, type JobCard, type Step } from '@slewcurve/mend';
+import { VERBS, verbNamed, type JobCard, type Step } from '@slewcurve/mend';
 import { isAtLeast, type FileReport, type ReportedFinding } from './report.js';
 import { isOpen } from './settle-finding.js';
 import type { JobSettings } from './settings.js';
@@ -64,13 +64,24 @@ function union(a: readonly number[], b: readonly number[]): number[] {
   return [...new Set([...a, ...b])].toSorted((x, y) => x - y);
 }
 
+/**
+ * In the order in which the edits are listed: keys are mended before a hum is read from them, and noise is averaged after that. Steps that change how many keys
+ * there are come last, from the last key to the first.
+ */
 function ordered(steps: readonly Step[]): Step[] {
   return steps.toSorted(
     (a, b) =>
-      Number(inserts(a)) - Number(inserts(b)) || (inserts(a) ? (b.keys?.[0] ?? 0) - (a.keys?.[0] ?? 0) : 0),
+      Number(shiftsKeys(a)) - Number(shiftsKeys(b)) ||
+      (shiftsKeys(a) ? (b.keys?.[0] ?? 0) - (a.keys?.[0] ?? 0) : placeOf(a) - placeOf(b)),
   );
 }
 
-function inserts(step: Step): boolean {
-  return verbNamed(step.verb).insertsKeys;
+function placeOf(step: Step): number {
+  return VERBS.indexOf(verbNamed(step.verb));
+}
+
+/** Whether a step puts keys in, drops them or gives them other times, which tracks that share rows can't hold, and which shifts later key numbers. */
+export function shiftsKeys(step: Step): boolean {
+  const { insertsKeys, movesTimes = false } = verbNamed(step.verb);
+  return insertsKeys || movesTimes;
 }

@@ -21,6 +21,7 @@ import { shrink, stretch } from './edits/stretch.js';
 import { takeOutDrift } from './edits/take-out-drift.js';
 import { takeOutHum } from './edits/take-out-hum.js';
 import { thereAndBack } from './edits/there-and-back.js';
+import { trim } from './edits/trim.js';
 import { wholeTurns } from './edits/whole-turns.js';
 import { changeSpace } from './edits/change-space.js';
 import { convert } from './edits/convert.js';
@@ -51,9 +52,9 @@ export const VERBS: readonly Verb[] = Object.freeze([
   evenOut,
   cap,
   shape,
-  hold,
   copyPace,
   match,
+  hold,
   setMarks,
   stretch,
   shrink,
@@ -61,6 +62,7 @@ export const VERBS: readonly Verb[] = Object.freeze([
   thereAndBack,
   easeThrough,
   wholeTurns,
+  trim,
   sortTimes,
   reTimeToGrid,
   reGrid,

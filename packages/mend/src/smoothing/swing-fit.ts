@@ -49,6 +49,7 @@ export function fitSwing(data: SwingData, hertz: number, nodes: number): Swing {
   };
 
   const width = Math.min(4, size);
+  let squares = 0;
   for (let k = from; k <= to; k++) {
     if (counts[k] === 0) continue;
     const first = basisAt(times[k]);
@@ -56,8 +57,14 @@ export function fitSwing(data: SwingData, hertz: number, nodes: number): Swing {
       for (let j = 0; j < width; j++) matrix[(first + i) * size + first + j] += basis[i] * basis[j];
       for (let axis = 0; axis < 3; axis++) parts[3 * (first + i) + axis] += basis[i] * vectors[3 * k + axis];
     }
+    for (let axis = 0; axis < 3; axis++) squares += vectors[3 * k + axis] ** 2;
   }
+  const moments = Float64Array.from(parts);
   solveSymmetric(matrix, parts, size, 3);
+  // What is left of a sum of squares after its least squares fit: Σv² − xᵀAᵀv.
+  const rest = squares - parts.reduce((sum, part, i) => sum + part * moments[i], 0);
+  // Less than float64 tells from rounding is not told.
+  const left = Math.max(rest, 1e-13 * squares);
 
   const read = (out: Float64Array, time: number): Float64Array => {
     const first = basisAt(time);
@@ -86,23 +93,16 @@ export function fitSwing(data: SwingData, hertz: number, nodes: number): Swing {
     return place - Math.min(nodes - 2, Math.floor(place));
   };
 
-  let left = 0;
-  const out = new Float64Array(6);
-  for (let k = from; k <= to; k++) {
-    if (counts[k] === 0) continue;
-    read(out, times[k]);
-    for (let axis = 0; axis < 3; axis++) left += (vectors[3 * k + axis] - out[axis]) ** 2;
-  }
   return { hertz, read, left };
 }
 
-/** Places at which the frequency is looked for on either side, and halvings after that. */
-const LOOKS = 8;
-const HALVINGS = 24;
+/** Places at which the frequency is looked for on either side, and halvings of their distance after that: to a 500th of what the length tells apart. */
+const LOOKS = 4;
+const HALVINGS = 7;
 
 /** The frequency within `beside` of `hertz` at which a swing of constant strength leaves least. */
 export function sharpened(data: SwingData, hertz: number, beside: number): number {
-  let [best, width] = [hertz, beside];
+  let best = hertz;
   const leftAt = (at: number): number => fitSwing(data, at, 1).left;
   let least = leftAt(best);
   const look = (at: number): void => {
@@ -110,7 +110,7 @@ export function sharpened(data: SwingData, hertz: number, beside: number): numbe
     if (left < least) [best, least] = [at, left];
   };
   for (let i = -LOOKS; i <= LOOKS; i++) look(hertz + (i * beside) / LOOKS);
-  for (width /= LOOKS; width > (beside / LOOKS) * 2 ** -HALVINGS && width > 1e-7 * hertz; width /= 2) {
+  for (let halving = 0, width = beside / LOOKS; halving < HALVINGS; halving++, width /= 2) {
     const centre = best;
     look(centre - width / 2);
     look(centre + width / 2);

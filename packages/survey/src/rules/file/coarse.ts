@@ -3,6 +3,7 @@ import { median } from '../../median.js';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
 import { segmentsOf, type Segments } from '../../segments.js';
+import { smoothing } from '../shake/smoothing.js';
 
 const DEGREES = 180 / Math.PI;
 /** Seconds on each side over which the track's true speed is judged. */
@@ -20,7 +21,7 @@ export const coarse: Rule = Object.freeze({
   summary: 'The stored numbers lie on so coarse a lattice that slow turns become a staircase.',
   limits: everyRole({ still: 5, noise: 20, moving: 2 }),
   reads: 'track',
-  untouched: 'everything: only the source has the lost bits',
+  untouched: 'what turns faster than 60 deg/s; no key turns by more than the lattice is good to',
   find(context: TrackContext, limits: Limits): readonly Place[] {
     const { times, storage } = context.track;
     const { lattice = 0 } = storage;
@@ -42,7 +43,12 @@ export const coarse: Rule = Object.freeze({
       },
     ];
   },
-  remedy: (): Remedy | undefined => undefined,
+  remedy(context: TrackContext, { facts }: Place): Remedy | undefined {
+    // Whole numbers and text would be rounded to the lattice again.
+    const { component } = context.track.storage;
+    const holdsMore = component === 'float32' || component === 'float64';
+    return holdsMore ? smoothing(context, facts?.['floor'] ?? 0) : undefined;
+  },
   message({ value, limit, facts }: Place): string {
     const what =
       facts?.['isStill'] === 1
@@ -62,7 +68,8 @@ export const coarse: Rule = Object.freeze({
     source:
       'The bounds of storage are arithmetic; the shares are common practice, no source. A vane stored in bytes read zero in 75 % of its moving steps and was up to 0.49° off (measured).',
     spares: 'Tracks that stand still, sparse tracks of a few poses, STEP tracks.',
-    remedy: 'Export again from the source in shorts or floats. Smoothing can only guess at what is lost.',
+    remedy:
+      'Export again from the source in shorts or floats. Where the file itself stores floats, `smooth` guesses at what is lost, and turns no key by more than the lattice is good to.',
   },
 });
 

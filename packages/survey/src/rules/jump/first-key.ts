@@ -3,6 +3,7 @@ import { median } from '../../median.js';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
 import { segmentsOf } from '../../segments.js';
+import { addressOf } from './try-remedy.js';
 
 /** Segments after the first that say what is usual. */
 const USUAL = 7;
@@ -33,8 +34,10 @@ export const firstKey: Rule = Object.freeze({
     const place = { keys: [0], time: span[0], span, value, limit: size, level: 'warning' as const };
     return [{ ...place, facts: { usual } }];
   },
-  // `trim` is not built yet.
-  remedy: (): Remedy | undefined => undefined,
+  remedy(context: TrackContext, { keys }: Place): Remedy | undefined {
+    const held = { verb: 'bridge', ...addressOf(context), keys };
+    return { step: { verb: 'trim', ...addressOf(context), keys }, alternatives: [held] };
+  },
   message({ value, limit, facts }: Place): string {
     return `key 0 stands ${sayDegrees(value)} from key 1 (limit ${sayDegrees(limit)}), where the next steps turn ${sayDegrees(facts?.['usual'] ?? 0)}: it looks like a reference pose`;
   },
@@ -49,6 +52,6 @@ export const firstKey: Rule = Object.freeze({
     spares:
       'Clips of fewer than nine keys, a first key set apart in time, STEP tracks, declared cuts and whips.',
     remedy:
-      'Trim the first key, or keep it out of the clip as a reference. The verb `trim` is not built yet.',
+      '`trim` drops the key; the others keep their times, and the pose of the new first key is held before it. Where all tracks share their rows (BVH, tables) no key can go: `bridge` gives it the pose of the next one. Either loses the reference pose, so that `--proposed` trims only if allowed.',
   },
 });

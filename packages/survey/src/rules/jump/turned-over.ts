@@ -1,11 +1,17 @@
-import { angleBetween, conjugate, expMap, logMap, multiply, relative } from '@slewcurve/core';
+import { SlewcurveError, angleBetween, conjugate, expMap, logMap, multiply, relative } from '@slewcurve/core';
+import { verbNamed, type Step } from '@slewcurve/mend';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
 import { sayDegrees, saySeconds } from '../../say-number.js';
 import { segmentsOf, type Segments } from '../../segments.js';
+import { toMillisecond } from '../to-millisecond.js';
+import { addressOf } from './try-remedy.js';
 
 const DEGREES = 180 / Math.PI;
 /** Turns of a marker set that looks the same from several sides, degrees. */
 const SYMMETRIES = [90, 120, 180];
+/** Degrees by which the second step may miss undoing the first, so that turning the stretch back leaves no more. */
+const LEFT = 15;
+const STILL = Float64Array.of(0, 0, 0, 1);
 
 /** A stretch that was seen from the wrong side: one fixed turn on, the same turn off. */
 export const turnedOver: Rule = Object.freeze({
@@ -19,25 +25,20 @@ export const turnedOver: Rule = Object.freeze({
   reads: 'track',
   untouched: 'all keys outside the stretch, and how those inside turn against each other',
   excusedBy: ['whips'] as const,
-  find(context: TrackContext, limits: Limits): readonly Place[] {
-    if (context.regime !== 'dense' || context.played.every(({ holds }) => holds)) return [];
+  find: turnedOverPlaces,
+  remedy(context: TrackContext, { keys: [on = 0, off = 0] }: Place): Remedy | undefined {
     const { times } = context.track;
-    const segments = segmentsOf(context);
-    const turns = symmetricSteps(segments, limits);
-    const places: Place[] = [];
-    for (let i = 0; i + 1 < turns.length; i++) {
-      const [on, off] = [turns[i]!, turns[i + 1]!];
-      const span = [times[on.segment] ?? 0, times[off.segment + 1] ?? 0] as const;
-      if (!(span[1] - span[0] < (limits['seconds'] ?? 0) && undoes(on, off, limits['pair'] ?? 0))) continue;
-      const time = times[on.segment + 1] ?? 0;
-      const keys = [on.segment + 1, off.segment + 1];
-      places.push({ keys, time, span, value: on.angle, limit: on.symmetry, level: 'warning' });
-      i++;
-    }
-    return places;
+    // Halfway to the keys beside it, so that the stretch's own keys lie in it however a time is rounded.
+    const half = (key: number): number => ((times[key] ?? 0) + (times[key + 1] ?? 0)) / 2;
+    const span = toMillisecond([half(on - 1), half(off - 1)]);
+    const ways = (['own', 'parent'] as const).flatMap((side) =>
+      turnedBack(context, { verb: 're-seat', ...addressOf(context), keys: [on], side, span }, on, off),
+    );
+    ways.sort((a, b) => a.left - b.left);
+    const [best, ...others] = ways;
+    if (best === undefined) return undefined;
+    return { step: best.step, price: best.price, alternatives: others.map(({ step }) => step) };
   },
-  // No verb turns a span by one fixed rotation yet.
-  remedy: (): Remedy | undefined => undefined,
   message({ keys: [on = 0, off = 0], value, limit, span }: Place): string {
     return `from key ${on} to key ${off - 1}, for ${saySeconds(span[1] - span[0])}, the track is turned over by ${sayDegrees(value)} (near ${limit}°), and turned back after`;
   },
@@ -51,7 +52,7 @@ export const turnedOver: Rule = Object.freeze({
     source: 'The symmetries are geometry; the limits are common practice, no source.',
     spares: 'Real flips, which take more than one frame; sparse and STEP tracks; declared cuts and whips.',
     remedy:
-      'Turn the stretch back by the one symmetry, which keeps the motion inside it. No verb does that yet.',
+      '`re-seat` with the stretch as its span turns it back by one rotation, which keeps the motion inside it: about the track’s own axes or its parent’s, whichever leaves less of a step at its end. Which side was seen wrongly only its maker knows, so that `--proposed` takes it only if allowed.',
   },
 });
 
@@ -113,4 +114,40 @@ function undoes(on: SymmetricStep, off: SymmetricStep, pair: number): boolean {
 /** What two turns one after the other amount to, degrees. */
 function turnLeft(a: Float64Array, b: Float64Array): number {
   return angleBetween(multiply(new Float64Array(4), a, b), Float64Array.of(0, 0, 0, 1)) * DEGREES;
+}
+
+function turnedOverPlaces(context: TrackContext, limits: Limits): readonly Place[] {
+  if (context.regime !== 'dense' || context.played.every(({ holds }) => holds)) return [];
+  const { times } = context.track;
+  const segments = segmentsOf(context);
+  const turns = symmetricSteps(segments, limits);
+  const places: Place[] = [];
+  for (let i = 0; i + 1 < turns.length; i++) {
+    const [on, off] = [turns[i]!, turns[i + 1]!];
+    const span = [times[on.segment] ?? 0, times[off.segment + 1] ?? 0] as const;
+    if (!(span[1] - span[0] < (limits['seconds'] ?? 0) && undoes(on, off, limits['pair'] ?? 0))) continue;
+    const time = times[on.segment + 1] ?? 0;
+    const keys = [on.segment + 1, off.segment + 1];
+    places.push({ keys, time, span, value: on.angle, limit: on.symmetry, level: 'warning' });
+    i++;
+  }
+  return places;
+}
+
+/** What turning a stretch back costs, and how far its two steps stand off then, degrees; empty where the edit can't be taken or leaves either turned. */
+function turnedBack(
+  context: TrackContext,
+  step: Step,
+  on: number,
+  off: number,
+): { step: Step; left: number; price: number }[] {
+  try {
+    const { track, largest } = verbNamed(step.verb).apply(context.track, step);
+    const segments = segmentsOf({ ...context, track });
+    const left = [on, off].map((key) => angleBetween(stepAlone(segments, key - 1), STILL) * DEGREES);
+    return Math.max(...left) < LEFT ? [{ step, left: Math.max(...left), price: largest }] : [];
+  } catch (error) {
+    if (error instanceof SlewcurveError) return [];
+    throw error;
+  }
 }

@@ -1,7 +1,10 @@
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
+import { jumpsOf } from '../jump/measure.js';
 import { seamOf } from '../jump/seam-of.js';
+import { tryReSeat } from '../jump/try-re-seat.js';
 import { hasSeam, seamLimit } from './closes.js';
+import { kinksOf } from './kinks.js';
 import { tryCloseLoop } from './try-close-loop.js';
 
 /** A loop that does not end where it starts. */
@@ -33,7 +36,14 @@ export const loopGap: Rule = Object.freeze({
     return [{ keys: [last], time: end, span: [times[last - 1] ?? 0, end], value, limit, level: 'warning' }];
   },
   remedy(context: TrackContext): Remedy | undefined {
-    return tryCloseLoop(context);
+    const kink = context.limits('seam.loop-kink');
+    const closing = tryCloseLoop(
+      context,
+      (closed) => kink === undefined || kinksOf(closed, kink).length === 0,
+    );
+    const seated = seatedAnew(context);
+    if (seated === undefined || closing === undefined) return seated ?? closing;
+    return { ...seated, alternatives: [...(seated.alternatives ?? []), closing.step] };
   },
   message({ keys, value, limit }: Place): string {
     return `the loop ends ${sayDegrees(value)} off its start: key ${keys[0]} against key 0 (limit ${sayDegrees(limit)})`;
@@ -50,6 +60,13 @@ export const loopGap: Rule = Object.freeze({
     spares:
       'Clips that nobody declared to be a loop, by house rules or `--loop`; spins, which come round to where they started; STEP tracks.',
     remedy:
-      '`close loop` spreads the gap over the last part of the clip, or over all of it. The price is the largest turn of a key. A travelling turn that is meant to go on (a heading) should not be closed.',
+      '`close loop` spreads the gap over the last quarter of the clip, or evenly over all of it (`spread`), and leads the rate at the end of dense keys into that of the start. The price is the largest turn of a key. Where a shelf alone keeps the loop open, `re-seat` closes both. A travelling turn that is meant to go on (a heading) should not be closed.',
   },
 });
+
+/** Where a shelf alone keeps the loop open, what closes the shelf. */
+function seatedAnew(context: TrackContext): Remedy | undefined {
+  const limits = context.limits('jump.shelf');
+  const shelf = limits && jumpsOf(context).find(({ kind }) => kind === 'shelf');
+  return limits && shelf && tryReSeat(context, shelf.key, limits);
+}

@@ -1,8 +1,9 @@
 import { angleBetween } from '@slewcurve/core';
-import { builtStep } from '../../built-step.js';
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayDegrees, saySeconds } from '../../say-number.js';
 import { angleApart, segmentsOf, type Segments } from '../../segments.js';
+import { addressOf } from '../jump/try-remedy.js';
+import { toMillisecond } from '../to-millisecond.js';
 import { turnFrom } from './turn-from.js';
 
 const DEGREES = 180 / Math.PI;
@@ -52,8 +53,10 @@ export const creep: Rule = Object.freeze({
     });
   },
   remedy(context: TrackContext, { span }: Place): Remedy | undefined {
-    const built = builtStep(context, 'take out drift');
-    return built && { step: { ...built.step, span } };
+    const { times } = context.track;
+    const isWhole = span[0] === times[0] && span[1] === times.at(-1);
+    const step = { verb: 'take out drift', ...addressOf(context) };
+    return { step: isWhole ? step : { ...step, span: toMillisecond(span) } };
   },
   message({ value, limit, span, level }: Place): string {
     const seconds = span[1] - span[0];
@@ -71,7 +74,8 @@ export const creep: Rule = Object.freeze({
     source: 'Common practice, no source.',
     spares:
       'Breathing and other slow motion that returns within its own time. A slow pan looks the same, so that nothing outside a declared hold is more than a note. Declared spins, STEP and sparse tracks, eyes.',
-    remedy: '`take out drift` takes the straight line off, one end kept.',
+    remedy:
+      '`take out drift` takes the straight line off. Where motion goes on before or after, that end’s pose is kept; where it does on both sides, the drift is paid back within the span, half at each end.',
   },
 });
 

@@ -2,12 +2,15 @@ import { angleFloor, medianGap } from '@slewcurve/core';
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
 import { grainOf } from './grain-of.js';
-import { builtStep } from '../../built-step.js';
+import { smoothing } from './smoothing.js';
 
 const DEGREES = 180 / Math.PI;
 
 /** Keys a second below which lively motion reads like noise (0.07 to 0.5° at 24 to 30, measured): no more than a note there. */
 const CAN_TELL = 48;
+
+/** Standard deviations by which smoothing may turn a key: noise alone stays below four, what is further off is no noise. */
+const MOST_MOVED = 6;
 
 /** Noise all over a captured track. */
 export const grain: Rule = Object.freeze({
@@ -46,7 +49,8 @@ export const grain: Rule = Object.freeze({
       },
     ];
   },
-  remedy: (context: TrackContext): Remedy | undefined => builtStep(context, 'smooth'),
+  remedy: (context: TrackContext, { value }: Place): Remedy | undefined =>
+    smoothing(context, MOST_MOVED * value),
   message({ value, limit }: Place): string {
     return `its keys are noisy by ${sayDegrees(value)} an axis, one standard deviation (limit ${sayDegrees(limit)})`;
   },
@@ -63,7 +67,7 @@ export const grain: Rule = Object.freeze({
     spares:
       'Sparse and STEP tracks, keys faster than 60 deg/s, tracks with fewer than eight slower ones. Below 48 keys a second lively motion reads like noise, and it is a note.',
     remedy:
-      '`smooth`, with guards around fast moves: unguarded it lowers the peak of a whip. The largest turn of a key is told.',
+      '`smooth` over six key gaps, which leaves 8 % of the noise’s power, no key turned by more than six standard deviations. Guarded are what turns faster than 60 deg/s, declared whips and marks, and all that leans one way and so is no noise: unguarded it would lower the peak of a whip. The largest turn of a key is told.',
   },
 });
 

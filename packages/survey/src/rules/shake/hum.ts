@@ -1,7 +1,9 @@
 import { angleFloor } from '@slewcurve/core';
-import { builtStep } from '../../built-step.js';
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
+import { significant } from '../../significant.js';
+import { addressOf } from '../jump/try-remedy.js';
+import { toMillisecond } from '../to-millisecond.js';
 import { ripplesOf, type Ripple } from './ripples.js';
 
 const DEGREES = 180 / Math.PI;
@@ -35,9 +37,9 @@ export const hum: Rule = Object.freeze({
       placeOf(context, run, hertz, amplitude),
     );
   },
-  remedy(context: TrackContext, { span, facts }: Place): Remedy | undefined {
-    const built = builtStep(context, 'take out hum');
-    return built && (facts?.['amplitude'] ?? 0) > 0 ? { step: { ...built.step, span } } : undefined;
+  remedy(context: TrackContext, { span, value }: Place): Remedy | undefined {
+    const hertz = significant(value);
+    return { step: { verb: 'take out hum', ...addressOf(context), hertz, span: toMillisecond(span) } };
   },
   message({ value, span, facts }: Place): string {
     const { share = 0, amplitude = 0, least = 0 } = facts ?? {};
