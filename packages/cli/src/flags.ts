@@ -1,26 +1,32 @@
 import { parseArgs } from 'node:util';
-import { SlewcurveError } from '@slewcurve/core';
+import { PLAYBACKS, SlewcurveError } from '@slewcurve/core';
+import { REPORT_FORMATS } from '@slewcurve/job';
 import { nearestWord } from '@slewcurve/mend';
+import { ROLES } from '@slewcurve/survey';
 import { messageOf } from './system-error.js';
 
 /** A flag of the command line: one line here, and help and parsing know it. */
 interface Flag {
   /** What stands after it in the help; a switch has none. */
   readonly value?: string;
+  /** The same where a command takes other values than the rest. */
+  readonly valueFor?: Readonly<Partial<Record<CommandName, string>>>;
   readonly help: string;
   /** Commands that take it. */
   readonly commands: readonly CommandName[];
 }
 
-export type CommandName = 'survey' | 'check' | 'mend' | 'explain';
+export type CommandName = 'survey' | 'check' | 'mend' | 'compare' | 'docket' | 'explain';
 
 /** The flags; `-o` is written with one dash. */
-type FlagName =
+export type FlagName =
   | 'format'
+  | 'o'
   | 'playback'
   | 'fail-at'
   | 'allow-warnings'
   | 'rules'
+  | 'role'
   | 'loop'
   | 'columns'
   | 'euler'
@@ -28,26 +34,49 @@ type FlagName =
   | 'card'
   | 'proposed'
   | 'allow'
-  | 'o'
   | 'in-place'
   | 'dry-run'
   | 'card-out'
   | 'undo-out'
-  | 'undo';
+  | 'undo'
+  | 'baseline'
+  | 'baseline-out'
+  | 'baseline-exact'
+  | 'stamp'
+  | 'reason'
+  | 'by'
+  | 'allow-no-match'
+  | 'workers'
+  | 'shard'
+  | 'merge'
+  | 'angle'
+  | 'rate';
 
-const SURVEYING: readonly CommandName[] = ['survey', 'check', 'mend'];
+const REPORTING: readonly CommandName[] = ['survey', 'check'];
+const SURVEYING: readonly CommandName[] = ['survey', 'check', 'mend', 'docket'];
+const OPENING: readonly CommandName[] = [...SURVEYING, 'compare'];
 const MENDING: readonly CommandName[] = ['mend'];
 
 const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
   format: {
     value: 'text|json',
-    help: 'form of the report (default text)',
-    commands: ['survey', 'check', 'mend', 'explain'],
+    valueFor: {
+      survey: REPORT_FORMATS.join('|'),
+      check: REPORT_FORMATS.join('|'),
+      docket: 'markdown|html',
+    },
+    help: 'form of what is printed; the first is the default',
+    commands: ['survey', 'check', 'mend', 'compare', 'docket', 'explain'],
+  },
+  o: {
+    value: 'OUT',
+    help: 'file to write, instead of printing',
+    commands: ['survey', 'check', 'mend', 'compare', 'docket'],
   },
   playback: {
     value: 'ID,…',
-    help: 'how the file will be played: as-written (default), short-way, chord, raw-chord, stored-cubic, finite-cubic, step; the worst counts',
-    commands: SURVEYING,
+    help: `how the file will be played: ${Object.keys(PLAYBACKS).join(', ')}; the worst counts (default as-written)`,
+    commands: OPENING,
   },
   'fail-at': {
     value: 'error|warning|note',
@@ -56,35 +85,70 @@ const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
   },
   'allow-warnings': { value: 'N', help: 'let so many warnings pass (default 0)', commands: SURVEYING },
   rules: { value: 'FILE', help: 'house rules: limits, levels, exceptions (JSON)', commands: SURVEYING },
+  role: {
+    value: '[PATTERN=]ROLE',
+    help: `what turns: ${ROLES.join(', ')}; for all tracks or those that fit (again for more)`,
+    commands: SURVEYING,
+  },
   columns: {
     value: 'NAME,…',
     help: 'names of the columns of delimited text, such as timestamp,tx,ty,tz,qx,qy,qz,qw',
-    commands: SURVEYING,
+    commands: OPENING,
   },
   euler: {
     value: 'SEQUENCE',
     help: 'sequence of the angles of delimited text: YXZ about the turned axes, yxz about fixed ones',
-    commands: SURVEYING,
+    commands: OPENING,
   },
-  unit: { value: 'deg|rad', help: 'unit of the angles of delimited text', commands: SURVEYING },
+  unit: { value: 'deg|rad', help: 'unit of the angles of delimited text', commands: OPENING },
   loop: {
     value: 'PATTERN',
     help: 'clips that repeat: their seam is looked at (* stands for anything; again for more)',
     commands: SURVEYING,
   },
-  card: { value: 'FILE', help: 'job card to run (JSON)', commands: MENDING },
+  card: { value: 'FILE', help: 'job card to run (JSON)', commands: ['mend', 'docket'] },
   proposed: { help: 'run the remedy of every finding at or above --fail-at', commands: MENDING },
   allow: {
     value: 'VERB',
     help: 'let --proposed use a verb that needs asking for (again for more)',
     commands: MENDING,
   },
-  o: { value: 'OUT', help: 'file to write', commands: MENDING },
   'in-place': { help: 'write over FILE and keep the original beside it', commands: MENDING },
   'dry-run': { help: 'say what would change, write nothing', commands: MENDING },
   'card-out': { value: 'FILE', help: 'write the steps that were run as a job card', commands: MENDING },
   'undo-out': { value: 'FILE', help: 'write the plan that takes the change back', commands: MENDING },
   undo: { value: 'PLAN', help: 'take back a change: run a plan from --undo-out', commands: MENDING },
+  baseline: { value: 'FILE', help: 'what was found before and is no news', commands: REPORTING },
+  'baseline-out': { value: 'FILE', help: 'write what is found as a baseline', commands: REPORTING },
+  'baseline-exact': {
+    help: 'fail also where the baseline knows what is found no more',
+    commands: REPORTING,
+  },
+  stamp: {
+    value: 'FINGERPRINT|RULE',
+    help: 'accept what goes by it in FILE, with --reason: written into FILE.stamps.json (again for more)',
+    commands: ['check'],
+  },
+  reason: { value: 'TEXT', help: 'why it is accepted', commands: ['check'] },
+  by: { value: 'NAME', help: 'who accepts it (default: the name you are logged in by)', commands: ['check'] },
+  'allow-no-match': { help: 'let a folder or a pattern have nothing for us', commands: REPORTING },
+  workers: {
+    value: 'N',
+    help: 'threads to survey files with (default: one for each core where it pays)',
+    commands: REPORTING,
+  },
+  shard: {
+    value: 'I/N',
+    help: "survey the I-th of N parts of the files; the parts' JSON reports go to --merge",
+    commands: REPORTING,
+  },
+  merge: { help: 'FILEs are JSON reports: print them as one, and judge them as one', commands: REPORTING },
+  angle: { value: 'DEG', help: 'largest angle between the two that passes', commands: ['compare'] },
+  rate: {
+    value: 'DEG_PER_S',
+    help: 'largest difference of speed that passes, as mean over each stored key interval',
+    commands: ['compare'],
+  },
 });
 
 /** What was typed: files and flags, as text. */
@@ -141,10 +205,14 @@ export function readArguments(command: CommandName, argv: readonly string[]): Ar
 export function flagHelp(command: CommandName): string {
   const rows = flagsOf(command).map((name) => {
     const flag = FLAGS[name];
-    const left = `${name === 'o' ? '-o' : `--${name}`}${flag.value === undefined ? '' : ` ${flag.value}`}`;
-    return `  ${left.padEnd(30)} ${flag.help}`;
+    const value = flag.valueFor?.[command] ?? flag.value;
+    return {
+      left: `${name === 'o' ? '-o' : `--${name}`}${value === undefined ? '' : ` ${value}`}`,
+      help: flag.help,
+    };
   });
-  return rows.join('\n');
+  const width = Math.max(...rows.map(({ left }) => left.length));
+  return rows.map(({ left, help }) => `  ${left.padEnd(width)}  ${help}`).join('\n');
 }
 
 function flagsOf(command: CommandName): FlagName[] {

@@ -4,8 +4,8 @@ import { EULER_SEQUENCES, PLAYBACKS, SlewcurveError, type PlaybackId } from '@sl
 import type { TableOptions } from '@slewcurve/formats';
 import { LEVELS, type JobSettings } from '@slewcurve/job';
 import { nearestWord } from '@slewcurve/mend';
-import { NO_HOUSE_RULES, parseHouseRules, type HouseRules } from '@slewcurve/survey';
-import type { Arguments } from './flags.js';
+import { NO_HOUSE_RULES, ROLES, parseHouseRules, type HouseRules, type Role } from '@slewcurve/survey';
+import type { Arguments, FlagName } from './flags.js';
 import { messageOf } from './system-error.js';
 
 /**
@@ -15,12 +15,28 @@ import { messageOf } from './system-error.js';
  */
 export async function settingsOf(args: Arguments, cwd: string): Promise<JobSettings> {
   const houseRules = await houseRulesOf(args.value('rules'), cwd);
+  const roles = rolesOf(args);
   return {
-    playbacks: playbacksOf(args),
+    playbacks: playbacksOf(args) ?? (houseRules.playback.length > 0 ? houseRules.playback : ['as-written']),
     failAt: oneOf(args, 'fail-at', LEVELS) ?? 'warning',
-    allowWarnings: wholeNumber(args.value('allow-warnings')),
-    houseRules: { ...houseRules, loops: [...houseRules.loops, ...args.values('loop')] },
+    allowWarnings: wholeNumber(args, 'allow-warnings') ?? 0,
+    houseRules: {
+      ...houseRules,
+      // The first pattern that fits counts: what is said here goes before what the file says.
+      roles: { ...roles, ...houseRules.roles, ...roles },
+      loops: [...houseRules.loops, ...args.values('loop')],
+    },
   };
+}
+
+function rolesOf(args: Arguments): Readonly<Record<string, Role>> {
+  return Object.fromEntries(
+    args.values('role').map((given) => {
+      const at = given.lastIndexOf('=');
+      const role = oneOfWords('role', given.slice(at + 1), ROLES);
+      return [at < 0 ? '*' : given.slice(0, at), role];
+    }),
+  );
 }
 
 /**
@@ -48,7 +64,10 @@ export function oneOf<T extends string>(
   allowed: readonly T[],
 ): T | undefined {
   const value = args.value(flag);
-  if (value === undefined) return undefined;
+  return value === undefined ? undefined : oneOfWords(flag, value, allowed);
+}
+
+function oneOfWords<T extends string>(flag: FlagName, value: string, allowed: readonly T[]): T {
   const found = allowed.find((word) => word === value);
   if (found === undefined) throw badValue(flag, value, allowed);
   return found;
@@ -89,21 +108,24 @@ export async function readJson(path: string, cwd: string): Promise<unknown> {
   }
 }
 
-function playbacksOf(args: Arguments): readonly PlaybackId[] {
+/** The playbacks that the flags name; undefined where they name none. @throws SlewcurveError `usage.bad-value` */
+export function playbacksOf(args: Arguments): readonly PlaybackId[] | undefined {
   const ids = args.values('playback').flatMap((value) => value.split(','));
   const bad = ids.find((id) => !isPlaybackId(id));
   if (bad !== undefined) throw badValue('playback', bad, Object.keys(PLAYBACKS));
-  return ids.length === 0 ? ['as-written'] : [...new Set(ids.filter(isPlaybackId))];
+  return ids.length === 0 ? undefined : [...new Set(ids.filter(isPlaybackId))];
 }
 
 function isPlaybackId(id: string): id is PlaybackId {
   return Object.hasOwn(PLAYBACKS, id);
 }
 
-function wholeNumber(value = '0'): number {
-  if (!/^\d{1,9}$/.test(value))
-    throw new SlewcurveError('usage.bad-value', `--allow-warnings takes a whole number; got ${value}.`);
-  return Number(value);
+/** A flag's whole number; undefined where it is not given. @throws SlewcurveError `usage.bad-value` */
+export function wholeNumber(args: Arguments, flag: FlagName): number | undefined {
+  const value = args.value(flag);
+  if (value === undefined) return undefined;
+  if (/^\d{1,9}$/.test(value)) return Number(value);
+  throw new SlewcurveError('usage.bad-value', `--${flag} takes a whole number; got ${value}.`);
 }
 
 async function houseRulesOf(path: string | undefined, cwd: string): Promise<HouseRules> {

@@ -26,7 +26,7 @@ export interface ReportParts {
  */
 export function buildReport(
   files: readonly FileReport[],
-  settings: Pick<JobSettings, 'playbacks' | 'failAt' | 'allowWarnings'>,
+  settings: Pick<Report, 'playbacks' | 'failAt'> & Pick<JobSettings, 'allowWarnings'>,
   { steps, shard, baseline }: ReportParts = {},
 ): Report {
   const findings = files.flatMap((file) => file.findings);

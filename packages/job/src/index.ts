@@ -40,6 +40,7 @@ export {
 export { csvReport } from './reporters/csv.js';
 export { jsonReport } from './reporters/json.js';
 export { markdownReport } from './reporters/markdown.js';
+export { REPORTERS, REPORT_FORMATS, type ReportFormat, type ReporterOptions } from './reporters/registry.js';
 export { sarifReport } from './reporters/sarif.js';
 export { textReport, textRoster, type Paint } from './reporters/text.js';
 export { rosterRow, type RosterRow } from './roster-row.js';

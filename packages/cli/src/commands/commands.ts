@@ -20,7 +20,12 @@ export const COMMANDS: readonly Command[] = Object.freeze([
     summary: 'lists every rotation track with its figures, then what is wrong',
     run: survey,
   },
-  { name: 'check', usage: 'check FILE…', summary: 'tells what is wrong and gives a verdict', run: check },
+  {
+    name: 'check',
+    usage: 'check FILE…',
+    summary: 'tells what is wrong and gives a verdict; FILE may be a folder or a pattern',
+    run: check,
+  },
   {
     name: 'mend',
     usage: 'mend FILE (--card JOB | --proposed) -o OUT',

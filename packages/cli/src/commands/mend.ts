@@ -8,15 +8,20 @@ import {
   surveyFile,
   textReport,
   undoPlan,
+  withStamps,
   type JobSettings,
   type MendedFile,
+  type Watch,
 } from '@slewcurve/job';
 import { parseJobCard, verbNamed } from '@slewcurve/mend';
 import type { CommandIo } from '../command-io.js';
 import { EXIT } from '../exit-code.js';
+import { readStamps } from '../files/stamps-file.js';
 import { assertNoInput, writeOut } from '../files/write-out.js';
 import { writeWhole } from '../files/write-whole.js';
 import type { Arguments } from '../flags.js';
+import { paintFor } from '../print.js';
+import { progressOn, watchOver } from '../progress.js';
 import { sayRanges } from '../say-ranges.js';
 import { oneOf, readJson, settingsOf, tableOptionsOf } from '../settings.js';
 import { withFile, type FileInHand } from '../with-file.js';
@@ -36,10 +41,12 @@ export async function mend(args: Arguments, io: CommandIo): Promise<number> {
   const asJson = oneOf(args, 'format', ['text', 'json']) === 'json';
   return withFile(name, io.cwd(), tableOptionsOf(args), async (file) => {
     if (args.given('undo')) return undo(file, args, io);
-    const mended = await mendInHand(file, args, settings, io);
+    const progress = progressOn(io);
+    const watch = watchOver(io, progress, '');
+    const mended = await mendInHand(file, args, settings, io, watch).finally(() => progress.clear());
     await writeResults(file, mended, args, io);
-    const report = buildReport([mended.report], settings, mended.steps);
-    io.stdout.write(asJson ? jsonReport(report) : textReport(report));
+    const report = buildReport([mended.report], settings, { steps: mended.steps });
+    io.stdout.write(asJson ? jsonReport(report) : textReport(report, paintFor(io)));
     return report.verdict === 'pass' ? EXIT.pass : EXIT.fail;
   });
 }
@@ -49,15 +56,17 @@ async function mendInHand(
   args: Arguments,
   settings: JobSettings,
   io: CommandIo,
+  watch: Watch,
 ): Promise<MendedFile> {
-  const before = await surveyFile(file.opened.name, file.opened.file, settings);
+  const stamps = await readStamps(file.path, file.opened.name);
+  const before = withStamps(await surveyFile(file.opened.name, file.opened.file, settings, watch), stamps);
   const card = args.value('card');
   if (card !== undefined) {
     const steps = parseJobCard(await readJson(card, io.cwd()));
-    const mended = await mendFile(file.opened, steps, before, settings, file.options);
+    const mended = await mendFile(file.opened, steps, before, settings, file.options, watch);
     for (const finding of mended.raised)
       io.stderr.write(`new since the card ran: ${finding.track} in ${finding.clip}: ${finding.message}\n`);
-    return mended;
+    return { ...mended, report: withStamps(mended.report, stamps) };
   }
   const { mended, declined } = await mendProposed(
     file.opened,
@@ -65,10 +74,11 @@ async function mendInHand(
     settings,
     file.options,
     args.values('allow'),
+    watch,
   );
   for (const { step, why } of declined)
     io.stderr.write(`left out: ${step.verb} on ${step.track} in ${step.clip}: ${why}\n`);
-  return mended;
+  return { ...mended, report: withStamps(mended.report, stamps) };
 }
 
 /** Write what was asked for. The side files come first: a mended file never stands without the plan that takes it back. */
