@@ -18,6 +18,8 @@ interface Load {
   surveyed?: number;
   longestFrame: number;
   frames: number;
+  /** Frames over 50 ms by the clock: those also in which the page waited for a processor. */
+  slowFrames: number;
   /** Tasks of the page over 50 ms, as the browser itself reports them. */
   longTasks: { at: number; took: number }[];
 }
@@ -25,6 +27,7 @@ interface Load {
 declare global {
   interface Window {
     load: Load;
+    surveyed: Promise<void>;
   }
 }
 
@@ -36,14 +39,15 @@ test('a take of 1.7 million keys is drawn while it loads, and its one-frame pop 
   const browser = page.context().browser();
   await browser?.startTracing(page, { categories: ['toplevel'] });
   await page.locator('input.files').setInputFiles(place.path('take.glb'));
-  await page.getByText('80 rotation tracks in').waitFor({ timeout: 60_000 });
+  // Not by a locator, which would search the whole page at every frame.
+  await page.evaluate(() => window.surveyed);
   const trace = await browser?.stopTracing();
   // Seconds on a clock say little where others wait for the processor too; at rest this is 1.
   const crowding = Math.max(1, loadavg()[0] / availableParallelism());
   const load = {
     crowding,
     ...(await page.evaluate(() => window.load)),
-    longestTaskOfProcessor: longestTask(String(trace)),
+    longestTasksOfProcessor: longestTasks(String(trace)),
   };
   await mkdir(ARTEFACTS, { recursive: true });
   await writeFile(`${ARTEFACTS}/three-minute-take.json`, `${JSON.stringify(load, null, 2)}\n`);
@@ -53,12 +57,17 @@ test('a take of 1.7 million keys is drawn while it loads, and its one-frame pop 
   expect(pop).toBeGreaterThan(1.5 * beside);
   expect(load.trace).toBeLessThan(3000 * crowding);
   expect(load.roster).toBeLessThan(5000 * crowding);
+  // No frame over 50 ms: no task that keeps the page's thread at work for longer. Processor time hardly grows where others are at work,
+  // but for the caches that they share: twice at most.
+  expect(load.longestTasksOfProcessor[0]).toBeLessThan(crowding > 1.5 ? 100 : 50);
 }, 90_000);
 
 /** Runs on the page: from the choice of the file on, notes when what is drawn, every frame and every long task. */
 function watchLoading(): void {
-  const load: Load = { longestFrame: 0, frames: 0, longTasks: [] };
+  const load: Load = { longestFrame: 0, frames: 0, slowFrames: 0, longTasks: [] };
   window.load = load;
+  let done: (() => void) | undefined;
+  window.surveyed = new Promise((resolve) => (done = resolve));
   const since = (): number => performance.now() - (load.chosen ?? 0);
   new PerformanceObserver((list) => {
     for (const { startTime, duration } of list.getEntries())
@@ -81,8 +90,10 @@ function watchLoading(): void {
   const frame = (before: number) => (now: number) => {
     load.frames++;
     load.longestFrame = Math.max(load.longestFrame, now - before);
+    if (now - before > 50) load.slowFrames++;
     look();
-    if (!load.surveyed) requestAnimationFrame(frame(now));
+    if (load.surveyed) done?.();
+    else requestAnimationFrame(frame(now));
   };
   addEventListener(
     // Unlike a change event, this one leaves the app's shadow tree.
@@ -103,8 +114,8 @@ interface TraceEvent {
   readonly args?: { readonly name?: string };
 }
 
-/** Milliseconds of processor time that the page's longest task took: unlike a frame, it does not grow when the machine is busy elsewhere. */
-function longestTask(trace: string): number {
+/** Milliseconds of processor time that the page's longest tasks took: unlike a frame, they do not wait for others. */
+function longestTasks(trace: string): number[] {
   // oxlint-disable-next-line typescript/no-unsafe-type-assertion -- the browser's own format
   const { traceEvents } = JSON.parse(trace) as { traceEvents: TraceEvent[] };
   const pages = traceEvents
@@ -113,7 +124,8 @@ function longestTask(trace: string): number {
   const tasks = traceEvents.filter(
     ({ name, pid, tid }) => name === 'ThreadControllerImpl::RunTask' && pages.includes(`${pid} ${tid}`),
   );
-  return Math.max(...tasks.map(({ tdur = 0 }) => tdur / 1000));
+  const longest = tasks.map(({ tdur = 0 }) => tdur / 1000).toSorted((a, b) => b - a);
+  return longest.slice(0, 5);
 }
 
 /** Ink (opacity summed over the row's height) at a share of a row's width, and the most ink within 40 px of it on both sides. */
