@@ -16,7 +16,11 @@ const ORDER: readonly (readonly string[])[] = [
   ['jump.turned-over'],
   ['jump.first-key'],
   ['jump.shelf', 'jump.lone-key'],
+  ['pace.reverse'],
 ];
+
+/** Tangents this much too short, times, stop at their keys; longer ones are of a wrong scale. */
+const NONE = 0.01;
 
 /** Where this is found the whole track is explained: repeats, tremble and pace are the storage's. Jumps beyond its floor are not. */
 const CLAIMS_ALL = 'file.coarse';
@@ -28,17 +32,25 @@ const SPOT = 3;
 /** One spot, one finding: what a rule found, less the places at spots that a rule before it in the claim order has taken. */
 export function claimSpots(all: readonly Found[]): Found[] {
   const isClaimed = all.some(({ rule }) => rule.id === CLAIMS_ALL);
-  const found = all.filter(({ rule }) => !(isClaimed && CLAIMED.test(rule.id)));
+  const beaten = tangentsOrPearls(all);
+  const found = all.filter(({ rule }) => !(isClaimed && CLAIMED.test(rule.id)) && rule.id !== beaten);
   const claims = found
     .flatMap(({ rule, places }) => places.map((place) => ({ rank: rankOf(rule), place })))
     .filter(({ rank }) => rank >= 0);
   claims.sort((a, b) => a.rank - b.rank || (b.place.confidence ?? 0) - (a.place.confidence ?? 0));
   const taken = new Set<number>();
-  const beaten = new Set<Place>();
+  const lost = new Set<Place>();
   for (const { place } of claims)
-    if (place.keys.some((key) => spotOf(key).some((other) => taken.has(other)))) beaten.add(place);
+    if (place.keys.some((key) => spotOf(key).some((other) => taken.has(other)))) lost.add(place);
     else for (const key of place.keys) taken.add(key);
-  return found.map(({ rule, places }) => ({ rule, places: places.filter((place) => !beaten.has(place)) }));
+  return found.map(({ rule, places }) => ({ rule, places: places.filter((place) => !lost.has(place)) }));
+}
+
+/** The weaker of two explanations of a move that stops at its keys; undefined where there is one alone. */
+function tangentsOrPearls(all: readonly Found[]): string | undefined {
+  const scale = all.find(({ rule }) => rule.id === 'pace.tangent-scale')?.places[0];
+  if (scale === undefined || !all.some(({ rule }) => rule.id === 'pace.pearls')) return undefined;
+  return scale.value < NONE ? 'pace.tangent-scale' : 'pace.pearls';
 }
 
 /** -1 where the order does not name the rule. */

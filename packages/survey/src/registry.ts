@@ -12,9 +12,16 @@ import { loneKey } from './rules/jump/lone-key.js';
 import { shelf } from './rules/jump/shelf.js';
 import { turnedOver } from './rules/jump/turned-over.js';
 import { axisKick } from './rules/pace/axis-kick.js';
+import { bow } from './rules/pace/bow.js';
+import { comb } from './rules/pace/comb.js';
+import { cubicCollapse } from './rules/pace/cubic-collapse.js';
 import { elbow } from './rules/pace/elbow.js';
 import { endTangent } from './rules/pace/end-tangent.js';
 import { hardStop } from './rules/pace/hard-stop.js';
+import { lurch } from './rules/pace/lurch.js';
+import { overrun } from './rules/pace/overrun.js';
+import { pearls } from './rules/pace/pearls.js';
+import { reverse } from './rules/pace/reverse.js';
 import { tangentScale } from './rules/pace/tangent-scale.js';
 import { doubledEnd } from './rules/seam/doubled-end.js';
 import { loopGap } from './rules/seam/loop-gap.js';
@@ -58,6 +65,13 @@ export const RULES: readonly Rule[] = Object.freeze([
   axisKick,
   tangentScale,
   endTangent,
+  cubicCollapse,
+  overrun,
+  lurch,
+  pearls,
+  bow,
+  comb,
+  reverse,
   grain,
   hum,
   creep,

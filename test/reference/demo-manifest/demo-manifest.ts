@@ -2,6 +2,7 @@
 // It imports nothing of the packages that it judges.
 import type { Entry } from './entry.js';
 import { jumps } from './jumps.js';
+import { interruptions } from './interruptions.js';
 import { paces } from './paces.js';
 import { readScene, type Rules } from './read-scene.js';
 import { seams } from './seams.js';
@@ -38,6 +39,14 @@ export const WORKED_OUT: readonly string[] = [
   // The demo has no CUBICSPLINE tracks.
   'pace.tangent-scale',
   'pace.end-tangent',
+  'pace.pearls',
+  'pace.overrun',
+  'pace.lurch',
+  'pace.cubic-collapse',
+  // No playback by chords is chosen.
+  'pace.bow',
+  'pace.comb',
+  'pace.reverse',
   'shake.grain',
   'shake.hum',
   'shake.creep',
@@ -55,12 +64,15 @@ export function demoManifest(bytes: Uint8Array, rules: Rules): Entry[] {
   return readScene(bytes, rules).flatMap((track) => {
     const stored = storedNumbers(track);
     const isCoarse = stored.some(({ rule }) => rule === 'file.coarse');
+    const jumped = jumps(track, isCoarse);
+    const claimed = jumped.flatMap(({ keys }) => keys);
     return [
       ...stored,
       ...waysRound(track),
-      ...jumps(track, isCoarse),
+      ...jumped,
       ...shakes(track, isCoarse),
       ...paces(track, isCoarse),
+      ...(isCoarse ? [] : interruptions(track, claimed)),
       ...seams(track),
     ];
   });
