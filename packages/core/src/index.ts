@@ -44,6 +44,8 @@ export { swing, twist, twistAngle } from './quaternion/swing-twist.js';
 export { turnAboutOwn, turnAboutParent, turnAboutWorld } from './quaternion/turn-about.js';
 export { turnBetween } from './quaternion/turn-between.js';
 export { alignSigns, signChanges, type AlignedTrack, type AlignSignsOptions } from './track/align-signs.js';
+export { packed, STORAGE_MODELS, type StorageModel } from './track/packed.js';
+export { ticked, TICK_READINGS, type TickReading } from './playback/ticked.js';
 export { exactRate } from './time/exact-rate.js';
 export { readTime, sayTime, TIME_FORMS, type TimeForm } from './time/time-text.js';
 export { findSegment } from './track/find-segment.js';
@@ -73,6 +75,7 @@ export { cumulativeHermite } from './curve/cumulative-hermite.js';
 export { playAs } from './playback/play-as.js';
 export { PLAYBACKS } from './playback/registry.js';
 export { chartToRate, rateToChart } from './curve/chart-rate.js';
+export { roundedCorners, type Corner, type RoundedCurve } from './curve/rounded-corners.js';
 export type { KeyRates } from './curve/key-rate.js';
 export { nestedBezier } from './curve/nested-bezier.js';
 export {
