@@ -21,7 +21,7 @@ export function reportOf({ stdout }: Ran): Report {
 /** What the command sees besides a folder. */
 export interface World {
   readonly terminal?: boolean;
-  readonly env?: Readonly<Record<string, string>>;
+  readonly env?: Readonly<Record<string, string | undefined>>;
   readonly signal?: AbortSignal;
 }
 

@@ -82,22 +82,17 @@ export interface Address {
 /** The rule's thresholds for a role at an address: the defaults, then the house's, then each exception's; undefined where off. */
 export function limitsAt(house: HouseRules, rule: Rule, role: Role, address: Address): Limits | undefined {
   let limits: RoleLimits = rule.limits[role];
-  const names = Object.keys(Object.values(rule.limits).find((entry) => entry !== 'off') ?? {});
   for (const table of [house.limits, ...exceptionsAt(house, address).map((exception) => exception.limits)])
     for (const setting of [table?.['*']?.[rule.id], table?.[role]?.[rule.id]]) {
       if (setting === undefined) continue;
-      limits = overridden(limits, setting, names, rule);
+      limits = overridden(limits, setting, rule);
     }
   return limits === 'off' ? undefined : limits;
 }
 
-function overridden(
-  limits: RoleLimits,
-  setting: LimitSetting,
-  names: readonly string[],
-  rule: Rule,
-): RoleLimits {
+function overridden(limits: RoleLimits, setting: LimitSetting, rule: Rule): RoleLimits {
   if (setting === 'off') return 'off';
+  const names = Object.keys(Object.values(rule.limits).find((entry) => entry !== 'off') ?? {});
   // A role that was spared takes the other thresholds from the joint's, the commonest role.
   const base = limits === 'off' ? rule.limits.joint : limits;
   const changed = typeof setting === 'number' ? { [names[0] ?? 'size']: setting } : setting;

@@ -81,6 +81,8 @@ export function surveyTrack(stored: RotationTrack, settings: TrackSurveySettings
   });
 }
 
+const RULE_BY_ID: ReadonlyMap<string, Rule> = new Map(RULES.map((rule) => [rule.id, rule]));
+
 function contextOf(
   track: RotationTrack,
   settings: TrackSurveySettings,
@@ -101,7 +103,7 @@ function contextOf(
     loop: clip.loop || house.loops.some((pattern) => matchesPattern(pattern, track.clip)),
     played: playable.times.length === 0 ? [] : playbacks.flatMap((id) => played(playable, id)),
     limits: (id) => {
-      const rule = RULES.find((candidate) => candidate.id === id);
+      const rule = RULE_BY_ID.get(id);
       return rule === undefined ? undefined : limitsAt(house, rule, role, address);
     },
   };
