@@ -25,6 +25,7 @@ import { SheetPointer } from './chart/sheet-pointer.js';
 import { rowSentence, sayReading } from './chart/text-twin.js';
 import { TraceCursor, type CursorHost } from './chart/trace-cursor.js';
 import { traceStyles } from './chart/trace-styles.js';
+import type { SlewCloseUp } from './close-up.js';
 import { ChartHands, type HandName } from './gesture/chart-hands.js';
 import { hatching } from './gesture/hand-picture.js';
 import { handStyles } from './gesture/hand-styles.js';
@@ -112,11 +113,7 @@ export class SlewChart extends LitElement implements CursorHost {
       this.hands.grab(on, grip, placeAt(on, x, y));
     },
     pull: (row, { x, y }) => this.hands.work.drag(placeAt(this.paperOf(row), x, y)),
-    rest: (lost) => {
-      if (lost) this.hands.work.letGo();
-      else this.hands.work.rest();
-      this.focusGrip();
-    },
+    rest: (lost) => this.hands.rest(lost),
   });
   private readonly resize = new ResizeObserver(() => this.measure());
 
@@ -288,11 +285,10 @@ export class SlewChart extends LitElement implements CursorHost {
     const shown = this.hands.shown ?? data.motion;
     const carried = shown.read(Math.min(row.to, shown.end)).odometer;
     const on = this.paperOf(row);
-    const sketched = this.hands.work.sketch && !data.tried;
     return html`<li class="row ${row.index === here ? 'here' : ''}" data-row=${row.index}>
       <span class="from">${sayTime(row.from, row.from % 1 === 0 ? 0 : 2)}</span>
       <div
-        class="sheet ${sketched ? 'sketched' : ''}"
+        class="sheet ${this.hands.sketched ? 'sketched' : ''}"
         @pointermove=${(event: PointerEvent) => this.pointer.move(event, row)}
         @pointerdown=${(event: PointerEvent) => this.pointer.down(event, row)}
         @pointerup=${(event: PointerEvent) => this.pointer.up(event, row) && this.focus({ preventScroll: true })}
@@ -348,6 +344,9 @@ export class SlewChart extends LitElement implements CursorHost {
       .time=${now}
       .scale=${this.scale ?? 'usual'}
       .chosen=${this.chosen}
+      .hands=${this.hands}
+      .hand=${this.hands.hand}
+      @edit-chosen=${(event: CustomEvent<{ edit: HandEdit }>) => this.choose(event.detail.edit)}
       @span-moved=${(event: CustomEvent<{ span: Span }>) => (this.opened = event.detail.span)}
       @closed=${() => this.cursor.act({ kind: 'back' })}
       @time-chosen=${(event: CustomEvent<{ time: number }>) => this.cursor.go(event.detail.time, false)}
@@ -390,9 +389,17 @@ export class SlewChart extends LitElement implements CursorHost {
 
   /** @internal */
   focusGrip(): void {
-    void this.updateComplete.then(() =>
-      this.renderRoot.querySelector<HTMLElement>('.grip.at-work')?.focus({ preventScroll: true }),
-    );
+    void this.updateComplete.then(async () => {
+      const closeUp = this.renderRoot.querySelector<SlewCloseUp>('slew-close-up');
+      await closeUp?.updateComplete;
+      (gripAtWork(closeUp?.renderRoot) ?? gripAtWork(this.renderRoot))?.focus({ preventScroll: true });
+    });
+  }
+
+  /** An edit that was chosen in words; no hand holds it. */
+  private choose(edit: HandEdit): void {
+    this.hands.follow(undefined);
+    this.send('edit-sketched', { edit, settled: true, idle: false });
   }
 
   /** Opens the close-up at the cursor, or around the span. */
@@ -421,4 +428,8 @@ export class SlewChart extends LitElement implements CursorHost {
   send(type: string, detail: unknown): void {
     this.dispatchEvent(new CustomEvent(type, { detail, bubbles: true, composed: true }));
   }
+}
+
+function gripAtWork(root: ParentNode | undefined): HTMLElement | null | undefined {
+  return root?.querySelector<HTMLElement>('.grip.at-work');
 }

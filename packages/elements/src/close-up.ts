@@ -1,11 +1,11 @@
 import {
   LitElement,
-  css,
   html,
   nothing,
   svg,
   type CSSResult,
   type PropertyDeclarations,
+  type PropertyValues,
   type TemplateResult,
 } from 'lit';
 import { guard } from 'lit/directives/guard.js';
@@ -14,13 +14,21 @@ import { peakSpeed, type ChartData } from './chart/chart-data.js';
 import { TALL_ROW, rowPicture } from './chart/chart-row.js';
 import { traceStyles } from './chart/trace-styles.js';
 import { moveSpan } from './chart/close-up-span.js';
+import { closeUpStyles } from './chart/close-up-styles.js';
 import type { FoldRow } from './chart/fold.js';
-import { keyNumbers, type KeyNumbers } from './chart/key-numbers.js';
+import { keyNumbers } from './chart/key-numbers.js';
+import { keyWords } from './chart/key-words.js';
 import { firstKeyAfter, firstKeyAt, nearestKey } from './chart/posts.js';
-import { sayAngle, sayNumber, sayRate, saySpan, sayTime } from './chart/quantity.js';
+import { sayTime } from './chart/quantity.js';
 import { linearScale, logScale, niceStep, type ScaleKind, type SpeedScale } from './chart/scale.js';
+import { segmentWords } from './chart/segment-words.js';
+import { SheetPointer } from './chart/sheet-pointer.js';
+import type { ChartHands } from './gesture/chart-hands.js';
+import { hatching } from './gesture/hand-picture.js';
+import { handStyles } from './gesture/hand-styles.js';
+import type { Hand } from './gesture/hand.js';
+import { placeAt, type Paper } from './gesture/paper-place.js';
 import { controls } from './theme/controls.js';
-import { shareAcross } from './theme/hold-pointer.js';
 import { paper } from './theme/paper.js';
 
 /** Key numbers are written at least this far apart, px. */
@@ -33,6 +41,7 @@ const NUMBER_ROOM = 34;
  * @fires span-moved - `{ span: [number, number] }` seconds
  * @fires time-chosen - `{ time: number }` seconds
  * @fires closed
+ * @fires edit-chosen - `{ edit: HandEdit }` the segment is to be played otherwise
  */
 export class SlewCloseUp extends LitElement {
   static override properties: PropertyDeclarations = {
@@ -41,114 +50,46 @@ export class SlewCloseUp extends LitElement {
     time: { type: Number },
     scale: { type: String },
     chosen: { type: String },
+    hands: { attribute: false },
+    hand: { attribute: false },
+    ease: { state: true },
     width: { state: true },
   };
-  static override styles: CSSResult[] = [
-    paper,
-    controls,
-    traceStyles,
-    css`
-      :host {
-        margin: 0.5rem 0 1.25rem;
-        padding: 0.25rem 1rem 1rem;
-        border: solid var(--_rule);
-        border-width: 1px 0;
-        background: var(--_sheet);
-        container-type: inline-size;
-      }
-      .head {
-        display: flex;
-        flex-wrap: wrap;
-        align-items: center;
-        gap: 0 1rem;
-      }
-      h3 {
-        flex: 1 1 auto;
-        margin: 0;
-        font-size: 1.0625rem;
-        font-weight: 400;
-      }
-      .body {
-        display: grid;
-        grid-template-columns: minmax(0, 1fr) 15rem;
-        gap: 1.5rem;
-        align-items: start;
-      }
-      .sheet {
-        position: relative;
-        min-width: 0;
-        cursor: crosshair;
-      }
-      .cursor {
-        position: absolute;
-        top: 6px;
-        bottom: 28px;
-        width: 1px;
-        background: var(--_ink);
-        pointer-events: none;
-      }
-      svg.over {
-        position: absolute;
-        inset: 0 auto auto 0;
-        pointer-events: none;
-      }
-      .knob {
-        fill: var(--_sheet);
-        stroke: var(--_ink);
-        stroke-width: 1.3;
-      }
-      .knob.here {
-        fill: var(--_ink);
-      }
-      svg text.key {
-        text-anchor: middle;
-        font-size: 10px;
-      }
-      svg text.key.here {
-        font-weight: 700;
-        fill: var(--_ink);
-      }
-      dl {
-        margin: 0.75rem 0 0;
-        font-size: 0.9375rem;
-        line-height: 1.45;
-      }
-      dt {
-        color: var(--_soft);
-        font-style: italic;
-      }
-      dd {
-        margin: 0 0 0.35rem;
-      }
-      h4 {
-        margin: 1rem 0 0;
-        font-size: 1.125rem;
-        font-weight: 400;
-      }
-      @container (max-width: 44rem) {
-        .body {
-          grid-template-columns: minmax(0, 1fr);
-          gap: 0;
-        }
-        dl {
-          columns: 2;
-        }
-      }
-    `,
-  ];
+  static override styles: CSSResult[] = [paper, controls, traceStyles, closeUpStyles, handStyles];
 
   declare data: ChartData | undefined;
   declare span: readonly [number, number] | undefined;
   declare time: number;
   declare scale: ScaleKind | undefined;
   declare chosen: string | undefined;
+  /** The chart's edits by hand; left out: none can be made here. */
+  declare hands: ChartHands | undefined;
+  /** The one at work. */
+  declare hand: Hand | undefined;
+  /** Chosen for the segment after the key. */
+  declare private ease: string;
   declare private width: number;
+  private scaleNow: SpeedScale = linearScale(1);
+  private readonly pointer = new SheetPointer({
+    hover: () => {},
+    go: (time) => this.send('time-chosen', { time }),
+    drag: ([from], settled) => settled && this.send('time-chosen', { time: from }),
+    note: () => {},
+    catches: (row, { x, y }) => this.hands?.catches(this.paperOf(row), x, y) ?? false,
+    grab: (row, grip, { x, y }) => {
+      const on = this.paperOf(row);
+      this.hands?.grab(on, grip, placeAt(on, x, y));
+    },
+    pull: (row, { x, y }) => this.hands?.work.drag(placeAt(this.paperOf(row), x, y)),
+    rest: (lost) => this.hands?.rest(lost),
+  });
   private readonly resize = new ResizeObserver(() => this.measure());
 
   constructor() {
     super();
     this.time = 0;
     this.width = 0;
+    this.ease = 'minimum-jerk';
   }
 
   override connectedCallback(): void {
@@ -159,6 +100,12 @@ export class SlewCloseUp extends LitElement {
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     this.resize.disconnect();
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    const { data, span } = this;
+    if (data && span && (changed.has('data') || changed.has('span') || changed.has('scale')))
+      this.scaleNow = this.ownScale(data, { index: 0, from: span[0], to: span[1] });
   }
 
   protected override updated(): void {
@@ -182,13 +129,33 @@ export class SlewCloseUp extends LitElement {
         ${this.moves()}
       </div>
       <div class="body">
-        <div class="sheet" @pointerdown=${(event: PointerEvent) => this.point(event, row)}>
+        <div
+          class="sheet ${this.hands?.sketched ? 'sketched' : ''}"
+          @pointerdown=${(event: PointerEvent) => this.pointer.down(event, row)}
+          @pointermove=${(event: PointerEvent) => this.pointer.move(event, row)}
+          @pointerup=${(event: PointerEvent) => this.pointer.up(event, row)}
+          @pointercancel=${() => this.pointer.cancel()}
+        >
           ${guard([data, span, this.width, this.scale, this.chosen, key], () => this.picture(data, row, key))}
+          ${this.hands?.picture(this.paperOf(row), true) ?? nothing}
           ${x >= 0 && x <= this.width ? html`<div class="cursor" .style=${`left:${x}px`}></div>` : nothing}
+          ${this.hands?.keyGrips(this.paperOf(row), key) ?? nothing}
         </div>
         ${key < 0 ? nothing : keyWords(keyNumbers(data, key), data.playback)}
       </div>
+      ${key < 0 || !this.hands ? nothing : this.segment(data, key)} ${hatching}
     </section>`;
+  }
+
+  private segment(data: ChartData, key: number): TemplateResult | typeof nothing {
+    return segmentWords(data, key, this.ease, {
+      choose: (ease) => (this.ease = ease),
+      take: (edit) => this.send('edit-chosen', { edit }),
+    });
+  }
+
+  private paperOf(row: FoldRow): Paper {
+    return { row, width: this.width, bands: TALL_ROW, scale: this.scaleNow };
   }
 
   private moves(): TemplateResult {
@@ -202,7 +169,7 @@ export class SlewCloseUp extends LitElement {
 
   private picture(data: ChartData, row: FoldRow, key: number): TemplateResult {
     if (this.width === 0) return html`<svg width="1" height=${TALL_ROW.bottom} aria-hidden="true"></svg>`;
-    const scale = this.ownScale(data, row);
+    const scale = this.scaleNow;
     const numbered = numberNotes(data.notes);
     return html`${rowPicture({
       data,
@@ -239,23 +206,20 @@ export class SlewCloseUp extends LitElement {
     const first = firstKeyAt(data.keys, row.from);
     const last = firstKeyAfter(data.keys, row.to);
     if ((last - first) * 8 > this.width) return nothing;
-    const { base, top, feet, bottom } = TALL_ROW;
+    const { base, top, posts, feet, bottom } = TALL_ROW;
     const at = (key: number): number => ((data.keys[key] - row.from) / (row.to - row.from)) * this.width;
     const every = niceStep(Math.max(1, (NUMBER_ROOM * (last - first)) / this.width));
     const keys = Array.from({ length: last - first }, (_, i) => first + i);
-    return html`<svg class="paper over" width=${this.width} height=${bottom} aria-hidden="true">
+    const grips = this.hands && !data.tried;
+    return html`<svg class="paper keys" width=${this.width} height=${bottom} aria-hidden="true">
       ${keys.map((key) => {
         const { speed } = data.motion.read(data.keys[key]);
         const mark = key === here ? 'here' : '';
-        return svg`<circle class="knob ${mark}" cx=${at(key)} cy=${base - scale.share(speed) * (base - top)} r="3.2" />
+        return svg`<circle class="knob ${mark}" cx=${at(key)} cy=${base - scale.share(speed) * (base - top)} r=${key === here ? 5 : 4} />
+          ${grips ? svg`<circle class="touch knob-touch" data-grip="knob-${key}" cx=${at(key)} cy=${base - scale.share(speed) * (base - top)} r="12" /><rect class="touch post-touch" data-grip="post-${key}" x=${at(key) - 8} y=${posts - 3} width="16" height=${feet - posts + 8} />` : nothing}
           ${key === here || (key % every === 0 && Math.abs(at(key) - at(here)) >= NUMBER_ROOM) ? svg`<text class="key ${mark}" x=${at(key)} y=${feet + 11}>${key}</text>` : nothing}`;
       })}
     </svg>`;
-  }
-
-  private point(event: PointerEvent, row: FoldRow): void {
-    if (event.button !== 0) return;
-    this.send('time-chosen', { time: row.from + shareAcross(event) * (row.to - row.from) });
   }
 
   private move(share: number, factor?: number): void {
@@ -266,27 +230,4 @@ export class SlewCloseUp extends LitElement {
   private send(type: string, detail: unknown): void {
     this.dispatchEvent(new CustomEvent(type, { detail, bubbles: true, composed: true }));
   }
-}
-
-function keyWords(numbers: KeyNumbers, playback: string): TemplateResult {
-  const { speedIn, speedOut, before, after } = numbers;
-  return html`<div>
-    <h4>Key ${numbers.key}, ${sayTime(numbers.time)}</h4>
-    <dl>
-      ${line('orientation', `${sayAngle(numbers.angle, 4)} about ${numbers.axis.map((v) => sayNumber(v)).join(', ')} (parent)`)}
-      ${line('as a quaternion x, y, z, w', numbers.orientation.map((v) => sayNumber(v, 5)).join(', '))}
-      ${speedIn === undefined ? nothing : line('speed just before', sayRate(speedIn, 4))}
-      ${speedOut === undefined ? nothing : line('speed just after', sayRate(speedOut, 4))}
-      ${before ? line('from the key before', `${sayAngle(before.angle)} in ${saySpan(before.gap)}`) : nothing}
-      ${after ? line('to the key after', `${sayAngle(after.angle)} in ${saySpan(after.gap)}`) : nothing}
-      ${line('played', playback)}
-    </dl>
-  </div>`;
-}
-
-function line(term: string, words: string): TemplateResult {
-  return html`<div>
-    <dt>${term}</dt>
-    <dd>${words}</dd>
-  </div>`;
 }

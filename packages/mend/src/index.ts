@@ -3,6 +3,7 @@ export type { Bend, EditResult, EditScene, Meeting, Price, Repaced, TimeMap, Ver
 export { VERBS, verbNamed } from './registry.js';
 export { nearestWord } from './nearest-word.js';
 export { type AppliedStep, type JobCard, applySteps, parseJobCard } from './job-card.js';
+export { easeOf } from './pace/ease-of.js';
 export { matchesPattern } from './pattern.js';
 export { parseSentence, sayStep } from './sentence.js';
 export { type EditProof, proveEdit } from './proof.js';

@@ -72,8 +72,8 @@ describe('a press', () => {
       by: 20,
       reach: 0.4,
       ends: 'same',
-      // Out to the keys, three reaches to either side.
-      span: [track.times[9], track.times[81]],
+      // Out to keys 9 and 81, three reaches to either side.
+      span: [0.3, 2.7],
     });
     expect(hand.says).toBe('+20 deg/s at 1.500 s, reaching 400 ms');
   });
@@ -177,7 +177,12 @@ describe('a hold', () => {
 describe('a key drawn sideways', () => {
   it('is a mark that moves the key and nothing else', () => {
     const hand = keyTime(ground(), 30)?.dragged({ time: 1, speed: 0 }, { time: 1.02, speed: 0 });
-    expect(hand?.edit.marks).toEqual([[track.times[30], 1.02]]);
+    expect(hand?.edit).toEqual({
+      verb: 'set marks',
+      marks: [[1, 1.02]],
+      store: 'move',
+      span: [0.966, 1.034],
+    });
     const step: Step = { verb: '', ...hand?.edit, clip: track.clip, track: track.id };
     const { tracks } = applySteps([track], [step]);
     expect(tracks[0]?.values).toEqual(track.values);

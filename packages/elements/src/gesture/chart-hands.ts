@@ -7,6 +7,8 @@ import { HandAtWork } from './hand-at-work.js';
 import { handOfEdit } from './hand-of-edit.js';
 import { handPicture, priceWords } from './hand-picture.js';
 import { holdAt } from './hold.js';
+import { keySpeed } from './key-speed.js';
+import { keyTime } from './key-time.js';
 import { limitAt } from './limit.js';
 import { pixelOf, placeAt, xOf, yOf, type Paper } from './paper-place.js';
 import { pressAt } from './press.js';
@@ -120,9 +122,30 @@ export class ChartHands {
     const { hand } = this;
     const ground = this.on(paper).ground();
     if (!ground) return;
-    if (hand && grip !== undefined) return this.work.grab(hand, place);
-    const name = grip === 'limit' ? 'limit' : 'press';
-    this.work.grab(fresh(ground, name, grip === undefined ? place.time : this.host.time, paper), place);
+    const ofKey = grip === undefined ? null : /^(knob|post)-(\d+)$/.exec(grip);
+    const begun = ofKey
+      ? keyHand(ground, ofKey[1] === 'knob' ? 'knob' : 'post', Number(ofKey[2]))
+      : hand && grip !== undefined
+        ? hand
+        : fresh(
+            ground,
+            grip === 'limit' ? 'limit' : 'press',
+            grip === undefined ? place.time : this.host.time,
+            paper,
+          );
+    if (begun) this.work.grab(begun, place);
+  }
+
+  /** The pointer is lifted, or, `lost`, was taken away. */
+  rest(lost: boolean): void {
+    if (lost) this.work.letGo();
+    else this.work.rest();
+    this.host.focusGrip();
+  }
+
+  /** Whether a new trace is drawn over the old one. */
+  get sketched(): boolean {
+    return this.work.sketch !== undefined && !this.host.data?.tried;
   }
 
   /** Begins at the cursor, from a button: the keyboard is on its handle then. */
@@ -173,12 +196,26 @@ export class ChartHands {
     ${this.limitGrip(paper, limitAt(ground, this.host.time, paper.scale.high), true)}`;
   }
 
+  /** In the close-up: the handle at work, or those of one key, its knob for the speed and its post for the time. */
+  keyGrips(paper: Paper, key: number): TemplateResult | typeof nothing {
+    if (this.hand) return this.grips(paper, true);
+    const ground = this.on(paper).ground();
+    if (!ground || paper.width === 0 || key < 0 || ground.keys.length < 2) return nothing;
+    const post = keyTime(ground, key);
+    return html`${this.grip(paper, keySpeed(ground, key))} ${post ? this.grip(paper, post) : nothing}`;
+  }
+
   private grip(paper: Paper, hand: Hand): TemplateResult | typeof nothing {
     const { sketch } = this.work;
     const time = (sketch?.newTime(hand.time) ?? hand.time) + (hand.later ?? 0);
     if (time < paper.row.from || time >= paper.row.to) return nothing;
     const speed = (this.shown ?? this.motion)?.read(time).speed ?? 0;
-    const y = hand.stands === 'trace' ? yOf(paper, speed) : paper.bands.base;
+    const y =
+      hand.stands === 'trace'
+        ? yOf(paper, speed)
+        : hand.kind === 'retime'
+          ? (paper.bands.posts + paper.bands.feet) / 2
+          : paper.bands.base;
     return this.slider(hand, `left:${xOf(paper, time)}px;top:${y}px`, hand.kind);
   }
 
@@ -215,6 +252,10 @@ export class ChartHands {
 function fresh(ground: Ground, name: HandName, time: number, paper: Paper): Hand {
   if (name === 'limit') return limitAt(ground, time, paper.scale.high);
   return name === 'hold' ? holdAt(ground, time) : pressAt(ground, time);
+}
+
+function keyHand(ground: Ground, which: 'knob' | 'post', key: number): Hand | undefined {
+  return which === 'knob' ? keySpeed(ground, key) : keyTime(ground, key);
 }
 
 /** Whether a hand shows on a piece of paper: within what it changes, and after that where time runs. */

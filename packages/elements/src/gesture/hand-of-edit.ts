@@ -1,5 +1,6 @@
+import { nearestKey } from '../chart/posts.js';
 import type { Ground, Hand, HandEdit } from './hand.js';
-import { outToKeys, wholeSpan } from './hand.js';
+import { inToKeys, wholeSpan } from './hand.js';
 import { hold } from './hold.js';
 import { keyTime } from './key-time.js';
 import { limitAt } from './limit.js';
@@ -24,7 +25,7 @@ export function handOfEdit(edit: HandEdit, ground: Ground): Hand | undefined {
 function pressOf(edit: HandEdit, ground: Ground): Hand | undefined {
   const { at, by, reach, shoulders, ends = 'same' } = edit;
   if (at === undefined || by === undefined || reach === undefined) return undefined;
-  const span = outToKeys(ground, edit.span ?? wholeSpan(ground));
+  const span = inToKeys(ground, edit.span ?? wholeSpan(ground));
   return press(ground, { at, by, reach, ends, shoulders, span });
 }
 
@@ -41,6 +42,8 @@ function limitOf({ rate, acceleration, span }: HandEdit, ground: Ground): Hand |
 
 function keyTimeOf({ marks = [] }: HandEdit, ground: Ground): Hand | undefined {
   const [mark] = marks;
-  const key = mark && marks.length === 1 ? ground.keys.indexOf(mark[0]) : -1;
-  return key < 0 ? undefined : keyTime(ground, key, mark?.[1]);
+  if (!mark || marks.length > 1) return undefined;
+  const key = nearestKey(ground.keys, mark[0]);
+  // As fine as a sentence says it.
+  return Math.abs(ground.keys[key] - mark[0]) < 1e-3 ? keyTime(ground, key, mark[1]) : undefined;
 }

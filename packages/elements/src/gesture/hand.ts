@@ -68,6 +68,18 @@ export function outToKeys({ keys, motion }: Ground, [from, to]: Span): Span {
   ];
 }
 
+/** The span drawn in to keys, as the verbs do it; as it is where it holds fewer than two. */
+export function inToKeys({ keys }: Ground, [from, to]: Span): Span {
+  const [first, last] = [firstKeyAt(keys, from), firstKeyAfter(keys, to) - 1];
+  return first < last ? [keys[first], keys[last]] : [from, to];
+}
+
+/** A span of keys in whole milliseconds, no key left out: what a sentence can say, and a verb draws in to the same keys. */
+export function sayable([from, to]: Span): Span {
+  const milliseconds = (value: number): number => Number((value / 1000).toFixed(3));
+  return [milliseconds(Math.floor(from * 1000 + 1e-6)), milliseconds(Math.ceil(to * 1000 - 1e-6))];
+}
+
 /** The whole of the keys. */
 export function wholeSpan({ keys, motion }: Ground): Span {
   return [keys[0] ?? motion.start, keys[keys.length - 1] ?? motion.end];

@@ -1,5 +1,5 @@
 import { sayTime } from '../chart/quantity.js';
-import { stepsOfKey, tidy, type Ground, type Hand, type Place } from './hand.js';
+import { sayable, stepsOfKey, tidy, type Ground, type Hand, type Place } from './hand.js';
 
 /** A key moves no nearer to its neighbour than this share of the gap that was. */
 const ROOM = 0.05;
@@ -21,7 +21,7 @@ export function keyTime(ground: Ground, key: number, time: number = ground.keys[
     time: old,
     stands: 'baseline',
     law: changed ? { kind: 'moved', old, time: next, span } : undefined,
-    edit: { verb: 'set marks', marks: [[old, next]], store: 'move', span },
+    edit: { verb: 'set marks', marks: [[tidy(old, 1e-4), next]], store: 'move', span: sayable(span) },
     label: `Time of key ${key}`,
     says: sayTime(next),
     tag: sayTime(next),

@@ -1,6 +1,7 @@
 import { sayRate } from '../chart/quantity.js';
 import {
   outToKeys,
+  sayable,
   stepsOfKey,
   tidy,
   toRadians,
@@ -21,7 +22,7 @@ export function limitAt(ground: Ground, time: number, speed: number): Hand {
     time,
     stands: { speed: rate },
     law: isPassed ? { kind: 'cap', rate: toRadians(rate), span } : undefined,
-    edit: { verb: 'cap', rate, ...(ground.span && { span }) },
+    edit: { verb: 'cap', rate, ...(ground.span && { span: sayable(span) }) },
     label: 'Limit of the speed',
     says: `at most ${sayRate(rate)}`,
     tag: `at most ${sayRate(rate)}`,

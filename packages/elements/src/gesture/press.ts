@@ -1,6 +1,7 @@
 import { sayRate, saySpan, sayTime } from '../chart/quantity.js';
 import {
   outToKeys,
+  sayable,
   signed,
   stepsOfKey,
   tidy,
@@ -28,10 +29,16 @@ export interface PressNumbers {
 const LENDERS = 3;
 
 /** A press that presses nothing yet. */
-export function pressAt(ground: Ground, time: number, reach: number = ground.reach): Hand {
+export function pressAt(
+  ground: Ground,
+  time: number,
+  reach: number = ground.reach,
+  shoulders?: number,
+): Hand {
   const held = Math.min(ground.motion.end, Math.max(ground.motion.start, time));
   const at = tidy(held, Math.min(1e-3, ground.frame));
-  return press(ground, { at, by: 0, reach, ends: ground.ends, span: spanAround(ground, at, reach) });
+  const span = spanAround(ground, at, reach);
+  return press(ground, { at, by: 0, reach, ends: ground.ends, shoulders, span });
 }
 
 /** A press as its numbers say. */
@@ -57,7 +64,7 @@ export function press(ground: Ground, numbers: PressNumbers): Hand {
     by,
     reach,
     ends,
-    span,
+    span: sayable(span),
     ...(shoulders !== undefined && { shoulders }),
   };
   const pressed = (more: Partial<PressNumbers>): Hand => press(ground, { ...numbers, ...more });
