@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import type { RotationTrack } from '@slewcurve/core';
+import { verbNamed } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, surveyTrack, type HouseRules } from '@slewcurve/survey';
 import { turningTrack } from '../../../support/turning-track.js';
 
@@ -13,6 +14,21 @@ describe('pace.hard-stop', () => {
     expect(finding).toMatchObject({ level: 'warning', count: 2, limit: 5, unit: 'deg/s' });
     expect(finding.value).toBeCloseTo(20, 6);
     expect(finding.occurrences.map(({ keys }) => keys[0])).toEqual([0, 3]);
+  });
+
+  test('either end is eased over 0.3 s by its own step, and together they leave none', () => {
+    const pan = turningTrack((key) => 20 * key, 4, 1);
+    const steps = stop(pan)!.occurrences.map(({ remedy }) => remedy!);
+    expect(steps.map(({ which, shoulders }) => [which, shoulders])).toEqual([
+      ['in', 0.3],
+      ['out', 0.3],
+    ]);
+    const eased = steps.reduce((track, step) => verbNamed(step.verb).apply(track, step).track, pan);
+    expect(stop(eased)).toBeUndefined();
+    // Exact at both ends: the ramps take time from the middle.
+    expect(eased.times.at(-1)).toBe(3);
+    // Shorter than twice that, there is no room.
+    expect(stop(turningTrack((key) => 5 * key, 3, 4))!.remedy).toBeUndefined();
   });
 
   test('eased ends, slow ends, loops, joints and marked ends are none', () => {

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import type { RotationTrack } from '@slewcurve/core';
+import { verbNamed } from '@slewcurve/mend';
 import { surveyTrack } from '@slewcurve/survey';
 import { cubicTrack, differences } from '../../../support/cubic-track.js';
 
@@ -9,18 +10,24 @@ const lurch = (track: RotationTrack) => surveyTrack(track).find(({ rule }) => ru
 const TIMES = [0, 1, 1.1, 2.1];
 const TURN = TIMES.map((time) => 40 * time);
 
+// Slopes as if all keys stood a tenth of a second apart.
+const LURCHING = cubicTrack(TIMES, TURN, [40, 220, 220, 40]);
+
 describe('pace.lurch', () => {
   test('tangents as if keys were even lurch where the short gap is', () => {
-    // Per step of one, written as if a step were the mean gap of 0.7 s.
-    const finding = lurch(cubicTrack(TIMES, TURN, [40, 22 / 0.35, 22 / 0.35, 40]))!;
-    expect(finding).toBeUndefined();
-    const perStep = differences(TIMES, TURN, 0.1);
-    expect(lurch(cubicTrack(TIMES, TURN, perStep))).toMatchObject({
+    expect(lurch(LURCHING)).toMatchObject({
       level: 'warning',
       unit: 'deg/s',
       limit: 120,
       count: 2,
     });
+  });
+
+  test('setting the tangents of both keys anew mends it', () => {
+    const steps = lurch(LURCHING)!.occurrences.map(({ remedy }) => remedy!);
+    expect(
+      lurch(steps.reduce((now, step) => verbNamed(step.verb).apply(now, step).track, LURCHING)),
+    ).toBeUndefined();
   });
 
   test('tangents weighted by time are clean, and so are even keys', () => {

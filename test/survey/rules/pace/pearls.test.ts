@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { verbNamed } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, surveyTrack, type HouseRules } from '@slewcurve/survey';
 import { cubicTrack, differences } from '../../../support/cubic-track.js';
 import type { RotationTrack } from '@slewcurve/core';
@@ -18,6 +19,7 @@ describe('pace.pearls', () => {
     expect(finding).toMatchObject({ level: 'warning', unit: '%', value: 100, limit: 60, count: 1 });
     expect(finding.keys).toEqual([1, 2, 3, 4, 5]);
     expect(finding.message).toContain('at 5 of the 5 keys');
+    expect(pearls(verbNamed('set tangents').apply(STOPPED, finding.remedy!).track)).toBeUndefined();
     // Tangents of zero length are this finding, not one of their scale as well.
     expect(surveyTrack(STOPPED).map(({ rule }) => rule)).not.toContain('pace.tangent-scale');
   });

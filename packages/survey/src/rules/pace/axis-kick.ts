@@ -1,6 +1,7 @@
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayDegrees, sayRate } from '../../say-number.js';
 import { angleApart, rateOf, segmentsOf } from '../../segments.js';
+import { easeThroughKeys } from './ease-through-keys.js';
 
 const KICK = Object.freeze({ angle: 30, rate: 10, share: 0.2 });
 
@@ -42,7 +43,7 @@ export const axisKick: Rule = Object.freeze({
     }
     return places;
   },
-  remedy: (): Remedy | undefined => undefined,
+  remedy: (context: TrackContext): Remedy | undefined => easeThroughKeys(context),
   message({ keys, value, limit, facts }: Place): string {
     return `at key ${keys[0]} the axis turns by ${sayDegrees(value)} at a level ${sayRate(facts?.['speed'] ?? 0)} (limit ${sayDegrees(limit)})`;
   },
@@ -56,6 +57,7 @@ export const axisKick: Rule = Object.freeze({
     source: 'Common practice, no source.',
     spares:
       'Dense tracks, corners taken slowly, playbacks whose rate is continuous, marked hits, declared whips, STEP tracks.',
-    remedy: '`ease through` lays a smooth way through the same keys; or slow down there.',
+    remedy:
+      '`ease through` lays a smooth way through the same keys at the same times, in LINEAR tracks; or slow down there.',
   },
 });

@@ -1,5 +1,5 @@
-import { builtStep } from '../../built-step.js';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
+import { triedStep } from '../../tried-step.js';
 import { cubicPlayed } from './cubic-played.js';
 
 /** Moments of a segment that are looked at; the least is then found between its neighbours. */
@@ -50,7 +50,10 @@ export const cubicCollapse: Rule = Object.freeze({
   },
   // q beside −q is what mostly makes it; where it does not, `set tangents` lays them anew.
   remedy: (context: TrackContext, { keys: [key = 0] }: Place): Remedy | undefined =>
-    builtStep(context, changesSign(context, key - 1) ? 'same side' : 'set tangents'),
+    triedStep(
+      context.track,
+      changesSign(context, key - 1) ? { verb: 'same side' } : { verb: 'set tangents', keys: [key - 1, key] },
+    ),
   message({ keys: [key = 0], value, limit, time }: Place): string {
     return `between key ${key - 1} and key ${key}, at ${time.toFixed(3)} s, the cubic shrinks to a length of ${Number(value.toPrecision(3))} (at least ${limit}) before it is made unit: there its direction whirls round`;
   },

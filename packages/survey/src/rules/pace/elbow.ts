@@ -1,5 +1,6 @@
 import type { Limits, Place, PlayedTrack, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayRate } from '../../say-number.js';
+import { easeThroughKeys } from './ease-through-keys.js';
 
 const DEGREES = 180 / Math.PI;
 
@@ -43,11 +44,7 @@ export const elbow: Rule = Object.freeze({
     }
     return places;
   },
-  remedy({ stored, track }: TrackContext): Remedy | undefined {
-    // One interpolation a track: what has tangents already, or keys that cannot be played, is not eased through.
-    if (stored.interpolation !== 'LINEAR' || stored !== track) return undefined;
-    return { step: { verb: 'ease through', clip: track.clip, track: track.id }, price: 0 };
-  },
+  remedy: (context: TrackContext): Remedy | undefined => easeThroughKeys(context),
   message(place: Place): string {
     const { before = 0, after = 0 } = place.facts ?? {};
     return `at key ${place.keys[0]} the angular rate steps by ${sayRate(place.value)}, from a speed of ${sayRate(before)} to ${sayRate(after)} (limit ${sayRate(place.limit)})`;

@@ -1,11 +1,14 @@
 import { medianGap } from '@slewcurve/core';
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayRate } from '../../say-number.js';
+import { triedStep } from '../../tried-step.js';
 import { grainOf } from '../shake/grain-of.js';
 
 const DEGREES = 180 / Math.PI;
 /** Speed that noise of one degree an axis makes per frame: √2 an axis, √3 for three, and three times that to be sure. */
 const NOISE = 3 * Math.SQRT2 * Math.sqrt(3);
+/** Seconds that a start or a stop is spread over: 0.2 to 0.5 s is usual, common practice. */
+const EASE = 0.3;
 const CAMERA = Object.freeze({ rate: 5 });
 
 /** A move that starts or ends at full speed. */
@@ -47,7 +50,12 @@ export const hardStop: Rule = Object.freeze({
       return [{ keys: [key], time: at, span, value, limit, level: 'warning', playback: played.playback.id }];
     });
   },
-  remedy: (): Remedy | undefined => undefined,
+  remedy({ stored, track }: TrackContext, { keys: [key] }: Place): Remedy | undefined {
+    const length = (track.times.at(-1) ?? 0) - (track.times[0] ?? 0);
+    // Times move along with their keys, which a cut or a lost key stands against.
+    if (stored !== track || track.breaks.length > 0 || length < 2 * EASE) return undefined;
+    return triedStep(track, { verb: 'ease in/out', shoulders: EASE, which: key === 0 ? 'in' : 'out' });
+  },
   message({ keys: [key = 0], value, limit }: Place): string {
     const what = key === 0 ? 'it starts, at key 0, with' : `it stops, at key ${key}, out of`;
     return `${what} ${sayRate(value)} from one moment to the next (limit ${sayRate(limit)})`;
@@ -65,6 +73,6 @@ export const hardStop: Rule = Object.freeze({
     spares:
       'Loops, joints and props, marked hits, declared whips, STEP tracks. Stops inside a clip are looked at by `pace.elbow`.',
     remedy:
-      '`ease in/out` spreads the stop over the last moments; the end orientation stays. How long it may take only a person can say.',
+      '`ease in/out` with shoulders of 0.3 s at that end: the stop is spread over them, the end orientation and the clip’s length stay, and the rest goes a little faster for it. How long the stop may take only a person can say. On a motorised head look at its peak speed afterwards.',
   },
 });

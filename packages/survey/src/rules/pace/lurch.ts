@@ -1,7 +1,7 @@
-import { builtStep } from '../../built-step.js';
 import type { Limits, Place, PlayedTrack, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayRate } from '../../say-number.js';
 import { segmentsOf } from '../../segments.js';
+import { triedStep } from '../../tried-step.js';
 import { cubicPlayed } from './cubic-played.js';
 import { speedsWithin } from './speeds-within.js';
 
@@ -55,7 +55,8 @@ export const lurch: Rule = Object.freeze({
     }
     return places;
   },
-  remedy: (context: TrackContext): Remedy | undefined => builtStep(context, 'set tangents'),
+  remedy: ({ track }: TrackContext, { keys }: Place): Remedy | undefined =>
+    triedStep(track, { verb: 'set tangents', keys }),
   message({ keys: [key = 0], value, limit, facts }: Place): string {
     const { slower = 0, faster = 0 } = facts ?? {};
     const pace = `where the keys on both sides go at ${sayRate(slower)} and ${sayRate(faster)}`;
@@ -74,7 +75,8 @@ export const lurch: Rule = Object.freeze({
       'Common practice, no source. Keys at 0, 1, 1.1 and 2.1 s in a steady turn of 40 deg/s read −47 to 212 deg/s under uniform tangents, and 39 to 40 under time-weighted ones (measured).',
     spares:
       'Even gaps, segments that stand still, marked accents, declared whips, playbacks of straight segments.',
-    remedy: '`set tangents`, weighted by time; keys and times stay.',
+    remedy:
+      '`set tangents` lays those of the key anew, weighted by time; keys and times stay. Cubics that the player makes itself have none to set.',
   },
 });
 

@@ -1,5 +1,4 @@
 import { angleFloor, logMap, relative } from '@slewcurve/core';
-import { builtStep } from '../../built-step.js';
 import type { Level } from '../../finding.js';
 import type { Limits, Place, PlayedTrack, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
@@ -56,7 +55,8 @@ export const overrun: Rule = Object.freeze({
     }
     return places;
   },
-  remedy: (context: TrackContext): Remedy | undefined => builtStep(context, 'set tangents'),
+  // `set tangents` lays them by the turns on both sides, which are not flat at a hold.
+  remedy: (): Remedy | undefined => undefined,
   message({ keys: [key = 0], value, limit, facts }: Place): string {
     return facts?.['hold'] === 1
       ? `keys ${key - 1} and ${key} are the same, and between them it swings out by ${sayDegrees(value)} (limit ${sayDegrees(limit)})`
@@ -74,7 +74,7 @@ export const overrun: Rule = Object.freeze({
     source:
       'Common practice, no source. Keys at 0°, 60°, 60° and 0°, a second apart, swing to 67.5° by tangents of finite differences (Hermite’s blend: a quarter of the tangent’s 30°).',
     spares: 'Dense tracks, marked accents, declared whips, playbacks of straight segments.',
-    remedy: '`set tangents` with flat ones at the hold; all other segments stay.',
+    remedy: 'Flat tangents at both keys of the hold; all other segments stay. No verb lays them flat yet.',
   },
 });
 

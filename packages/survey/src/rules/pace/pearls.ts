@@ -1,7 +1,8 @@
+import type { Step } from '@slewcurve/mend';
 import { median } from '../../median.js';
-import { builtStep } from '../../built-step.js';
 import type { Limits, Place, PlayedTrack, Remedy, Rule, TrackContext } from '../../rule.js';
 import { angleApart, rateOf, segmentsOf } from '../../segments.js';
+import { triedStep } from '../../tried-step.js';
 import { cubicPlayed } from './cubic-played.js';
 import { speedsWithin } from './speeds-within.js';
 
@@ -57,7 +58,11 @@ export const pearls: Rule = Object.freeze({
     places.sort((a, b) => b.value - a.value);
     return places.slice(0, 1);
   },
-  remedy: (context: TrackContext): Remedy | undefined => builtStep(context, 'even out'),
+  remedy({ track }: TrackContext): Remedy | undefined {
+    const even: Step = { verb: 'even out', clip: track.clip, track: track.id };
+    const tangents = triedStep(track, { verb: 'set tangents' });
+    return tangents === undefined ? undefined : { ...tangents, alternatives: [even] };
+  },
   message({ value, limit, facts }: Place): string {
     return `at ${facts?.['stops']} of the ${facts?.['passed']} keys that it passes on the move it slows down to less than 35 % of its pace on both sides (${value.toFixed(0)} %, limit ${limit} %)`;
   },
@@ -74,7 +79,7 @@ export const pearls: Rule = Object.freeze({
     spares:
       'Poses that are held between (holds beside a key take it out), corners, dense tracks, declared whips, playbacks of straight segments.',
     remedy:
-      '`even out` runs through the keys at an even pace; `ease through` lays a smooth way through them.',
+      '`set tangents` lays them anew from the turns between the keys, so that the move flows through; `even out` gives it one pace instead, whatever the keys’ times.',
   },
 });
 
