@@ -1,4 +1,4 @@
-import { playAs, rotationTrack } from '@slewcurve/core';
+import { playAs, rotationTrack, roundedCorners } from '@slewcurve/core';
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { codeOf, numbersOf } from '../support/edit-acceptance.js';
@@ -49,6 +49,31 @@ describe('ease in/out', () => {
     expect(codeOf(() => repaced(track, { verb: 'ease in/out', ease: 'bouncy' }))).toBe('step.unknown-ease');
     expect(codeOf(() => repaced(track, { verb: 'ease in/out', ease: 'cubic-bezier(0.5, -1, 0.5, 2)' }))).toBe(
       'pace.runs-back',
+    );
+  });
+
+  it('comes to rest at every corner too where asked, each stretch eased in the time that it took', () => {
+    fc.assert(
+      fc.property(
+        sparse.filter(({ times }) => times.length > 2),
+        (track) => {
+          const result = repaced(track, { verb: 'ease in/out', corners: 'stop' });
+          expect(result.price.seconds).toBeCloseTo(0, 9);
+          const curve = playAs(result.track, 'as-written');
+          const stops = roundedCorners(track, 0.01).corners.map(({ key }) => key);
+          for (const [i, key] of stops.entries()) {
+            // At the old time, and at rest within a frame of it.
+            const time = track.times[key];
+            expect(result.track.times).toContain(time);
+            const stretch = curve.length(track.times[stops[i - 1] ?? 0], time) * DEGREES;
+            expect(curve.length(time - 1 / 60, time) * DEGREES).toBeLessThan(0.02 * stretch + 1e-9);
+          }
+          expect(codeOf(() => repaced(track, { verb: 'ease in/out', corners: 'stop', shoulders: 0.1 }))).toBe(
+            'step.corners',
+          );
+        },
+      ),
+      RUNS,
     );
   });
 });

@@ -1,6 +1,7 @@
-import { measure, playAs } from '@slewcurve/core';
+import { measure, playAs, segmentAngle } from '@slewcurve/core';
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { codeOf } from '../support/edit-acceptance.js';
 import { offThePath, repaced, travelled } from '../support/pace-acceptance.js';
 import { dense, sparse } from '../support/pace-tracks.js';
 
@@ -44,5 +45,24 @@ describe('even out', () => {
       }),
       RUNS,
     );
+  });
+
+  it('rounds corners where asked, keys read off the rounded path and the rest at one speed', () => {
+    const [track] = fc.sample(
+      sparse.filter(
+        (one) =>
+          one.times.length > 4 &&
+          [...one.times.keys()].slice(1).every((key) => segmentAngle(one, key - 1) > 0.3),
+      ),
+      { numRuns: 1, seed: 3 },
+    );
+    const result = repaced(track, { verb: 'even out', corners: 'round', within: 1, store: 'cubic' });
+    expect(result.price.rounded).toBeLessThanOrEqual(1 + 1e-9);
+    // The corners' own bends are warned of; rounded off there is none left.
+    expect(repaced(track, { verb: 'even out' }).bends.length).toBeGreaterThan(0);
+    expect(result.bends).toEqual([]);
+    const { peakRate, medianRate } = measure(playAs(result.track, 'as-written'));
+    expect(peakRate / medianRate).toBeLessThan(1.01);
+    expect(codeOf(() => repaced(track, { verb: 'even out', corners: 'stop' }))).toBe('step.corners');
   });
 });

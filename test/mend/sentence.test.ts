@@ -48,6 +48,7 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     anchor: fc.constantFrom('start' as const, 'end' as const, 'both' as const),
     rate: seconds,
     acceleration: seconds,
+    corners: fc.constantFrom('round' as const, 'stop' as const),
     which: fc.constantFrom('in' as const, 'out' as const),
     ease: fc.oneof(fc.string(), fc.constantFrom('cubic-bezier(0.42, 0, 0.58, 1)', 'minimum-jerk')),
     seconds,

@@ -192,6 +192,12 @@ export const CLAUSES: readonly Clause[] = [
     read: ([side]) => ({ tangents: side === 'in' ? 'in' : 'out' }),
   },
   {
+    key: 'corners',
+    say: ({ corners }) => (corners === 'round' ? 'rounding corners' : 'stopping at corners'),
+    pattern: /^, (rounding corners|stopping at corners)/,
+    read: ([words]) => ({ corners: words === 'rounding corners' ? 'round' : 'stop' }),
+  },
+  {
     key: 'within',
     say: ({ within = 0 }) => `within ${sayNumber(within)} degrees`,
     pattern: new RegExp(`^, within ${NUMBER} degrees`),

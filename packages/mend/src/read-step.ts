@@ -55,6 +55,7 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
   hertz: (value) => ({ hertz: above0(value) }),
   spread: (value) => ({ spread: oneOf(value, ['tail', 'evenly']) }),
   anchor: (value) => ({ anchor: oneOf(value, ['start', 'end', 'both']) }),
+  corners: (value) => ({ corners: oneOf(value, ['round', 'stop']) }),
   which: (value) => ({ which: oneOf(value, ['in', 'out']) }),
   turns: (value) => {
     if (!Number.isSafeInteger(value) || typeof value !== 'number')

@@ -48,6 +48,11 @@ export interface Step {
   readonly ease?: string;
   /** ease in/out with shoulders: at one end alone. */
   readonly which?: 'in' | 'out';
+  /**
+   * cap, ease in/out, even out: what becomes of the corners that a path of great arcs turns at its keys, where no speed keeps an acceleration finite. `round`:
+   * the path is rounded, `within` so many degrees. `stop`: it comes to rest at each. Default: `round` for cap with an acceleration, else they stay.
+   */
+  readonly corners?: 'round' | 'stop';
   /** whole turns: how many beside the short way, about its axis; negative ones the other way. */
   readonly turns?: number;
   /** shape: by how much the speed is pressed up or down, deg/s. */
@@ -78,7 +83,7 @@ export interface Step {
   readonly pairs?: readonly (readonly [string, string])[];
   /** convert: how the keys are to be joined. */
   readonly interpolation?: 'LINEAR' | 'CUBICSPLINE';
-  /** convert, re-grid, smooth: the most that the motion may differ, degrees. */
+  /** convert, re-grid, smooth: the most that the motion may differ, degrees. Pace verbs that round corners: how far off them they may go; default 0.1. */
   readonly within?: number;
   /** re-grid, re-time to grid: frames per second. */
   readonly fps?: number;

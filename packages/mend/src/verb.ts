@@ -68,6 +68,8 @@ export interface Price {
   readonly degrees: number;
   /** Bytes that times and values take more in the track's own storage. */
   readonly bytes: number;
+  /** Where corners were rounded: how far, in degrees, the path is off the worst of them. */
+  readonly rounded?: number;
 }
 
 /** Both sides of a join. */

@@ -8,10 +8,15 @@ export interface Limits {
   readonly rate: number;
   /** Of the whole acceleration, bends included: s̈² + (ṡ²κ)² at most its square. Default: not limited. */
   readonly acceleration?: number;
+  /** With a limit of acceleration: times at which it is to stand still for a moment, as at corners. Knots of the curve, seconds. */
+  readonly stops?: readonly number[];
 }
 
 /** A speed within this of what the curve has, as a share, is what it has. */
 const ALIKE = 1e-6;
+
+/** Below this share of the greatest speed it rests. */
+const STILL = 1e-9;
 
 /**
  * Slows a curve down where it is over a limit, and nowhere else; it is never made faster. Without a limit of acceleration the time grows by
@@ -20,7 +25,7 @@ const ALIKE = 1e-6;
  * S. Dubowsky and J. S. Gibson 1985; from memory): nothing faster keeps the limits at these places.
  *
  * Only where the curve's rate is continuous are its bends finite; at a corner the limit of acceleration means nothing. Ends keep the speed that they
- * have, as far as the limits let them.
+ * have, as far as the limits let them; so do corners, unless they are stops.
  */
 export function cappedClock(curve: Curve, span: Span, limits: Limits): InnerClock {
   const places = placesAlong(curve, span, (rough) => [
@@ -28,7 +33,8 @@ export function cappedClock(curve: Curve, span: Span, limits: Limits): InnerCloc
     ...(limits.acceleration === undefined ? [] : nearStops(curve, rough)),
   ]);
   const speeds = places.speeds.map((speed) => Math.min(speed, limits.rate));
-  if (limits.acceleration !== undefined) slowForAcceleration(speeds, places, limits.acceleration);
+  if (limits.acceleration !== undefined)
+    slowForAcceleration(speeds, places, limits.acceleration, new Set(limits.stops));
   const same = Uint8Array.from(places.angles, (_, i) =>
     Number([2 * i, 2 * i + 1].every((side) => speeds[side] >= places.speeds[side] * (1 - ALIKE))),
   );
@@ -36,20 +42,29 @@ export function cappedClock(curve: Curve, span: Span, limits: Limits): InnerCloc
 }
 
 /** Lowers speeds, in place, until no piece between two places needs more acceleration than the limit. */
-function slowForAcceleration(speeds: Float64Array, places: Places, limit: number): void {
-  const { angles } = places;
+function slowForAcceleration(
+  speeds: Float64Array,
+  places: Places,
+  limit: number,
+  stops: ReadonlySet<number>,
+): void {
+  const { angles, times } = places;
   const count = angles.length;
+  // Where it as good as rests, bends are rounding over nothing.
+  const still = STILL * places.speeds.reduce((most, speed) => Math.max(most, speed), 0);
   const squares = speeds.map((speed, side) => {
     const across = places.across[side];
-    return across > limit
+    return across > limit && places.speeds[side] > still
       ? Math.min(speed, places.speeds[side] * Math.sqrt(limit / across)) ** 2
       : speed ** 2;
   });
-  const bends = places.across.map((across, side) => (across > 0 ? across / places.speeds[side] ** 2 : 0));
+  const bends = places.across.map((across, side) =>
+    places.speeds[side] > still ? across / places.speeds[side] ** 2 : 0,
+  );
   // The rate does not jump: both sides of a place share the lower speed.
   const meet = (place: number): void => {
     if (place === 0 || place === count) return;
-    const lower = Math.min(squares[2 * place - 1], squares[2 * place]);
+    const lower = stops.has(times[place]) ? 0 : Math.min(squares[2 * place - 1], squares[2 * place]);
     squares[2 * place - 1] = lower;
     squares[2 * place] = lower;
   };

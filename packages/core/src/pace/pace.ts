@@ -7,6 +7,7 @@ import type { DrawnSpeed } from './drawn-profile.js';
 import type { Ease } from './ease.js';
 import { easedProfile } from './eased-profile.js';
 import { EASES } from './eases.js';
+import { joinedClocks } from './joined-clocks.js';
 import { type Match, matchedClock } from './matched-clock.js';
 import { marksProfile } from './marks-profile.js';
 import { retimedCurve } from './retimed-curve.js';
@@ -22,7 +23,13 @@ export type PaceLaw = {
   readonly span?: Span;
 } & (
   | { readonly kind: 'constant'; readonly seconds?: number }
-  | { readonly kind: 'ease'; readonly ease: Ease; readonly seconds?: number }
+  /** `stops`: old times, inside the span, at which it comes to rest as well; each stretch is eased by itself in the time that it took. */
+  | {
+      readonly kind: 'ease';
+      readonly ease: Ease;
+      readonly seconds?: number;
+      readonly stops?: readonly number[];
+    }
   /** From rest over the first `rise` old seconds, to rest over the last `fall`; the pace between stays, but for `seconds`. */
   | { readonly kind: 'ramps'; readonly rise?: number; readonly fall?: number; readonly seconds?: number }
   | ({ readonly kind: 'cap' } & Limits)
@@ -81,7 +88,7 @@ function clockOf(curve: Curve, span: Span, law: PaceLaw): InnerClock {
     case 'constant':
       return easedClock(curve, span, EASES.constant, law.seconds);
     case 'ease':
-      return easedClock(curve, span, law.ease, law.seconds);
+      return stoppingClock(curve, span, law);
     case 'ramps':
       return rampsClock(span, law.rise ?? 0, law.fall ?? 0, law.seconds);
     case 'cap':
@@ -121,6 +128,36 @@ function easedClock(curve: Curve, span: Span, ease: Ease, seconds = span[1] - sp
     throw new SlewcurveError('pace.runs-back', `${ease.name} runs back for a while, which a pace cannot.`);
   const turned = turnedAngle(curve);
   return clockOfProfile(turned, span, easedProfile(angleOver(turned, span), seconds, ease));
+}
+
+/** Eased from stop to stop. */
+function stoppingClock(
+  curve: Curve,
+  span: Span,
+  {
+    ease,
+    seconds = span[1] - span[0],
+    stops = [],
+  }: { ease: Ease; seconds?: number; stops?: readonly number[] },
+): InnerClock {
+  const inside = stops.filter((stop) => stop > span[0] && stop < span[1]);
+  if (inside.length === 0) return easedClock(curve, span, ease, seconds);
+  const edges = [span[0], ...inside, span[1]];
+  edges.sort((a, b) => a - b);
+  const longer = seconds / (span[1] - span[0]);
+  const parts = edges.slice(1).map((to, i) => {
+    const stretch: Span = [edges[i], to];
+    const old = to - edges[i];
+    const took = longer === 1 ? old : old * longer;
+    return {
+      span: stretch,
+      clock:
+        curve.length(...stretch) > 0
+          ? easedClock(curve, stretch, ease, took)
+          : stretchesClock(edges[i], [{ kind: 'steady' as const, seconds: took, old }]),
+    };
+  });
+  return joinedClocks(span, parts);
 }
 
 function copiedClock(

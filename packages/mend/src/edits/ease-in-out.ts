@@ -1,9 +1,10 @@
-import { type RotationTrack, SlewcurveError, pace, playAs } from '@slewcurve/core';
+import { type RotationTrack, SlewcurveError, pace } from '@slewcurve/core';
 import { placeOf } from '../acted-keys.js';
 import { sentenceOf } from '../clauses.js';
 import { easeOf } from '../pace/ease-of.js';
 import { paceSpan } from '../pace/pace-span.js';
 import { storePaced } from '../pace/store-paced.js';
+import { takeCorners } from '../pace/take-corners.js';
 import type { Step } from '../step.js';
 import type { EditResult, Verb } from '../verb.js';
 
@@ -26,7 +27,7 @@ export const easeInOut: Verb = Object.freeze({
     'ease out',
   ],
   opening: 'Ease in and out',
-  reads: ['ease', 'seconds', 'which', 'ends', 'with', 'store'] as const,
+  reads: ['ease', 'seconds', 'which', 'ends', 'corners', 'within', 'with', 'store'] as const,
   needsAllowing: true,
   keysApart: false,
   insertsKeys: true,
@@ -40,12 +41,18 @@ export const easeInOut: Verb = Object.freeze({
         'Easing keeps the angle. Keep the same ends, or let time run.',
         placeOf(track),
       );
-    const path = playAs(track, 'as-written');
+    const { path, corners, stops } = takeCorners(track, span, step, false);
     if (step.shoulders === undefined || step.shoulders === 0) {
       const ease = easeOf(step.ease ?? 'minimum-jerk');
-      const paced = pace(path, { kind: 'ease', ease, seconds: step.seconds ?? old, span });
-      return storePaced(track, span, paced, step, 'smooth');
+      const paced = pace(path, { kind: 'ease', ease, seconds: step.seconds ?? old, stops, span });
+      return storePaced(track, span, paced, step, 'smooth', corners);
     }
+    if (step.corners === 'stop')
+      throw new SlewcurveError(
+        'step.corners',
+        'Ramps in the shoulders alone leave no time to stop at corners. Leave the shoulders out, or round the corners.',
+        placeOf(track),
+      );
     const most = step.which === undefined ? old / 2 : old;
     const ramp = Math.min(step.shoulders, most);
     const seconds = step.seconds ?? (step.ends === 'run' ? undefined : old);
@@ -56,6 +63,6 @@ export const easeInOut: Verb = Object.freeze({
       span,
       ...(seconds !== undefined && { seconds }),
     });
-    return storePaced(track, span, paced, step, 'smooth');
+    return storePaced(track, span, paced, step, 'smooth', corners);
   },
 });

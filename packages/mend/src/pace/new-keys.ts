@@ -1,11 +1,13 @@
 import {
   type PacedCurve,
   type RotationTrack,
+  SlewcurveError,
   type Span,
   findSegment,
   frameGrid,
   medianGap,
 } from '@slewcurve/core';
+import { placeOf } from '../acted-keys.js';
 import { cubicPlaces } from './cubic-places.js';
 
 /** A key of the re-timed track: an old one that travels, or one that is read off the path. */
@@ -13,10 +15,15 @@ export interface NewKey {
   readonly time: number;
   /** The old key, where it is one. */
   readonly old?: number;
+  /** The old key that it stands for, where that one's corner was rounded off. */
+  readonly for?: number;
 }
 
 /** Frames per second where keys lie on no grid. Common practice, no source. */
 const FRAME_RATE = 30;
+
+/** More keys than this are a slip, and would fill the memory: a day at 100 Hz. */
+const MOST_FRAMES = 1e7;
 
 /** Nearer than this share of a frame to a key that travels there is no frame beside it. */
 const APART = 0.25;
@@ -54,6 +61,14 @@ export function frameKeys(
   return ascending(all);
 }
 
+/** The same keys, but read off the path where an old one's corner was rounded off. */
+export function offCorners(keys: readonly NewKey[], rounded: readonly number[]): NewKey[] {
+  const off = new Set(rounded);
+  return keys.map((key) =>
+    key.old !== undefined && off.has(key.old) ? { time: key.time, for: key.old } : key,
+  );
+}
+
 function ascending(keys: NewKey[]): NewKey[] {
   // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   return keys.sort((a, b) => a.time - b.time);
@@ -84,15 +99,29 @@ export function cubicKeys(track: RotationTrack, [from, to]: Span, paced: PacedCu
 }
 
 /** The old key times, and after them more at the same distance. */
-function denseFrames({ times }: RotationTrack, from: number, to: number, end: number): number[] {
+function denseFrames(track: RotationTrack, from: number, to: number, end: number): number[] {
+  const { times } = track;
   const frames = Array.from(times.filter((time) => time > from && time <= to));
   const gap = (to - from) / Math.max(1, frames.length);
+  checkCount(track, (end - to) / gap);
   for (let n = 1; to + n * gap < end; n++) frames.push(to + n * gap);
   return frames;
 }
 
-function evenFrames({ times }: RotationTrack, begin: number, end: number): number[] {
+/** @throws SlewcurveError `step.too-long` */
+function checkCount(track: RotationTrack, frames: number): void {
+  if (frames <= MOST_FRAMES) return;
+  throw new SlewcurveError(
+    'step.too-long',
+    `It would take ${frames.toPrecision(3)} frames, more than ${MOST_FRAMES}. Ask for a higher speed, or less time.`,
+    placeOf(track),
+  );
+}
+
+function evenFrames(track: RotationTrack, begin: number, end: number): number[] {
+  const { times } = track;
   const rate = frameGrid([times]) ?? FRAME_RATE;
+  checkCount(track, (end - begin) * rate);
   const frames: number[] = [];
   for (let n = Math.ceil((begin - times[0]) * rate); times[0] + n / rate < end; n++)
     frames.push(times[0] + n / rate);

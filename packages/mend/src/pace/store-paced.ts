@@ -1,4 +1,5 @@
 import {
+  type Corner,
   type Curve,
   type PacedCurve,
   type RotationTrack,
@@ -18,7 +19,7 @@ import { storedValue, tangentFor } from '../stored-key.js';
 import type { EditResult, Price, TimeMap } from '../verb.js';
 import { bendsOf } from './bends.js';
 import { scaleTangents } from './scale-tangents.js';
-import { type NewKey, cubicKeys, frameKeys, movedKeys } from './new-keys.js';
+import { type NewKey, cubicKeys, frameKeys, movedKeys, offCorners } from './new-keys.js';
 
 /** Share of a gap by which the side before a key is looked at. */
 const BEFORE = 1e-6;
@@ -31,6 +32,7 @@ const BEFORE = 1e-6;
  * frames keys are read off the path, and the keys at the ends of the span, kept ones and all of a sparse track travel there unchanged. CUBICSPLINE
  * tangents are ½·q·(ω, 0) there, ω the exact rate at the new pace.
  *
+ * @param corners those that the path was rounded at: keys there are read off it
  * @throws SlewcurveError `step.no-room`, `step.one-mode`, `step.kept-in-the-way`
  */
 export function storePaced(
@@ -39,6 +41,7 @@ export function storePaced(
   paced: PacedCurve,
   step: Step,
   needs: 'steady' | 'smooth',
+  corners: readonly Corner[] = [],
 ): EditResult {
   const isDense = regime(track) === 'dense';
   const fits = needs === 'steady' && !isDense && track.interpolation === 'LINEAR';
@@ -50,7 +53,14 @@ export function storePaced(
       : store === 'cubic'
         ? cubicKeys(track, span, paced)
         : frameKeys(track, span, paced, isDense, step.keep);
-  return storeKeys(track, span, paced, step, store, keys);
+  if (corners.length === 0) return storeKeys(track, span, paced, step, store, keys);
+  const rounded = offCorners(
+    keys,
+    corners.map(({ key }) => key),
+  );
+  const result = storeKeys(track, span, paced, step, store, rounded);
+  const off = corners.reduce((most, corner) => Math.max(most, corner.off), 0) * DEGREES;
+  return result.price ? { ...result, price: { ...result.price, rounded: off } } : result;
 }
 
 /** Stores the path at a new pace by given keys, those of the old track among them unchanged. */
@@ -83,7 +93,7 @@ export function pacedResult(
 ): EditResult {
   const { turnsBack = false, turnsAt } = retiming;
   const isNew = keys.length > track.times.length;
-  const frames = keys.flatMap(({ old }, key) => (old === undefined ? [key] : []));
+  const frames = keys.flatMap((one, key) => (one.old === undefined && one.for === undefined ? [key] : []));
   const inserted = isNew ? frames.slice(-(keys.length - track.times.length)) : [];
   return {
     ...editResult(track, after, { inserted }),
