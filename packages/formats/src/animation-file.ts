@@ -7,6 +7,8 @@ import type { Source } from './source.js';
 export interface FileProblem {
   /** Stable, dotted, lower-case, as `SlewcurveError.code`. */
   readonly code: string;
+  /** `error`: something has no track for it; `warning`: the format forbids it, and all is read; `note`: worth knowing. */
+  readonly level: 'error' | 'warning' | 'note';
   readonly message: string;
   readonly place: ErrorPlace;
 }

@@ -249,10 +249,8 @@ describe('an accessor that lies', () => {
         { name: 'Sound', channels: [{ sampler: 0, target }], samplers: [{ input: 2, output: 3 }] },
       ],
     };
-    if (code === 'gltf.more-than-held') {
-      packer.accessors[2].count = 2;
-      packer.accessors[3].count = 2;
-    }
+    // That clip is of zeros then, sound as they are.
+    if (code === 'gltf.more-than-held') for (const sound of packer.accessors.slice(2)) sound.count = 2;
     const file = await open(glb(json, packer.data));
     expect(file.clips.map(({ tracks }) => tracks.length)).toEqual([0, 1]);
     expect(file.problems).toMatchObject([{ code, place: { file: 'mast.glb', clip: 'Broken' } }]);

@@ -165,6 +165,7 @@ function roundedFrameTime(file: string, motion: Motion): FileProblem | undefined
   const percent = Math.abs(share * 100).toPrecision(3);
   return {
     code: 'bvh.rounded-frame-time',
+    level: 'note',
     message: `${file}: Frame Time ${frameTime} is 1/${exact} s in ${frameTimeDecimals} decimals: speeds read ${percent} % too ${share > 0 ? 'high' : 'low'}, and the clip drifts ${Math.abs(share * 60).toPrecision(3)} s a minute. Write the time in full.`,
     place: { file },
   };

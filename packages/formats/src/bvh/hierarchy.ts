@@ -204,6 +204,7 @@ function endHierarchy(reading: Reading, line: TextLine): void {
       lineProblem(
         file,
         'bvh.brace',
+        'warning',
         line,
         `MOTION begins while ${stack.length} joints are open; so many } are missing before it.`,
       ),

@@ -58,6 +58,7 @@ export function motionReader(
           lineProblem(
             file,
             'bvh.cut-row',
+            'warning',
             cut.line,
             `the last row has ${cut.words} numbers and the CHANNELS ask for ${columns}; it is left out.`,
           ),
@@ -67,6 +68,7 @@ export function motionReader(
           lineProblem(
             file,
             'bvh.frame-count',
+            'note',
             frames.line,
             `Frames says ${frames.text} and ${store.table.rows()} rows follow; the rows are read.`,
           ),

@@ -41,6 +41,7 @@ function orderProblem(file: string, joint: Joint, axes: string): FileProblem {
   return lineProblem(
     file,
     'bvh.rotation-order',
+    'error',
     joint.line,
     `${quoted(joint.name)} turns about ${axes.split('').join(', ')}; one to three angles are read, no axis twice in a row. It has no track.`,
   );

@@ -148,22 +148,25 @@ function clipOf(tracks: readonly RotationTrack[]): Clip {
 function epochProblem(file: string, epoch: bigint): FileProblem {
   return {
     code: 'delimited.epoch',
+    level: 'note',
     message: `${file}: times are told in seconds after ${epoch} s, so that none of their digits is lost; the file keeps its own.`,
     place: { file },
   };
 }
 
 function bodyProblems(file: string, layout: Layout, bodies: readonly ReadBody[]): FileProblem[] {
-  const twice = layout.doubled.map((name) => ({
+  const twice = layout.doubled.map((name): FileProblem => ({
     code: 'delimited.two-forms',
+    level: 'note',
     message: `${file}: the orientation of ${name || NAMELESS} stands in two forms; the quaternion or the matrix is read and written, the other stays as it is.`,
     place: { file },
   }));
-  const matrices = bodies.flatMap(({ track, fault }) =>
+  const matrices = bodies.flatMap(({ track, fault }): FileProblem[] =>
     fault
       ? [
           {
             code: `delimited.${fault.kind}-matrix`,
+            level: 'warning',
             message: `${file}: the matrix of ${track.id} in row ${fault.row} is ${fault.kind}, so no rotation; its turn is read without that.`,
             place: { file, track: track.id },
           },

@@ -85,6 +85,7 @@ export function rowReader(
           lineProblem(
             file,
             'delimited.cut-row',
+            'warning',
             cut.line,
             `the last row has ${cut.cells} cells and the header names ${width}; it is left out.`,
           ),

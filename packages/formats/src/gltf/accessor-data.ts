@@ -49,6 +49,17 @@ function applySparse(
   }
 }
 
+/** Whether sparse indices rise from one to the next, as glTF 2.0 asks. True where nothing is sparse. */
+export function hasRisingIndices({ sparse }: AccessorLayout, bytesOf: RunBytes): boolean {
+  const component = sparse && COMPONENTS[sparse.indexType];
+  if (!component) return true;
+  const { indices } = sparse;
+  const readIndex = reader(component, false, bytesOf(indices));
+  for (let i = 1; i < indices.count; i++)
+    if (readIndex(i * indices.stride) <= readIndex((i - 1) * indices.stride)) return false;
+  return true;
+}
+
 /** Reads one component at a byte offset. */
 function reader(component: Component, normalized: boolean, bytes: Uint8Array): (at: number) => number {
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);

@@ -1,6 +1,7 @@
 import { SlewcurveError, type Storage } from '@slewcurve/core';
 import { type Json, countMember, isObject, listMember, member, shown, textMember } from '../json-value.js';
 import type { Container } from './container.js';
+import { requiredExtension } from './required-extension.js';
 
 /** Component types by glTF 2.0's number ("Accessor Data Types"). `top` is what a normalised 1 is stored as. */
 export const COMPONENTS: Readonly<Record<number, Component>> = Object.freeze({
@@ -81,6 +82,7 @@ export function accessorLayout(container: Container, index: number): AccessorLay
       pointer,
       `does not exist; there are ${accessors.length} accessors.`,
     );
+  refuseHidden(container, json, pointer);
   const componentType = countMember(json, 'componentType') ?? -1;
   const component = Object.hasOwn(COMPONENTS, componentType) ? COMPONENTS[componentType] : undefined;
   const type = textMember(json, 'type') ?? '';
@@ -93,6 +95,15 @@ export function accessorLayout(container: Container, index: number): AccessorLay
       pointer,
       `needs a componentType (5120–5126), a type (SCALAR … MAT4) and a whole count; it has ${shown(member(json, 'componentType'))}, ${shown(member(json, 'type'))} and ${shown(member(json, 'count'))}.`,
     );
+  const stated = member(json, 'normalized');
+  const normalized = stated === undefined ? false : stated;
+  if (typeof normalized !== 'boolean')
+    throw fault(
+      container,
+      'gltf.bad-accessor',
+      `${pointer}/normalized`,
+      `must be true or false; it is ${shown(normalized)}.`,
+    );
   const layout = {
     index,
     componentType,
@@ -100,7 +111,7 @@ export function accessorLayout(container: Container, index: number): AccessorLay
     type,
     size,
     count,
-    normalized: member(json, 'normalized') === true,
+    normalized,
   };
   const run =
     member(json, 'bufferView') === undefined
@@ -113,7 +124,7 @@ export function accessorLayout(container: Container, index: number): AccessorLay
 /** The run that an accessor (or half of a sparse one) describes: it has `bufferView` and maybe `byteOffset`. */
 function runOf(container: Container, json: Json, pointer: string, count: number, size: number): Run {
   const view = viewOf(container, json, pointer);
-  const within = countMember(json, 'byteOffset') ?? 0;
+  const within = countOr(container, json, 'byteOffset', 0, pointer);
   const stride = view.stride ?? size;
   if (stride < size)
     throw fault(
@@ -142,6 +153,14 @@ function runOf(container: Container, json: Json, pointer: string, count: number,
   };
 }
 
+/** An optional whole number. What stands in its place and is none would move all that follows. */
+function countOr(container: Container, json: Json, name: string, absent: number, pointer: string): number {
+  const count = member(json, name) === undefined ? absent : countMember(json, name);
+  if (count !== undefined) return count;
+  const found = shown(member(json, name));
+  throw fault(container, 'gltf.bad-view', `${pointer}/${name}`, `must be a whole number; it is ${found}.`);
+}
+
 interface View {
   readonly index: number;
   readonly buffer: number;
@@ -162,18 +181,12 @@ function viewOf(container: Container, json: Json, pointer: string): View {
       `is ${shown(member(json, 'bufferView'))}; there are ${views.length} buffer views.`,
     );
   const at = `/bufferViews/${index}`;
-  const compression = COMPRESSIONS.find((name) => isObject(member(member(view, 'extensions'), name)));
-  if (compression !== undefined && listMember(container.json, 'extensionsRequired').includes(compression))
-    throw fault(
-      container,
-      'gltf.needs-extension',
-      at,
-      `is compressed with ${compression}, which the file requires and which is not read. Export it without that compression.`,
-    );
+  refuseHidden(container, view, at);
   const buffer = countMember(view, 'buffer');
   const length = countMember(view, 'byteLength');
-  const offset = countMember(view, 'byteOffset') ?? 0;
+  const offset = countOr(container, view, 'byteOffset', 0, at);
   const buffers = listMember(container.json, 'buffers');
+  refuseHidden(container, buffers[buffer ?? -1], `/buffers/${buffer}`);
   if (buffer === undefined || length === undefined || buffer >= buffers.length)
     throw fault(
       container,
@@ -189,12 +202,44 @@ function viewOf(container: Container, json: Json, pointer: string): View {
       at,
       `spans bytes ${offset} to ${offset + length} of /buffers/${buffer}, which has ${holds}.`,
     );
-  const stride = countMember(view, 'byteStride');
+  const stride =
+    member(view, 'byteStride') === undefined ? undefined : countOr(container, view, 'byteStride', 0, at);
   return { index, buffer, offset, length, ...(stride !== undefined && { stride }) };
 }
 
 /** Extensions that put a view's bytes where the core text of glTF does not look. */
 const COMPRESSIONS: readonly string[] = Object.freeze(['EXT_meshopt_compression', 'KHR_meshopt_compression']);
+
+/**
+ * What carries an extension that the file requires may mean something else than it says; so does a compressed view whose plain bytes
+ * are not there.
+ *
+ * @throws AccessorFault `gltf.needs-extension`
+ */
+function refuseHidden(container: Container, json: Json | undefined, pointer: string): void {
+  const extensions = member(json, 'extensions');
+  const name = requiredExtension(container.json, json);
+  if (name !== undefined)
+    throw fault(
+      container,
+      'gltf.needs-extension',
+      pointer,
+      `is stored with ${name}, which the file requires and which is not read. Export it without that extension.`,
+    );
+  const compression = COMPRESSIONS.find((each) => isObject(member(extensions, each)));
+  if (compression === undefined || member(json, 'buffer') === undefined) return;
+  const fallback = countMember(json, 'buffer') ?? -1;
+  const isThere =
+    member(listMember(container.json, 'buffers')[fallback], 'uri') !== undefined ||
+    (fallback === 0 && container.bin !== undefined);
+  if (!isThere)
+    throw fault(
+      container,
+      'gltf.needs-extension',
+      pointer,
+      `is compressed with ${compression}, which is not read, and its plain bytes are not in the file. Export it without that compression.`,
+    );
+}
 
 type SparseRuns = NonNullable<AccessorLayout['sparse']>;
 

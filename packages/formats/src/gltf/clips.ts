@@ -1,5 +1,6 @@
 import { type Clip, type RotationTrack, type Storage, frameGrid, storedTrack } from '@slewcurve/core';
 import {
+  type Json,
   type JsonObject,
   countMember,
   isObject,
@@ -16,6 +17,7 @@ import { uniqueLabels } from '../node-paths.js';
 import { type Problem, problem, problemOf } from './problem.js';
 import type { ReadTrack } from './track-change.js';
 import { type ColumnsOf, type Columns, readColumns } from './rotation-columns.js';
+import { flawFinder } from './sampler-flaws.js';
 import { type RotationChannel, channelPointer, rotationChannel, samplerPointer } from './rotation-channel.js';
 
 /** Pointers kept of what shares an accessor. A take of a thousand joints on one clock would list a million otherwise. */
@@ -34,6 +36,19 @@ export async function readClips(
   buffers: Buffers,
   problems: Problem[],
 ): Promise<ReadClips> {
+  const stated = member(container.json, 'animations');
+  if (stated !== undefined && !Array.isArray(stated))
+    problems.push(
+      problem(
+        container,
+        'gltf.bad-clip',
+        '/animations',
+        `must be a list; it is ${shown(stated)}.`,
+        {},
+        'error',
+      ),
+    );
+  else noteEmpty(container, '/animations', stated, problems);
   const animations = listMember(container.json, 'animations');
   const names = uniqueLabels(
     animations.map((clip) => textMember(clip, 'name')),
@@ -44,6 +59,7 @@ export async function readClips(
   );
   const columnsOf = await readColumns(container, channels.flat(), buffers);
   const sharers = sharersOf(container.json);
+  const flawsOf = flawFinder(container);
   const all: ReadTrack[] = [];
   const clips = names.map((name, index) => {
     const own = channels[index] ?? [];
@@ -55,7 +71,7 @@ export async function readClips(
       const columns = columnsOrProblem(channel, columnsOf, name, problems);
       if (!columns) return [];
       const id = ids[i] ?? '';
-      problems.push(...flaws(container, channel, columns, id, name));
+      problems.push(...flawsOf(channel, columns, id, name));
       const track = trackOf(channel, columns, id, name, sharers);
       all.push({ track, channel, columns });
       return [track];
@@ -76,12 +92,18 @@ function rotationChannels(
   const list = member(json, 'channels');
   if (!isObject(json) || !Array.isArray(list)) {
     problems.push(
-      problem(container, 'gltf.bad-clip', `${pointer}/channels`, `must be a list; it is ${shown(list)}.`, {
-        clip,
-      }),
+      problem(
+        container,
+        'gltf.bad-clip',
+        `${pointer}/channels`,
+        `must be a list; it is ${shown(list)}.`,
+        { clip },
+        'error',
+      ),
     );
     return [];
   }
+  noteEmpty(container, `${pointer}/channels`, list, problems);
   const found: RotationChannel[] = [];
   const turned = new Map<number, number>();
   list.forEach((_, index) => {
@@ -109,6 +131,14 @@ function rotationChannels(
   return found;
 }
 
+/** A list that the format allows only with something in it. */
+function noteEmpty(container: Container, pointer: string, list: Json | undefined, problems: Problem[]): void {
+  if (Array.isArray(list) && list.length === 0)
+    problems.push(
+      problem(container, 'gltf.empty-list', pointer, 'is empty, and should be left out then.', {}, 'note'),
+    );
+}
+
 function columnsOrProblem(
   channel: RotationChannel,
   columnsOf: ColumnsOf,
@@ -122,76 +152,6 @@ function columnsOrProblem(
     problems.push(problemOf(error, { clip, node: channel.node }));
     return undefined;
   }
-}
-
-/** What glTF 2.0 forbids of a sampler that can be read all the same. */
-function flaws(
-  container: Container,
-  channel: RotationChannel,
-  { input, output, times }: Columns,
-  track: string,
-  clip: string,
-): Problem[] {
-  const place = { clip, track, node: channel.node };
-  const found: Problem[] = [];
-  const add = (code: string, pointer: string, what: string): void => {
-    found.push(problem(container, code, pointer, what, place));
-  };
-  const least = channel.interpolation === 'CUBICSPLINE' ? 2 : 1;
-  if (times.length < least)
-    add(
-      'gltf.too-few-keys',
-      samplerPointer(channel.clipIndex, channel.sampler),
-      `has ${times.length} keys; ${channel.interpolation} needs ${least}.`,
-    );
-  for (const { index, run, component } of [input, output]) {
-    if (run?.strided)
-      add(
-        'gltf.strided',
-        `/bufferViews/${run.view}/byteStride`,
-        `is set, which only mesh data may have (for /accessors/${index}).`,
-      );
-    if (run && run.offset % component.bytes !== 0)
-      add(
-        'gltf.misaligned',
-        `/accessors/${index}`,
-        `starts at byte ${run.offset} of its buffer; its numbers must start at multiples of ${component.bytes}.`,
-      );
-  }
-  flawsOfTarget(container, channel, add);
-  const json = listMember(container.json, 'accessors')[input.index];
-  if (!hasBounds(json))
-    add(
-      'gltf.no-bounds',
-      `/accessors/${input.index}`,
-      'holds times and lacks the min and max that it must have.',
-    );
-  return found;
-}
-
-function flawsOfTarget(
-  container: Container,
-  { clipIndex, channel, node }: RotationChannel,
-  add: (code: string, pointer: string, what: string) => void,
-): void {
-  const clip = listMember(container.json, 'animations')[clipIndex];
-  const target = member(listMember(clip, 'channels')[channel], 'target');
-  const pointer = `${channelPointer(clipIndex, channel)}/target`;
-  if (member(listMember(container.json, 'nodes')[node], 'matrix') !== undefined)
-    add(
-      'gltf.matrix-target',
-      pointer,
-      `turns node ${node}, which has a matrix; a moved node needs rotation, translation and scale.`,
-    );
-  if (textMember(target, 'path') === 'pointer' && member(target, 'node') !== undefined)
-    add('gltf.pointer-with-node', `${pointer}/node`, 'must not be there beside a KHR_animation_pointer.');
-}
-
-function hasBounds(json: Parameters<typeof listMember>[0]): boolean {
-  return ['min', 'max'].every((name) => {
-    const bound = listMember(json, name);
-    return bound.length === 1 && typeof bound[0] === 'number';
-  });
 }
 
 type SharersOf = (channel: RotationChannel) => readonly string[];

@@ -5,7 +5,7 @@ import { FLOAT, accessorLayout } from './accessor-layout.js';
 import { decodeAccessor } from './accessor-data.js';
 import type { Buffers } from './buffers.js';
 import type { Container } from './container.js';
-import { type RotationChannel, samplerPointer } from './rotation-channel.js';
+import { type RotationChannel, movedNode, samplerPointer } from './rotation-channel.js';
 import { readRuns } from './run-reader.js';
 import { type ReadTrack, type TrackChange, columnChange } from './track-change.js';
 
@@ -56,7 +56,7 @@ function channelsOf(
   const samplers = listMember(animation, 'samplers');
   return listMember(animation, 'channels').flatMap((channel, index) => {
     const target = member(channel, 'target');
-    const node = countMember(target, 'node') ?? -1;
+    const node = movedNode(target);
     const isRotation = rotations.has(index) || textMember(target, 'path') === 'rotation';
     if (isRotation || (track !== undefined && node !== lead.node)) return [];
     const sampler = countMember(channel, 'sampler') ?? -1;

@@ -34,7 +34,7 @@ function checkVersion(container: Container, problems: Problem[]): void {
   const pointer = '/asset/version';
   if (version === undefined)
     problems.push(
-      problem(container, 'gltf.no-version', pointer, 'is missing; the file is read as glTF 2.0.'),
+      problem(container, 'gltf.no-version', pointer, 'is missing; the file is read as glTF 2.0.', {}, 'note'),
     );
   else if (!/^2\.\d+$/.test(version))
     throw new SlewcurveError(
@@ -48,6 +48,7 @@ function checkLength({ source, file, declaredLength }: Container, problems: Prob
   if (declaredLength !== undefined && declaredLength < source.size)
     problems.push({
       code: 'gltf.trailing-bytes',
+      level: 'note',
       message: `${file}: the header says ${declaredLength} bytes; the file has ${source.size}. What follows is left alone.`,
       place: { file, byte: declaredLength },
     });

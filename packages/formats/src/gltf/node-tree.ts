@@ -2,6 +2,7 @@ import { type SceneNode, SlewcurveError, splitMatrix } from '@slewcurve/core';
 import {
   type Json,
   countMember,
+  isObject,
   listMember,
   member,
   numbersMember,
@@ -42,9 +43,19 @@ export function nodeTree(container: Container, problems: Problem[]): SceneNode[]
 function parentsOf(container: Container, nodes: readonly Json[], problems: Problem[]): number[] {
   const parents = nodes.map(() => -1);
   nodes.forEach((node, parent) => {
+    const children = member(node, 'children');
+    if (children !== undefined && !Array.isArray(children))
+      problems.push(
+        problem(
+          container,
+          'gltf.bad-children',
+          `/nodes/${parent}/children`,
+          `must be a list; it is ${shown(children)}.`,
+        ),
+      );
     listMember(node, 'children').forEach((child, i) => {
       const pointer = `/nodes/${parent}/children/${i}`;
-      if (typeof child !== 'number' || parents[child] === undefined)
+      if (typeof child !== 'number' || !isObject(nodes[child]))
         problems.push(
           problem(
             container,

@@ -11,15 +11,17 @@ export function problem(
   pointer: string,
   what: string,
   place: ErrorPlace = {},
+  level: Problem['level'] = 'warning',
 ): Problem {
   return {
     code,
+    level,
     message: `${container.file}: ${pointer} ${what}`,
     place: { file: container.file, pointer, ...place },
   };
 }
 
-/** A thrown fault as one that does not stop the reading. */
+/** A thrown fault as one that hides what it is about and does not stop the reading of the rest. */
 export function problemOf(error: SlewcurveError, place: ErrorPlace): Problem {
-  return { code: error.code, message: error.message, place: { ...error.place, ...place } };
+  return { code: error.code, level: 'error', message: error.message, place: { ...error.place, ...place } };
 }

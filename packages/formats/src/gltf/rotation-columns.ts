@@ -1,6 +1,6 @@
 import { VALUES_PER_KEY } from '@slewcurve/core';
 import { type AccessorLayout, AccessorFault, FLOAT, accessorLayout } from './accessor-layout.js';
-import { decodeAccessor, type RunBytes } from './accessor-data.js';
+import { decodeAccessor, hasRisingIndices, type RunBytes } from './accessor-data.js';
 import type { Buffers } from './buffers.js';
 import type { Container } from './container.js';
 import type { RotationChannel } from './rotation-channel.js';
@@ -12,6 +12,8 @@ export interface Columns {
   readonly values: Float64Array;
   readonly input: AccessorLayout;
   readonly output: AccessorLayout;
+  /** Those of the two accessors whose sparse indices don't rise. */
+  readonly unsorted: readonly number[];
 }
 
 /** Gives a channel's columns, or throws the AccessorFault that hides them. */
@@ -42,14 +44,20 @@ export async function readColumns(
   const bytesOf = await readRuns(runs, buffers, container.file);
   const decode = decoder(container, bytesOf, 65_536 + 2 * (container.source.size + buffers.opened()));
   const decoded = new Map<AccessorLayout, Float64Array | AccessorFault>();
+  const outOfOrder = new Set<number>();
   for (const layout of wanted)
     decoded.set(
       layout,
-      attempt(() => decode(layout)),
+      attempt(() => {
+        const numbers = decode(layout);
+        if (!hasRisingIndices(layout, bytesOf)) outOfOrder.add(layout.index);
+        return numbers;
+      }),
     );
   return (channel) => {
     const { input, output } = fits.get(channel) ?? checkedPair(container, channel, layouts);
-    return { input, output, times: ready(decoded.get(input)), values: ready(decoded.get(output)) };
+    const unsorted = [input, output].filter(({ index }) => outOfOrder.has(index)).map(({ index }) => index);
+    return { input, output, unsorted, times: ready(decoded.get(input)), values: ready(decoded.get(output)) };
   };
 }
 

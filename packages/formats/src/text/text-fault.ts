@@ -7,14 +7,21 @@ export type LinePlace = Pick<TextLine, 'number' | 'at'>;
 
 /** A fault of one line that stops the reading. `what` goes on from "line 12". */
 export function lineError(file: string, code: string, line: LinePlace, what: string): SlewcurveError {
-  const { message, place } = lineProblem(file, code, line, what);
+  const { message, place } = lineProblem(file, code, 'error', line, what);
   return new SlewcurveError(code, message, place);
 }
 
 /** A fault of one line that does not stop the reading. `what` goes on from "line 12". */
-export function lineProblem(file: string, code: string, line: LinePlace, what: string): FileProblem {
+export function lineProblem(
+  file: string,
+  code: string,
+  level: FileProblem['level'],
+  line: LinePlace,
+  what: string,
+): FileProblem {
   return {
     code,
+    level,
     message: `${file}, line ${line.number}: ${what}`,
     place: { file, line: line.number, byte: line.at },
   };
