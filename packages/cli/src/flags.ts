@@ -1,6 +1,6 @@
 import { parseArgs } from 'node:util';
-import { PLAYBACKS, SlewcurveError } from '@slewcurve/core';
-import { REPORT_FORMATS } from '@slewcurve/job';
+import { PLAYBACKS, STORAGE_MODELS, SlewcurveError, TICK_READINGS, TIME_FORMS } from '@slewcurve/core';
+import { REPORT_FORMATS, UPS, USUAL_TICKS } from '@slewcurve/job';
 import { nearestWord } from '@slewcurve/mend';
 import { ROLES } from '@slewcurve/survey';
 import { messageOf } from './system-error.js';
@@ -31,6 +31,15 @@ export type FlagName =
   | 'columns'
   | 'euler'
   | 'unit'
+  | 'up'
+  | 'hand'
+  | 'space'
+  | 'fps'
+  | 'time'
+  | 'matrix'
+  | 'ticks'
+  | 'reading'
+  | 'storage'
   | 'card'
   | 'proposed'
   | 'allow'
@@ -101,6 +110,50 @@ const FLAGS: Readonly<Record<FlagName, Flag>> = Object.freeze({
     commands: OPENING,
   },
   unit: { value: 'deg|rad', help: 'unit of the angles of delimited text', commands: OPENING },
+  up: {
+    value: UPS.join('|'),
+    help: 'which axis points up, where the file is silent: shown and reported',
+    commands: SURVEYING,
+  },
+  hand: {
+    value: 'right|left',
+    help: 'handedness of the axes, where the file is silent',
+    commands: SURVEYING,
+  },
+  space: {
+    value: 'parent|world',
+    help: 'in whose axes the orientations are; "change space" turns one into the other',
+    commands: SURVEYING,
+  },
+  fps: {
+    value: 'N',
+    help: 'frames per second of every clip, instead of those found',
+    commands: SURVEYING,
+  },
+  time: {
+    value: TIME_FORMS.join('|'),
+    help: 'how text writes times: seconds (default), frames, or hh:mm:ss:ff, drop-frame at 29.97',
+    commands: REPORTING,
+  },
+  matrix: {
+    help: 'worst speed and departure by playback and tick rate, of each track in JSON',
+    commands: ['survey'],
+  },
+  ticks: {
+    value: 'N,…',
+    help: `ticks a second that --matrix looks at (default ${USUAL_TICKS.join(',')})`,
+    commands: ['survey'],
+  },
+  reading: {
+    value: TICK_READINGS.join('|'),
+    help: "what a program reads at a tick of --matrix: the playback's own curve (default), the arc between the keys beside it, the nearest key",
+    commands: ['survey'],
+  },
+  storage: {
+    value: 'MODEL',
+    help: `how a program stores the file again before --matrix plays it: ${STORAGE_MODELS.filter((model) => !model.startsWith('smallest')).join(', ')}, smallest-three-8 to -16`,
+    commands: ['survey'],
+  },
   loop: {
     value: 'PATTERN',
     help: 'clips that repeat: their seam is looked at (* stands for anything; again for more)',

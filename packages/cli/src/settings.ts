@@ -1,8 +1,15 @@
 import { readFile } from 'node:fs/promises';
 import { resolve } from 'node:path';
-import { EULER_SEQUENCES, PLAYBACKS, SlewcurveError, type PlaybackId } from '@slewcurve/core';
+import {
+  EULER_SEQUENCES,
+  PLAYBACKS,
+  STORAGE_MODELS,
+  SlewcurveError,
+  TICK_READINGS,
+  type PlaybackId,
+} from '@slewcurve/core';
 import type { TableOptions } from '@slewcurve/formats';
-import { LEVELS, type JobSettings } from '@slewcurve/job';
+import { LEVELS, UPS, USUAL_TICKS, type JobSettings, type SaidConventions } from '@slewcurve/job';
 import { nearestWord } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, ROLES, parseHouseRules, type HouseRules, type Role } from '@slewcurve/survey';
 import type { Arguments, FlagName } from './flags.js';
@@ -26,7 +33,53 @@ export async function settingsOf(args: Arguments, cwd: string): Promise<JobSetti
       roles: { ...roles, ...houseRules.roles, ...roles },
       loops: [...houseRules.loops, ...args.values('loop')],
     },
+    ...frameRateOf(args),
+    said: saidOf(args),
+    ...matrixOf(args),
   };
+}
+
+function frameRateOf(args: Arguments): Pick<JobSettings, 'frameRate'> {
+  const given = args.value('fps');
+  return given === undefined ? {} : { frameRate: perSecond('fps', given) };
+}
+
+function saidOf(args: Arguments): SaidConventions {
+  const up = oneOf(args, 'up', UPS);
+  const hand = oneOf(args, 'hand', ['right', 'left']);
+  const space = oneOf(args, 'space', ['parent', 'world']);
+  return {
+    table: tableOptionsOf(args),
+    ...(up !== undefined && { up }),
+    ...(hand !== undefined && { hand }),
+    ...(space !== undefined && { space }),
+  };
+}
+
+/** What `--matrix` looks at. @throws SlewcurveError `usage.bad-value` */
+function matrixOf(args: Arguments): Pick<JobSettings, 'matrix'> {
+  const ticks = args
+    .values('ticks')
+    .flatMap((value) => value.split(',').map((one) => perSecond('ticks', one)));
+  const reading = oneOf(args, 'reading', TICK_READINGS) ?? 'own';
+  const storage = oneOf(args, 'storage', STORAGE_MODELS);
+  if (!args.given('matrix')) return {};
+  return {
+    matrix: {
+      ticks: ticks.length === 0 ? USUAL_TICKS : [...new Set(ticks)],
+      reading,
+      ...(storage !== undefined && { storage }),
+    },
+  };
+}
+
+function perSecond(flag: FlagName, text: string): number {
+  const value = Number(text);
+  if (/^\d+(?:\.\d+)?$/.test(text.trim()) && value > 0 && value <= 1e5) return value;
+  throw new SlewcurveError(
+    'usage.bad-value',
+    `--${flag} takes a number above 0 and up to 100000, per second; got ${text}.`,
+  );
 }
 
 function rolesOf(args: Arguments): Readonly<Record<string, Role>> {
@@ -60,7 +113,7 @@ export function tableOptionsOf(args: Arguments): TableOptions {
 /** The value of a flag that takes one of a few words. */
 export function oneOf<T extends string>(
   args: Arguments,
-  flag: 'format' | 'fail-at' | 'unit',
+  flag: 'format' | 'fail-at' | 'unit' | 'up' | 'hand' | 'space' | 'time' | 'reading' | 'storage',
   allowed: readonly T[],
 ): T | undefined {
   const value = args.value(flag);
@@ -126,6 +179,18 @@ export function wholeNumber(args: Arguments, flag: FlagName): number | undefined
   if (value === undefined) return undefined;
   if (/^\d{1,9}$/.test(value)) return Number(value);
   throw new SlewcurveError('usage.bad-value', `--${flag} takes a whole number; got ${value}.`);
+}
+
+/**
+ * A flag's measure; undefined where it is not given.
+ *
+ * @throws SlewcurveError `usage.bad-value`
+ */
+export function measureOf(args: Arguments, flag: 'angle' | 'rate'): number | undefined {
+  const value = args.value(flag);
+  if (value === undefined) return undefined;
+  if (/^\d+(?:\.\d+)?(?:e[+-]?\d+)?$/i.test(value)) return Number(value);
+  throw new SlewcurveError('usage.bad-value', `--${flag} takes a number, 0 or more; got ${value}.`);
 }
 
 async function houseRulesOf(path: string | undefined, cwd: string): Promise<HouseRules> {

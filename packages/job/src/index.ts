@@ -1,7 +1,30 @@
 export { baselineJson, baselineOf, parseBaseline, withBaseline, type Baseline } from './baseline.js';
 export { buildReport, type ReportParts } from './build-report.js';
+export {
+  compareFiles,
+  compareTracks,
+  type ComparedFile,
+  type Comparison,
+  type ComparisonLimits,
+  type TrackComparison,
+} from './compare.js';
 export { kestrelPointRules } from './demo/house-rules.js';
 export { kestrelPoint } from './demo/kestrel-point.js';
+export {
+  UPS,
+  conventionsOf,
+  sayConventions,
+  type Convention,
+  type SaidConventions,
+  type Up,
+} from './conventions.js';
+export {
+  USUAL_TICKS,
+  playbackMatrix,
+  type MatrixCell,
+  type MatrixSettings,
+  type PlaybackMatrix,
+} from './playback-matrix.js';
 export { desk, type Desk } from './desk.js';
 export { explanationText } from './explanation-text.js';
 export { mendFile, type MendedFile } from './mend-file.js';
@@ -37,6 +60,7 @@ export {
   type Totals,
   type TrackReport,
 } from './report.js';
+export { comparisonText } from './reporters/comparison-text.js';
 export { csvReport } from './reporters/csv.js';
 export { jsonReport } from './reporters/json.js';
 export { markdownReport } from './reporters/markdown.js';

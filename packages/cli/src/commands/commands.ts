@@ -1,5 +1,6 @@
 import type { CommandIo } from '../command-io.js';
 import type { Arguments, CommandName } from '../flags.js';
+import { compare } from './compare.js';
 import { explain } from './explain.js';
 import { mend } from './mend.js';
 import { check, survey } from './survey.js';
@@ -31,6 +32,12 @@ export const COMMANDS: readonly Command[] = Object.freeze([
     usage: 'mend FILE (--card JOB | --proposed) -o OUT',
     summary: 'mends a file and shows that nothing else changed',
     run: mend,
+  },
+  {
+    name: 'compare',
+    usage: 'compare A B [--angle DEG] [--rate DEG_PER_S]',
+    summary: 'tells how far two files are apart as played, track by track',
+    run: compare,
   },
   {
     name: 'explain',

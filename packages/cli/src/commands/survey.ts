@@ -1,5 +1,5 @@
 import { resolve } from 'node:path';
-import { SlewcurveError } from '@slewcurve/core';
+import { SlewcurveError, TIME_FORMS } from '@slewcurve/core';
 import {
   REPORTERS,
   REPORT_FORMATS,
@@ -27,7 +27,7 @@ import { addStamp } from './stamp.js';
 /** `slewcurve survey FILE…`: the roster of tracks, then the findings. */
 export async function survey(args: Arguments, io: CommandIo): Promise<number> {
   checkFlags(args);
-  return report(args, io, (result, options) => textRoster(result, options.paint));
+  return report(args, io, (result, options) => textRoster(result, options.paint, options.time));
 }
 
 /** `slewcurve check FILE…`: the findings and a verdict. */
@@ -44,6 +44,7 @@ async function report(args: Arguments, io: CommandIo, asText: typeof REPORTERS.t
   const options = {
     folder: io.cwd().replaceAll('\\', '/'),
     paint: args.given('o') ? undefined : paintFor(io),
+    time: oneOf(args, 'time', TIME_FORMS) ?? 'seconds',
   };
   await print((format === 'text' ? asText : REPORTERS[format])(result, options), args, io);
   if (files.some((file) => file.status === 'unreadable')) return EXIT.unable;
@@ -111,7 +112,26 @@ function shardOf(text: string | undefined): Shard | undefined {
 
 /** Flags that mean nothing together. */
 const APART: readonly (readonly [FlagName, readonly FlagName[]])[] = [
-  ['merge', ['shard', 'workers', 'stamp', 'rules', 'role', 'loop', 'playback', 'columns', 'euler', 'unit']],
+  [
+    'merge',
+    [
+      'shard',
+      'workers',
+      'stamp',
+      'rules',
+      'role',
+      'loop',
+      'playback',
+      'columns',
+      'euler',
+      'unit',
+      'up',
+      'hand',
+      'space',
+      'fps',
+      'matrix',
+    ],
+  ],
   ['shard', ['stamp']],
 ];
 /** Flags that mean nothing alone. */
@@ -120,6 +140,9 @@ const TOGETHER: readonly (readonly [FlagName, FlagName])[] = [
   ['reason', 'stamp'],
   ['by', 'stamp'],
   ['stamp', 'reason'],
+  ['ticks', 'matrix'],
+  ['reading', 'matrix'],
+  ['storage', 'matrix'],
 ];
 
 function checkFlags(args: Arguments): void {
