@@ -70,7 +70,11 @@ describe('a stamp', () => {
     const report = fileReportWith([findingWith([A])]);
     const stamps = stampsFor(fileReportWith([findingWith([A, C])]), 'jump.lone-key', WORDS);
     expect(withStamps(report, stamps).problems).toEqual([
-      { code: 'stamps.unused', message: expect.stringContaining(`The stamp ${C} for jump.lone-key`) },
+      {
+        code: 'stamps.unused',
+        level: 'note',
+        message: expect.stringContaining(`The stamp ${C} for jump.lone-key`),
+      },
     ]);
   });
 

@@ -9,6 +9,7 @@ import {
   type StepReport,
   type Totals,
 } from './report.js';
+import type { Level } from '@slewcurve/survey';
 import type { JobSettings } from './settings.js';
 import { VERSION } from './version.js';
 
@@ -21,7 +22,7 @@ export interface ReportParts {
 }
 
 /**
- * The report over several files: totals and verdict from their open findings. A file that can't be read never passes; nor does an exact
+ * The report over several files: totals and verdict from their open findings and from problems of the files themselves. A file that can't be read never passes; nor does an exact
  * baseline that knows more than there is.
  */
 export function buildReport(
@@ -30,6 +31,10 @@ export function buildReport(
   { steps, shard, baseline }: ReportParts = {},
 ): Report {
   const findings = files.flatMap((file) => file.findings);
+  const levels = [
+    ...findings.filter(isOpenFinding).map(({ level }) => level),
+    ...files.flatMap(({ problems = [] }) => problems.map(({ level = 'note' }) => level)),
+  ];
   const fits = baseline === undefined || !baseline.exact || baseline.gone.length === 0;
   const readable = files.every((file) => file.status === 'surveyed');
   return {
@@ -39,19 +44,22 @@ export function buildReport(
     failAt: settings.failAt,
     ...(shard !== undefined && { shard }),
     files,
-    totals: { ...totalsOf(findings), ...(baseline !== undefined && { known: muted(findings, 'known') }) },
-    verdict: readable && fits && passes(findings.filter(isOpenFinding), settings) ? 'pass' : 'fail',
+    totals: {
+      ...totalsOf(levels),
+      stamped: muted(findings, 'stamped'),
+      ...(baseline !== undefined && { known: muted(findings, 'known') }),
+    },
+    verdict: readable && fits && passes(levels, settings) ? 'pass' : 'fail',
     ...(baseline !== undefined && { gone: baseline.gone }),
     ...(steps !== undefined && { steps }),
   };
 }
 
-function totalsOf(findings: readonly ReportedFinding[]): Totals {
-  const open = findings.filter(isOpenFinding);
+function totalsOf(levels: readonly Level[]): Pick<Totals, Level> {
   const [error = 0, warning = 0, note = 0] = LEVELS.map(
-    (level) => open.filter((finding) => finding.level === level).length,
+    (level) => levels.filter((each) => each === level).length,
   );
-  return { error, warning, note, stamped: muted(findings, 'stamped') };
+  return { error, warning, note };
 }
 
 function isOpenFinding({ muted: how }: ReportedFinding): boolean {
@@ -64,10 +72,10 @@ function muted(findings: readonly ReportedFinding[], how: ReportedFinding['muted
 
 /** `failAt` and `allowWarnings` alone decide: the first so many warnings are let pass, errors and notes never. */
 function passes(
-  findings: readonly ReportedFinding[],
+  levels: readonly Level[],
   { failAt, allowWarnings }: Pick<JobSettings, 'failAt' | 'allowWarnings'>,
 ): boolean {
-  const failing = findings.filter((finding) => isAtLeast(finding.level, failAt));
-  const warnings = failing.filter((finding) => finding.level === 'warning').length;
+  const failing = levels.filter((level) => isAtLeast(level, failAt));
+  const warnings = failing.filter((level) => level === 'warning').length;
   return failing.length - warnings + Math.max(0, warnings - allowWarnings) === 0;
 }

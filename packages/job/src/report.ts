@@ -36,6 +36,8 @@ export interface TrackReport {
 /** Something in the file that could not be read and did not stop the rest. */
 export interface ProblemReport {
   readonly code: string;
+  /** Left out of what stopped the reading. */
+  readonly level?: Level;
   readonly message: string;
 }
 

@@ -64,6 +64,7 @@ export function withStamps(report: FileReport, stamps: readonly Stamp[]): FileRe
   const idle = stamps.filter(({ fingerprint }) => !used.has(fingerprint));
   const problems = idle.map(({ fingerprint, rule, clip, track }) => ({
     code: 'stamps.unused',
+    level: 'note' as const,
     message: `The stamp ${fingerprint} for ${rule} on ${track} in ${clip} fits nothing any more; it can be taken out of ${stampsFileName(report.file)}.`,
   }));
   return {

@@ -32,7 +32,7 @@ export async function surveyFile(
     file: name,
     status: 'surveyed',
     ...(file.problems.length > 0 && {
-      problems: file.problems.map(({ code, message }) => ({ code, message })),
+      problems: file.problems.map(({ code, level, message }) => ({ code, level, message })),
     }),
     clips: file.clips.map(clipReport),
     tracks,

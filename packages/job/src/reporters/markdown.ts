@@ -25,7 +25,10 @@ function fileTable(files: readonly FileReport[]): string {
     ...(file.error
       ? ["can't be read", '', '']
       : LEVELS.map((level) =>
-          String(file.findings.filter((finding) => finding.level === level && !finding.muted).length),
+          String(
+            file.findings.filter((finding) => finding.level === level && !finding.muted).length +
+              (file.problems ?? []).filter((problem) => (problem.level ?? 'note') === level).length,
+          ),
         )),
     String(file.findings.filter(({ muted }) => muted).length),
   ]);
@@ -36,7 +39,9 @@ function fileSection(file: FileReport): string[] {
   const open = file.findings.filter(({ muted }) => muted === undefined);
   const told = [
     ...(file.error ? [`${escaped(file.error.message)} ${escaped(file.error.code)}`] : []),
-    ...(file.problems ?? []).map(({ code, message }) => `${escaped(message)} ${escaped(code)}`),
+    ...(file.problems ?? []).map(
+      ({ code, level = 'note', message }) => `${escaped(message)} ${level} ${escaped(code)}`,
+    ),
   ];
   if (told.length === 0 && open.length === 0) return [];
   const rows = open.map((finding) => [

@@ -139,7 +139,7 @@ function notifications({ error, problems = [] }: FileReport, uri: string): objec
   });
   return [
     ...(error ? [told('error', error.code, error.message)] : []),
-    ...problems.map(({ code, message }) => told('warning', code, message)),
+    ...problems.map(({ code, level = 'note', message }) => told(level, code, message)),
   ];
 }
 

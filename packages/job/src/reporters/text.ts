@@ -30,8 +30,9 @@ function sayFile(file: FileReport, paint: Paint): string[] {
     return [
       `${printable(`${file.file}: can't be read. ${file.error.message}`)} ${paint(`error ${file.error.code}`, 'error')}`,
     ];
-  const problems = (file.problems ?? []).map(({ code, message }) =>
-    printable(`${file.file}: ${message} ${code}`),
+  const problems = (file.problems ?? []).map(
+    ({ code, level = 'note', message }) =>
+      `${printable(`${file.file}: ${message}`)} ${paint(`${level} ${code}`, level)}`,
   );
   const open = file.findings.filter(({ muted }) => muted === undefined);
   return [...problems, ...open.map((finding) => sayFinding(file, finding, paint))];
