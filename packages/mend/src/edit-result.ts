@@ -39,7 +39,7 @@ export function editResult(
   if (changed.length === 0 && isKept) return { track: before, changed, inserted, largest: 0, added: 0 };
   changed.sort((a, b) => a - b);
   const [first, last] = oldKeys
-    ? movedReach(after, oldKeys, changed)
+    ? movedReach(after, oldKeys, changed, dropped?.at(-1) === before.times.length - 1)
     : [changed[0], changed[changed.length - 1]];
   return {
     track: after,
@@ -63,11 +63,12 @@ function movedReach(
   after: RotationTrack,
   oldKeys: readonly number[],
   changed: readonly number[],
+  lostItsEnd: boolean,
 ): readonly [number, number] {
   const last = after.times.length - 1;
   const moved = oldKeys.flatMap((old, key) => (old === (key === 0 ? -1 : oldKeys[key - 1]) + 1 ? [] : [key]));
-  const all = [...moved, ...changed];
   // What is gone from the end is felt at the key that is last now.
+  const all = [...moved, ...changed, ...(lostItsEnd ? [last] : [])];
   return [Math.min(last, ...all), all.length === 0 ? last : Math.max(...all)];
 }
 

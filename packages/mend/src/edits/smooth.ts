@@ -53,6 +53,7 @@ export const smooth: Verb = Object.freeze({
     checkTurning(track, 'smooth');
     checkDense(track);
     const sigma = sigmaOf(track, step);
+    if (sigma === undefined) return editResult(track, track);
     const keys = alignedKeys(track);
     const isGuarded = fastKeys(track, keys, step.guard ?? GUARD_RATE, sigma);
     guardKeys(track, step.guards ?? [], isGuarded);
@@ -81,16 +82,19 @@ function checkDense(track: RotationTrack): void {
   );
 }
 
-/** @throws SlewcurveError `step.too-grainy` where no average up to a second leaves so little */
-function sigmaOf(track: RotationTrack, { sigma, grain }: Step): number {
+/**
+ * Seconds; undefined where the track is as calm as it should be.
+ *
+ * @throws SlewcurveError `step.too-grainy` where no average up to a second leaves so little
+ */
+function sigmaOf(track: RotationTrack, { sigma, grain }: Step): number | undefined {
   const gap = medianGap(track);
   if (sigma !== undefined) return sigma;
   if (grain === undefined) return USUAL_GAPS * gap;
   const has = keyGrain(track.times, alignedKeys(track), gap, (key) => isJoined(track, key)) / RADIANS;
   const wanted = (grain / has) ** 2;
-  // An average over one key is none.
+  if (!(has > grain)) return undefined;
   let [narrow, wide] = [gap / 2, WIDEST];
-  if (!(has > grain)) return narrow;
   if (noiseLeft(wide, gap) > wanted)
     throw new SlewcurveError(
       'step.too-grainy',

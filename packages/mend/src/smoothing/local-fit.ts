@@ -1,7 +1,7 @@
 import { turnBetween } from '../key-turns.js';
 
-/** Sigmas out to which keys count: there the weight is 0.002 of the middle's. */
-const REACH = 3.5;
+/** Sigmas out to which keys count: there the weight is 0.0003 of the middle's. */
+const REACH = 4;
 
 /** Keys that have turned further than this, radians (120°), have no common tangent space worth a polynomial. */
 const FAR = (2 * Math.PI) / 3;
@@ -23,12 +23,14 @@ export type LocalFitter = (key: number) => LocalFit;
  *
  * @param orientations unit quaternions on one side
  * @param isJoined whether keys `key` and `key + 1` may be looked at together
+ * @param withItself false: a key is told by the others alone
  */
 export function localFitter(
   times: Float64Array,
   orientations: Float64Array,
   sigma: number,
   isJoined: (key: number) => boolean,
+  withItself = true,
 ): LocalFitter {
   const turn = new Float64Array(3);
   const rate = new Float64Array(3);
@@ -56,8 +58,8 @@ export function localFitter(
   return (key) => {
     moments.fill(0);
     sums.fill(0);
-    take(key, key);
-    let count = 1;
+    if (withItself) take(key, key);
+    let count = Number(withItself);
     for (let other = key; other > 0 && isJoined(other - 1) && take(key, other - 1); other--) count++;
     for (let other = key; other + 1 < times.length && isJoined(other) && take(key, other + 1); other++)
       count++;
