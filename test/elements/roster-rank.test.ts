@@ -1,7 +1,6 @@
 import {
   countWords,
   familiesOf,
-  findRows,
   rankRows,
   rowWindow,
   rowWords,
@@ -18,6 +17,8 @@ const row = (id: string, counts: Partial<RosterRow['counts']>, more: Partial<Ros
   seconds: 1.2,
   ink: { density: Float32Array.of(0.3), darkest: 0.3 },
   counts: { error: 0, warning: 0, note: 0, ...counts },
+  places: 0,
+  rules: [],
   families: {},
   marks: [],
   peak: 2022.3,
@@ -48,13 +49,12 @@ describe('the roster', () => {
     expect(rankRows(rows, 'file').map(({ id }) => id)).toEqual(['a', 'b', 'c']);
   });
 
-  test('finds by every word, in file, clip, track or family', () => {
-    const rows = [row('lowerleg.r', {}, { families: { jump: 1 } }), row('hand.l', {})];
-    expect(findRows(rows, 'chop LOWER').map(({ id }) => id)).toEqual(['lowerleg.r']);
-    expect(findRows(rows, 'jump').map(({ id }) => id)).toEqual(['lowerleg.r']);
-    expect(findRows(rows, '')).toHaveLength(2);
-    expect(findRows(rows, '', 'jump')).toHaveLength(1);
-    expect(familiesOf(rows)).toEqual([{ family: 'jump', rows: 1 }]);
+  test('tells the families that have findings, most first', () => {
+    const rows = [row('a', {}, { families: { jump: 1 } }), row('b', {}, { families: { turn: 2, jump: 3 } })];
+    expect(familiesOf(rows)).toEqual([
+      { family: 'jump', rows: 2 },
+      { family: 'turn', rows: 1 },
+    ]);
   });
 
   test('says a row in one sentence', () => {
@@ -62,7 +62,8 @@ describe('the roster', () => {
       'lowerleg.r in 1H_Melee_Attack_Chop: 1 warning, peak 2,022 deg/s, turns 84.2°',
     );
     expect(rowWords(row('hand', {}))).toContain('nothing found');
-    expect(countWords(row('x', { error: 1, note: 2 }))).toBe('1 error, 2 notes');
+    expect(countWords(row('x', { error: 1, note: 2 }, { places: 3 }))).toBe('1 error, 2 notes');
+    expect(countWords(row('x', { error: 1, note: 2 }, { places: 14 }))).toBe('1 error, 2 notes at 14 places');
   });
 
   test('builds the rows on screen alone', () => {

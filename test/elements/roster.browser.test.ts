@@ -17,6 +17,8 @@ const row = (i: number, more: Partial<RosterRow> = {}): RosterRow => ({
     0.1,
   ),
   counts: { error: 0, warning: 0, note: 0 },
+  places: 0,
+  rules: [],
   families: {},
   marks: [],
   peak: 60,
@@ -30,6 +32,8 @@ const rows = (count: number): RosterRow[] =>
       i === 7
         ? {
             counts: { error: 0, warning: 1, note: 0 },
+            places: 1,
+            rules: ['jump.lone-key'],
             families: { jump: 1 },
             marks: [{ time: 5, level: 'warning' }],
           }
@@ -89,7 +93,7 @@ describe('the roster', () => {
 
   test('says so where nothing is found', async () => {
     const element = await roster(5, { find: 'tail' });
-    expect(element.renderRoot.querySelector('.empty')?.textContent).toContain('No track has “tail”.');
+    expect(element.renderRoot.querySelector('.empty')?.textContent).toContain('No track answers to “tail”');
   });
 
   test('builds a page of two thousand rows only, and End reaches the last', async () => {

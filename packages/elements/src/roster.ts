@@ -8,10 +8,12 @@ import {
   type TemplateResult,
 } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
+import type { Word } from '@slewcurve/survey';
 import { trackName } from './chart/chart-data.js';
 import { sayCount, sayRate, saySpan } from './chart/quantity.js';
 import { drawInk, type InkPlace, type RosterInks } from './roster/draw-ink.js';
-import { ROSTER_ORDERS, familiesOf, findRows, rankRows, type RosterOrder } from './roster/rank.js';
+import { findRows, foundNothing } from './roster/find-rows.js';
+import { ROSTER_ORDERS, familiesOf, rankRows, type RosterOrder } from './roster/rank.js';
 import { countWords, rowWords, worstLevel, type RosterRow } from './roster/roster-row.js';
 import { rosterStyles } from './roster/roster-styles.js';
 import { rowWindow, scrollToRow, type RowWindow } from './roster/window.js';
@@ -32,8 +34,8 @@ const TWO_LINES = 512;
 const DRAWING_MS = 8;
 
 /**
- * Roster: all tracks of all files, one ink row each, ranked by what is wrong. How dark the ink is says how fast the track turns
- * against its own habit; carets stand where something was found.
+ * Roster: all tracks of all files, one ink row each, ranked by what is wrong. How strong the ink is says how fast the track
+ * turns against its own habit; carets stand where something was found.
  *
  * @fires track-chosen - `{ id: string, row: RosterRow }`
  */
@@ -44,6 +46,7 @@ export class SlewRoster extends LitElement {
     order: { type: String },
     find: { type: String },
     family: { type: String },
+    book: { attribute: false },
     spacing: { type: String },
     message: { type: String },
     active: { state: true },
@@ -63,6 +66,8 @@ export class SlewRoster extends LitElement {
   declare find: string;
   /** Only rows with findings of this family; empty: all. */
   declare family: string;
+  /** What else things are called; the find field answers to these words. */
+  declare book: readonly Word[];
   /** Left out: by how many rows there are. */
   declare spacing: 'wide' | 'close' | undefined;
   /** What an empty roster says. */
@@ -87,6 +92,7 @@ export class SlewRoster extends LitElement {
     this.order = 'wrong';
     this.find = '';
     this.family = '';
+    this.book = [];
     this.message = 'No file is open.';
     this.top = 0;
     this.height = 600;
@@ -144,8 +150,8 @@ export class SlewRoster extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues<this>): void {
-    if (changed.has('rows') || changed.has('order') || changed.has('find') || changed.has('family'))
-      this.shown = rankRows(findRows(this.rows, this.find, this.family), this.order);
+    if ((['rows', 'order', 'find', 'family', 'book'] as const).some((name) => changed.has(name)))
+      this.shown = rankRows(findRows(this.rows, this.find, this.family, this.book), this.order);
     if (this.active !== undefined && !this.shown.some((row) => row.id === this.active))
       this.active = undefined;
   }
@@ -154,7 +160,7 @@ export class SlewRoster extends LitElement {
     if (this.rows.length === 0) return html`<p class="empty">${this.message}</p>`;
     return html`${this.tools()}
       <p class="tally" role="status">${tally(this.rows, this.shown)}</p>
-      ${this.shown.length === 0 ? html`<p class="empty">${foundNothing(this.find)}</p>` : this.list()}
+      ${this.shown.length === 0 ? html`<p class="empty">${foundNothing(this.find, this.book)}</p>` : this.list()}
       <span class="swatch"></span>`;
   }
 
@@ -212,8 +218,8 @@ export class SlewRoster extends LitElement {
     const { first, last } = this.window;
     const { pitch } = this.place;
     return html`<div class="heads" aria-hidden="true">
-        <span>track</span><span>the darker, the faster than is usual there</span><span>found</span
-        ><span>greatest speed</span><span>length</span>
+        <span>track</span><span>the stronger the ink, the faster against what is usual there</span
+        ><span>found</span><span>greatest speed</span><span>length</span>
       </div>
       <div
         class="scroll ${this.isClose ? 'close' : ''}"
@@ -381,10 +387,6 @@ export class SlewRoster extends LitElement {
     event.preventDefault();
     this.focusFind();
   };
-}
-
-function foundNothing(find: string): string {
-  return find ? `No track has “${find}”. Names are those of the file.` : 'No track has such a finding.';
 }
 
 function tally(rows: readonly RosterRow[], shown: readonly RosterRow[]): string {

@@ -1,6 +1,6 @@
 import type { RotationTrack, SceneNode } from '@slewcurve/core';
 import type { JobCard, Step } from '@slewcurve/mend';
-import type { Finding } from '@slewcurve/survey';
+import type { Finding, Word } from '@slewcurve/survey';
 import type { ClipReport, FileReport, StepReport, TrackReport } from './report.js';
 import type { RosterRow } from './roster-row.js';
 import type { JobSettings } from './settings.js';
@@ -70,6 +70,8 @@ export interface Asks<Blob, Row = RosterRow> {
   /** Size and hash of bytes as they are now, to see whether a file on disk changed. */
   hash: { ask: { blob: Blob }; answer: { size: number; sha256: string } };
   close: { ask: { file: string }; answer: null };
+  /** What things are called, and what else; for a find field. */
+  words: { ask: object; answer: readonly Word[] };
   /** Answered at once while the desk lives. */
   ping: { ask: object; answer: null };
 }

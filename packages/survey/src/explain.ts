@@ -2,14 +2,10 @@ import { PLAYBACKS } from '@slewcurve/core';
 import { VERBS, nearestWord } from '@slewcurve/mend';
 import { RULES } from './registry.js';
 import { rulePage } from './rule-page.js';
+import { plainWord, wordsFor, type Word } from './word.js';
 
 /** A rule, an edit or a playback that a word leads to. */
-export interface Entry {
-  readonly kind: 'rule' | 'verb' | 'playback';
-  /** Rule id, the edit's name on job cards, or the playback's id. */
-  readonly name: string;
-  readonly summary: string;
-  readonly alsoCalled: readonly string[];
+export interface Entry extends Word {
   /** The rule's page in Markdown; of an edit or a playback, its name, summary and other names. */
   readonly page: string;
 }
@@ -26,10 +22,10 @@ export interface Explanation {
  * word of that. Case, hyphens and white space don't matter. Where nothing fits, the nearest known words.
  */
 export function explainWord(word: string): Explanation {
-  const wanted = plain(word);
+  const wanted = plainWord(word);
   // A playback's name is a word of the trade as well: what goes wrong by it is shown beside it.
-  const named = ENTRIES.filter(({ kind, name }) => kind !== 'playback' && plain(name) === wanted);
-  const entries = named.length > 0 ? named : ENTRIES.filter((entry) => leadsTo(wanted, entry));
+  const named = ENTRIES.filter(({ kind, name }) => kind !== 'playback' && plainWord(name) === wanted);
+  const entries = named.length > 0 ? named : wordsFor(word, ENTRIES);
   return { word, entries, didYouMean: entries.length > 0 ? [] : wordsMeant(word) };
 }
 
@@ -60,25 +56,17 @@ const ENTRIES: readonly Entry[] = Object.freeze([
 /** Every word that leads to an entry whole: for completion and for a find field. */
 const WORDS: ReadonlyMap<string, string> = new Map(
   ENTRIES.flatMap(({ name, alsoCalled }) =>
-    [name, ...name.split('.'), ...alsoCalled].map((word) => [plain(word), word] as const),
+    [name, ...name.split('.'), ...alsoCalled].map((word) => [plainWord(word), word] as const),
   ),
 );
 
-function leadsTo(wanted: string, { name, alsoCalled }: Entry): boolean {
-  if (wanted === '') return false;
-  const names = [...name.split('.'), ...alsoCalled].map(plain);
-  return names.some((known) => known === wanted || known.split(' ').includes(wanted));
+/** All that `explainWord` knows, without the pages: for a find field. */
+export function wordBook(): Word[] {
+  return ENTRIES.map(({ kind, name, summary, alsoCalled }) => ({ kind, name, summary, alsoCalled }));
 }
 
 function wordsMeant(word: string): string[] {
-  const wanted = plain(word).slice(0, 60);
+  const wanted = plainWord(word).slice(0, 60);
   const nearest = nearestWord(wanted, [...WORDS.keys()]);
   return nearest === undefined ? [] : [WORDS.get(nearest) ?? nearest];
-}
-
-function plain(word: string): string {
-  return word
-    .trim()
-    .toLowerCase()
-    .replace(/[\s_-]+/g, ' ');
 }

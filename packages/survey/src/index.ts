@@ -28,7 +28,8 @@ export type {
 export { RULES } from './registry.js';
 export { withDeclaredCuts } from './declared-cuts.js';
 export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings } from './survey.js';
-export { explainWord, type Entry, type Explanation } from './explain.js';
+export { explainWord, wordBook, type Entry, type Explanation } from './explain.js';
 export { rulePage } from './rule-page.js';
 export { fnv1a64 } from './fingerprint.js';
 export { significant } from './significant.js';
+export { plainWord, wordsFor, type Word } from './word.js';

@@ -5,6 +5,7 @@ import type { SlewRoster } from '@slewcurve/elements/roster';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { askForFiles, droppedFiles, pickedFiles, type ChosenFile } from '../files/chosen-file.js';
 import { saveCopy } from '../files/save-file.js';
+import { stepsOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
 import { keptWork, type SavedWork } from '../session/recovery.js';
 import { Session } from '../session/session.js';
@@ -152,12 +153,24 @@ export class SlewApp extends LitElement {
     const typing = event
       .composedPath()
       .some((node) => node instanceof HTMLInputElement || node instanceof HTMLTextAreaElement);
-    if (!command || typing || !this.chosen) return;
-    if (key === 'z') {
+    if (!command || !this.chosen) return;
+    if (key === 's' && !event.shiftKey) {
+      // Saving the page itself would keep nothing of the work.
+      event.preventDefault();
+      this.save(this.chosen.file);
+    } else if (key === 'z' && !typing) {
       event.preventDefault();
       void (event.shiftKey ? this.session.redo(this.chosen.file) : this.session.undo(this.chosen.file));
     }
   };
+
+  /** A copy, until the file itself was chosen to be written over. */
+  private save(id: string): void {
+    const file = this.files.find((other) => other.id === id);
+    if (file?.status !== 'ready') return;
+    if (stepsOf(file.history).length === 0) this.notice = `There is no edit of ${file.name} to save.`;
+    else void this.session.save(id, file.handle && file.onDisk ? 'in place' : 'download');
+  }
 
   private async pick(): Promise<void> {
     const chosen = await askForFiles();
@@ -256,6 +269,7 @@ export class SlewApp extends LitElement {
     return html`<section class="roster" aria-label="Roster: all tracks">
         <slew-roster
           .rows=${this.rows}
+          .book=${this.session.words}
           .chosen=${chosen ? rowId(chosen) : undefined}
           .message=${this.files.some((file) => file.status === 'ready') ? 'There is no rotation track in these files.' : 'Reading.'}
           @track-chosen=${(event: CustomEvent<{ id: string }>) => this.choose(trackOfRow(event.detail.id))}

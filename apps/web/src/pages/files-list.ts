@@ -72,10 +72,11 @@ function inProgress({ id, name, status, progress }: FileWork, actions: FileActio
 function sayFile({ opened, report, findings, saved, history }: FileWork): string {
   const found = [...findings.values()].flat();
   const count = (level: string): number => found.filter((finding) => finding.level === level).length;
+  const places = found.reduce((sum, finding) => sum + finding.count, 0);
   const parts = [
     counted(opened?.tracks.length ?? 0, 'rotation track'),
     `in ${counted(report?.clips.length ?? 0, 'clip')};`,
-    `${counted(count('error'), 'error')}, ${counted(count('warning'), 'warning')}, ${counted(count('note'), 'note')}.`,
+    `${counted(count('error'), 'error')}, ${counted(count('warning'), 'warning')}, ${counted(count('note'), 'note')}${places > found.length ? ` at ${counted(places, 'place')}` : ''}.`,
   ];
   const steps = linesOf(history).length;
   if (steps > 0)

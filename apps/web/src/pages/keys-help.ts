@@ -13,6 +13,7 @@ const KEYS: readonly (readonly [string, string])[] = [
   ['/', 'finds a track'],
   ['Ctrl Enter', 'applies the sentence'],
   ['Ctrl Z, Ctrl Shift Z', 'undoes, does again'],
+  ['Ctrl S', 'saves a mended copy, or over the file once you saved over it'],
   ['Tab', 'to everything else'],
 ];
 

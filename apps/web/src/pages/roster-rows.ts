@@ -54,6 +54,8 @@ function rosterRow(file: FileWork, row: InkedRow, findings: readonly Finding[]):
     seconds: row.end - row.start,
     ink: row.ink,
     counts: { error: count('error'), warning: count('warning'), note: count('note') },
+    places: findings.reduce((sum, finding) => sum + finding.count, 0),
+    rules: [...new Set(findings.map(({ rule }) => rule))],
     families: familiesOf(findings),
     marks: places.map(({ time, level }) => ({ time: time - row.start, level })),
     // Under the floor nothing is claimed.

@@ -1,8 +1,9 @@
 import type { PlaybackId } from '@slewcurve/core';
 import { kestrelPointRules, type CardAnswer, type JobSettings, type TrackAnswer } from '@slewcurve/job';
 import type { Step } from '@slewcurve/mend';
+import { PAGE_WORDS } from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
-import { NO_HOUSE_RULES, type Finding } from '@slewcurve/survey';
+import { NO_HOUSE_RULES, type Finding, type Word } from '@slewcurve/survey';
 import type { ChosenFile } from '../files/chosen-file.js';
 import { mendedName, saveCopy, saveInPlace, type Saved } from '../files/save-file.js';
 import {
@@ -24,6 +25,8 @@ import { keepWork, type SavedWork } from './recovery.js';
 export class Session extends EventTarget {
   readonly desk = new DeskClient();
   files: readonly FileWork[] = [];
+  /** What things are called, and what else: known soon after the start. */
+  words: readonly Word[] = PAGE_WORDS;
   /** What was last said, for people. */
   notice = '';
   settings: JobSettings = {
@@ -41,6 +44,7 @@ export class Session extends EventTarget {
   constructor() {
     super();
     this.desk.addEventListener('lost', () => void this.#startOver());
+    void this.#learn();
   }
 
   file(id: string): FileWork | undefined {
@@ -148,6 +152,13 @@ export class Session extends EventTarget {
     } catch (error) {
       this.#say(messageOf(error));
     }
+  }
+
+  async #learn(): Promise<void> {
+    // Where the desk is lost meanwhile, the page's own words must do.
+    const words = await this.desk.ask('words', {}).catch(() => []);
+    this.words = [...PAGE_WORDS, ...words];
+    this.#set(this.files);
   }
 
   async #take(works: readonly FileWork[]): Promise<void> {

@@ -13,6 +13,7 @@ import {
 } from '@slewcurve/job';
 import { bufferSource } from '@slewcurve/formats';
 import { inked, type Inked } from '@slewcurve/elements/plot';
+import { wordBook } from '@slewcurve/survey';
 
 // The job desk in a worker: bytes, tracks and surveys live here, and the page stays free to draw.
 
@@ -50,6 +51,7 @@ const answers: {
     here.close(file);
     return null;
   },
+  words: () => wordBook(),
   ping: () => null,
 };
 

@@ -43,17 +43,6 @@ function darkest(row: RosterRow): number {
   return row.ink.darkest > STANDS_OUT ? row.ink.darkest : 0;
 }
 
-/** Rows that hold every word of `text` in file, clip, track or a family of their findings, whatever the case. */
-export function findRows(rows: readonly RosterRow[], text: string, family = ''): RosterRow[] {
-  const words = text.toLocaleLowerCase('en').split(/\s+/).filter(Boolean);
-  return rows.filter((row) => {
-    if (family && !row.families[family]) return false;
-    const all =
-      `${row.file} ${row.clip} ${row.track} ${Object.keys(row.families).join(' ')}`.toLocaleLowerCase('en');
-    return words.every((word) => all.includes(word));
-  });
-}
-
 /** Families that have findings, with how many rows have them, most first. */
 export function familiesOf(rows: readonly RosterRow[]): { readonly family: string; readonly rows: number }[] {
   const counts = new Map<string, number>();

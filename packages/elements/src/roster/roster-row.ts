@@ -13,6 +13,10 @@ export interface RosterRow {
   /** From `trackInk`. */
   readonly ink: TrackInk;
   readonly counts: Readonly<Record<NoteLevel, number>>;
+  /** Places of them all: a finding is one fault of one track, and may stand at many. */
+  readonly places: number;
+  /** Ids of the rules that found something. */
+  readonly rules: readonly string[];
   /** Findings by family: `{ jump: 2, turn: 1 }`. */
   readonly families: Readonly<Record<string, number>>;
   /** Places of the findings, seconds from the clip's start. */
@@ -35,10 +39,10 @@ export function rowWords(row: RosterRow): string {
   return `${trackName(row.track)} in ${row.clip}: ${countWords(row) || 'nothing found'}, peak ${sayRate(row.peak)}, turns ${sayAngle(row.travel)}`;
 }
 
-/** "1 error, 2 notes"; empty where nothing was found. */
+/** "1 error, 2 notes at 14 places", as many as the chart has carets; empty where nothing was found. */
 export function countWords(row: RosterRow): string {
-  return (['error', 'warning', 'note'] as const)
-    .filter((level) => row.counts[level] > 0)
-    .map((level) => sayCount(row.counts[level], level))
-    .join(', ');
+  const levels = (['error', 'warning', 'note'] as const).filter((level) => row.counts[level] > 0);
+  const said = levels.map((level) => sayCount(row.counts[level], level)).join(', ');
+  const findings = levels.reduce((sum, level) => sum + row.counts[level], 0);
+  return row.places > findings ? `${said} at ${sayCount(row.places, 'place')}` : said;
 }

@@ -22,7 +22,7 @@ export const rosterStyles: CSSResult = css`
   .gauge,
   .option {
     display: grid;
-    grid-template-columns: minmax(10rem, 1.6fr) minmax(0, 4fr) 12.5rem 6.5rem 4rem;
+    grid-template-columns: minmax(10rem, 1.4fr) minmax(0, 4fr) 14.5rem 6.5rem 4rem;
     column-gap: 0.875rem;
     align-items: center;
   }
@@ -95,8 +95,9 @@ export const rosterStyles: CSSResult = css`
   .option.active {
     box-shadow: inset 3px 0 0 var(--_rule);
   }
+  /* Outside it would be cut off by the edge of what it stands in. */
   .scroll:focus-visible {
-    outline-offset: 0;
+    outline-offset: -2px;
   }
   .scroll:focus-visible .option.active {
     box-shadow:

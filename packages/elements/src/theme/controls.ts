@@ -49,6 +49,11 @@ export const controls: CSSResult = css`
     background: var(--_ink);
     color: var(--_paper);
   }
+  button.main:disabled {
+    border-color: var(--_rule);
+    background: none;
+    color: var(--_soft);
+  }
   @media (forced-colors: active) {
     /* Else the words get a backing of their own. */
     button.main {
