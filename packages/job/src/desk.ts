@@ -14,6 +14,7 @@ import type { FileReport } from './report.js';
 import { rosterRow, type RosterRow } from './roster-row.js';
 import type { JobSettings } from './settings.js';
 import { stepReports } from './step-reports.js';
+import { placeIn } from './place-in.js';
 import { surveyFile } from './survey-file.js';
 import { trackReport } from './track-report.js';
 import { undoPlan } from './undo-plan.js';
@@ -156,7 +157,7 @@ async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Pr
     if (track === folder.current[at] || !clip) continue;
     const findings = surveyTrack(track, {
       clip,
-      nodes: opened.file.nodes,
+      ...placeIn(opened.file),
       file: opened.name,
       ...settings,
       houseRules,

@@ -2,6 +2,8 @@ import { SlewcurveError, type Clip, type RotationTrack } from '@slewcurve/core';
 import type { OpenOptions } from '@slewcurve/formats';
 import { applySteps, sayStep, type Step } from '@slewcurve/mend';
 import { surveyTrack, withDeclaredCuts, type Finding } from '@slewcurve/survey';
+import { placeIn } from './place-in.js';
+import { clipOnGrid } from './clip-on-grid.js';
 import { mendFile, type MendedFile } from './mend-file.js';
 import { newFaults } from './new-faults.js';
 import type { OpenedFile } from './open-file.js';
@@ -84,7 +86,12 @@ function trySteps(
   settings: JobSettings,
 ): Tried {
   const survey = (subject: RotationTrack): Finding[] =>
-    surveyTrack(subject, { clip, nodes: opened.file.nodes, file: opened.name, ...settings });
+    surveyTrack(subject, {
+      clip: clipOnGrid(clip, settings.frameRate),
+      ...placeIn(opened.file),
+      file: opened.name,
+      ...settings,
+    });
   const before = survey(track);
   const declined: Declined[] = [];
   let kept = steps;

@@ -1,4 +1,6 @@
-import type { Finding, Level, Occurrence } from '@slewcurve/survey';
+import type { Finding, Level, LoopGuess, Occurrence, SurveyEvent } from '@slewcurve/survey';
+import type { Convention } from './conventions.js';
+import type { PlaybackMatrix } from './playback-matrix.js';
 import type { Bend, Price, Step } from '@slewcurve/mend';
 
 /** One clip of a report. `keys` and `tracks` count rotation tracks. */
@@ -8,6 +10,8 @@ export interface ClipReport {
   readonly frameRate?: number;
   readonly tracks: number;
   readonly keys: number;
+  /** Where the clip looks like a loop that nobody declared: a question, nothing is judged by it. */
+  readonly loopGuess?: LoopGuess;
 }
 
 /** One track of a report, as played by the first playback. Degrees, deg/s, deg/s², seconds. */
@@ -82,9 +86,15 @@ export interface FileReport {
   readonly status: 'surveyed' | 'unreadable';
   readonly error?: ProblemReport;
   readonly problems?: readonly ProblemReport[];
+  /** By which conventions it is read, and who says so. */
+  readonly conventions?: readonly Convention[];
+  /** Worst speed and departure by playback and tick rate, where it was asked for. */
+  readonly matrix?: readonly PlaybackMatrix[];
   readonly clips: readonly ClipReport[];
   readonly tracks: readonly TrackReport[];
   readonly findings: readonly ReportedFinding[];
+  /** Findings of several tracks within one frame; left out where there are none. */
+  readonly events?: readonly SurveyEvent[];
 }
 
 /** What one step of a job card did. Degrees and seconds. */

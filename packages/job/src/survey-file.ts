@@ -1,10 +1,14 @@
 import { SlewcurveError } from '@slewcurve/core';
 import type { AnimationFile } from '@slewcurve/formats';
-import { surveyTrack, type Finding } from '@slewcurve/survey';
+import { gatherEvents, surveyTrack, type Finding } from '@slewcurve/survey';
+import { clipOnGrid } from './clip-on-grid.js';
 import { clipReport } from './clip-report.js';
+import { conventionsOf } from './conventions.js';
+import { playbackMatrix, type PlaybackMatrix } from './playback-matrix.js';
 import type { FileReport, TrackReport } from './report.js';
 import type { JobSettings } from './settings.js';
 import { trackReport } from './track-report.js';
+import { placeIn } from './place-in.js';
 import { UNWATCHED, betweenSlices, type Watch } from './watch.js';
 
 /**
@@ -21,22 +25,32 @@ export async function surveyFile(
 ): Promise<FileReport> {
   const tracks: TrackReport[] = [];
   const findings: Finding[] = [];
+  const clips = file.clips.map((clip) => clipOnGrid(clip, settings.frameRate));
+  const matrix: PlaybackMatrix[] = [];
   const total = file.clips.reduce((sum, clip) => sum + clip.tracks.length, 0);
-  for (const clip of file.clips)
+  for (const clip of clips)
     for (const track of clip.tracks) {
       tracks.push(trackReport(track, settings.playbacks[0] ?? 'as-written'));
-      findings.push(...surveyTrack(track, { clip, nodes: file.nodes, file: name, ...settings }));
+      if (settings.matrix) matrix.push(playbackMatrix(track, settings.matrix));
+      findings.push(...surveyTrack(track, { clip, ...placeIn(file), file: name, ...settings }));
       await betweenSlices(watch, tracks.length, total, 'tracks');
     }
+  const rates = new Map(
+    clips.flatMap(({ name: clip, frameRate }) => (frameRate === undefined ? [] : [[clip, frameRate]])),
+  );
+  const { events, findings: owned } = gatherEvents(findings, rates);
   return {
     file: name,
     status: 'surveyed',
     ...(file.problems.length > 0 && {
       problems: file.problems.map(({ code, level, message }) => ({ code, level, message })),
     }),
-    clips: file.clips.map(clipReport),
+    conventions: conventionsOf(file, settings.said),
+    clips: clips.map((clip) => clipReport(clip, file.nodes, settings.houseRules, name)),
     tracks,
-    findings,
+    findings: owned,
+    ...(events.length > 0 && { events }),
+    ...(settings.matrix && { matrix }),
   };
 }
 

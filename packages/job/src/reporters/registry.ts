@@ -1,3 +1,4 @@
+import type { TimeForm } from '@slewcurve/core';
 import type { Report } from '../report.js';
 import { csvReport } from './csv.js';
 import { jsonReport } from './json.js';
@@ -11,6 +12,8 @@ export interface ReporterOptions {
   readonly folder?: string;
   /** Colours of a terminal. */
   readonly paint?: Paint;
+  /** How text writes times; seconds where nothing is said. */
+  readonly time?: TimeForm;
 }
 
 /** A form that a report is printed in. */
@@ -19,7 +22,7 @@ export type ReportFormat = 'text' | 'json' | 'sarif' | 'csv' | 'markdown';
 /** Every form of a report: a new one is a file and a line here. */
 export const REPORTERS: Readonly<Record<ReportFormat, (report: Report, options: ReporterOptions) => string>> =
   Object.freeze({
-    text: (report, { paint }) => textReport(report, paint),
+    text: (report, { paint, time }) => textReport(report, paint, time),
     json: jsonReport,
     sarif: (report, { folder }) => sarifReport(report, folder),
     csv: csvReport,

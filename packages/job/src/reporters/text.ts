@@ -1,6 +1,11 @@
+import { sayTime, type TimeForm } from '@slewcurve/core';
 import { sayStep } from '@slewcurve/mend';
 import type { Level } from '@slewcurve/survey';
 import type { FileReport, GonePlace, Report, ReportedFinding, StepReport, TrackReport } from '../report.js';
+import { sayConventions } from '../conventions.js';
+import { textMatrix } from './matrix-text.js';
+import { printable } from './printable.js';
+import { sayEvent, sayLoopGuess } from './say-event.js';
 import { sayFault, sayPlace, sayRemedy } from './say-finding.js';
 import { counted, sayVerdict } from './say-verdict.js';
 
@@ -10,10 +15,10 @@ export type Paint = (text: string, as: Level | Report['verdict']) => string;
 const PLAIN: Paint = (text) => text;
 
 /** The report as people read it: one sentence an open finding, the verdict last. */
-export function textReport(report: Report, paint: Paint = PLAIN): string {
+export function textReport(report: Report, paint: Paint = PLAIN, time: TimeForm = 'seconds'): string {
   return [
     ...(report.steps ?? []).map(sayDone),
-    ...report.files.flatMap((file) => sayFile(file, paint)),
+    ...report.files.flatMap((file) => sayFile(file, paint, time)),
     ...(report.gone ?? []).map(sayGone),
     paint(sayVerdict(report), report.verdict),
     '',
@@ -21,11 +26,15 @@ export function textReport(report: Report, paint: Paint = PLAIN): string {
 }
 
 /** The roster as text: one row a track, then what `textReport` says. */
-export function textRoster(report: Report, paint: Paint = PLAIN): string {
-  return [...report.files.flatMap(fileRoster), textReport(report, paint)].join('\n');
+export function textRoster(report: Report, paint: Paint = PLAIN, time: TimeForm = 'seconds'): string {
+  const rosters = report.files.flatMap((file) => [
+    ...fileRoster(file, time),
+    ...textMatrix(file, time).map(printable),
+  ]);
+  return [...rosters, textReport(report, paint, time)].join('\n');
 }
 
-function sayFile(file: FileReport, paint: Paint): string[] {
+function sayFile(file: FileReport, paint: Paint, time: TimeForm): string[] {
   if (file.error)
     return [
       `${printable(`${file.file}: can't be read. ${file.error.message}`)} ${paint(`error ${file.error.code}`, 'error')}`,
@@ -35,26 +44,24 @@ function sayFile(file: FileReport, paint: Paint): string[] {
       `${printable(`${file.file}: ${message}`)} ${paint(`${level} ${code}`, level)}`,
   );
   const open = file.findings.filter(({ muted }) => muted === undefined);
-  return [...problems, ...open.map((finding) => sayFinding(file, finding, paint))];
+  const remarks = [
+    ...(file.events ?? []).map((event) => sayEvent(event, time, frameRateOf(file, event.clip))),
+    ...file.clips.map(sayLoopGuess),
+  ].flatMap((said) => (said === undefined ? [] : [printable(`${file.file}: ${said}.`)]));
+  return [...problems, ...open.map((finding) => sayFinding(file, finding, paint, time)), ...remarks];
 }
 
-function sayFinding(file: FileReport, finding: ReportedFinding, paint: Paint): string {
+function sayFinding(file: FileReport, finding: ReportedFinding, paint: Paint, time: TimeForm): string {
   const remedy = sayRemedy(finding);
-  const said = printable(`${file.file}: ${sayPlace(finding)}: ${sayFault(finding)}.`);
+  const said = printable(
+    `${file.file}: ${sayPlace(finding, time, frameRateOf(file, finding.clip))}: ${sayFault(finding)}.`,
+  );
   const kind = paint(`${finding.level} ${finding.rule}`, finding.level);
   return `${said} ${kind}${remedy === '' ? '' : printable(`; try: ${remedy}`)}`;
 }
 
 function sayGone({ file, rule, clip, track }: GonePlace): string {
   return printable(`${file}: ${track} in ${clip}: gone since the baseline was written. ${rule}`);
-}
-
-/** Names come from strangers' files: a control character in one neither moves the cursor nor ends the line. */
-function printable(line: string): string {
-  return line.replace(
-    /[\p{Cc}\u2028\u2029]/gu,
-    (letter) => `\\u${letter.charCodeAt(0).toString(16).padStart(4, '0')}`,
-  );
 }
 
 function sayDone(step: StepReport): string {
@@ -68,24 +75,45 @@ function sayDropped({ track, keys }: NonNullable<StepReport['dropped']>[number])
   return ` Dropped of ${track}: ${keys.length === 1 ? 'key' : 'keys'} ${listed}.`;
 }
 
-const COLUMNS: readonly { readonly head: string; cell(track: TrackReport): string }[] = [
+function frameRateOf({ clips }: FileReport, name: string): number | undefined {
+  return clips.find(({ clip }) => clip === name)?.frameRate;
+}
+
+interface Column {
+  readonly head: string;
+  cell(track: TrackReport): string;
+  /** A time, which has its unit in the head where that is always the same. */
+  time?(track: TrackReport): number;
+}
+
+const COLUMNS: readonly Column[] = [
   { head: 'keys', cell: (track) => String(track.keys) },
-  { head: 'from s', cell: (track) => track.start.toFixed(3) },
-  { head: 'to s', cell: (track) => track.end.toFixed(3) },
+  { head: 'from', time: (track) => track.start, cell: (track) => track.start.toFixed(3) },
+  { head: 'to', time: (track) => track.end, cell: (track) => track.end.toFixed(3) },
   { head: 'turned °', cell: (track) => number(track.travelled) },
   { head: 'median °/s', cell: (track) => number(track.medianRate) },
   { head: 'peak °/s', cell: (track) => number(track.peakRate) },
-  { head: 'peak at s', cell: (track) => track.peakAt.toFixed(3) },
+  { head: 'peak at', time: (track) => track.peakAt, cell: (track) => track.peakAt.toFixed(3) },
   { head: 'floor °/s', cell: (track) => number(track.noiseFloor) },
 ];
 
-function fileRoster(file: FileReport): string[] {
+function fileRoster(file: FileReport, form: TimeForm): string[] {
   if (file.error) return [];
   const rows = file.tracks.map((track) => ({
-    cells: [...COLUMNS.map((column) => column.cell(track)), faultsOf(file, track)],
+    cells: [
+      ...COLUMNS.map((column) =>
+        column.time && form !== 'seconds'
+          ? sayTime(column.time(track), form, frameRateOf(file, track.clip))
+          : column.cell(track),
+      ),
+      faultsOf(file, track),
+    ],
     name: printable(`${track.track} in ${track.clip}`),
   }));
-  const heads = [...COLUMNS.map((column) => column.head), 'found'];
+  const heads = [
+    ...COLUMNS.map(({ head, time }) => (time && form === 'seconds' ? `${head} s` : head)),
+    'found',
+  ];
   const widths = heads.map((head, i) =>
     Math.max(head.length, ...rows.map((row) => row.cells[i]?.length ?? 0)),
   );
@@ -93,10 +121,15 @@ function fileRoster(file: FileReport): string[] {
     `${cells.map((cell, i) => cell.padStart(widths[i] ?? 0)).join('  ')}  ${name}`;
   return [
     `${printable(file.file)}: ${counted(file.tracks.length, 'rotation track')} in ${counted(file.clips.length, 'clip')}`,
+    ...readAs(file),
     line(heads, 'track'),
     ...rows.map((row) => line(row.cells, row.name)),
     '',
   ];
+}
+
+function readAs({ conventions = [] }: FileReport): string[] {
+  return conventions.length === 0 ? [] : [`read by: ${sayConventions(conventions)}`];
 }
 
 function faultsOf(file: FileReport, track: TrackReport): string {
