@@ -37,6 +37,7 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     at: number,
     by: number,
     reach: seconds,
+    speeds: fc.array(fc.tuple(number, seconds), { minLength: 2, maxLength: 4 }),
     marks: fc.array(fc.tuple(number, number), { minLength: 1, maxLength: 3 }),
     turns: fc.integer(),
     sigma: seconds,

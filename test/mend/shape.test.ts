@@ -52,6 +52,66 @@ describe('shape', () => {
   });
 });
 
+describe('shape, drawn', () => {
+  it('turns as far as before in the same time, its speed in proportion to the drawing', () => {
+    fc.assert(
+      fc.property(
+        played,
+        fc.array(fc.double({ min: 1, max: 90, noNaN: true }), { minLength: 2, maxLength: 6 }),
+        (track, drawn) => {
+          const { times } = track;
+          const length = times[times.length - 1] - times[0];
+          fc.pre(travelled(track) > 1);
+          const speeds = drawn.map(
+            (speed, i) => [times[0] + (length * i) / (drawn.length - 1), speed] as const,
+          );
+          const result = repaced(track, { verb: 'shape', speeds });
+          expect(result.price.seconds).toBeCloseTo(0, 9);
+          expect(offThePath(track, result)).toBeLessThan(0.001);
+          const lost = Math.abs(travelled(result.track) - travelled(track));
+          expect(result.price.degrees < 0.005 ? lost : 0).toBeLessThan(0.01);
+          // By the middle of the drawing its own share of the area is turned, as near as frames tell.
+          const half = track.times[0] + length / 2;
+          const { retiming } = result.repaced;
+          const done = playAs(track, 'as-written').length(times[0], retiming.oldTime(half)) * DEGREES;
+          expect(done / travelled(track)).toBeCloseTo(areaUpTo(speeds, half) / areaUpTo(speeds, Infinity), 6);
+        },
+      ),
+      RUNS,
+    );
+  });
+
+  it('refuses a drawing without any speed, and says a drawing in a sentence', () => {
+    const [track] = fc.sample(sparse, { numRuns: 1, seed: 3 });
+    const still = [
+      [0, 0],
+      [9, 0],
+    ] as const;
+    expect(codeOf(() => repaced(track, { verb: 'shape', speeds: still }))).toBe('step.no-speed');
+    const step = {
+      verb: 'shape',
+      clip: 'Walk',
+      track: 'Neck',
+      speeds: [[0, 10] as const, [1.5, 0] as const],
+    };
+    expect(sayStep(step)).toBe(
+      'Shape the speed of all keys of Neck in Walk, drawn through 10 deg/s at 0 s and 0 deg/s at 1.5 s.',
+    );
+    expect(parseSentence(sayStep(step))).toEqual(step);
+  });
+});
+
+/** Trapezoids up to a time. */
+function areaUpTo(points: readonly (readonly [number, number])[], time: number): number {
+  let area = 0;
+  for (let i = 1; i < points.length; i++) {
+    const [[t0, v0], [t1, v1]] = [points[i - 1], points[i]];
+    const end = Math.min(time, t1);
+    if (end > t0) area += ((end - t0) * (2 * v0 + ((v1 - v0) * (end - t0)) / (t1 - t0))) / 2;
+  }
+  return area;
+}
+
 function half(degrees: number): number {
   return degrees / DEGREES / 2;
 }

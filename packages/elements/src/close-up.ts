@@ -75,7 +75,7 @@ export class SlewCloseUp extends LitElement {
     go: (time) => this.send('time-chosen', { time }),
     drag: ([from], settled) => settled && this.send('time-chosen', { time: from }),
     note: () => {},
-    catches: (row, { x, y }) => this.hands?.catches(this.paperOf(row), x, y) ?? false,
+    catches: (row, { x, y }) => this.hands?.catches(this.paperOf(row), x, y),
     grab: (row, grip, { x, y }) => {
       const on = this.paperOf(row);
       this.hands?.grab(on, grip, placeAt(on, x, y));

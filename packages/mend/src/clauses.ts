@@ -76,6 +76,15 @@ export const CLAUSES: readonly Clause[] = [
     read: ([reach]) => ({ reach: Number(reach) }),
   },
   {
+    key: 'speeds',
+    say: ({ speeds = [] }) =>
+      `drawn through ${speeds.map(([time, speed]) => `${sayNumber(speed)} deg/s at ${sayNumber(time)} s`).join(' and ')}`,
+    pattern: new RegExp(
+      `^, drawn through (${NUMBER} deg/s at ${NUMBER} s(?: and ${NUMBER} deg/s at ${NUMBER} s)*)`,
+    ),
+    read: ([speeds = '']) => ({ speeds: speeds.split(' and ').map(readDrawn) }),
+  },
+  {
     key: 'marks',
     say: ({ marks = [] }) =>
       `with ${marks.map(([old, time]) => `${sayNumber(old)} s at ${sayNumber(time)} s`).join(' and ')}`,
@@ -334,6 +343,11 @@ export function readKeys(keys: string): number[] {
 function readPairs(pairs: string): [string, string][] {
   const names = [...pairs.matchAll(new RegExp(TEXT, 'g'))].map(([name]) => String(JSON.parse(name)));
   return Array.from({ length: names.length / 2 }, (_, i) => [names[2 * i], names[2 * i + 1]]);
+}
+
+function readDrawn(point: string): readonly [number, number] {
+  const [speed, time] = point.split(' at ').map((number) => Number(number.replace(/ (?:deg\/)?s$/, '')));
+  return [time, speed];
 }
 
 function readPair(pair: string, between: string): readonly [number, number] {

@@ -47,6 +47,7 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
     return { by: value };
   },
   reach: (value) => ({ reach: above0(value) }),
+  speeds: (value) => ({ speeds: drawnSpeeds(value) }),
   marks: (value) => ({ marks: pairs(value, 'pairs of times') }),
   sigma: (value) => ({ sigma: above0(value) }),
   grain: (value) => ({ grain: above0(value) }),
@@ -160,6 +161,17 @@ function keyNumbers(value: unknown): readonly number[] {
   if (!Array.isArray(value) || value.length === 0 || !value.every(isWhole))
     throw new Fault('card.bad-number', 'must be a list of key numbers, whole and from 0 up');
   return value;
+}
+
+function drawnSpeeds(value: unknown): readonly (readonly [number, number])[] {
+  const speeds = pairs(value, 'pairs of a time and a speed');
+  const ascend = speeds.every(([time], i) => i === 0 || time > speeds[i - 1][0]);
+  if (speeds.length < 2 || !ascend || speeds.some(([, speed]) => speed < 0))
+    throw new Fault(
+      'card.bad-number',
+      'must be two points or more, their times ascending and no speed below 0',
+    );
+  return speeds;
 }
 
 function pairs(value: unknown, what: string): (readonly [number, number])[] {

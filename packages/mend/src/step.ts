@@ -59,6 +59,8 @@ export interface Step {
   readonly by?: number;
   /** shape: how far the press reaches on either side, seconds. */
   readonly reach?: number;
+  /** shape: the speed as drawn, pairs of a time and a speed, seconds and deg/s, times ascending; scaled so that the span turns as far as before. */
+  readonly speeds?: readonly (readonly [time: number, speed: number])[];
   /** set marks: pairs of an old time and the time at which what stood there is to stand, seconds, ascending. */
   readonly marks?: readonly (readonly [old: number, time: number])[];
   /** copy pace, match: the other track, by its name or a pattern that fits one alone. Default: the track itself. */

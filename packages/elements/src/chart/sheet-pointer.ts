@@ -20,8 +20,8 @@ export interface SheetEvents {
   /** A drag along the row; settled when let go. */
   drag(span: Span, settled: boolean): void;
   note(id: string): void;
-  /** Whether a drag that sets out upright from a point takes hold of the trace there. */
-  catches(row: FoldRow, point: Point): boolean;
+  /** Whether a drag from a point takes hold there: one that sets out upright, or any. */
+  catches(row: FoldRow, point: Point): 'upright' | 'any' | undefined;
   /** A drag takes hold: of a handle by its name, or of the trace. */
   grab(row: FoldRow, grip: string | undefined, point: Point): void;
   pull(row: FoldRow, point: Point): void;
@@ -97,7 +97,8 @@ export class SheetPointer {
     const across = Math.abs(point.x - from.x);
     const upright = Math.abs(point.y - from.y);
     if (Math.max(across, upright) < DRAG) return undefined;
-    if (grip === undefined && (across >= upright || !this.events.catches(row, from))) return 'span';
+    const caught = grip === undefined ? this.events.catches(row, from) : 'any';
+    if (!caught || (caught === 'upright' && across >= upright)) return 'span';
     this.events.grab(row, grip, from);
     return 'hand';
   }

@@ -2,6 +2,7 @@ import { html, nothing, type TemplateResult } from 'lit';
 import type { ReactiveControllerHost } from 'lit';
 import { frameLength, type ChartData } from '../chart/chart-data.js';
 import type { Motion } from '../chart/motion.js';
+import { drawingAt } from './drawing.js';
 import type { Ground, Hand, HandEdit, Place } from './hand.js';
 import { HandAtWork } from './hand-at-work.js';
 import { handOfEdit } from './hand-of-edit.js';
@@ -34,7 +35,7 @@ const BESIDE = 5;
 const RESTED_MS = 500;
 
 /** What can be begun by hand at the cursor. */
-export type HandName = 'press' | 'limit' | 'hold';
+export type HandName = 'press' | 'limit' | 'hold' | 'draw';
 
 /** The edits by hand on a chart, its rows and its close-up alike: where they begin, how they are drawn, what their handles do. */
 export class ChartHands {
@@ -108,13 +109,14 @@ export class ChartHands {
     return { motion, keys, frame, span, ends: this.ends, reach, pixel: pixelOf(paper) };
   }
 
-  /** Whether a point lies on the trace, as near as a hand can tell. */
-  catches(paper: Paper, x: number, y: number): boolean {
-    const { motion } = this;
-    if (!motion) return false;
+  /** Whether a drag from a point takes hold: an upright one where the trace is, as near as a hand can tell; any while a speed is drawn. */
+  catches(paper: Paper, x: number, y: number): 'upright' | 'any' | undefined {
+    const { motion, hand } = this;
+    if (hand?.gathers) return 'any';
+    if (!motion) return undefined;
     const from = placeAt(paper, x - BESIDE, 0).time;
     const { greatest, least } = motion.columns(from, placeAt(paper, x + BESIDE, 0).time, 1);
-    return y > yOf(paper, greatest[0]) - CATCH && y < yOf(paper, least[0]) + CATCH;
+    return y > yOf(paper, greatest[0]) - CATCH && y < yOf(paper, least[0]) + CATCH ? 'upright' : undefined;
   }
 
   /** A pointer takes hold of a handle, or of the trace where it stands: of the hand at work, or of a new one. */
@@ -125,7 +127,7 @@ export class ChartHands {
     const ofKey = grip === undefined ? null : /^(knob|post)-(\d+)$/.exec(grip);
     const begun = ofKey
       ? keyHand(ground, ofKey[1] === 'knob' ? 'knob' : 'post', Number(ofKey[2]))
-      : hand && grip !== undefined
+      : hand && (grip !== undefined || hand.gathers)
         ? hand
         : fresh(
             ground,
@@ -211,11 +213,13 @@ export class ChartHands {
     if (time < paper.row.from || time >= paper.row.to) return nothing;
     const speed = (this.shown ?? this.motion)?.read(time).speed ?? 0;
     const y =
-      hand.stands === 'trace'
-        ? yOf(paper, speed)
-        : hand.kind === 'retime'
-          ? (paper.bands.posts + paper.bands.feet) / 2
-          : paper.bands.base;
+      typeof hand.stands === 'object'
+        ? yOf(paper, hand.stands.speed)
+        : hand.stands === 'trace'
+          ? yOf(paper, speed)
+          : hand.kind === 'retime'
+            ? (paper.bands.posts + paper.bands.feet) / 2
+            : paper.bands.base;
     return this.slider(hand, `left:${xOf(paper, time)}px;top:${y}px`, hand.kind);
   }
 
@@ -251,6 +255,7 @@ export class ChartHands {
 
 function fresh(ground: Ground, name: HandName, time: number, paper: Paper): Hand {
   if (name === 'limit') return limitAt(ground, time, paper.scale.high);
+  if (name === 'draw') return drawingAt(ground, time, paper.row.to - paper.row.from);
   return name === 'hold' ? holdAt(ground, time) : pressAt(ground, time);
 }
 

@@ -47,7 +47,11 @@ export class HandAtWork implements ReactiveController {
   }
 
   drag(to: Place): void {
-    if (this.grabbed) this.work(this.grabbed.hand.dragged(this.grabbed.from, to), false);
+    if (!this.grabbed) return;
+    const { hand, from } = this.grabbed;
+    const next = hand.dragged(from, to);
+    if (hand.gathers) this.grabbed = { hand: next, from: to };
+    this.work(next, false);
   }
 
   /** The pointer is lifted: the edit rests as it is, or goes where it changes nothing. */

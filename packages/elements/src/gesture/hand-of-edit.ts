@@ -1,4 +1,5 @@
 import { nearestKey } from '../chart/posts.js';
+import { drawingThrough } from './drawing.js';
 import type { Ground, Hand, HandEdit } from './hand.js';
 import { inToKeys, wholeSpan } from './hand.js';
 import { hold } from './hold.js';
@@ -23,7 +24,8 @@ export function handOfEdit(edit: HandEdit, ground: Ground): Hand | undefined {
 }
 
 function pressOf(edit: HandEdit, ground: Ground): Hand | undefined {
-  const { at, by, reach, shoulders, ends = 'same' } = edit;
+  const { at, by, reach, shoulders, ends = 'same', speeds } = edit;
+  if (speeds) return drawingThrough(ground, inToKeys(ground, edit.span ?? wholeSpan(ground)), speeds);
   if (at === undefined || by === undefined || reach === undefined) return undefined;
   const span = inToKeys(ground, edit.span ?? wholeSpan(ground));
   return press(ground, { at, by, reach, ends, shoulders, span });

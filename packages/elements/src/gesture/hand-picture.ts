@@ -2,7 +2,7 @@ import { nothing, svg, type SVGTemplateResult } from 'lit';
 import type { Motion } from '../chart/motion.js';
 import { sayAngle, sayNumber, sayTime } from '../chart/quantity.js';
 import { tracePath, withinMotion } from '../chart/trace-path.js';
-import { signed, type Hand } from './hand.js';
+import { signed, type Hand, type Place } from './hand.js';
 import type { LentStretch, PaceSketch } from './pace-sketch.js';
 import { xOf, yOf, type Paper } from './paper-place.js';
 
@@ -39,6 +39,7 @@ export function handPicture(scene: HandScene): SVGTemplateResult {
   return svg`<svg class="paper over" width=${paper.width} height=${paper.bands.bottom} aria-hidden="true">
     ${sketch ? sketch.lent.map((stretch) => lentMark(scene, sketch, stretch)) : nothing}
     ${hand.kind === 'limit' ? limitMark(scene) : nothing}
+    ${hand.drawn ? handLine(paper, hand.drawn) : nothing}
     ${sketch && !drawn ? newTrace(scene, sketch.motion) : nothing}
     ${hand.kind === 'hold' && sketch ? holdMark(scene, sketch) : nothing}
     ${sketch ? lentWords(scene, sketch) : nothing}
@@ -138,6 +139,14 @@ function newTrace({ paper }: HandScene, motion: Motion): SVGTemplateResult {
   const columns = withinMotion(motion.columns(row.from, row.to, Math.ceil(width / COLUMN)), row, motion);
   const place = { left: 0, width: COLUMN, base: bands.base, height: bands.base - bands.top };
   return svg`<path class="line trace" d=${tracePath(columns, scale, place)} />`;
+}
+
+/** The line as the hand drew it. */
+function handLine(paper: Paper, drawn: readonly Place[]): SVGTemplateResult {
+  const points = drawn
+    .map(({ time, speed }) => `${xOf(paper, time).toFixed(1)} ${yOf(paper, speed).toFixed(1)}`)
+    .join('L');
+  return svg`<path class="hand-line" d=${`M${points}`} />`;
 }
 
 /** A hold is a thick rule on the baseline. */

@@ -16,6 +16,12 @@ export const handStyles: CSSResult = css`
   .lent {
     fill: url(#hatch);
   }
+  .hand-line {
+    fill: none;
+    stroke: var(--_ink);
+    stroke-width: 1;
+    stroke-dasharray: 7 3 1 3;
+  }
   svg.over .line.trace {
     stroke-width: 2;
   }

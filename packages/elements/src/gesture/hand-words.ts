@@ -12,6 +12,7 @@ const HANDS: readonly (readonly [HandName, string])[] = [
   ['press', 'Press the speed'],
   ['hold', 'Put a hold'],
   ['limit', 'Lower a limit'],
+  ['draw', 'Draw the speed'],
 ];
 
 /** What can be done by hand at the cursor, in words, and the law that a press keeps to. */

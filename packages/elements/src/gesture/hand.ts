@@ -40,6 +40,10 @@ export interface Hand {
   /** Where the handle stands: seconds before the edit; whether its speed is the trace's there, its own, or none (on the baseline). */
   readonly time: number;
   readonly stands: 'trace' | 'baseline' | { readonly speed: number };
+  /** A stroke goes on from where the last one ended, and may begin anywhere. */
+  readonly gathers?: boolean;
+  /** The speed as it was drawn. */
+  readonly drawn?: readonly Place[];
   /** The handle stands this much later on the new clock, seconds. */
   readonly later?: number;
   /** Undefined while it changes nothing. */

@@ -1,4 +1,12 @@
-import { type RotationTrack, SlewcurveError, letAngleGo, pace, playAs } from '@slewcurve/core';
+import {
+  type PacedCurve,
+  type RotationTrack,
+  SlewcurveError,
+  type Span,
+  letAngleGo,
+  pace,
+  playAs,
+} from '@slewcurve/core';
 import { placeOf } from '../acted-keys.js';
 import { sentenceOf } from '../clauses.js';
 import { DEGREES } from '../edit-result.js';
@@ -15,21 +23,23 @@ import type { EditResult, Verb } from '../verb.js';
  */
 export const shape: Verb = Object.freeze({
   name: 'shape',
-  summary: 'Presses the speed up or down at a place; the path stays, unless the angle is let go.',
+  summary:
+    'Presses the speed up or down at a place, or draws it anew; the path stays, unless the angle is let go.',
   alsoCalled: ['speed ramp', 'time remap', 'bulge', 'speed curve', 'accent'],
   opening: 'Shape the speed of',
-  reads: ['at', 'by', 'reach', 'ends', 'with', 'store'] as const,
+  reads: ['at', 'by', 'reach', 'speeds', 'ends', 'with', 'store'] as const,
   needsAllowing: true,
   keysApart: false,
   insertsKeys: true,
   say: (step: Step) => sentenceOf('Shape the speed of', step),
   apply(track: RotationTrack, step: Step): EditResult {
     const span = paceSpan(track, step);
-    const { at, by, reach, ends = 'same', shoulders } = step;
+    const { at, by, reach, ends = 'same', shoulders, speeds } = step;
+    if (speeds) return storePaced(track, span, drawnPace(track, span, speeds), step, 'smooth');
     if (at === undefined || by === undefined || reach === undefined)
       throw new SlewcurveError(
         'step.needs-press',
-        'Say where, by how much and how far: at in seconds, by in deg/s, reach in seconds.',
+        'Say where, by how much and how far: at in seconds, by in deg/s, reach in seconds; or the speed as drawn: speeds.',
         placeOf(track),
       );
     const path = playAs(track, 'as-written');
@@ -40,3 +50,30 @@ export const shape: Verb = Object.freeze({
     return storePaced(track, span, paced, step, 'smooth');
   },
 });
+
+/** The span at the drawn speed, scaled so that it turns as far as before. Before the first point and after the last the speed is theirs. */
+function drawnPace(track: RotationTrack, span: Span, speeds: NonNullable<Step['speeds']>): PacedCurve {
+  const [from, to] = span;
+  const inside = speeds.filter(([time]) => time > from && time < to);
+  const points = [[from, drawnAt(speeds, from)] as const, ...inside, [to, drawnAt(speeds, to)] as const];
+  if (!points.some(([, speed]) => speed > 0))
+    throw new SlewcurveError(
+      'step.no-speed',
+      `Between ${from} s and ${to} s no speed is drawn, so nothing would ever arrive. Draw some.`,
+      placeOf(track),
+    );
+  return pace(playAs(track, 'as-written'), {
+    kind: 'drawn',
+    times: points.map(([time]) => time - from),
+    speeds: points.map(([, speed]) => speed / DEGREES),
+    span,
+  });
+}
+
+function drawnAt(speeds: NonNullable<Step['speeds']>, time: number): number {
+  const after = speeds.findIndex(([at]) => at >= time);
+  if (after === 0) return speeds[0][1];
+  if (after < 0) return speeds[speeds.length - 1][1];
+  const [[t0, v0], [t1, v1]] = [speeds[after - 1], speeds[after]];
+  return v0 + ((v1 - v0) * (time - t0)) / (t1 - t0);
+}
