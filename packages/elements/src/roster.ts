@@ -160,8 +160,16 @@ export class SlewRoster extends LitElement {
     if (this.rows.length === 0) return html`<p class="empty">${this.message}</p>`;
     return html`${this.tools()}
       <p class="tally" role="status">${tally(this.rows, this.shown)}</p>
-      ${this.shown.length === 0 ? html`<p class="empty">${foundNothing(this.find, this.book)}</p>` : this.list()}
+      ${this.shown.length === 0 ? this.nothing() : this.list()}
       <span class="swatch"></span>`;
+  }
+
+  private nothing(): TemplateResult {
+    const { says, leads } = foundNothing(this.find, this.book);
+    return html`<div class="empty">
+      <p>${says}</p>
+      ${leads.map(({ name, summary }) => html`<p><b>${name}</b>: ${summary}</p>`)}
+    </div>`;
   }
 
   private tools(): TemplateResult {

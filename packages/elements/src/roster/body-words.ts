@@ -23,13 +23,20 @@ const SIDES: Readonly<Record<string, RegExp>> = {
   right: /right|(^|[._ -])r([._ -]|$)/,
 };
 
+/** Whether a word, as far as it is typed, is one of the body or its sides. */
+export function isBodyWord(word: string): boolean {
+  return wordsMeant(word).length > 0;
+}
+
 /** Whether a joint of this name is what people mean by a word of the body: "knee" is `lowerleg.r`, "left" is `hand.l`. */
 export function isOfBody(joint: string, word: string): boolean {
   const name = joint.toLowerCase();
-  // A word is typed letter by letter: from the third on it counts.
-  return [BODY, SIDES].some((words) =>
-    Object.entries(words).some(
-      ([known, names]) => (known === word || (word.length > 2 && known.startsWith(word))) && names.test(name),
-    ),
+  return wordsMeant(word).some((names) => names.test(name));
+}
+
+/** A word is typed letter by letter: from the third on it counts. */
+function wordsMeant(word: string): RegExp[] {
+  return Object.entries({ ...BODY, ...SIDES }).flatMap(([known, names]) =>
+    word.length > 2 && known.startsWith(word) ? [names] : [],
   );
 }

@@ -1,6 +1,6 @@
 import { plainWord, wordsFor, type Word } from '@slewcurve/survey';
 import { trackName } from '../chart/chart-data.js';
-import { isOfBody } from './body-words.js';
+import { isBodyWord, isOfBody } from './body-words.js';
 import type { RosterRow } from './roster-row.js';
 
 /**
@@ -24,18 +24,25 @@ export function findRows(
         (word) =>
           namesOf(row).includes(word) ||
           isOfBody(trackName(row.track), word) ||
-          row.rules.some((rule) => rule.includes(word) || startsOne(called.get(rule) ?? [], word)),
+          // "Knee pop" is what a fault is called; who looks for the knee means the joint.
+          (!isBodyWord(word) &&
+            row.rules.some((rule) => rule.includes(word) || startsOne(called.get(rule) ?? [], word))),
       ),
   );
 }
 
-/** What a find field says where no row answers. */
-export function foundNothing(text: string, book: readonly Word[]): string {
-  if (text.trim() === '') return 'No track has such a finding.';
-  const nothing = `No track answers to “${text}”, neither by name nor by what was found on it.`;
-  const leads = wordsFor(text, book).slice(0, 4);
-  if (leads.length === 0) return `${nothing} Names are those of the file.`;
-  return `${nothing} It leads to ${leads.map(({ name, summary }) => `${name}: ${summary}`).join(' ')}`;
+/** What a find field says where no row answers, and what the words lead to instead. */
+export function foundNothing(
+  text: string,
+  book: readonly Word[],
+): { readonly says: string; readonly leads: readonly Word[] } {
+  if (text.trim() === '') return { says: 'No track has such a finding.', leads: [] };
+  const leads = wordsFor(text, book).slice(0, 5);
+  const more = leads.length > 0 ? 'The words lead to:' : 'Names are those of the file.';
+  return {
+    says: `No track answers to “${text}”, neither by name nor by what was found on it. ${more}`,
+    leads,
+  };
 }
 
 function namesOf({ file, clip, track }: RosterRow): string {

@@ -109,7 +109,11 @@ export const rosterStyles: CSSResult = css`
     text-underline-offset: 0.2em;
     font-weight: 600;
   }
+  .empty b {
+    color: var(--_ink);
+  }
   .empty {
+    max-width: 46rem;
     font-size: 1.125rem;
     font-style: italic;
     color: var(--_soft);
@@ -132,7 +136,7 @@ export const rosterStyles: CSSResult = css`
     }
     .gauge,
     .option {
-      grid-template-columns: minmax(0, 1fr) auto;
+      grid-template-columns: minmax(55%, 1fr) minmax(0, auto);
       grid-template-rows: 1fr 1fr;
     }
     .ink {
