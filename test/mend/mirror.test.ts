@@ -60,12 +60,8 @@ describe('mirror', () => {
   });
 
   it('lets named sides change places, all at once, and the middle mirror itself', () => {
-    const motion = (spin: number): typeof WAVE => ({
-      ...WAVE,
-      spin: [spin, 10, 5] as unknown as typeof WAVE.spin,
-    });
     const tracks = ['Hips', 'Hips/LeftLeg', 'Hips/RightLeg'].map((id, i) => ({
-      ...keyed(motion(10 * i), grid(6), 'LINEAR'),
+      ...keyed({ ...WAVE, spin: [10 * i, 10, 5] }, grid(6), 'LINEAR'),
       id,
     }));
     const step = { verb: 'mirror', clip: '*', track: '*', normal: 'x', pairs: [['Left', 'Right']] } as const;

@@ -26,6 +26,13 @@ function speeds(track: RotationTrack): number[] {
   });
 }
 
+/** How far the speeds of inner segments are off 60 deg/s. */
+function inner(track: RotationTrack): number[] {
+  return speeds(track)
+    .slice(2, -2)
+    .map((speed) => Math.abs(speed - 60));
+}
+
 /** Largest distance of a track as written from a motion, degrees; `margin` seconds at either end are left out. */
 function offMotion(track: RotationTrack, motion: Motion, margin = 0): number {
   const curve = playAs(track, 'as-written');
@@ -93,10 +100,6 @@ describe('re-grid', () => {
     const values = times.flatMap((time) => [...poseAt(hum(time), time)]);
     const noisy = rotationTrack({ times, values });
     const { track } = applied(noisy, { verb: 're-grid', fps: 60 });
-    const inner = (one: RotationTrack): number[] =>
-      speeds(one)
-        .slice(2, -2)
-        .map((speed) => Math.abs(speed - 60));
     const picked = rotationTrack({
       times: grid(121, 60),
       values: values.filter((_, i) => Math.floor(i / 4) % 2 === 0),

@@ -65,7 +65,9 @@ describe('re-time to grid', () => {
         const track = rounded(exact, 3);
         const { track: after } = applyAny(track, fps);
         expect(after.times).toEqual(exact.times);
-        if (interpolation !== 'CUBICSPLINE') expect(after.values).toEqual(track.values);
+        const isValue = (_: number, i: number): boolean =>
+          interpolation !== 'CUBICSPLINE' || (i % 12 >= 4 && i % 12 < 8);
+        expect(after.values.filter(isValue)).toEqual(track.values.filter(isValue));
       }),
     );
   });

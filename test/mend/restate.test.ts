@@ -32,6 +32,10 @@ function speeds(track: RotationTrack): number[] {
   });
 }
 
+function sizes({ values }: RotationTrack): number[] {
+  return Array.from(values, Math.abs).toSorted((a, b) => a - b);
+}
+
 function angleTracks(): fc.Arbitrary<RotationTrack> {
   const triple = fc.tuple(...[0, 1, 2].map(() => fc.double({ min: -4, max: 4, noNaN: true })));
   return fc
@@ -70,8 +74,6 @@ describe('restate', () => {
     fc.assert(
       fc.property(fc.oneof(smoothTracks, angleTracks()), (track) => {
         const there = applied(track, { verb: 'restate', axes: 'x z -y' }).track;
-        const sizes = (one: RotationTrack): number[] =>
-          Array.from(one.values, Math.abs).toSorted((a, b) => a - b);
         expect(sizes(there)).toEqual(sizes(track));
         const back = applied(there, { verb: 'restate', axes: 'x -z y' }).track;
         expect(back.sequence).toBe(track.sequence);

@@ -32,6 +32,8 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     keys: keyList,
     steps: fc.nat(),
     axis: fc.tuple(number, number, number),
+    turn: fc.tuple(number, number, number),
+    about: fc.constantFrom('own' as const, 'parent' as const, 'world' as const),
     side: fc.constantFrom('own' as const, 'parent' as const),
     fade: seconds,
     at: number,
@@ -90,6 +92,10 @@ const steps: fc.Arbitrary<Step> = fc.constantFrom(...VERBS).chain((verb) => {
     { requiredKeys: ['verb', 'clip', 'track'] },
   );
 });
+
+function atThirty(text: string): Step {
+  return parseSentence(text, 30);
+}
 
 describe('sentence', () => {
   it('says a step as people read it', () => {
@@ -167,18 +173,17 @@ describe('sentence', () => {
   });
 
   it('reads times as frames and timecode on the clip’s grid, and leaves names and rates alone', () => {
-    const parse = (text: string): Step => parseSentence(text, 30);
-    expect(parse('Hold all keys of camera in Flight, at 00:00:04:00, lasting 15 frames.')).toMatchObject({
+    expect(atThirty('Hold all keys of camera in Flight, at 00:00:04:00, lasting 15 frames.')).toMatchObject({
       at: 4,
       seconds: 0.5,
     });
-    expect(parse('Normalise all keys of "frame 3" in Walk, between frame 15 and 00:00:01:15.')).toMatchObject(
-      {
-        track: 'frame 3',
-        span: [0.5, 1.5],
-      },
-    );
-    expect(parse('Re-grid all keys of camera in Flight, to 24 frames a second.').fps).toBe(24);
+    expect(
+      atThirty('Normalise all keys of "frame 3" in Walk, between frame 15 and 00:00:01:15.'),
+    ).toMatchObject({
+      track: 'frame 3',
+      span: [0.5, 1.5],
+    });
+    expect(atThirty('Re-grid all keys of camera in Flight, to 24 frames a second.').fps).toBe(24);
     expect(codeOf(() => parseSentence('Hold all keys of camera in Flight, at frame 30, lasting 1 s.'))).toBe(
       'time.needs-grid',
     );

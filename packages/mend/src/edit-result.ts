@@ -21,12 +21,53 @@ export function editResult(
 ): EditResult {
   const { oldKeys, moves = true } = options;
   const inserted = oldKeys?.flatMap((old, key) => (old < 0 ? [key] : [])) ?? options.inserted ?? [];
-  const dropped = oldKeys && droppedKeys(before.times.length, oldKeys);
-  const changed = [...inserted];
+  const keys = { inserted, ...(oldKeys && orderOf(before, oldKeys)) };
+  const { changed, largest } = changedKeys(before, after, keys);
+  if (changed.length === 0 && staysInOrder(keys))
+    return { track: before, changed, inserted, largest: 0, added: 0 };
+  return {
+    track: after,
+    changed,
+    ...keys,
+    largest: largest * DEGREES,
+    added: lengthOf(after) - lengthOf(before),
+    ...(moves && after.times.length > 0 && { span: spanOf(before, after, changed, keys) }),
+  };
+}
+
+type KeyOrder = Pick<EditResult, 'oldKeys' | 'dropped'>;
+
+function orderOf(before: RotationTrack, oldKeys: readonly number[]): KeyOrder {
+  return { oldKeys, dropped: droppedKeys(before.times.length, oldKeys) };
+}
+
+function staysInOrder({ oldKeys, dropped = [] }: KeyOrder): boolean {
+  return !oldKeys || (dropped.length === 0 && oldKeys.every((old, key) => old === key));
+}
+
+function spanOf(
+  before: RotationTrack,
+  after: RotationTrack,
+  changed: readonly number[],
+  { oldKeys, dropped = [] }: KeyOrder,
+): readonly [number, number] {
+  const [first, last] = oldKeys
+    ? movedReach(after, oldKeys, changed, dropped.at(-1) === before.times.length - 1)
+    : [changed[0], changed[changed.length - 1]];
+  return withinKeys(after, reach(after, first, last));
+}
+
+/** Keys of `after` that differ or were put in, ascending, and the largest turn of any that was there, radians. */
+function changedKeys(
+  before: RotationTrack,
+  after: RotationTrack,
+  keys: Pick<EditResult, 'inserted' | 'oldKeys'>,
+): { readonly changed: readonly number[]; readonly largest: number } {
+  const changed = [...keys.inserted];
   let largest = 0;
   const was = new Float64Array(4);
   const is = new Float64Array(4);
-  for (const [key, oldKey] of pairedKeys(after, { inserted, ...(oldKeys && { oldKeys }) })) {
+  for (const [key, oldKey] of pairedKeys(after, keys)) {
     if (sameNumbers(before, oldKey, after, key)) continue;
     changed.push(key);
     if (isPlayable(before, oldKey))
@@ -35,22 +76,8 @@ export function editResult(
         angleBetween(keyOrientation(was, before, oldKey), keyOrientation(is, after, key)),
       );
   }
-  const isKept = !oldKeys || (dropped?.length === 0 && oldKeys.every((old, key) => old === key));
-  if (changed.length === 0 && isKept) return { track: before, changed, inserted, largest: 0, added: 0 };
   changed.sort((a, b) => a - b);
-  const [first, last] = oldKeys
-    ? movedReach(after, oldKeys, changed, dropped?.at(-1) === before.times.length - 1)
-    : [changed[0], changed[changed.length - 1]];
-  return {
-    track: after,
-    changed,
-    inserted,
-    ...(oldKeys && { oldKeys }),
-    ...(dropped && { dropped }),
-    largest: largest * DEGREES,
-    added: lengthOf(after) - lengthOf(before),
-    ...(moves && after.times.length > 0 && { span: withinKeys(after, reach(after, first, last)) }),
-  };
+  return { changed, largest };
 }
 
 function droppedKeys(count: number, oldKeys: readonly number[]): number[] {

@@ -29,7 +29,8 @@ export function lowPassed(
     const beside = new Float64Array(4);
     const turn = new Float64Array(3);
     let weights = 1;
-    for (let place = 1; place < PLACES && reach > 0; place++) {
+    if (!(reach > 0)) return curve.orientation(out, t);
+    for (let place = 1; place < PLACES; place++) {
       const weight = 0.5 * (1 + Math.cos((Math.PI * place) / PLACES));
       for (const side of [-1, 1]) {
         curve.orientation(beside, t + (side * reach * place) / PLACES);

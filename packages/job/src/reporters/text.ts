@@ -111,7 +111,7 @@ function fileRoster(file: FileReport, form: TimeForm): string[] {
     name: printable(`${track.track} in ${track.clip}`),
   }));
   const heads = [
-    ...COLUMNS.map(({ head, time }) => (time && form === 'seconds' ? `${head} s` : head)),
+    ...COLUMNS.map((column) => (column.time && form === 'seconds' ? `${column.head} s` : column.head)),
     'found',
   ];
   const widths = heads.map((head, i) =>

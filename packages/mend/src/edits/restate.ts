@@ -65,7 +65,7 @@ export const restate: Verb = Object.freeze({
 
 /** Four numbers that stand in the order of `components`, as x, y, z, w; tangents too. */
 function reordered(values: Float64Array, components: string): Float64Array {
-  const from = [...'xyzw'].map((part) => components.indexOf(part));
+  const from = ['x', 'y', 'z', 'w'].map((part) => components.indexOf(part));
   return values.map((_, i) => values[i - (i % 4) + from[i % 4]]);
 }
 
@@ -87,10 +87,10 @@ function turnedAngles(
   axes: string,
 ): { values: Float64Array; sequence: string } {
   const change = axisChange(axes);
-  const turned = [...sequence.toLowerCase()].map((letter) => {
+  const turned = Array.from(sequence.toLowerCase(), (letter) => {
     const axis = changeAxesOfRate(
       [0, 0, 0],
-      [...'xyz'].map((name) => Number(name === letter)),
+      ['x', 'y', 'z'].map((name) => Number(name === letter)),
       change,
     );
     const index = axis.findIndex((part) => part !== 0);
