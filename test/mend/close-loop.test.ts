@@ -103,10 +103,10 @@ describe('close loop', () => {
           expect(gapOf(after)).toBeLessThan(0.01);
           expect(kinkOf(after)).toBeLessThan(0.02);
           const end = track.times[keys - 1];
-          track.times.forEach((time, k) => {
-            if (spread === 'tail' && time <= 0.75 * end)
-              expect(numbersOf(after, k)).toEqual(numbersOf(track, k));
-          });
+          const before = Array.from(track.times.keys()).filter(
+            (k) => spread === 'tail' && track.times[k] <= 0.75 * end,
+          );
+          for (const k of before) expect(numbersOf(after, k)).toEqual(numbersOf(track, k));
           expect(numbersOf(after, 0)).toEqual(numbersOf(track, 0));
         },
       ),

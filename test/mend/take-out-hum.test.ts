@@ -60,7 +60,7 @@ function quiet(track: RotationTrack, strength: (t: number) => number, hertz: num
 
 const swelling = (t: number): number => 0.1 + 0.3 * Math.sin((Math.PI * t) / 10) ** 2;
 
-const on = (): number => 0.4;
+const always = (): number => 0.4;
 
 describe('take out hum', () => {
   // EDITS: hum −20 dB, all else within 0.02°.
@@ -135,7 +135,7 @@ describe('take out hum', () => {
   });
 
   it('fades where the hum runs on beyond the span, and leaves outliers where they stand', () => {
-    const sound = captured(humming(11, on), { keys: 600, rate: RATE, grain: 0.01 });
+    const sound = captured(humming(11, always), { keys: 600, rate: RATE, grain: 0.01 });
     const track = replaceTrack(sound, { values: Float64Array.from(sound.values) });
     track.values.set(panTilt(90, 40), 4 * 300);
     const span = [2, 8] as const;
@@ -143,7 +143,7 @@ describe('take out hum', () => {
     expect(numbersOf(after, 250)).toEqual(numbersOf(track, 250));
     for (const key of [0, 100, 119, 481, 599]) expect(numbersOf(after, key)).toEqual(numbersOf(track, key));
     // Two cycles from the border and from the kept key it is gone, away from the outlier.
-    const strays = between(after, quiet(track, on, 11));
+    const strays = between(after, quiet(track, always, 11));
     for (const key of [140, 180, 230, 270, 290, 310, 400, 460]) expect(strays[key]).toBeLessThan(0.02);
     // The outlier goes along with the hum, and no further.
     expect(between(after, track)[300]).toBeLessThan(0.41);

@@ -7,12 +7,16 @@ import { turningTrack } from '../support/turning-track.js';
 
 fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 19 });
 
-describe('trim', () => {
-  const track = replaceTrack(
-    turningTrack((k) => 3 * k, 20),
-    { breaks: [0, 7, 18] },
-  );
+const track = replaceTrack(
+  turningTrack((k) => 3 * k, 20),
+  { breaks: [0, 7, 18] },
+);
 
+/** The code of what trimming some keys throws. */
+const code = (keys?: number[]): string | undefined =>
+  codeOf(() => applied(track, { verb: 'trim', ...(keys && { keys }) }));
+
+describe('trim', () => {
   it('drops keys at both ends; all others keep times, numbers and cuts', () => {
     const { track: after, dropped, oldKeys, added } = applied(track, { verb: 'trim', keys: [19, 0, 1] });
     expect(dropped).toEqual([0, 1, 19]);
@@ -48,8 +52,6 @@ describe('trim', () => {
   });
 
   it('says what to do where it cannot be applied', () => {
-    const code = (keys?: number[]): string | undefined =>
-      codeOf(() => applied(track, { verb: 'trim', ...(keys && { keys }) }));
     expect(code()).toBe('step.needs-keys');
     expect(code([5])).toBe('step.not-at-end');
     expect(code([20])).toBe('step.bad-key');
