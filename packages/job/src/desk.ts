@@ -19,6 +19,7 @@ import { surveyFile } from './survey-file.js';
 import { trackReport } from './track-report.js';
 import { undoPlan } from './undo-plan.js';
 import { betweenSlices, type Watch } from './watch.js';
+import { withEvents } from './with-events.js';
 import { sourceBytes } from './source-bytes.js';
 
 /** Files that are open at once, each with its survey and its job card: what the page's worker holds. No DOM, no Node. */
@@ -188,7 +189,7 @@ function currentReport({ report, current, changed }: Folder & { report: FileRepo
   const isChanged = ({ clip, track }: Finding): boolean =>
     [...changed.keys()].some((at) => current[at]?.clip === clip && current[at].id === track);
   const kept = report.findings.filter((finding) => !isChanged(finding));
-  return { ...report, findings: [...kept, ...[...changed.values()].flat()] };
+  return withEvents({ ...report, findings: [...kept, ...[...changed.values()].flat()] });
 }
 
 function openedAnswer({ name, source, file }: OpenedFile): OpenedAnswer {

@@ -1,6 +1,6 @@
 import { SlewcurveError } from '@slewcurve/core';
 import type { AnimationFile } from '@slewcurve/formats';
-import { gatherEvents, surveyTrack, type Finding } from '@slewcurve/survey';
+import { guessLoop, surveyTrack, type Finding } from '@slewcurve/survey';
 import { clipOnGrid } from './clip-on-grid.js';
 import { clipReport } from './clip-report.js';
 import { conventionsOf } from './conventions.js';
@@ -10,6 +10,7 @@ import type { JobSettings } from './settings.js';
 import { trackReport } from './track-report.js';
 import { placeIn } from './place-in.js';
 import { UNWATCHED, betweenSlices, type Watch } from './watch.js';
+import { withEvents } from './with-events.js';
 
 /**
  * Survey every rotation track of an opened file.
@@ -35,23 +36,21 @@ export async function surveyFile(
       findings.push(...surveyTrack(track, { clip, ...placeIn(file), file: name, ...settings }));
       await betweenSlices(watch, tracks.length, total, 'tracks');
     }
-  const rates = new Map(
-    clips.flatMap(({ name: clip, frameRate }) => (frameRate === undefined ? [] : [[clip, frameRate]])),
-  );
-  const { events, findings: owned } = gatherEvents(findings, rates);
-  return {
+  return withEvents({
     file: name,
     status: 'surveyed',
     ...(file.problems.length > 0 && {
       problems: file.problems.map(({ code, level, message }) => ({ code, level, message })),
     }),
     conventions: conventionsOf(file, settings.said),
-    clips: clips.map((clip) => clipReport(clip, file.nodes, settings.houseRules, name)),
+    clips: clips.map((clip) => {
+      const loopGuess = guessLoop(clip, file.nodes, settings.houseRules, name);
+      return { ...clipReport(clip), ...(loopGuess !== undefined && { loopGuess }) };
+    }),
     tracks,
-    findings: owned,
-    ...(events.length > 0 && { events }),
+    findings,
     ...(settings.matrix && { matrix }),
-  };
+  });
 }
 
 /**

@@ -2,7 +2,9 @@ import { angleBetween, keyOrientation, type RotationTrack } from '@slewcurve/cor
 import { findingFingerprint, occurrenceFingerprint } from './fingerprint.js';
 import type { Finding, Level, Occurrence, Way } from './finding.js';
 import type { Limits, Place, Remedy, Rule, TrackContext } from './rule.js';
+import { seenDegrees } from './seen-degrees.js';
 import { significant } from './significant.js';
+import type { VisibleEffect } from './visible-effect.js';
 
 /** Places of a finding that are listed; the rest is counted. */
 const MOST_OCCURRENCES = 100;
@@ -15,6 +17,8 @@ export interface Subject {
   readonly frameRate: number | undefined;
   /** The playback named where a rule names none. */
   readonly playback: string;
+  /** What an offset of the track is seen as, degrees; undefined where it can't be told. */
+  effect(degrees: number): VisibleEffect | undefined;
 }
 
 const DEGREES = 180 / Math.PI;
@@ -63,11 +67,18 @@ export function describeFinding(
     limit,
     playback,
     owner: track,
+    ...effectOf(rule, ranked[0]!.place, subject),
     count: places.length,
     occurrences: described.map((one) => one.occurrence),
     ...(worst.remedy !== undefined && { untouched: rule.untouched }),
     fingerprint: findingFingerprint(rule.id, clip, track),
   };
+}
+
+function effectOf(rule: Rule, worst: Place, subject: Subject): Pick<Finding, 'effect'> {
+  const degrees = seenDegrees(rule, worst);
+  const effect = degrees === undefined ? undefined : subject.effect(degrees);
+  return effect === undefined ? {} : { effect };
 }
 
 function severity(place: Place): number {

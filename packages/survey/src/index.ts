@@ -28,6 +28,8 @@ export type {
 export { RULES } from './registry.js';
 export { withDeclaredCuts } from './declared-cuts.js';
 export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings } from './survey.js';
+export { gatherEvents, type Gathered, type SurveyEvent } from './events.js';
+export { guessLoop, type LoopGuess } from './loop-guess.js';
 export { explainWord, wordBook, type Entry, type Explanation } from './explain.js';
 export { rulePage } from './rule-page.js';
 export { fnv1a64 } from './fingerprint.js';

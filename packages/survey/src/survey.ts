@@ -21,6 +21,7 @@ import { latticeOf } from './lattice.js';
 import { RULES } from './registry.js';
 import { roleOf } from './roles.js';
 import type { Limits, PlayedTrack, Rule, TrackContext } from './rule.js';
+import { visibleEffect } from './visible-effect.js';
 
 /** What a survey goes by, apart from the track itself. */
 export interface SurveySettings {
@@ -37,6 +38,8 @@ export interface TrackSurveySettings extends SurveySettings {
   readonly clip?: Clip;
   /** The file's node tree, from which the role comes. */
   readonly nodes?: readonly SceneNode[];
+  /** Metres in one unit of the node tree; left out: not known, and nothing is told in millimetres. */
+  readonly metres?: number;
 }
 
 /** Findings of every track of a clip, track by track. */
@@ -72,6 +75,7 @@ export function surveyTrack(stored: RotationTrack, settings: TrackSurveySettings
     keys,
     frameRate: settings.clip?.frameRate,
     playback: context.played[0]?.playback.id ?? 'as-written',
+    effect: (degrees) => visibleEffect(degrees, settings.nodes ?? [], stored.source.node, settings.metres),
   };
   return claimSpots(found).flatMap(({ rule, places }) => {
     const level = levelAt(house, rule.id, address);
