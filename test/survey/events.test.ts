@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { replaceTrack, type Clip, type RotationTrack } from '@slewcurve/core';
+import type { Clip } from '@slewcurve/core';
 import { gatherEvents, surveyClip } from '@slewcurve/survey';
 import { grid, keyed, turned } from '../support/smooth-track.js';
 
@@ -7,14 +7,11 @@ const smooth = keyed({ spin: [0, 20, 0], swing: [0, 0, 0], hertz: 0.4, phase: 1 
 const RATES = new Map([['Wave', 30]]);
 
 function clipOf(popped: Readonly<Record<string, readonly number[]>>): Clip {
-  const tracks = Object.entries(popped).map(([id, keys]) =>
-    replaceTrack(turned(smooth, keys, [0, 0, 12]), {}),
-  );
-  const named: RotationTrack[] = tracks.map((track, i) => ({ ...track, id: Object.keys(popped)[i] }));
+  const tracks = Object.entries(popped).map(([id, keys]) => ({ ...turned(smooth, keys, [0, 0, 12]), id }));
   return {
     name: 'Wave',
     index: 0,
-    tracks: named,
+    tracks,
     start: 0,
     end: 89 / 30,
     frameRate: 30,

@@ -1,4 +1,4 @@
-import { angleFloor, segmentAngle, type Clip, type SceneNode } from '@slewcurve/core';
+import { angleFloor, segmentAngle, type Clip, type RotationTrack, type SceneNode } from '@slewcurve/core';
 import { matchesPattern } from '@slewcurve/mend';
 import { NO_HOUSE_RULES, limitsAt, roleAt, type HouseRules } from './house-rules.js';
 import { roleOf } from './roles.js';
@@ -29,16 +29,30 @@ export function guessLoop(
   let moving = 0;
   let closed = 0;
   for (const track of clip.tracks) {
-    const floor = 2 * angleFloor(track.storage, track.interpolation) * DEGREES;
-    let travelled = 0;
-    for (let key = 0; key + 1 < track.times.length; key++) travelled += segmentAngle(track, key) * DEGREES;
-    const role = roleAt(houseRules, track.id) ?? roleOf(track, nodes);
-    const limits = limitsAt(houseRules, loopGap, role, { file, clip: clip.name, track: track.id });
-    const limit = Math.max(limits?.['gap'] ?? 0, floor);
+    const limit = closeWithin(track, nodes, houseRules, file);
     // What hardly moves ends where it starts, loop or not.
-    if (limits === undefined || track.times.length < 3 || !(travelled > 4 * limit)) continue;
+    if (limit === undefined || !(travelled(track) > 4 * limit)) continue;
     moving++;
     if (seamOf(track) <= limit) closed++;
   }
   return moving > 0 && closed >= MOST * moving ? { closed, moving } : undefined;
+}
+
+/** The seam limit of a track, degrees; undefined where it is off, or where there are too few keys to tell. */
+function closeWithin(
+  track: RotationTrack,
+  nodes: readonly SceneNode[],
+  houseRules: HouseRules,
+  file: string,
+): number | undefined {
+  const role = roleAt(houseRules, track.id) ?? roleOf(track, nodes);
+  const limits = limitsAt(houseRules, loopGap, role, { file, clip: track.clip, track: track.id });
+  if (limits === undefined || track.times.length < 3) return undefined;
+  return Math.max(limits['gap'] ?? 0, 2 * angleFloor(track.storage, track.interpolation) * DEGREES);
+}
+
+function travelled(track: RotationTrack): number {
+  let sum = 0;
+  for (let key = 0; key + 1 < track.times.length; key++) sum += segmentAngle(track, key) * DEGREES;
+  return sum;
 }

@@ -74,7 +74,7 @@ function rest(nodes: readonly SceneNode[]): readonly AtRest[] {
 
 /** Where every node stands at rest, in units of the tree, three numbers a node. A parent may be listed after its children. */
 function worldPlaces(nodes: readonly SceneNode[]): Float64Array {
-  const matrices = new Array<Float64Array | undefined>(nodes.length);
+  const matrices: Float64Array[] = [];
   const places = new Float64Array(3 * nodes.length);
   for (let index = 0; index < nodes.length; index++) {
     const way: number[] = [];
