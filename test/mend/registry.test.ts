@@ -15,6 +15,7 @@ describe('VERBS', () => {
       'smooth',
       'take out drift',
       'close loop',
+      'lay over',
       'ease in/out',
       'even out',
       'cap',

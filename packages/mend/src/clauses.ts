@@ -31,6 +31,12 @@ const ENDS_WORDS: Readonly<Record<NonNullable<Step['ends']>, string>> = {
   go: 'letting angle go and re-seating what follows',
 };
 
+const WHOSE_AXES: Readonly<Record<NonNullable<Step['about']>, string>> = {
+  own: 'its own',
+  parent: "its parent's",
+  world: "the world's",
+};
+
 /** In the order in which a sentence has them. */
 export const CLAUSES: readonly Clause[] = [
   {
@@ -44,6 +50,20 @@ export const CLAUSES: readonly Clause[] = [
     say: ({ axis = [0, 0, 0] }) => `turning about (${axis.map(sayNumber).join(', ')}) in its own frame`,
     pattern: new RegExp(String.raw`^, turning about \(${NUMBER}, ${NUMBER}, ${NUMBER}\) in its own frame`),
     read: ([x, y, z]) => ({ axis: [Number(x), Number(y), Number(z)] }),
+  },
+  {
+    key: 'turn',
+    say: ({ turn = [0, 0, 0] }) => `of (${turn.map(sayNumber).join(', ')})°`,
+    pattern: new RegExp(String.raw`^, of \(${NUMBER}, ${NUMBER}, ${NUMBER}\)°`),
+    read: ([x, y, z]) => ({ turn: [Number(x), Number(y), Number(z)] }),
+  },
+  {
+    key: 'about',
+    say: ({ about = 'own' }) => `about ${WHOSE_AXES[about]} axes`,
+    pattern: /^, about (its own|its parent's|the world's) axes/,
+    read: ([whose]) => ({
+      about: whose === 'its own' ? 'own' : whose === "its parent's" ? 'parent' : 'world',
+    }),
   },
   {
     key: 'side',

@@ -16,10 +16,10 @@ import type { Verb } from './verb.js';
 export function onAngles(verb: Verb): Verb {
   return Object.freeze({
     ...verb,
-    apply(track, step) {
-      if (track.interpolation !== 'EULER') return verb.apply(track, step);
+    apply(track, step, scene) {
+      if (track.interpolation !== 'EULER') return verb.apply(track, step, scene);
       const view = orientations(track);
-      const result = verb.apply(view, step);
+      const result = verb.apply(view, step, scene);
       if (result.track === view) return { ...result, track };
       const after = replaceTrack(track, { values: anglesAgain(track, view, result.track) });
       const { span: _, ...told } = result;

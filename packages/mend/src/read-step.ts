@@ -25,6 +25,11 @@ const READERS: { readonly [K in keyof Required<Step>]: (value: unknown) => Parti
     if (!(Math.hypot(x, y, z) > 0)) throw new Fault('card.bad-number', 'must have a length');
     return { axis: [x, y, z] };
   },
+  turn: (value) => {
+    const [x, y, z] = finiteNumbers(value, 3);
+    return { turn: [x, y, z] };
+  },
+  about: (value) => ({ about: oneOf(value, ['own', 'parent', 'world']) }),
   side: (value) => ({ side: oneOf(value, ['own', 'parent']) }),
   fade: (value) => ({ fade: seconds(value) }),
   steps: (value) => {
@@ -111,14 +116,14 @@ const PLAYBACK_IDS: readonly PlaybackId[] = Object.values(PLAYBACKS).map(({ id }
 const EVERY_VERB_READS: readonly (keyof Step)[] = ['verb', 'clip', 'track', 'span', 'shoulders', 'keep'];
 
 /**
- * One step of a job card from parsed JSON of any origin. `index` is its place in the card, for the message.
+ * One step of a job card from parsed JSON of any origin. `index` is its place in the card, from 0; people count from 1.
  *
  * @throws SlewcurveError `card.bad-shape`, `card.unknown-verb`, `card.bad-number`, `card.bad-text`, `card.unknown-key`
  */
 export function readStep(json: unknown, index: number): Step {
   const pointer = `/steps/${index}`;
   if (typeof json !== 'object' || json === null || Array.isArray(json))
-    throw new SlewcurveError('card.bad-shape', `Step ${index} must be an object.`, { pointer });
+    throw new SlewcurveError('card.bad-shape', `Step ${index + 1} must be an object.`, { pointer });
   const given = new Map<string, unknown>(Object.entries(json));
   let step: Step = { verb: '', clip: '', track: '' };
   for (const key of ['verb', 'clip', 'track'] as const)
@@ -130,7 +135,7 @@ export function readStep(json: unknown, index: number): Step {
     if (key === undefined)
       throw new SlewcurveError(
         'card.unknown-key',
-        `Step ${index}: "${verb.name}" reads no "${name.slice(0, 60)}". It reads ${known.join(', ')}.`,
+        `Step ${index + 1}: "${verb.name}" reads no "${name.slice(0, 60)}". It reads ${known.join(', ')}.`,
         { pointer: `${pointer}/${name.replaceAll('~', '~0').replaceAll('/', '~1')}` },
       );
     step = { ...step, ...readKey(key, value, index) };
@@ -145,7 +150,7 @@ function readKey(key: keyof Step, value: unknown, index: number): Partial<Step> 
     if (!(error instanceof Fault)) throw error;
     throw new SlewcurveError(
       error.code,
-      `Step ${index}: "${key}" ${error.message}; it is ${shown(value)}.`,
+      `Step ${index + 1}: "${key}" ${error.message}; it is ${shown(value)}.`,
       { pointer: `/steps/${index}/${key}` },
       { cause: error },
     );

@@ -8,6 +8,7 @@ import { easeInOut } from './edits/ease-in-out.js';
 import { easeThrough } from './edits/ease-through.js';
 import { evenOut } from './edits/even-out.js';
 import { hold } from './edits/hold.js';
+import { layOver } from './edits/lay-over.js';
 import { liftOut } from './edits/lift-out.js';
 import { match } from './edits/match.js';
 import { normaliseKeys } from './edits/normalise.js';
@@ -48,6 +49,7 @@ export const VERBS: readonly Verb[] = Object.freeze([
   onAngles(smooth),
   onAngles(takeOutDrift),
   onAngles(closeLoop),
+  onAngles(layOver),
   easeInOut,
   evenOut,
   cap,

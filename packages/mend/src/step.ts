@@ -53,6 +53,10 @@ export interface Step {
    * the path is rounded, `within` so many degrees. `stop`: it comes to rest at each. Default: `round` for cap with an acceleration, else they stay.
    */
   readonly corners?: 'round' | 'stop';
+  /** lay over: by what to turn, a rotation vector in degrees. */
+  readonly turn?: readonly [number, number, number];
+  /** lay over: about whose axes. Default own. */
+  readonly about?: 'own' | 'parent' | 'world';
   /** whole turns: how many beside the short way, about its axis; negative ones the other way. */
   readonly turns?: number;
   /** shape: by how much the speed is pressed up or down, deg/s. */
