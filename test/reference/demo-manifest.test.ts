@@ -38,7 +38,7 @@ describe('the demo scene, read independently', () => {
       'crane-head shake.grain',
       expect.stringMatching(/^crane-head shake\.hum \d+ \d+$/),
       'crane-head limit.speed 1033',
-      'scope-pass limit.speed 751',
+      'scope-pass limit.speed 750',
       'scope-pass horizon.overhead 751',
       'quay-flight turn.half 7',
       'quay-flight jump.cut-smear 7',

@@ -36,6 +36,10 @@ import { longWay } from './rules/turn/long-way.js';
 import { lost } from './rules/turn/lost.js';
 import { signFlip } from './rules/turn/sign-flip.js';
 import { wrap } from './rules/turn/wrap.js';
+import { accelLimit } from './rules/limit/accel.js';
+import { jerkLimit } from './rules/limit/jerk.js';
+import { pictureLimit } from './rules/limit/picture.js';
+import { speedLimit } from './rules/limit/speed.js';
 import type { Rule } from './rule.js';
 
 /** Every rule that is built. */
@@ -78,4 +82,8 @@ export const RULES: readonly Rule[] = Object.freeze([
   loopGap,
   loopKink,
   doubledEnd,
+  speedLimit,
+  accelLimit,
+  jerkLimit,
+  pictureLimit,
 ]);

@@ -33,14 +33,21 @@ function thresholds(rule: Rule): string {
   ];
   const rows = ROLES.map((role) => {
     const limits = rule.limits[role];
-    return [role, ...names.map((name) => (limits === 'off' ? 'off' : String(limits[name] ?? '')))];
+    return [role, ...names.map((name) => (limits === 'off' ? 'off' : sayLimit(limits[name])))];
   });
   return `${table([['role', ...names], ...rows])}\n\nThe value of a finding is in ${UNITS[rule.unit]}.`;
+}
+
+function sayLimit(limit: number | undefined): string {
+  if (limit === Infinity) return 'none';
+  return limit === undefined ? '' : String(limit);
 }
 
 const UNITS: Readonly<Record<Rule['unit'], string>> = {
   deg: 'degrees',
   'deg/s': 'degrees per second',
+  'deg/s²': 'degrees per second squared',
+  'deg/s³': 'degrees per second cubed',
   s: 'seconds',
   Hz: 'hertz',
   '%': 'per cent',

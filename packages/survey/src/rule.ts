@@ -44,6 +44,8 @@ export interface TrackContext {
   /** The playbacks chosen, those left out that can't play this track. */
   readonly played: readonly PlayedTrack[];
   readonly clip: Clip;
+  /** Horizontal view angle of the camera on the track's node, radians; absent where there is none. */
+  readonly view?: number;
   /** A rule's thresholds for this track, house rules applied; undefined where it is off. */
   limits(rule: string): Limits | undefined;
 }
@@ -98,7 +100,7 @@ export interface Rule {
   readonly family: Family;
   /** The level that most of its findings have. */
   readonly level: Level;
-  readonly unit: 'deg' | 'deg/s' | 's' | 'Hz' | '%' | 'times' | 'numbers' | 'length';
+  readonly unit: 'deg' | 'deg/s' | 'deg/s²' | 'deg/s³' | 's' | 'Hz' | '%' | 'times' | 'numbers' | 'length';
   /** What the trade calls it elsewhere; feeds `explain`. */
   readonly alsoCalled: readonly string[];
   /** What it finds, one sentence. */

@@ -103,6 +103,7 @@ function contextOf(
     role,
     regime: regime(playable, clip.frameRate),
     clip,
+    ...viewOf(nodes[track.source.node]),
     declared: declaredHere(track, clip, house),
     loop: clip.loop || house.loops.some((pattern) => matchesPattern(pattern, track.clip)),
     played: playable.times.length === 0 ? [] : playbacks.flatMap((id) => played(playable, id)),
@@ -111,6 +112,15 @@ function contextOf(
       return rule === undefined ? undefined : limitsAt(house, rule, role, address);
     },
   };
+}
+
+/** A camera that does not say how wide its picture is has 16 to 9. */
+const USUAL_ASPECT = 16 / 9;
+
+function viewOf(node: SceneNode | undefined): { readonly view?: number } {
+  if (node?.camera === undefined) return {};
+  const { verticalView, aspect = USUAL_ASPECT } = node.camera;
+  return { view: 2 * Math.atan(aspect * Math.tan(verticalView / 2)) };
 }
 
 /** The track under one playback; nothing where it needs what the track has not. */

@@ -54,6 +54,9 @@ export const WORKED_OUT: readonly string[] = [
   'seam.loop-kink',
   'seam.doubled-end',
   'limit.speed',
+  // The demo's house rules give no limit of acceleration or jerk.
+  'limit.accel',
+  'limit.jerk',
   'limit.picture',
   'horizon.roll',
   'horizon.overhead',

@@ -70,13 +70,16 @@ function speedLimit(track: Track): Entry[] {
   if (track.speedLimit === undefined) return [];
   const peak = Math.max(...track.speeds);
   if (peak <= 1.005 * track.speedLimit) return [];
-  return [entry(track, 'limit.speed', [track.speeds.indexOf(peak) + 1], peak, 'deg/s', 0.005 * peak)];
+  // Of speeds that float32 makes differ, the earliest.
+  const key = track.speeds.findIndex((speed) => speed > peak * (1 - 1e-5)) + 1;
+  return [entry(track, 'limit.speed', [key], peak, 'deg/s', 0.005 * peak)];
 }
 
 /** Hand keys have no frame rate: they are taken to be shown at 30 a second or fewer. */
 function picture(track: Track): Entry[] {
   if (track.role !== 'camera-screen' || track.view === undefined) return [];
-  const limit = track.view / 7;
+  // One width of the picture in 7 s, at its middle.
+  const limit = (((2 * 180) / Math.PI) * Math.tan((track.view * Math.PI) / 360)) / 7;
   const found: { key: number; speed: number }[] = [];
   for (let k = 0; k < track.speeds.length; k++) {
     let end = k;

@@ -69,11 +69,22 @@ export function clockAtSpeeds(curve: Curve, { times, angles, speeds, same }: Pla
   };
 }
 
-/** Where pieces that keep their time, that run at one speed, and that do neither, follow each other. */
+/** A change of the acceleration along the path by more than this share of the greatest one is a jump. */
+const JUMP = 0.2;
+
+/** Where pieces that keep their time, that run at one speed, and that do neither, follow each other, and where the acceleration jumps between those. */
 function pieceEnds(news: Float64Array, same: Uint8Array, speeds: Float64Array): number[] {
+  const slopes = Float64Array.from(same, (_, i) =>
+    news[i + 1] > news[i] ? (speeds[2 * i + 1] - speeds[2 * i]) / (news[i + 1] - news[i]) : 0,
+  );
+  const most = slopes.reduce(
+    (greatest, slope, i) => (same[i] === 1 ? greatest : Math.max(greatest, Math.abs(slope))),
+    0,
+  );
+  const jumps = (i: number): boolean => same[i] === 0 && Math.abs(slopes[i] - slopes[i - 1]) > JUMP * most;
   const kind = (i: number): number =>
     same[i] === 1 ? -1 : speeds[2 * i] === speeds[2 * i + 1] ? speeds[2 * i] : -2;
   const knots = [0];
-  for (let i = 1; i < same.length; i++) if (kind(i) !== kind(i - 1)) knots.push(news[i]);
+  for (let i = 1; i < same.length; i++) if (kind(i) !== kind(i - 1) || jumps(i)) knots.push(news[i]);
   return [...knots, news[news.length - 1]];
 }
