@@ -1,13 +1,16 @@
 import { SlewcurveError, type Clip, type RotationTrack } from '@slewcurve/core';
-import type { Source } from '@slewcurve/formats';
+import type { OpenOptions, Source } from '@slewcurve/formats';
 import { applySteps, type Step } from '@slewcurve/mend';
 import { surveyTrack, withDeclaredCuts, type Finding } from '@slewcurve/survey';
 import { clipReport } from './clip-report.js';
+import { clipOnGrid } from './clip-on-grid.js';
+import { conventionsOf, type SaidConventions } from './conventions.js';
 import { cutsAfter } from './cuts-after.js';
 import { mendFile } from './mend-file.js';
 import { newFaults } from './new-faults.js';
 import { openFile, type OpenedFile } from './open-file.js';
 import { declineHarmful } from './mend-proposed.js';
+import { playbackMatrix, type MatrixSettings, type PlaybackMatrix } from './playback-matrix.js';
 import { propose } from './propose.js';
 import type { Asks, CardAnswer, OpenedAnswer, TrackAnswer } from './protocol.js';
 import type { FileReport } from './report.js';
@@ -30,6 +33,7 @@ export interface Desk {
     source: Source,
     name: string,
     sibling?: (uri: string) => Promise<Source>,
+    said?: SaidConventions,
   ): Promise<OpenedAnswer>;
   /** Surveys a file; every track's row is told first. Throws `job.stopped`. */
   survey(
@@ -40,6 +44,8 @@ export interface Desk {
   ): Promise<FileReport>;
   /** A track as the file has it and as the card leaves it. Throws `job.no-track`. */
   track(file: string, clip: string, track: string): TrackAnswer;
+  /** Worst speed and departure of a track as the card leaves it, by playback and tick rate. Throws `job.no-track`. */
+  matrix(file: string, clip: string, track: string, settings: MatrixSettings): PlaybackMatrix;
   /** Makes `steps` the file's whole card; an error leaves the card before in force. */
   card(file: string, steps: readonly Step[], watch: Watch): Promise<CardAnswer>;
   /** The remedies of what the survey found, less those that would do harm. */
@@ -53,6 +59,7 @@ export interface Desk {
 interface Folder {
   readonly opened: OpenedFile;
   readonly sibling: ((uri: string) => Promise<Source>) | undefined;
+  readonly said: SaidConventions | undefined;
   settings: JobSettings | undefined;
   report: FileReport | undefined;
   steps: readonly Step[];
@@ -71,35 +78,35 @@ export function desk(): Desk {
     throw new SlewcurveError('job.not-open', `No file ${file} is open.`, { file });
   };
   return {
-    async open(file, source, name, sibling) {
-      const opened = await openFile(source, { name, ...(sibling && { sibling }) });
+    async open(file, source, name, sibling, said) {
+      const opened = await openFile(source, optionsOf(name, sibling, said));
       const current = tracksOf(opened);
       folders.set(file, {
         opened,
         sibling,
+        said,
         settings: undefined,
         report: undefined,
         steps: [],
         current,
         changed: new Map(),
       });
-      return openedAnswer(opened);
+      return openedAnswer(opened, said);
     },
     async survey(file, settings, watch, onRow) {
       const folder = folderOf(file);
       await tellRows(folder, settings, watch, onRow);
-      folder.report = await surveyFile(folder.opened.name, folder.opened.file, settings, watch);
-      folder.settings = settings;
+      const own = folder.said ? { ...settings, said: folder.said } : settings;
+      folder.report = await surveyFile(folder.opened.name, folder.opened.file, own, watch);
+      folder.settings = own;
       return folder.report;
     },
     track(file, clip, track) {
-      const folder = folderOf(file);
-      const at = tracksOf(folder.opened).findIndex((other) => other.clip === clip && other.id === track);
-      const before = tracksOf(folder.opened)[at];
-      const after = folder.current[at];
-      if (before && after) return trackAnswer(before, after);
-      throw new SlewcurveError('job.no-track', `There is no track ${track} in ${clip}.`, { clip, track });
+      const { before, after } = trackIn(folderOf(file), clip, track);
+      return trackAnswer(before, after);
     },
+    matrix: (file, clip, track, settings) =>
+      playbackMatrix(trackIn(folderOf(file), clip, track).after, settings),
     card: (file, steps, watch) => setCard(folderOf(file), steps, watch),
     propose(file, allow) {
       const folder = surveyed(folderOf(file));
@@ -107,8 +114,8 @@ export function desk(): Desk {
       return declineHarmful(folder.opened, proposal, folder.settings, folder.current);
     },
     async bytes(file, watch) {
-      const { opened, sibling, steps, report, settings } = surveyed(folderOf(file));
-      const options = { name: opened.name, ...(sibling && { sibling }) };
+      const { opened, sibling, said, steps, report, settings } = surveyed(folderOf(file));
+      const options = optionsOf(opened.name, sibling, said);
       const card = { schemaVersion: 1 as const, steps };
       const mended = await mendFile(opened, card, report, settings, options, watch);
       const undo = await undoPlan(mended, watch);
@@ -124,6 +131,23 @@ export function desk(): Desk {
       folders.delete(file);
     },
   };
+}
+
+function optionsOf(name: string, sibling: Folder['sibling'], said: SaidConventions | undefined): OpenOptions {
+  return { name, ...(sibling && { sibling }), ...(said?.table && { table: said.table }) };
+}
+
+/** @throws SlewcurveError `job.no-track` */
+function trackIn(
+  folder: Folder,
+  clip: string,
+  track: string,
+): { before: RotationTrack; after: RotationTrack } {
+  const at = tracksOf(folder.opened).findIndex((other) => other.clip === clip && other.id === track);
+  const before = tracksOf(folder.opened)[at];
+  const after = folder.current[at];
+  if (before && after) return { before, after };
+  throw new SlewcurveError('job.no-track', `There is no track ${track} in ${clip}.`, { clip, track });
 }
 
 /** Every track's row, drawn first: a survey takes longer. */
@@ -157,7 +181,7 @@ async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Pr
     if (track === stored[at]) changed.delete(at);
     if (track === folder.current[at] || !clip) continue;
     const findings = surveyTrack(track, {
-      clip,
+      clip: clipOnGrid(clip, settings.frameRate),
       ...placeIn(opened.file),
       file: opened.name,
       ...settings,
@@ -192,7 +216,7 @@ function currentReport({ report, current, changed }: Folder & { report: FileRepo
   return withEvents({ ...report, findings: [...kept, ...[...changed.values()].flat()] });
 }
 
-function openedAnswer({ name, source, file }: OpenedFile): OpenedAnswer {
+function openedAnswer({ name, source, file }: OpenedFile, said: SaidConventions | undefined): OpenedAnswer {
   return {
     name,
     format: file.format,
@@ -203,6 +227,7 @@ function openedAnswer({ name, source, file }: OpenedFile): OpenedAnswer {
       clip.tracks.map(({ id, times }) => ({ clip: clip.name, track: id, keys: times.length })),
     ),
     problems: file.problems.map(({ code, message }) => ({ code, message })),
+    conventions: conventionsOf(file, said),
   };
 }
 

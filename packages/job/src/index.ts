@@ -69,6 +69,7 @@ export { sarifReport } from './reporters/sarif.js';
 export { textReport, textRoster, type Paint } from './reporters/text.js';
 export { rosterRow, type RosterRow } from './roster-row.js';
 export type { JobSettings } from './settings.js';
+export { tryTable, type TableTrial } from './table-trial.js';
 export { sha256Of } from './sha256-of.js';
 export {
   addStamps,

@@ -1,6 +1,10 @@
 import type { RotationTrack, SceneNode } from '@slewcurve/core';
+import type { TableOptions } from '@slewcurve/formats';
 import type { JobCard, Step } from '@slewcurve/mend';
 import type { Finding, Word } from '@slewcurve/survey';
+import type { Convention, SaidConventions } from './conventions.js';
+import type { MatrixSettings, PlaybackMatrix } from './playback-matrix.js';
+import type { TableTrial } from './table-trial.js';
 import type { ClipReport, FileReport, StepReport, TrackReport } from './report.js';
 import type { RosterRow } from './roster-row.js';
 import type { JobSettings } from './settings.js';
@@ -21,6 +25,7 @@ export interface OpenedAnswer {
   readonly clips: readonly ClipReport[];
   readonly tracks: readonly TrackName[];
   readonly problems: readonly { readonly code: string; readonly message: string }[];
+  readonly conventions: readonly Convention[];
 }
 
 /** A track as the file has it and as the job card leaves it. Their arrays are copies, handed over. */
@@ -54,9 +59,17 @@ export interface BytesAnswer {
 /** Everything that can be asked of the desk, and what it answers. `Blob` is what the caller has for bytes, `Row` what it makes of a row. */
 export interface Asks<Blob, Row = RosterRow> {
   open: {
-    ask: { file: string; name: string; blob: Blob; siblings: Readonly<Record<string, Blob>> };
+    ask: {
+      file: string;
+      name: string;
+      blob: Blob;
+      siblings: Readonly<Record<string, Blob>>;
+      said?: SaidConventions;
+    };
     answer: OpenedAnswer;
   };
+  /** What a table of text becomes by what is said of it; nothing is opened. */
+  'try-table': { ask: { name: string; blob: Blob; table: TableOptions }; answer: TableTrial };
   'open-demo': { ask: { file: string }; answer: OpenedAnswer };
   /** Rows are told as they come; the answer is the whole report. */
   survey: { ask: { file: string; settings: JobSettings }; answer: FileReport };
@@ -70,6 +83,11 @@ export interface Asks<Blob, Row = RosterRow> {
   /** Size and hash of bytes as they are now, to see whether a file on disk changed. */
   hash: { ask: { blob: Blob }; answer: { size: number; sha256: string } };
   close: { ask: { file: string }; answer: null };
+  /** Worst speed and departure of a track, as the card leaves it, by playback and tick rate. */
+  matrix: {
+    ask: { file: string; clip: string; track: string; settings: MatrixSettings };
+    answer: PlaybackMatrix;
+  };
   /** What things are called, and what else; for a find field. */
   words: { ask: object; answer: readonly Word[] };
   /** Answered at once while the desk lives. */

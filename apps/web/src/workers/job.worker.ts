@@ -4,6 +4,7 @@ import {
   desk,
   kestrelPoint,
   sha256Of,
+  tryTable,
   type AskName,
   type Asks,
   type FromDesk,
@@ -32,7 +33,10 @@ const stopped = new Set<number>();
 const answers: {
   [Name in AskName]: (ask: Ask<Name>, watch: Watch, id: number) => Promise<Answer<Name>> | Answer<Name>;
 } = {
-  open: ({ file, name, blob, siblings }) => here.open(file, blobSource(blob), name, siblingIn(siblings)),
+  open: ({ file, name, blob, siblings, said }) =>
+    here.open(file, blobSource(blob), name, siblingIn(siblings), said),
+  'try-table': ({ name, blob, table }) => tryTable(blobSource(blob), name, table),
+  matrix: ({ file, clip, track, settings }) => here.matrix(file, clip, track, settings),
   'open-demo': ({ file }) => here.open(file, bufferSource(kestrelPoint()), 'kestrel-point.glb'),
   survey: ({ file, settings }, watch, id) =>
     here.survey(file, settings, watch, (told) => {
