@@ -16,13 +16,16 @@ import { type Swing, type SwingData, fitSwing, sharpened } from './swing-fit.js'
 const CARRIER = 0.6;
 
 /** Times that carrier, hum and the stretch over which it hums are worked out from one another. */
-const PASSES = 6;
+const PASSES = 4;
 
 /** Numbers of hats tried: 1 is a hum of one strength. At most two a second are used. */
 const NODES = [1, 2, 3, 5, 9, 17, 33, 65];
 
 /** How many times Schwarz's penalty a parameter costs: what keys barely tell is left as it is. */
 const CAUTION = 2;
+
+/** Share of the given frequency on either side within which the hum is looked for. */
+const BESIDE = 0.05;
 
 /** Standard deviations beyond which a key says nothing of the hum: an outlier, the start of a fast move. */
 const OUTLYING = 6;
@@ -59,17 +62,19 @@ export function humOf(track: RotationTrack, begin: number, end: number, near: nu
   const turns = new Float64Array(3 * times.length);
   const slopes = new Float64Array(3 * times.length);
   let stretch = { from: begin, to: end };
+  let hertz = near;
   for (let pass = 0; pass < PASSES; pass++) {
     const { own, parent } = carried.offsets(turns);
     const swings = [own, parent].map((vectors): Told => {
       const counts = new Uint8Array(times.length).fill(1);
-      return told({ times, vectors, counts, ...stretch }, near, pass);
+      return told({ times, vectors, counts, ...stretch }, hertz, pass);
     });
     const isParents = swings[1].cost < swings[0].cost;
     const { data, swing } = swings[Number(isParents)];
     const found = stretchOf(data, swing, begin, end);
     if (!found || (pass === PASSES - 1 && !isBeyondChance(data, swing))) return undefined;
     stretch = found;
+    hertz = swing.hertz;
     turns.fill(0);
     slopes.fill(0);
     for (let key = stretch.from; key <= stretch.to; key++)
@@ -86,11 +91,12 @@ interface Told {
 }
 
 /** The swing near a frequency; of one strength in the first passes, which look for the stretch alone. Outlying keys are left out of a second fit. */
-function told(data: SwingData, near: number, pass: number): Told {
-  const beside = Math.min(0.05 * near, 1 / (data.times[data.to] - data.times[data.from]));
-  const rough = fitSwing(data, sharpened(data, near, beside), 1);
-  markOutlying(data, rough);
-  return { data, ...simplest(data, sharpened(data, rough.hertz, beside / 4), pass < 2 ? [1] : NODES) };
+function told(data: SwingData, hertz: number, pass: number): Told {
+  const toldApart = 1 / (data.times[data.to] - data.times[data.from]);
+  const beside = Math.min(BESIDE * hertz, pass === 0 ? toldApart : toldApart / 4);
+  const sharp = sharpened(data, hertz, beside);
+  markOutlying(data, fitSwing(data, sharp, 1));
+  return { data, ...simplest(data, sharp, pass < 2 ? [1] : NODES) };
 }
 
 /** What keys stand off from while they hum, and how the hum is taken out of them. */
