@@ -2,9 +2,10 @@ import { PLAYBACKS } from '@slewcurve/core';
 import { VERBS, nearestWord } from '@slewcurve/mend';
 import { RULES } from './registry.js';
 import { rulePage } from './rule-page.js';
+import { TERMS } from './terms.js';
 import { plainWord, wordsFor, type Word } from './word.js';
 
-/** A rule, an edit or a playback that a word leads to. */
+/** A rule, an edit, a playback or a word of this project that a word leads to. */
 export interface Entry extends Word {
   /** The rule's page in Markdown; of an edit or a playback, its name, summary and other names. */
   readonly page: string;
@@ -48,8 +49,12 @@ const ENTRIES: readonly Entry[] = Object.freeze([
     kind: 'playback' as const,
     name: id,
     summary: `A playback, how some program plays a file: ${says}.`,
-    alsoCalled: ['playback', 'interpolation'],
+    alsoCalled: ['playback', 'interpolation', ...(id === 'step' ? ['stepped', 'no interpolation'] : [])],
     page: `# ${id}\n\nA playback: how some program plays a file. This one: ${says}.\n`,
+  })),
+  ...TERMS.map((term) => ({
+    ...term,
+    page: `# ${term.name}\n\n${term.summary}\n\nAlso called: ${term.alsoCalled.join(', ')}.\n`,
   })),
 ]);
 
@@ -62,7 +67,13 @@ const WORDS: ReadonlyMap<string, string> = new Map(
 
 /** All that `explainWord` knows, without the pages: for a find field. */
 export function wordBook(): Word[] {
-  return ENTRIES.map(({ kind, name, summary, alsoCalled }) => ({ kind, name, summary, alsoCalled }));
+  // The page has words of its own for its parts.
+  return ENTRIES.filter(({ kind }) => kind !== 'term').map(({ kind, name, summary, alsoCalled }) => ({
+    kind,
+    name,
+    summary,
+    alsoCalled,
+  }));
 }
 
 function wordsMeant(word: string): string[] {

@@ -1,7 +1,7 @@
 /** A word of this project and what else people call the thing. */
 export interface Word {
-  readonly kind: 'rule' | 'verb' | 'playback' | 'page';
-  /** Rule id, the edit's name on job cards, the playback's id, or what a part of the page is called. */
+  readonly kind: 'rule' | 'verb' | 'playback' | 'term' | 'page';
+  /** Rule id, the edit's name on job cards, the playback's id, a word of this project, or what a part of the page is called. */
   readonly name: string;
   readonly summary: string;
   readonly alsoCalled: readonly string[];

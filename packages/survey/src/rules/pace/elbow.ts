@@ -31,6 +31,7 @@ export const elbow: Rule = Object.freeze({
   }),
   reads: 'track',
   untouched: 'every key',
+  excusedBy: ['whips', 'marks'] as const,
   find(context: TrackContext, limits: Limits): readonly Place[] {
     if (context.regime === 'dense') return [];
     const { rate: limit = 0, share = 0 } = limits;
@@ -61,7 +62,7 @@ export const elbow: Rule = Object.freeze({
     source:
       'Limits are common practice, no source; a machine’s own acceleration limit should replace the one given here. Measured: a swing of ±30° at 1 Hz keyed every 0.2 s steps by 197 deg/s in a motion of 176 deg/s.',
     spares:
-      'Dense tracks (baked natural motion steps as much by itself), STEP tracks, declared cuts, playbacks whose rate is continuous.',
+      'Dense tracks (baked natural motion steps as much by itself), STEP tracks, declared cuts and whips, marked hits, playbacks whose rate is continuous.',
     remedy:
       '`ease through` runs a smooth rotation spline through the same keys at the same times and stores it as CUBICSPLINE, LINEAR tracks alone.',
   },
