@@ -2,6 +2,7 @@ import { LitElement, html, nothing, type PropertyDeclarations, type TemplateResu
 import type { PlaybackId } from '@slewcurve/core';
 import { rankRows, type RosterRow } from '@slewcurve/elements/plot';
 import type { SlewRoster } from '@slewcurve/elements/roster';
+import type { SaidConventions } from '@slewcurve/job';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { askForFiles, droppedFiles, pickedFiles, type ChosenFile } from '../files/chosen-file.js';
 import { saveCopy } from '../files/save-file.js';
@@ -289,6 +290,12 @@ export class SlewApp extends LitElement {
   }
 
   private readonly fileActions = {
+    askConventions: (file: FileWork): TemplateResult =>
+      html`<slew-ask-conventions
+        .session=${this.session}
+        .file=${file}
+        @conventions-said=${(event: CustomEvent<{ said: SaidConventions }>) => void this.session.readBy(file.id, event.detail.said)}
+      ></slew-ask-conventions>`,
     stop: (id: string): void => this.session.stop(id),
     goOn: (id: string): void => void this.session.goOn(id),
     close: (id: string): void => void this.session.close(id),

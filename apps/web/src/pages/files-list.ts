@@ -1,4 +1,5 @@
 import { html, nothing, type TemplateResult } from 'lit';
+import { sayConventions } from '@slewcurve/job';
 import { linesOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
 
@@ -9,6 +10,8 @@ export interface FileActions {
   close(id: string): void;
   mendAll(id: string): void;
   save(id: string, how: 'in place' | 'download'): void;
+  /** What asks by which conventions a file is read. */
+  askConventions(file: FileWork): TemplateResult;
 }
 
 /** The open files, each with how far it is and what can be done with it. */
@@ -22,12 +25,8 @@ export function filesList(files: readonly FileWork[], actions: FileActions): Tem
 }
 
 function oneFile(file: FileWork, actions: FileActions): TemplateResult {
-  const { id, name, status, error } = file;
-  if (status === 'broken')
-    return html`<p role="alert">
-        <b>${name}</b> can’t be read. ${withoutName(error?.message ?? '', name)} <code>${error?.code}</code>
-      </p>
-      <button class="on-screen" @click=${() => actions.close(id)}>Put ${name} away</button>`;
+  const { id, name, status } = file;
+  if (status === 'broken') return broken(file, actions);
   if (status === 'stopped')
     return html`<p><b>${name}</b>: stopped. What was drawn so far stands below.</p>
       <button class="on-screen" @click=${() => actions.goOn(id)}>Go on with ${name}</button>
@@ -35,6 +34,7 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
   if (status !== 'ready') return inProgress(file, actions);
   const steps = linesOf(file.history).filter((line) => !line.skipped).length;
   return html`<p><b>${name}</b>: ${sayFile(file)}</p>
+    ${readBy(file, actions)}
     ${(file.opened?.problems ?? []).map((problem) => html`<p class="problem">${problem.message} <code>${problem.code}</code></p>`)}
     <p class="doings on-screen">
       ${
@@ -55,6 +55,37 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
         Put ${name} away${!file.saved && steps > 0 ? ', unsaved edits too' : ''}
       </button>
     </p>`;
+}
+
+function broken(file: FileWork, actions: FileActions): TemplateResult {
+  const { id, name, error = { code: '', message: '' } } = file;
+  const isAsked = ASKED.has(error.code);
+  return html`<p role="alert">
+      <b>${name}</b> can’t be read${isAsked ? ' yet' : ''}. ${withoutName(error.message, name)}
+      <code>${error.code}</code>
+    </p>
+    ${isAsked ? actions.askConventions(file) : nothing}
+    <button class="on-screen" @click=${() => actions.close(id)}>Put ${name} away</button>`;
+}
+
+/** A file that can be read once something is said of it. */
+const ASKED: ReadonlySet<string> = new Set([
+  'delimited.unnamed-columns',
+  'delimited.column-count',
+  'delimited.doubled-column',
+  'delimited.unit-conflict',
+]);
+
+/** By which conventions it is read, always shown; what its format leaves open can be told. */
+function readBy(file: FileWork, actions: FileActions): TemplateResult | typeof nothing {
+  const { opened } = file;
+  if (!opened) return nothing;
+  const words = `read by: ${sayConventions(opened.conventions)}`;
+  if (opened.format === 'glb' || opened.format === 'gltf') return html`<p class="read-by">${words}</p>`;
+  return html`<details class="read-by">
+    <summary>${words}</summary>
+    ${actions.askConventions(file)}
+  </details>`;
 }
 
 function inProgress({ id, name, status, progress }: FileWork, actions: FileActions): TemplateResult {

@@ -1,5 +1,5 @@
 import type { Inked } from '@slewcurve/elements/plot';
-import type { OpenedAnswer, FileReport, RosterRow, StepReport } from '@slewcurve/job';
+import type { OpenedAnswer, FileReport, RosterRow, SaidConventions, StepReport } from '@slewcurve/job';
 import type { Finding } from '@slewcurve/survey';
 import type { CardHistory } from './card-history.js';
 import type { Progress } from './desk-client.js';
@@ -16,6 +16,8 @@ export interface FileWork {
   readonly blob?: Blob;
   readonly siblings: Readonly<Record<string, Blob>>;
   readonly handle?: FileSystemFileHandle;
+  /** What was said of it where it is silent. */
+  readonly said?: SaidConventions;
   readonly status: 'opening' | 'surveying' | 'ready' | 'broken' | 'stopped';
   readonly progress?: Progress;
   readonly error?: { readonly code: string; readonly message: string };

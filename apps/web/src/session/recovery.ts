@@ -1,3 +1,4 @@
+import type { SaidConventions } from '@slewcurve/job';
 import type { CardLine } from './card-history.js';
 
 // Work in progress in the browser's own database: it survives a reload or a crash, and never leaves the machine.
@@ -9,6 +10,8 @@ export interface SavedWork {
   readonly blob?: Blob;
   readonly siblings: Readonly<Record<string, Blob>>;
   readonly handle?: FileSystemFileHandle;
+  /** What was said of the file where it is silent. */
+  readonly said?: SaidConventions;
   readonly lines: readonly CardLine[];
   readonly savedAt: number;
 }

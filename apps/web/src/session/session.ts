@@ -1,5 +1,14 @@
 import type { PlaybackId } from '@slewcurve/core';
-import { kestrelPointRules, type CardAnswer, type JobSettings, type TrackAnswer } from '@slewcurve/job';
+import {
+  kestrelPointRules,
+  type CardAnswer,
+  type JobSettings,
+  type MatrixSettings,
+  type PlaybackMatrix,
+  type SaidConventions,
+  type TableTrial,
+  type TrackAnswer,
+} from '@slewcurve/job';
 import type { Step } from '@slewcurve/mend';
 import { PAGE_WORDS } from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
@@ -98,6 +107,29 @@ export class Session extends EventTarget {
     return this.desk.ask('track', { file: id, clip, track });
   }
 
+  /** What a table of text becomes by what is said of it; nothing is opened. */
+  tryTable(name: string, blob: Blob, table: NonNullable<SaidConventions['table']>): Promise<TableTrial> {
+    return this.desk.ask('try-table', { name, blob, table });
+  }
+
+  /** Read a file anew by what is said of it. */
+  async readBy(id: string, said: SaidConventions): Promise<void> {
+    this.#stops.delete(id);
+    this.#put(id, { said, status: 'opening', rows: new Map(), findings: new Map() });
+    await this.#openAndSurvey(id);
+    await this.#keep();
+  }
+
+  /** Worst speed and departure of a track by playback and tick rate. */
+  async matrix(
+    file: string,
+    clip: string,
+    track: string,
+    settings: MatrixSettings,
+  ): Promise<PlaybackMatrix['cells']> {
+    return (await this.desk.ask('matrix', { file, clip, track, settings })).cells;
+  }
+
   /** Put steps on a file's card. */
   apply(id: string, steps: readonly Step[]): Promise<boolean> {
     return this.#changeCard(id, (history) => withSteps(history, steps));
@@ -170,12 +202,12 @@ export class Session extends EventTarget {
   async #openAndSurvey(id: string): Promise<void> {
     const file = this.file(id);
     if (!file) return;
-    const { name, blob, siblings } = file;
+    const { name, blob, siblings, said } = file;
     const { signal } = this.#stopOf(id);
     try {
       signal.throwIfAborted();
       const opened = blob
-        ? await this.desk.ask('open', { file: id, name, blob, siblings })
+        ? await this.desk.ask('open', { file: id, name, blob, siblings, ...(said && { said }) })
         : await this.desk.ask('open-demo', { file: id });
       signal.throwIfAborted();
       this.#put(id, { opened, status: 'surveying' });
@@ -329,8 +361,11 @@ function inNextPicture(work: () => void): void {
   else requestAnimationFrame(() => void inTurn(work));
 }
 
-function newWork(id: string, file: Omit<ChosenFile, 'blob'> & { readonly blob?: Blob }): FileWork {
-  const { name, blob, siblings, handle } = file;
+function newWork(
+  id: string,
+  file: Omit<ChosenFile, 'blob'> & { readonly blob?: Blob; readonly said?: SaidConventions },
+): FileWork {
+  const { name, blob, siblings, handle, said } = file;
   return {
     id,
     name,
@@ -344,12 +379,13 @@ function newWork(id: string, file: Omit<ChosenFile, 'blob'> & { readonly blob?: 
     saved: true,
     ...(blob && { blob }),
     ...(handle && { handle }),
+    ...(said && { said }),
   };
 }
 
-function savedWork({ name, blob, siblings, handle, history }: FileWork): SavedWork {
+function savedWork({ name, blob, siblings, handle, said, history }: FileWork): SavedWork {
   const work = { name, siblings, lines: linesOf(history), savedAt: Date.now() };
-  return { ...work, ...(blob && { blob }), ...(handle && { handle }) };
+  return { ...work, ...(blob && { blob }), ...(handle && { handle }), ...(said && { said }) };
 }
 
 function messageOf(error: unknown): string {

@@ -58,20 +58,27 @@ export async function lookAtTable(
 function silencesOf(names: readonly string[] | undefined, { euler, unit }: TableOptions): TableSilence[] {
   const meanings = (names ?? []).flatMap((name) => meaningOf(name) ?? []);
   const parts = meanings.filter((meaning) => meaning.kind !== 'time');
-  const has = (kind: ColumnMeaning['kind'], count: number): boolean =>
-    parts.filter((part) => part.kind === kind).length >= count;
-  const isExact =
-    has('quaternion', 4) || has('matrix', 9) || (has('plain', 4) && parts.some(({ part }) => part === 'w'));
-  const isTurn = has('axis', 3) && has('turn', 1);
+  if (parts.length === meanings.length) return ['columns'];
+  if (isExact(parts)) return [];
   const angles = parts.filter(({ kind }) => kind === 'angles');
-  if (!meanings.some(({ kind }) => kind === 'time') || !(isExact || isTurn || angles.length > 0))
-    return ['columns'];
-  if (isExact) return [];
-  const unnamed = (
-    isTurn && angles.length === 0 ? parts.filter(({ kind }) => kind === 'turn') : angles
-  ).every((part) => part.unit === undefined);
+  const turns = countOf(parts, 'axis') >= 3 ? parts.filter(({ kind }) => kind === 'turn') : [];
+  const measured = angles.length > 0 ? angles : turns;
+  if (measured.length === 0) return ['columns'];
+  const isUnnamed = unit === undefined && measured.every((part) => part.unit === undefined);
   return [
     ...(angles.length > 1 && euler === undefined ? (['euler'] as const) : []),
-    ...(unnamed && unit === undefined ? (['unit'] as const) : []),
+    ...(isUnnamed ? (['unit'] as const) : []),
   ];
+}
+
+type Part = Exclude<ColumnMeaning, { kind: 'time' }>;
+
+/** Whether there is a quaternion or a matrix, which need neither sequence nor unit. */
+function isExact(parts: readonly Part[]): boolean {
+  const isPlain = countOf(parts, 'plain') >= 4 && parts.some(({ part }) => part === 'w');
+  return isPlain || countOf(parts, 'quaternion') >= 4 || countOf(parts, 'matrix') >= 9;
+}
+
+function countOf(parts: readonly Part[], kind: Part['kind']): number {
+  return parts.filter((part) => part.kind === kind).length;
 }
