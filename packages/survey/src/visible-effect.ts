@@ -51,25 +51,32 @@ const known = new WeakMap<readonly SceneNode[], readonly AtRest[]>();
 function rest(nodes: readonly SceneNode[]): readonly AtRest[] {
   const before = known.get(nodes);
   if (before !== undefined) return before;
+  const all = measuredAtRest(nodes);
+  known.set(nodes, all);
+  return all;
+}
+
+function measuredAtRest(nodes: readonly SceneNode[]): readonly AtRest[] {
   const places = worldPlaces(nodes);
   const arms = new Float64Array(nodes.length);
   const views = new Map<number, number>();
   for (const [index, { camera }] of nodes.entries()) {
-    const [x = 0, y = 0, z = 0] = places.subarray(3 * index, 3 * index + 3);
     let above = index;
     for (let steps = 0; above >= 0 && steps < DEEPEST; steps++) {
       if (camera !== undefined && !views.has(above)) views.set(above, camera.verticalView);
-      const [a = 0, b = 0, c = 0] = places.subarray(3 * above, 3 * above + 3);
-      arms[above] = Math.max(arms[above] ?? 0, Math.hypot(x - a, y - b, z - c));
+      arms[above] = Math.max(arms[above] ?? 0, apart(places, index, above));
       above = nodes[above]?.parent ?? -1;
     }
   }
-  const all = nodes.map((node, index) => {
+  return nodes.map((node, index) => {
     const view = node.camera?.verticalView ?? views.get(index);
     return { ...(view !== undefined && { view }), arm: arms[index] ?? 0 };
   });
-  known.set(nodes, all);
-  return all;
+}
+
+function apart(places: Float64Array, a: number, b: number): number {
+  const [x = 0, y = 0, z = 0] = [0, 1, 2].map((i) => (places[3 * a + i] ?? 0) - (places[3 * b + i] ?? 0));
+  return Math.hypot(x, y, z);
 }
 
 /** Where every node stands at rest, in units of the tree, three numbers a node. A parent may be listed after its children. */
