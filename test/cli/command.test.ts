@@ -243,10 +243,14 @@ describe('slewcurve mend', () => {
     expect(verbsOf(bold).has('choose side')).toBe(true);
   });
 
-  test('refuses an undo plan that is for another file, or that was changed', async () => {
+  test('refuses an undo plan that is for another file, that was run already, or that was changed', async () => {
     const at = await withDemo();
     await at.run('mend', 'demo.glb', '--proposed', '-o', 'out.glb', '--undo-out', 'undo.json');
-    const other = await at.run('mend', 'demo.glb', '--undo', 'undo.json', '-o', 'back.glb');
+    const untouched = await at.run('mend', 'demo.glb', '--undo', 'undo.json', '-o', 'back.glb');
+    expect(untouched.code).toBe(2);
+    expect(untouched.stderr).toContain('demo.glb is as it was before the change');
+    await at.run('mend', 'out.glb', '--proposed', '--fail-at', 'note', '-o', 'more.glb');
+    const other = await at.run('mend', 'more.glb', '--undo', 'undo.json', '-o', 'back.glb');
     expect([other.code, other.stderr.includes('undo.other-file')]).toEqual([2, true]);
     const plan = JSON.parse(readFileSync(at.path('undo.json'), 'utf8'));
     plan.ranges[0].bytes = Buffer.alloc(Buffer.from(plan.ranges[0].bytes, 'base64').length).toString(

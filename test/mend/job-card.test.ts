@@ -95,7 +95,7 @@ describe('parseJobCard', () => {
 
   it('names the step and the key in its message, and the edit that may be meant', () => {
     expect(() => parseJobCard(card({ span: [0] }))).toThrow(
-      'Step 1: "span" must be a list of 2 finite numbers; it is [0].',
+      'Step 2: "span" must be a list of 2 finite numbers; it is [0].',
     );
     expect(() => parseJobCard(card({ verb: 'lift-out' }))).toThrow('Did you mean "lift out"?');
     expect(() => parseJobCard(card({ verb: 'hemisphere' }))).toThrow('Did you mean "same side"?');
@@ -164,10 +164,10 @@ describe('applySteps', () => {
     const tracks = [named('Walk', 'Neck', 20)];
     const run = (step: object) => (): unknown => applySteps(tracks, [{ ...STEP }, { ...STEP, ...step }]);
     expect(codeOf(run({ track: 'Nick' }))).toBe('step.no-match');
-    expect(run({ track: 'Nick' })).toThrow('Step 1 (lift out): no track of clip "Walk" fits "Nick".');
+    expect(run({ track: 'Nick' })).toThrow('Step 2 (lift out): no track of clip "Walk" fits "Nick".');
     expect(codeOf(run({ clip: 'walk' }))).toBe('step.no-match');
     expect(codeOf(run({ keys: [99] }))).toBe('step.bad-key');
-    expect(run({ keys: [99] })).toThrow(/^Step 1 \(lift out\) on Neck: There is no key 99/);
+    expect(run({ keys: [99] })).toThrow(/^Step 2 \(lift out\) on Neck: There is no key 99/);
     expect(numbersOf(tracks[0], 6)).toEqual(numbersOf(named('Walk', 'Neck', 20), 6));
   });
 });

@@ -135,7 +135,7 @@ export function readText(path: string, cwd: string): Promise<string> {
   return readFile(resolve(cwd, path), 'utf8').catch((cause: unknown) => {
     throw new SlewcurveError(
       'file.not-found',
-      `${path} can't be read: ${messageOf(cause)}`,
+      `${path} can't be read: ${messageOf(cause)}.`,
       { file: path },
       { cause },
     );

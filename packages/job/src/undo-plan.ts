@@ -41,12 +41,19 @@ export async function undoPlan(
  * The file that a mended file was made from.
  *
  * @param text what `undoPlan` gave, from wherever it was kept
- * @throws SlewcurveError `undo.other-file` where the plan is for other bytes, `undo.broken` where it makes other bytes than it says, and
+ * @throws SlewcurveError `undo.already-done` where the bytes are the old ones, `undo.other-file` where the plan is for other bytes, `undo.broken` where it makes other bytes than it says, and
  *   what `parsePatchPlan` throws
  */
 export async function takeBack(mended: Source, text: string, name: string): Promise<Source> {
   const stored = parsePatchPlan(text);
-  if ((await sha256Of(mended)) !== stored.for.sha256)
+  const sha256 = await sha256Of(mended);
+  if (sha256 === stored.resultSha256)
+    throw new SlewcurveError(
+      'undo.already-done',
+      `${name} is as it was before the change: there is nothing to take back. Nothing was written.`,
+      { file: name },
+    );
+  if (sha256 !== stored.for.sha256)
     throw new SlewcurveError(
       'undo.other-file',
       `The plan takes back a change of ${stored.for.file}, and ${name} holds other bytes than that file had. Nothing was written.`,

@@ -95,7 +95,7 @@ function checkOneClock(step: Step, number: number, count: number): void {
   if (step.with !== 'clip' || count === 1) return;
   throw new SlewcurveError(
     'step.many-clocks',
-    `Step ${number} (${step.verb}) names ${count} tracks, and a clip can go by the clock of one alone. Name that one, or take only their nodes along.`,
+    `Step ${number + 1} (${step.verb}) names ${count} tracks, and a clip can go by the clock of one alone. Name that one, or take only their nodes along.`,
     { clip: step.clip, track: step.track, pointer: `/steps/${number}` },
   );
 }
@@ -105,7 +105,7 @@ function checkWholeFile(step: Step, number: number, count: number, all: number):
   if (count === all) return;
   throw new SlewcurveError(
     'step.whole-file',
-    `Step ${number} (${step.verb}) names ${count} of ${all} tracks, and single tracks would no longer fit the rest. Name them all: * in *.`,
+    `Step ${number + 1} (${step.verb}) names ${count} of ${all} tracks, and single tracks would no longer fit the rest. Name them all: * in *.`,
     { clip: step.clip, track: step.track, pointer: `/steps/${number}` },
   );
 }
@@ -120,14 +120,14 @@ function tracksNamed(tracks: readonly RotationTrack[], step: Step, number: numbe
   if (inClip.length === 0)
     throw new SlewcurveError(
       'step.no-match',
-      `Step ${number} (${step.verb}): no clip fits "${step.clip}".`,
+      `Step ${number + 1} (${step.verb}): no clip fits "${step.clip}".`,
       place,
     );
   const found = named(inClip, step.track, (index) => tracks[index].id);
   if (found.length === 0)
     throw new SlewcurveError(
       'step.no-match',
-      `Step ${number} (${step.verb}): no track of clip "${step.clip}" fits "${step.track}".`,
+      `Step ${number + 1} (${step.verb}): no track of clip "${step.clip}" fits "${step.track}".`,
       place,
     );
   return found;
@@ -145,7 +145,7 @@ function saysWhichStep<T>(number: number, step: Step, run: () => T): T {
     if (!(error instanceof SlewcurveError)) throw error;
     throw new SlewcurveError(
       error.code,
-      `Step ${number} (${step.verb}) on ${error.place.track ?? step.track}: ${error.message}`,
+      `Step ${number + 1} (${step.verb}) on ${error.place.track ?? step.track}: ${error.message}`,
       { ...error.place, pointer: `/steps/${number}` },
       { cause: error },
     );

@@ -23,6 +23,7 @@ import type { Arguments } from '../flags.js';
 import { paintFor } from '../print.js';
 import { progressOn, watchOver } from '../progress.js';
 import { sayRanges } from '../say-ranges.js';
+import { sayWritten } from '../say-written.js';
 import { oneOf, readJson, settingsOf, tableOptionsOf } from '../settings.js';
 import { withFile, type FileInHand } from '../with-file.js';
 import { undo } from './undo.js';
@@ -46,7 +47,11 @@ export async function mend(args: Arguments, io: CommandIo): Promise<number> {
     const mended = await mendInHand(file, args, settings, io, watch).finally(() => progress.clear());
     await writeResults(file, mended, args, io);
     const report = buildReport([mended.report], settings, { steps: mended.steps });
-    io.stdout.write(asJson ? jsonReport(report) : textReport(report, paintFor(io)));
+    io.stdout.write(
+      asJson
+        ? jsonReport(report)
+        : textReport(report, paintFor(io), 'seconds', sayWritten(file, mended, args)),
+    );
     return report.verdict === 'pass' ? EXIT.pass : EXIT.fail;
   });
 }
@@ -88,8 +93,15 @@ async function writeResults(
   args: Arguments,
   io: CommandIo,
 ): Promise<void> {
-  for (const line of sayRanges(file.opened.name, mended.plan.ranges)) io.stderr.write(`${line}\n`);
-  if (args.given('dry-run')) return;
+  if (args.given('dry-run')) {
+    for (const line of sayRanges(file.opened.name, mended.plan.ranges)) io.stderr.write(`${line}\n`);
+    return;
+  }
+  const { ranges } = mended.plan;
+  const bytes = ranges.reduce((sum, range) => sum + range.bytes.length, 0);
+  io.stderr.write(
+    `${file.opened.name}: ${bytes} new bytes in ${ranges.length} places; all others stay. --dry-run tells them.\n`,
+  );
   const undoOut = args.value('undo-out');
   if (undoOut !== undefined) await writeText(file, undoOut, (await undoPlan(mended)).text, io);
   const cardOut = args.value('card-out');

@@ -23,7 +23,7 @@ export async function copyMissingSiblings(file: FileInHand, folder: string): Pro
       if (systemCode(cause) !== 'EEXIST')
         throw new SlewcurveError(
           'file.unwritable',
-          `${to} can't be written: ${messageOf(cause)}`,
+          `${to} can't be written: ${messageOf(cause)}.`,
           { file: to },
           { cause },
         );

@@ -80,7 +80,7 @@ function cannotRead(path: string, cause: unknown): SlewcurveError {
     ? new SlewcurveError('file.not-found', `There is no file ${path}.`, { file: path }, { cause })
     : new SlewcurveError(
         'file.unreadable',
-        `${path} can't be read: ${messageOf(cause)}`,
+        `${path} can't be read: ${messageOf(cause)}.`,
         { file: path },
         { cause },
       );

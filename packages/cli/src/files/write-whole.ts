@@ -32,7 +32,8 @@ export async function writeWhole(
   } catch (cause) {
     await rm(temporary, { force: true });
     if (cause instanceof SlewcurveError) throw cause;
-    throw unwritable(path, messageOf(cause), cause);
+    const noFolder = systemCode(cause) === 'ENOENT';
+    throw unwritable(path, noFolder ? 'its folder is not there; make it first' : messageOf(cause), cause);
   }
 }
 

@@ -19,10 +19,17 @@ export function sayEvent(event: SurveyEvent, form?: TimeForm, fps?: number): str
   return `${event.clip}, ${sayTime(event.time, form, fps)}: ${event.tracks} tracks ${what} within one frame: one event; look at ${event.owner} first`;
 }
 
-/** `Walk ends where it starts in 38 of 40 moving tracks: if it repeats, say so with --loop`; undefined where nothing is guessed. */
-export function sayLoopGuess({ clip, loopGuess }: ClipReport): string | undefined {
-  if (loopGuess === undefined) return undefined;
-  const { closed, moving } = loopGuess;
-  const tracks = moving === 1 ? 'its one moving track' : `${closed} of ${moving} moving tracks`;
-  return `${clip} ends where it starts in ${tracks}: if it repeats, say so with --loop, and its seam is looked at`;
+/**
+ * `Walk ends where it starts in 38 of 40 moving tracks: if it repeats, say so with --loop`; several clips in one line; undefined where nothing
+ * is guessed.
+ */
+export function sayLoopGuesses(clips: readonly ClipReport[]): string | undefined {
+  const closed = clips.filter(({ loopGuess }) => loopGuess !== undefined);
+  const [only] = closed;
+  if (only?.loopGuess === undefined) return undefined;
+  if (closed.length > 1)
+    return `${closed.length} of ${clips.length} clips end where they start (${closed.map(({ clip }) => clip).join(', ')}): of those that repeat, say so with --loop, and their seams are looked at`;
+  const { closed: tracks, moving } = only.loopGuess;
+  const where = moving === 1 ? 'its one moving track' : `${tracks} of ${moving} moving tracks`;
+  return `${only.clip} ends where it starts in ${where}: if it repeats, say so with --loop, and its seam is looked at`;
 }

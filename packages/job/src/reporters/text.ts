@@ -1,11 +1,20 @@
 import { sayTime, type TimeForm } from '@slewcurve/core';
 import { sayStep } from '@slewcurve/mend';
 import type { Level } from '@slewcurve/survey';
-import type { FileReport, GonePlace, Report, ReportedFinding, StepReport, TrackReport } from '../report.js';
+import {
+  isAtLeast,
+  type FileReport,
+  type GonePlace,
+  type Report,
+  type ReportedFinding,
+  type StepReport,
+  type TrackReport,
+} from '../report.js';
 import { sayConventions } from '../conventions.js';
+import { gatherByRule, sayGathered, type Gathered } from './gathered.js';
 import { textMatrix } from './matrix-text.js';
 import { printable } from './printable.js';
-import { sayEvent, sayLoopGuess } from './say-event.js';
+import { sayEvent, sayLoopGuesses } from './say-event.js';
 import { sayFault, sayPlace, sayRemedy } from './say-finding.js';
 import { counted, sayVerdict } from './say-verdict.js';
 
@@ -14,16 +23,32 @@ export type Paint = (text: string, as: Level | Report['verdict']) => string;
 
 const PLAIN: Paint = (text) => text;
 
-/** The report as people read it: one sentence an open finding, the verdict last. */
-export function textReport(report: Report, paint: Paint = PLAIN, time: TimeForm = 'seconds'): string {
+/**
+ * The report as people read it: one sentence an open finding, those too mild to fail gathered by rule; then what each step did, `results` line
+ * by line, and the verdict last.
+ */
+export function textReport(
+  report: Report,
+  paint: Paint = PLAIN,
+  time: TimeForm = 'seconds',
+  results: readonly string[] = [],
+): string {
+  const { files, failAt } = report;
   return [
-    ...(report.steps ?? []).map(sayDone),
-    ...report.files.flatMap((file) => sayFile(file, paint, time)),
+    ...files.flatMap((file) => sayFile(file, failAt, paint, time)),
+    ...(files.some((file) => mildOf(file, failAt).some(({ findings }) => findings.length > 1))
+      ? [GATHERED]
+      : []),
     ...(report.gone ?? []).map(sayGone),
+    ...(report.steps ?? []).map(sayDone),
+    ...results,
     paint(sayVerdict(report), report.verdict),
     '',
   ].join('\n');
 }
+
+const GATHERED =
+  'Findings too mild to fail are gathered by rule: --fail-at note lists every one, --format json has them all.';
 
 /** The roster as text: one row a track, then what `textReport` says. */
 export function textRoster(report: Report, paint: Paint = PLAIN, time: TimeForm = 'seconds'): string {
@@ -34,7 +59,7 @@ export function textRoster(report: Report, paint: Paint = PLAIN, time: TimeForm 
   return [...rosters, textReport(report, paint, time)].join('\n');
 }
 
-function sayFile(file: FileReport, paint: Paint, time: TimeForm): string[] {
+function sayFile(file: FileReport, failAt: Level, paint: Paint, time: TimeForm): string[] {
   if (file.error)
     return [
       `${printable(`${file.file}: can't be read. ${file.error.message}`)} ${paint(`error ${file.error.code}`, 'error')}`,
@@ -43,12 +68,33 @@ function sayFile(file: FileReport, paint: Paint, time: TimeForm): string[] {
     ({ code, level = 'note', message }) =>
       `${printable(`${file.file}: ${message}`)} ${paint(`${level} ${code}`, level)}`,
   );
-  const open = file.findings.filter(({ muted }) => muted === undefined);
+  const failing = openOf(file).filter(({ level }) => isAtLeast(level, failAt));
+  const mild = mildOf(file, failAt).map(({ rule, level, findings }) => {
+    const [first, ...more] = findings;
+    if (more.length === 0) return sayFinding(file, first, paint, time);
+    const said = sayGathered(findings, sayPlace(first, time, frameRateOf(file, first.clip)));
+    return `${printable(`${file.file}: ${said}`)} ${paint(`${level} ${rule}`, level)}`;
+  });
   const remarks = [
-    ...(file.events ?? []).map((event) => sayEvent(event, time, frameRateOf(file, event.clip))),
-    ...file.clips.map(sayLoopGuess),
+    ...(file.events ?? [])
+      .filter(({ level }) => isAtLeast(level, failAt))
+      .map((event) => sayEvent(event, time, frameRateOf(file, event.clip))),
+    sayLoopGuesses(file.clips),
   ].flatMap((said) => (said === undefined ? [] : [printable(`${file.file}: ${said}.`)]));
-  return [...problems, ...open.map((finding) => sayFinding(file, finding, paint, time)), ...remarks];
+  return [
+    ...problems,
+    ...failing.map((finding) => sayFinding(file, finding, paint, time)),
+    ...mild,
+    ...remarks,
+  ];
+}
+
+function openOf(file: FileReport): ReportedFinding[] {
+  return file.findings.filter(({ muted }) => muted === undefined);
+}
+
+function mildOf(file: FileReport, failAt: Level): Gathered[] {
+  return gatherByRule(openOf(file).filter(({ level }) => !isAtLeast(level, failAt)));
 }
 
 function sayFinding(file: FileReport, finding: ReportedFinding, paint: Paint, time: TimeForm): string {
