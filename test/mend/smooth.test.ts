@@ -136,6 +136,16 @@ describe('smooth', () => {
     expect(Math.max(...straysFrom(after, hit))).toBeLessThan(0.25);
   });
 
+  it('leaves outliers and frozen keys to the edits that are for them', () => {
+    const track = captured(slowPan, { keys: 360, rate: 60, grain: 0.05, seed: 4 });
+    track.values.set(panTilt(40, 3), 4 * 200);
+    for (let key = 121; key < 126; key++) track.values.set(numbersOf(track, 120), 4 * key);
+    const { track: after, changed } = applied(track, { verb: 'smooth' });
+    for (const key of [121, 123, 125, 199, 200, 201])
+      expect(numbersOf(after, key)).toEqual(numbersOf(track, key));
+    expect(changed.length).toBeGreaterThan(280);
+  });
+
   it('brings the grain down to what is asked', () => {
     const noisy = captured(longPan, { keys: 1200, rate: 60, grain: 0.1, seed: 9 });
     const { track } = applied(noisy, { verb: 'smooth', grain: 0.04 });

@@ -25,7 +25,8 @@ const WIDEST = 1;
  * more than that of the noise which the track has. With neither: 6 key gaps, which leave a twelfth of the noise's power.
  *
  * Guards take no part and stay to the byte: what turns faster than `guard` (60 deg/s unless told) and sigma beside it, the spans in `guards` (whips,
- * contacts), kept keys, and wherever the average would move the motion itself, because what it takes off is no noise: it leans one way over sigma and more.
+ * contacts), kept keys, and wherever the average would move the motion itself, because what it takes off is no noise: it leans one way over sigma and more, or a key stands further
+ * off than noise ever does, which is for `lift out` and `bridge`.
  * Beside a guard the edit fades in over `shoulders` (sigma unless told). No key turns by more than `within` degrees. Averages never reach over a
  * cut. Tangents of a CUBICSPLINE become ½·v·(ω, 0), ω the fitted parabola's rate.
  */

@@ -42,6 +42,9 @@ export function guardKeys(
 /** Sigmas on either side over which is asked whether what an average takes off leans one way. */
 const LEANS_OVER = 2;
 
+/** Standard deviations an axis beyond which a correction is none of noise: an outlier, a frozen key, for which there are other edits. */
+const OUTLYING = 6;
+
 /** Of the usual noise: noise itself leaves a tenth in the mean over so many keys. */
 const LEANING = 0.5;
 
@@ -49,8 +52,8 @@ const LEANING = 0.5;
 const MEDIAN_LENGTH = 1.538;
 
 /**
- * Adds the keys at which an average takes off motion and not noise: over two sigmas on either side its corrections lean one way by more than half of what
- * noise makes of them.
+ * Adds the keys at which an average takes off something else than noise: over two sigmas on either side its corrections lean one way by more than half of what
+ * noise makes of them, or a key stands further off than noise ever does.
  *
  * @param turns the corrections, three numbers a key; zero where guarded
  */
@@ -67,7 +70,7 @@ export function movedKeys(
       lengths[count++] = Math.hypot(turns[3 * key], turns[3 * key + 1], turns[3 * key + 2]);
   const ascending = lengths.subarray(0, count);
   ascending.sort();
-  const most = (LEANING * (ascending[count >> 1] ?? 0)) / MEDIAN_LENGTH;
+  const noise = (ascending[count >> 1] ?? 0) / MEDIAN_LENGTH;
   const leans = new Uint8Array(times.length);
   const sums = new Float64Array(3);
   let [from, to] = [0, 0];
@@ -76,7 +79,8 @@ export function movedKeys(
       for (let axis = 0; axis < 3; axis++) sums[axis] += turns[3 * to + axis];
     for (; times[from] < times[key] - LEANS_OVER * sigma; from++)
       for (let axis = 0; axis < 3; axis++) sums[axis] -= turns[3 * from + axis];
-    if (Math.hypot(...sums) > most * (to - from)) leans[key] = 1;
+    const isLeaning = Math.hypot(...sums) > LEANING * noise * (to - from);
+    if (isLeaning || Math.hypot(...turns.subarray(3 * key, 3 * key + 3)) > OUTLYING * noise) leans[key] = 1;
   }
   widened(times, leans, sigma).forEach((flag, key) => {
     if (flag !== 0) isGuarded[key] = 1;

@@ -1,7 +1,6 @@
 import { angleFloor } from '@slewcurve/core';
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
-import { significant } from '../../significant.js';
 import { addressOf } from '../jump/try-remedy.js';
 import { toMillisecond } from '../to-millisecond.js';
 import { ripplesOf, type Ripple } from './ripples.js';
@@ -38,7 +37,8 @@ export const hum: Rule = Object.freeze({
     );
   },
   remedy(context: TrackContext, { span, value }: Place): Remedy | undefined {
-    const hertz = significant(value);
+    // The edit looks for the very frequency beside the one it is told.
+    const hertz = Number(value.toPrecision(4));
     return { step: { verb: 'take out hum', ...addressOf(context), hertz, span: toMillisecond(span) } };
   },
   message({ value, span, facts }: Place): string {
