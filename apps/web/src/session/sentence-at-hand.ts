@@ -38,8 +38,14 @@ export function tryOut(text: string, time: number, track: RotationTrack): Senten
       ...(tracks[0] && { preview: tracks[0] }),
     };
   } catch (error) {
-    return { text, time, price: '', problem: error instanceof Error ? error.message : String(error) };
+    return { text, time, price: '', problem: reasonOf(error) };
   }
+}
+
+/** Why a step can't be done, without "Step 1": there is but one sentence. */
+function reasonOf(error: unknown): string {
+  const reason = error instanceof Error && error.cause instanceof Error ? error.cause : error;
+  return reason instanceof Error ? reason.message : String(reason);
 }
 
 function priceOf(result: EditResult): string {
