@@ -31,6 +31,8 @@ test('presses, limits, holds and keys are made by mouse, finger and keyboard, an
   await limitByKeyboard(page);
   await holdByKeyboard(page);
   await keysInTheCloseUp(page);
+  await drawByMouse(page);
+  await turnOnTheGlobe(page);
 
   await page.getByRole('button', { name: 'Docket: report' }).click();
   const card = await download(page, 'Save the job card as JSON');
@@ -41,7 +43,10 @@ test('presses, limits, holds and keys are made by mouse, finger and keyboard, an
     'hold',
     'shape run',
     'set marks',
+    'shape',
+    'lay over',
   ]);
+  expect(steps.at(-1)).toMatchObject({ turn: [0, 1.1, 0], about: 'parent' });
   const saved = await download(page, 'Save a mended copy');
   await writeFile(place.path('card.json'), card);
   const ran = await place.run('mend', 'kestrel-point.glb', '--card', 'card.json', '-o', 'out.glb');
@@ -159,6 +164,54 @@ async function keysInTheCloseUp(page: Page): Promise<void> {
   expect(await sentence(page)).toMatch(/^Set marks on .*, with \S+ s at \S+ s, moving its keys, between /);
   await page.keyboard.press('Enter');
   await page.getByText('5 edits on the job card').waitFor();
+}
+
+/** While a speed is drawn, any stroke on the paper draws; the points that are left, and what they are scaled by, are said. */
+async function drawByMouse(page: Page): Promise<void> {
+  await page.getByRole('button', { name: 'Close the close-up' }).click();
+  await page.getByRole('button', { name: 'Draw the speed' }).click();
+  await expect.poll(() => focused(page)).toMatch(/^Drawn speed at /);
+  const { x, y } = await boxOf(page, 'slew-chart .grip.draw');
+  const before = await odometer(page);
+  await page.mouse.move(x - 20, y + 10);
+  await page.mouse.down();
+  for (let i = 1; i <= 5; i++) await page.mouse.move(x - 20 + 12 * i, y + 10 - 3 * i);
+  await page.mouse.up();
+  await page.getByRole('region', SENTENCE).waitFor();
+  expect(await price(page)).toMatch(
+    /^drawn with \d+ points, within .* deg\/s of the hand, times \d.* · no time added$/,
+  );
+  expect(await sentence(page)).toMatch(/^Shape the speed of .*, drawn through \S+ deg\/s at .*, between /);
+  expect((await odometer(page)).at(-1)).toBe(before.at(-1));
+  await page.keyboard.press('Enter');
+  await page.getByText('6 edits on the job card').waitFor();
+}
+
+/** A drag on the globe turns the key about the axes that the switch says; Escape lets go; the arrows turn by 0.1°. */
+async function turnOnTheGlobe(page: Page): Promise<void> {
+  await page.getByRole('radio', { name: /^turns key \d+$/ }).check();
+  await page.getByRole('radio', { name: 'parent’s axes' }).check();
+  const globe = await boxOf(page, 'slew-porthole .globe');
+  await page.mouse.move(globe.x + 100, globe.y + 100);
+  await page.mouse.down();
+  for (let i = 1; i <= 4; i++) await page.mouse.move(globe.x + 100 + 10 * i, globe.y + 100);
+  await expect
+    .poll(() => page.locator('slew-key-turn .now').textContent())
+    .toMatch(/^\s*Key \d+ at \S+ s: [23]\d(\.\d)?° about the parent’s y\.\s*$/);
+  await page.mouse.up();
+  await page.getByRole('region', SENTENCE).waitFor();
+  expect(await sentence(page)).toMatch(
+    /^Lay a turn over key \d+ of .*, of \(0, [23]\d(\.\d)?, 0\)°, about its parent's axes\.$/,
+  );
+  await page.locator('slew-porthole .globe').focus();
+  await page.keyboard.press('Escape');
+  await page.getByRole('region', SENTENCE).waitFor({ state: 'detached' });
+  await page.locator('slew-porthole .globe').focus();
+  await page.keyboard.press('Shift+ArrowRight');
+  await page.keyboard.press('ArrowRight');
+  await expect.poll(() => sentence(page)).toContain('of (0, 1.1, 0)°');
+  await page.keyboard.press('Enter');
+  await page.getByText('7 edits on the job card').waitFor();
 }
 
 /** A point on the drawn trace of the chart, at a time; ten seconds a row. */

@@ -20,8 +20,8 @@ import { grid, keyed, motions } from '../support/smooth-track.js';
 fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 5 });
 
 const DEGREES = 180 / Math.PI;
-const angle = fc.double({ min: -100, max: 100, noNaN: true });
-const turns = fc.tuple(angle, angle, angle);
+const size = fc.double({ min: -100, max: 100, noNaN: true });
+const turns = fc.tuple(size, size, size);
 const abouts = fc.constantFrom('own' as const, 'parent' as const, 'world' as const);
 
 function poseOf(track: RotationTrack, key: number): Float64Array {
@@ -68,8 +68,8 @@ describe('lay over', () => {
     fc.assert(
       fc.property(hands, turns, abouts, fc.integer({ min: 0, max: 19 }), (hand, turn, about, key) => {
         const after = laid(hand, { keys: [key], turn, about });
-        const size = Math.hypot(...turn) / DEGREES;
-        fc.pre(size > 1e-3);
+        const whole = Math.hypot(...turn) / DEGREES;
+        fc.pre(whole > 1e-3);
         const q = poseOf(hand, key);
         // The arm, on the base: MATHS' p of a parent that moves.
         const parent = multiply(
@@ -79,10 +79,10 @@ describe('lay over', () => {
         );
         const wanted =
           about === 'own'
-            ? turnAboutOwn(new Float64Array(4), q, turn, size)
+            ? turnAboutOwn(new Float64Array(4), q, turn, whole)
             : about === 'parent'
-              ? turnAboutParent(new Float64Array(4), q, turn, size)
-              : turnAboutWorld(new Float64Array(4), q, parent, turn, size);
+              ? turnAboutParent(new Float64Array(4), q, turn, whole)
+              : turnAboutWorld(new Float64Array(4), q, parent, turn, whole);
         expect(angleBetween(poseOf(after, key), wanted) * DEGREES).toBeLessThan(1e-9);
         for (const other of Array.from({ length: 20 }, (_, i) => i).filter((i) => i !== key))
           expect(numbersOf(after, other)).toEqual(numbersOf(hand, other));

@@ -10,6 +10,7 @@ import {
 import { frameLength, trackName, usualSpeed, type ChartData } from './chart/chart-data.js';
 import { frameBy } from './chart/chart-keys.js';
 import { sayNumber, sayRate, sayTime } from './chart/quantity.js';
+import { NO_TURN, nudgedTurn, turnOfDrag, type Turn } from './gesture/key-turn.js';
 import { describeMoment } from './porthole/describe.js';
 import { drawGlobe } from './porthole/globe.js';
 import { PLAY_SPEEDS, playOn } from './porthole/play-clock.js';
@@ -32,6 +33,9 @@ const KEY_TURN = 10;
  * the spacing of the ticks is the speed. Drawn with plain lines; needs no GPU.
  *
  * @fires time-changed - `{ time: number, playing: boolean }` seconds
+ * @fires key-turned - `{ turn: Turn, settled: boolean }` while `turning`
+ * @fires edit-taken - Enter while `turning`
+ * @fires edit-dropped - Escape while `turning`
  * @fires playing-changed - `{ playing: boolean }`
  */
 export class SlewPorthole extends LitElement {
@@ -43,6 +47,8 @@ export class SlewPorthole extends LitElement {
     playing: { type: Boolean, reflect: true },
     camera: { type: Boolean },
     view: { attribute: false },
+    turning: { type: Boolean },
+    turn: { attribute: false },
     size: { state: true },
   };
   static override styles: CSSResult[] = [paper, controls, portholeStyles];
@@ -58,11 +64,15 @@ export class SlewPorthole extends LitElement {
   /** A camera: the horizon is ruled. */
   declare camera: boolean;
   declare view: View;
+  /** A drag, or the arrow keys, turn the thing instead of looking round. */
+  declare turning: boolean;
+  /** The turn at hand, degrees about x, y and z of whichever axes the page says. */
+  declare turn: Turn;
   declare private size: number;
   private frame = 0;
   private past = 0;
   private fullRod = 1;
-  private drag: { x: number; y: number; view: View } | undefined;
+  private drag: { x: number; y: number; view: View; turn: Turn } | undefined;
   private readonly resize = new ResizeObserver(() => this.measure());
 
   constructor() {
@@ -72,6 +82,8 @@ export class SlewPorthole extends LitElement {
     this.playing = false;
     this.camera = false;
     this.view = FIRST_VIEW;
+    this.turning = false;
+    this.turn = NO_TURN;
     this.size = 0;
   }
 
@@ -96,13 +108,7 @@ export class SlewPorthole extends LitElement {
   toggle(): void {
     if (!this.data) return;
     this.playing = !this.playing;
-    this.dispatchEvent(
-      new CustomEvent('playing-changed', {
-        detail: { playing: this.playing },
-        bubbles: true,
-        composed: true,
-      }),
-    );
+    this.send('playing-changed', { playing: this.playing });
   }
 
   private get played(): readonly [number, number] {
@@ -145,13 +151,7 @@ export class SlewPorthole extends LitElement {
     const { motion } = this.data ?? {};
     if (!motion) return;
     this.time = Math.min(motion.end, Math.max(motion.start, time));
-    this.dispatchEvent(
-      new CustomEvent('time-changed', {
-        detail: { time: this.time, playing: this.playing },
-        bubbles: true,
-        composed: true,
-      }),
-    );
+    this.send('time-changed', { time: this.time, playing: this.playing });
   }
 
   protected override render(): TemplateResult {
@@ -162,7 +162,7 @@ export class SlewPorthole extends LitElement {
           class="globe"
           role="application"
           tabindex="0"
-          aria-label=${`3-D view of ${trackName(data.track)}: arrow keys look round`}
+          aria-label=${`3-D view of ${trackName(data.track)}: arrow keys ${this.turning ? 'turn the key' : 'look round'}`}
           aria-describedby="words"
           @pointerdown=${this.grab}
           @pointermove=${this.pull}
@@ -176,7 +176,8 @@ export class SlewPorthole extends LitElement {
           <b>3-D view at ${sayTime(this.time, 2)}</b>
           <span id="words">${describeMoment(data.motion, this.time, data.noiseFloor)}</span>
           A tick across the path every 0.1 s; the rod is the turn axis, at full length from
-          ${sayRate(this.fullRod)}. Drag or arrow keys look round.
+          ${sayRate(this.fullRod)}.
+          ${this.turning ? 'Drag or arrow keys turn the key; with Shift a drag turns about z.' : 'Drag or arrow keys look round.'}
         </figcaption>
       </figure>
       ${this.controls(data)}<span class="swatch"></span>`;
@@ -232,23 +233,54 @@ export class SlewPorthole extends LitElement {
   private readonly grab = (event: PointerEvent): void => {
     if (event.button !== 0) return;
     holdPointer(event);
-    this.drag = { x: event.clientX, y: event.clientY, view: this.view };
+    this.drag = { x: event.clientX, y: event.clientY, view: this.view, turn: this.turn };
   };
 
   private readonly pull = (event: PointerEvent): void => {
     const { drag } = this;
     if (!drag || this.size === 0) return;
+    if (this.turning) {
+      const [x, y, z] = turnOfDrag(event.clientX - drag.x, event.clientY - drag.y, this.size, event.shiftKey);
+      return this.sendTurn([drag.turn[0] + x, drag.turn[1] + y, drag.turn[2] + z], false);
+    }
     // Across the globe is half a turn, as if the hand held its surface.
     const perPixel = 180 / this.size;
     this.view = turnView(drag.view, (drag.x - event.clientX) * perPixel, (event.clientY - drag.y) * perPixel);
   };
 
   private readonly letGo = (): void => {
+    const { drag } = this;
     this.drag = undefined;
+    if (drag && this.turning && this.turn !== drag.turn) this.sendTurn(this.turn, true);
   };
 
+  private sendTurn(turn: Turn, settled: boolean): void {
+    this.turn = turn;
+    this.send('key-turned', { turn, settled });
+  }
+
+  private send(type: string, detail?: unknown): void {
+    this.dispatchEvent(new CustomEvent(type, { detail, bubbles: true, composed: true }));
+  }
+
+  /** While the thing is turned: arrows by 0.1°, Enter takes it, Escape lets go. */
+  private turnKeyed(event: KeyboardEvent): boolean {
+    if (!this.turning) return false;
+    const turn = nudgedTurn(this.turn, event);
+    if (turn) this.sendTurn(turn, true);
+    else if (event.key === 'Enter') this.send('edit-taken');
+    else if (event.key === 'Escape') {
+      this.drag = undefined;
+      this.turn = NO_TURN;
+      this.send('edit-dropped');
+    } else return false;
+    event.preventDefault();
+    event.stopPropagation();
+    return true;
+  }
+
   private readonly keyed = (event: KeyboardEvent): void => {
-    if (event.ctrlKey || event.metaKey || event.altKey) return;
+    if (event.ctrlKey || event.metaKey || event.altKey || this.turnKeyed(event)) return;
     const turns: Readonly<Record<string, readonly [number, number]>> = {
       ArrowLeft: [-KEY_TURN, 0],
       ArrowRight: [KEY_TURN, 0],

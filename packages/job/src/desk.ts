@@ -102,8 +102,9 @@ export function desk(): Desk {
       return folder.report;
     },
     track(file, clip, track) {
-      const { before, after } = trackIn(folderOf(file), clip, track);
-      return trackAnswer(before, after);
+      const folder = folderOf(file);
+      const { before, after } = trackIn(folder, clip, track);
+      return trackAnswer(before, after, tracksAbove(folder, after));
     },
     matrix: (file, clip, track, settings) =>
       playbackMatrix(trackIn(folderOf(file), clip, track).after, settings),
@@ -244,9 +245,26 @@ function clipOf(opened: OpenedFile, track: RotationTrack): Clip | undefined {
 }
 
 /** One object twice where nothing was edited, so that nobody compares equal numbers. */
-function trackAnswer(before: RotationTrack, after: RotationTrack): TrackAnswer {
+function trackAnswer(
+  before: RotationTrack,
+  after: RotationTrack,
+  above: readonly RotationTrack[],
+): TrackAnswer {
   const copy = copyOf(before);
-  return { before: copy, after: after === before ? copy : copyOf(after) };
+  return { before: copy, after: after === before ? copy : copyOf(after), above: above.map(copyOf) };
+}
+
+/** Tracks of the nodes that a track's node hangs on, in its clip. */
+function tracksAbove({ opened, current }: Folder, { id, clip }: RotationTrack): RotationTrack[] {
+  const { nodes } = opened.file;
+  const above: RotationTrack[] = [];
+  const node = nodes.find(({ path }) => path === id);
+  for (let parent = node && nodes[node.parent]; parent; parent = nodes[parent.parent]) {
+    const { path } = parent;
+    const moving = current.find((track) => track.id === path && track.clip === clip);
+    if (moving) above.push(moving);
+  }
+  return above;
 }
 
 /** A copy whose arrays may be handed over. */

@@ -32,6 +32,8 @@ export interface OpenedAnswer {
 export interface TrackAnswer {
   readonly before: RotationTrack;
   readonly after: RotationTrack;
+  /** The tracks above it in its clip, as the card leaves them: what the world's axes hang on. */
+  readonly above: readonly RotationTrack[];
 }
 
 /** What became of a card: the tracks that read otherwise than under the card before, and each step's proof. */

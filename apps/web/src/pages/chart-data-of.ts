@@ -53,13 +53,12 @@ export function drawsTheSame(a: ChartSubject, b: ChartSubject): boolean {
 
 /** The chart's data: after solid, before dotted where they differ. */
 export function chartDataOf(subject: ChartSubject): ChartData {
-  const { chosen, file, before, playback, second, kept } = subject;
+  const { chosen, file, playback, kept } = subject;
   const shown = subject.preview ?? subject.after;
   const clip = file.report?.clips.find((other) => other.clip === chosen.clip);
   const report = file.report?.tracks.find(
     (other) => trackKey(other.clip, other.track) === trackKey(chosen.clip, chosen.track),
   );
-  const earlier = subject.preview ? subject.after : before;
   return {
     track: chosen.track,
     clip: chosen.clip,
@@ -73,13 +72,22 @@ export function chartDataOf(subject: ChartSubject): ChartData {
     notes: notesOf(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? []),
     ...(clip?.frameRate !== undefined && { frameRate: clip.frameRate }),
     ...(kept && { kept }),
+    ...comparedWith(subject, shown),
+  };
+}
+
+/** The motions that stand beside the one shown. */
+function comparedWith(
+  { before, after, preview, playback, second }: ChartSubject,
+  shown: RotationTrack,
+): Partial<ChartData> {
+  const earlier = preview ? after : before;
+  return {
     ...(earlier !== shown && {
       before: { motion: motionOf(earlier, playback), name: 'before', keys: earlier.times },
     }),
-    ...(subject.preview && subject.preview !== subject.after && { tried: true }),
-    ...(second && {
-      second: { motion: motionOf(shown, second), name: second.replaceAll('-', ' ') },
-    }),
+    ...(preview && preview !== after && { tried: true }),
+    ...(second && { second: { motion: motionOf(shown, second), name: second.replaceAll('-', ' ') } }),
   };
 }
 

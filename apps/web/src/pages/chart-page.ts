@@ -1,6 +1,5 @@
 import {
   LitElement,
-  css,
   html,
   nothing,
   type PropertyDeclarations,
@@ -9,9 +8,17 @@ import {
 } from 'lit';
 import { PLAYBACKS, playAs, type PlaybackId, type RotationTrack } from '@slewcurve/core';
 import type { SlewChart } from '@slewcurve/elements/chart';
+import type { MatrixWish } from '@slewcurve/elements/playback-matrix';
 import type { SlewPorthole } from '@slewcurve/elements/porthole';
 import type { SlewSentence } from '@slewcurve/elements/sentence';
-import { rowAt, type ChartData, type HandEdit, type Motion } from '@slewcurve/elements/plot';
+import {
+  rowAt,
+  type About,
+  type ChartData,
+  type HandEdit,
+  type Motion,
+  type Turn,
+} from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { valueOf } from '@slewcurve/elements/theme/value-of';
 import type { TrackAnswer } from '@slewcurve/job';
@@ -21,7 +28,9 @@ import { trackKey } from '../session/file-work.js';
 import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
 import type { Session } from '../session/session.js';
 import { chartDataOf, drawsTheSame, motionOf, placeOfNote, type ChartSubject } from './chart-data-of.js';
+import { chartPageStyles } from './chart-page-styles.js';
 import { jobCardOf } from './job-card-of.js';
+import { NOT_TURNING, keyTurnOf, layOverEdit, turnAtHand, turnedKey, type Turning } from './key-turn-of.js';
 import { pageStyles } from './page-styles.js';
 import type { ChosenTrack } from './roster-rows.js';
 
@@ -45,53 +54,13 @@ export class SlewChartPage extends LitElement {
     sentence: { state: true },
     edit: { state: true },
     sketched: { state: true },
+    turning: { state: true },
     note: { state: true },
     busy: { state: true },
     fold: { state: true },
     narrow: { state: true },
   };
-  static override styles = [
-    pageStyles,
-    css`
-      :host {
-        container: chart-page / inline-size;
-      }
-      .sheet {
-        display: flex;
-        flex-direction: column;
-      }
-      .figure {
-        max-width: 24rem;
-      }
-      summary {
-        min-height: 44px;
-        line-height: 44px;
-        cursor: default;
-      }
-      @media (width < 40rem) {
-        .figure {
-          order: -1;
-        }
-      }
-      @media (width >= 40rem) {
-        summary {
-          display: none;
-        }
-      }
-      @container chart-page (min-width: 56rem) {
-        .sheet {
-          display: grid;
-          grid-template-columns: minmax(0, 1fr) 16rem;
-          gap: 1.5rem;
-          align-items: start;
-        }
-        .figure {
-          position: sticky;
-          top: 0.5rem;
-        }
-      }
-    `,
-  ];
+  static override styles = [pageStyles, chartPageStyles];
 
   declare session: Session;
   declare file: FileWork | undefined;
@@ -106,6 +75,7 @@ export class SlewChartPage extends LitElement {
   declare private edit: HandEdit | undefined;
   /** What the hand that is at work would make of the motion. */
   declare private sketched: Motion | undefined;
+  declare private turning: Turning;
   declare private note: string | undefined;
   declare private busy: boolean;
   /** Seconds a row, where somebody chose. */
@@ -125,6 +95,7 @@ export class SlewChartPage extends LitElement {
     super();
     this.time = 0;
     this.busy = false;
+    this.turning = NOT_TURNING;
     this.narrow = this.width.matches;
     this.width.addEventListener('change', () => (this.narrow = this.width.matches));
   }
@@ -235,10 +206,25 @@ export class SlewChartPage extends LitElement {
             .time=${this.time}
             .span=${this.span}
             ?camera=${data.rateNames[0] === 'tilt'}
+            ?turning=${this.turning.on}
+            .turn=${turnAtHand(this.edit)}
+            @key-turned=${(event: CustomEvent<{ turn: Turn; settled: boolean }>) => this.turnKey(event.detail.turn, this.turning.about, event.detail.settled)}
+            @edit-taken=${() => void this.applySentence()}
+            @edit-dropped=${() => this.leaveSentence()}
             @time-changed=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
           ></slew-porthole>
+          ${keyTurnOf(data, turnedKey(data, this.time, this.edit), this.turning, this.edit, {
+            turning: (next) => this.chooseTurning(next),
+            turn: (turn, about) => this.turnKey(turn, about, true),
+          })}
         </details>
       </div>
+      <slew-playback-matrix
+        class="on-screen"
+        .subject=${this.answer}
+        .load=${(wish: MatrixWish) => this.session.matrix(chosen.file, chosen.clip, chosen.track, wish)}
+        @place-chosen=${(event: CustomEvent<{ time: number; playback: PlaybackId }>) => this.comparePlace(event.detail)}
+      ></slew-playback-matrix>
       ${jobCardOf(file, this.session)}`;
   }
 
@@ -261,6 +247,13 @@ export class SlewChartPage extends LitElement {
       >
       <span class="says">${PLAYBACKS[playback].says}</span>
     </p>`;
+  }
+
+  /** A place of the matrix: the playback's trace beside the first, and the cursor there. */
+  private comparePlace({ time, playback }: { time: number; playback: PlaybackId }): void {
+    this.second = playback;
+    this.time = time;
+    this.focus();
   }
 
   private choosePlayback(playback: PlaybackId | undefined): void {
@@ -301,7 +294,7 @@ export class SlewChartPage extends LitElement {
     if (!found?.place.remedy) return;
     this.note = id;
     this.time = found.place.time;
-    this.sentence = tryOut(sayStep(found.place.remedy), found.place.time, answer.after);
+    this.sentence = this.tried(sayStep(found.place.remedy), found.place.time);
     void this.updateComplete.then(() =>
       this.renderRoot.querySelector<SlewSentence>('slew-sentence')?.focus(),
     );
@@ -309,8 +302,33 @@ export class SlewChartPage extends LitElement {
 
   private rewrite(text: string): void {
     if (!this.sentence || !this.answer) return;
-    this.sentence = tryOut(text, this.sentence.time, this.answer.after);
-    if (this.sentence.step) this.edit = this.sentence.step;
+    this.sentence = this.tried(text, this.sentence.time);
+    if (this.sentence?.step) this.edit = this.sentence.step;
+  }
+
+  private tried(text: string, time: number): SentenceAtHand | undefined {
+    const { answer, file } = this;
+    return answer && tryOut(text, time, { ...answer, nodes: file?.opened?.nodes ?? [] });
+  }
+
+  /** The key under the cursor is turned; the globe follows at once. */
+  private turnKey(turn: Turn, about: About, settled: boolean): void {
+    const { data, answer, chosen } = this;
+    if (!data || !answer || !chosen) return;
+    const edit = layOverEdit(turnedKey(data, this.time, this.edit), turn, about);
+    if (settled) return this.follow({ edit, settled, idle: turn.every((angle) => angle === 0) });
+    this.edit = edit;
+    const step: Step = { ...edit, clip: chosen.clip, track: chosen.track };
+    const { preview } = this.tried(sayStep(step), this.time) ?? {};
+    const [playback = 'as-written'] = this.session.settings.playbacks;
+    this.sketched = preview && motionOf(preview, playback);
+  }
+
+  private chooseTurning(next: Turning): void {
+    const turn = turnAtHand(this.edit);
+    const about = next.about !== this.turning.about;
+    this.turning = next;
+    if (about && turn.some((angle) => angle !== 0)) this.turnKey(turn, next.about, true);
   }
 
   /** An edit is made by hand: the porthole follows it, and at rest it is a sentence. */
@@ -321,7 +339,7 @@ export class SlewChartPage extends LitElement {
     if (!settled) return;
     this.edit = edit;
     const step: Step = { ...edit, clip: chosen.clip, track: chosen.track };
-    this.sentence = idle ? undefined : tryOut(sayStep(step), edit.at ?? this.time, answer.after);
+    this.sentence = idle ? undefined : this.tried(sayStep(step), edit.at ?? this.time);
   }
 
   /** Apply what is written. The keyboard goes back to the trace. */

@@ -1,4 +1,4 @@
-import type { RotationTrack } from '@slewcurve/core';
+import { SlewcurveError, type RotationTrack, type SceneNode } from '@slewcurve/core';
 import {
   applySteps,
   parseSentence,
@@ -23,11 +23,18 @@ export interface SentenceAtHand {
   readonly problem: string;
 }
 
+/** What a sentence is tried on: a track, and what stands above it. */
+export interface TrialGround {
+  readonly after: RotationTrack;
+  readonly above: readonly RotationTrack[];
+  readonly nodes: readonly SceneNode[];
+}
+
 /** Read a sentence and try it on a track. */
-export function tryOut(text: string, time: number, track: RotationTrack): SentenceAtHand {
+export function tryOut(text: string, time: number, { after, above, nodes }: TrialGround): SentenceAtHand {
   try {
     const step = parseSentence(text);
-    const { tracks, results } = applySteps([track], [step]);
+    const { tracks, results } = applySteps([after, ...above], [step], nodes);
     const result = results[0]?.result;
     return {
       text,
@@ -44,7 +51,7 @@ export function tryOut(text: string, time: number, track: RotationTrack): Senten
 
 /** Why a step can't be done, without "Step 1": there is but one sentence. */
 function reasonOf(error: unknown): string {
-  const reason = error instanceof Error && error.cause instanceof Error ? error.cause : error;
+  const reason = error instanceof SlewcurveError && error.cause instanceof SlewcurveError ? error.cause : error;
   return reason instanceof Error ? reason.message : String(reason);
 }
 

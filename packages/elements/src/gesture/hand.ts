@@ -80,8 +80,7 @@ export function inToKeys({ keys }: Ground, [from, to]: Span): Span {
 
 /** A span of keys in whole milliseconds, no key left out: what a sentence can say, and a verb draws in to the same keys. */
 export function sayable([from, to]: Span): Span {
-  const milliseconds = (value: number): number => Number((value / 1000).toFixed(3));
-  return [milliseconds(Math.floor(from * 1000 + 1e-6)), milliseconds(Math.ceil(to * 1000 - 1e-6))];
+  return [tidy(Math.floor(from * 1000 + 1e-6) / 1000, 1e-3), tidy(Math.ceil(to * 1000 - 1e-6) / 1000, 1e-3)];
 }
 
 /** The whole of the keys. */

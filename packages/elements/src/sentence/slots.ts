@@ -7,7 +7,7 @@ export type SentencePiece =
  * Numbers of a sentence with what stands around them. A number inside a name (`spine_02`, `1H_Melee`, `leg.2`) is part of the
  * name and no slot.
  */
-const NUMBER = /(?<![\p{L}\p{N}_./:#[-])[−-]?\d[\d,]*(?:\.\d+)?(?![\p{L}\p{N}_/]|\.\p{L}|:\d)/gu;
+const NUMBER = /(?<![\p{L}\p{N}_./:#[-])[−-]?\d+(?:,\d{3})*(?:\.\d+)?(?![\p{L}\p{N}_/]|\.\p{L}|:\d)/gu;
 
 const UNITS: readonly { readonly unit: string; readonly pattern: RegExp; readonly says: string }[] = [
   { unit: 'deg/s', pattern: /^ ?(?:deg\/s|°\/s)/, says: 'speed in degrees a second' },
