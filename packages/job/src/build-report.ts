@@ -10,6 +10,7 @@ import {
   type Totals,
 } from './report.js';
 import type { Level } from '@slewcurve/survey';
+import { mergedCautions } from './cautions.js';
 import type { JobSettings } from './settings.js';
 import { VERSION } from './version.js';
 
@@ -36,6 +37,7 @@ export function buildReport(
     ...files.flatMap(({ problems = [] }) => problems.map(({ level = 'note' }) => level)),
   ];
   const fits = baseline === undefined || !baseline.exact || baseline.gone.length === 0;
+  const cautions = mergedCautions(files);
   const readable = files.every((file) => file.status === 'surveyed');
   return {
     schemaVersion: 1,
@@ -51,6 +53,7 @@ export function buildReport(
     },
     verdict: readable && fits && passes(levels, settings) ? 'pass' : 'fail',
     ...(baseline !== undefined && { gone: baseline.gone }),
+    ...(cautions.length > 0 && { cautions }),
     ...(steps !== undefined && { steps }),
   };
 }

@@ -1,3 +1,4 @@
+export type { Caution, CautionRole } from './cautions.js';
 export { baselineJson, baselineOf, parseBaseline, withBaseline, type Baseline } from './baseline.js';
 export { buildReport, type ReportParts } from './build-report.js';
 export {

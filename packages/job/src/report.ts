@@ -1,7 +1,8 @@
 import type { Finding, Level, LoopGuess, Occurrence, SurveyEvent } from '@slewcurve/survey';
 import type { Convention } from './conventions.js';
 import type { PlaybackMatrix } from './playback-matrix.js';
-import type { Bend, Price, Step } from '@slewcurve/mend';
+import type { Bend, Meeting, Price, Step } from '@slewcurve/mend';
+import type { Caution } from './cautions.js';
 
 /** One clip of a report. `keys` and `tracks` count rotation tracks. */
 export interface ClipReport {
@@ -92,6 +93,8 @@ export interface FileReport {
   readonly matrix?: readonly PlaybackMatrix[];
   readonly clips: readonly ClipReport[];
   readonly tracks: readonly TrackReport[];
+  /** One a role; left out where none is. */
+  readonly cautions?: readonly Caution[];
   readonly findings: readonly ReportedFinding[];
   /** Findings of several tracks within one frame; left out where there are none. */
   readonly events?: readonly SurveyEvent[];
@@ -114,10 +117,15 @@ export interface StepReport {
     readonly track: string;
     readonly keys: readonly number[];
   }[];
-  /** Pace verbs alone, the worst of the tracks: what the new pace costs. Seconds, degrees, bytes. */
+  /**
+   * What it costs, the worst of the tracks: seconds, degrees, bytes. The degrees of a pace are how far what is stored departs from the path at the wanted
+   * pace, those of any other edit how far the motion departs from what it was.
+   */
   readonly price?: Price;
   /** Pace verbs alone: where the new pace takes a bend of the path fast, new seconds and deg/s; worst first. */
   readonly bends?: readonly Bend[];
+  /** match alone: what both sides of the worst join turn at now. deg/s, degrees. */
+  readonly meeting?: Meeting;
 }
 
 /** Counts of open findings by level, and of muted ones: how many are stamped, how many known from the baseline. */
@@ -143,6 +151,8 @@ export interface Report {
   readonly shard?: Shard;
   /** With a baseline alone: what it knows and is gone. */
   readonly gone?: readonly GonePlace[];
+  /** What to mind before a motion is played on a machine or in a headset; left out where none is. */
+  readonly cautions?: readonly Caution[];
   /** `mend` alone: what each step did. */
   readonly steps?: readonly StepReport[];
 }

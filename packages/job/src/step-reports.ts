@@ -1,4 +1,11 @@
-import { proveEdit, type AppliedStep, type Price } from '@slewcurve/mend';
+import {
+  proveEdit,
+  storedBytes,
+  type AppliedStep,
+  type EditProof,
+  type Meeting,
+  type Price,
+} from '@slewcurve/mend';
 import type { StepReport } from './report.js';
 import { significant } from '@slewcurve/survey';
 
@@ -11,16 +18,15 @@ export function stepReports(applied: readonly AppliedStep[]): StepReport[] {
 
 function stepReport({ step }: AppliedStep, edits: readonly AppliedStep[]): StepReport {
   const most = (of: (edit: AppliedStep) => number): number => Math.max(0, ...edits.map(of));
+  const proofs = edits.map(({ before, result }) => proveEdit(before, result.track, result, step.keep));
   return {
     step,
     changed: edits.reduce((sum, { result }) => sum + result.changed.length, 0),
     largest: significant(most(({ result }) => result.largest)),
-    outside: significant(
-      most(({ before, result }) => proveEdit(before, result.track, result, step.keep).outside),
-    ),
+    outside: significant(Math.max(0, ...proofs.map((proof) => proof.outside))),
     added: significant(most(({ result }) => result.added)),
     ...droppedKeys(edits),
-    ...paceReport(edits),
+    ...paceReport(edits, proofs),
   };
 }
 
@@ -33,21 +39,43 @@ function droppedKeys(edits: readonly AppliedStep[]): Pick<StepReport, 'dropped'>
   return dropped.length === 0 ? {} : { dropped };
 }
 
-/** Worst price and worst bends over the tracks that a pace was given to. */
-function paceReport(edits: readonly AppliedStep[]): Pick<StepReport, 'price' | 'bends'> {
-  const prices = edits.flatMap(({ result }) => result.price ?? []);
-  if (prices.length === 0) return {};
+/** Worst price, worst bends and worst join over the tracks. */
+function paceReport(
+  edits: readonly AppliedStep[],
+  proofs: readonly EditProof[],
+): Pick<StepReport, 'price' | 'bends' | 'meeting'> {
+  const prices = edits.map((edit, i) => edit.result.price ?? plainPrice(edit, proofs[i]?.inside ?? 0));
   const worst = (of: (price: Price) => number): number =>
     significant(prices.reduce((most, price) => Math.max(most, of(price)), -Infinity));
+  const rounded = worst((price) => price.rounded ?? -Infinity);
+  const price = {
+    seconds: worst(({ seconds }) => seconds),
+    degrees: worst(({ degrees }) => degrees),
+    bytes: prices.reduce((sum, { bytes }) => sum + bytes, 0),
+    ...(rounded >= 0 && { rounded }),
+  };
+  const meetings = edits.flatMap(({ result }) => result.meeting ?? []);
+  if (edits.every(({ result }) => result.bends === undefined)) return { price };
   const bends = edits.flatMap(({ result }) => result.bends ?? []);
   // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   bends.sort((a, b) => b.jump - a.jump);
   return {
-    price: {
-      seconds: worst(({ seconds }) => seconds),
-      degrees: worst(({ degrees }) => degrees),
-      bytes: prices.reduce((sum, { bytes }) => sum + bytes, 0),
-    },
+    price,
     bends: bends.slice(0, 20).map(({ time, jump }) => ({ time, jump: significant(jump) })),
+    ...(meetings.length > 0 && { meeting: worstMeeting(meetings) }),
   };
+}
+
+/** What an edit costs that is no pace. */
+function plainPrice({ before, result }: AppliedStep, degrees: number): Price {
+  return { seconds: result.added, degrees, bytes: storedBytes(result.track) - storedBytes(before) };
+}
+
+function worstMeeting(meetings: readonly Meeting[]): Meeting {
+  const { before, after, axis } = meetings.reduce((a, b) => (gapOf(b) > gapOf(a) ? b : a));
+  return { before: significant(before), after: significant(after), axis: significant(axis) };
+}
+
+function gapOf({ before, after }: Meeting): number {
+  return Math.abs(before - after) / Math.max(before, after);
 }

@@ -1,6 +1,7 @@
 import { SlewcurveError } from '@slewcurve/core';
 import type { AnimationFile } from '@slewcurve/formats';
 import { guessLoop, surveyTrack, type Finding } from '@slewcurve/survey';
+import { cautionsOf } from './cautions.js';
 import { clipOnGrid } from './clip-on-grid.js';
 import { clipReport } from './clip-report.js';
 import { conventionsOf } from './conventions.js';
@@ -36,6 +37,11 @@ export async function surveyFile(
       findings.push(...surveyTrack(track, { clip, ...placeIn(file), file: name, ...settings }));
       await betweenSlices(watch, tracks.length, total, 'tracks');
     }
+  const cautions = cautionsOf(
+    clips.flatMap((clip) => clip.tracks),
+    file.nodes,
+    settings.houseRules,
+  );
   return withEvents({
     file: name,
     status: 'surveyed',
@@ -48,6 +54,7 @@ export async function surveyFile(
       return { ...clipReport(clip), ...(loopGuess !== undefined && { loopGuess }) };
     }),
     tracks,
+    ...(cautions.length > 0 && { cautions }),
     findings,
     ...(settings.matrix && { matrix }),
   });

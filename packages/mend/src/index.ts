@@ -7,5 +7,6 @@ export { easeOf } from './pace/ease-of.js';
 export { matchesPattern } from './pattern.js';
 export { parseSentence, sayStep } from './sentence.js';
 export { type EditProof, proveEdit } from './proof.js';
+export { storedBytes } from './stored-bytes.js';
 export { type BridgeEnds, bridgeAcross, shelfEnds } from './bridge-across.js';
 export { shelfTurn } from './shelf-turn.js';

@@ -1,7 +1,7 @@
-import type { PlaybackId } from '@slewcurve/core';
+import type { PlaybackId, RotationTrack, SceneNode } from '@slewcurve/core';
 import { matchesPattern } from '@slewcurve/mend';
 import type { Level } from './finding.js';
-import type { Role } from './roles.js';
+import { type Role, roleOf } from './roles.js';
 import type { Limits, RoleLimits, Rule } from './rule.js';
 
 /** A level by decree; `off` silences. */
@@ -113,6 +113,11 @@ function exceptionsAt(house: HouseRules, address: Address): readonly Exception[]
       matchesPattern(where.clip ?? '*', address.clip) &&
       matchesPattern(where.track ?? '*', address.track),
   );
+}
+
+/** The role of a track's node: what the house says, or else its node. */
+export function roleIn(house: HouseRules, track: RotationTrack, nodes: readonly SceneNode[]): Role {
+  return roleAt(house, track.id) ?? roleOf(track, nodes);
 }
 
 /** The role that the house gives a node path; undefined where it says nothing. */

@@ -2,6 +2,7 @@ export type { Finding, Level, Occurrence, Way } from './finding.js';
 export { ROLES, roleOf, type Role } from './roles.js';
 export {
   NO_HOUSE_RULES,
+  roleIn,
   type Address,
   type Declared,
   type DeclaredSpan,

@@ -1,7 +1,6 @@
 import { angleFloor, segmentAngle, type Clip, type RotationTrack, type SceneNode } from '@slewcurve/core';
 import { matchesPattern } from '@slewcurve/mend';
-import { NO_HOUSE_RULES, limitsAt, roleAt, type HouseRules } from './house-rules.js';
-import { roleOf } from './roles.js';
+import { NO_HOUSE_RULES, limitsAt, roleIn, type HouseRules } from './house-rules.js';
 import { loopGap } from './rules/seam/loop-gap.js';
 import { seamOf } from './rules/jump/seam-of.js';
 
@@ -45,7 +44,7 @@ function closeWithin(
   houseRules: HouseRules,
   file: string,
 ): number | undefined {
-  const role = roleAt(houseRules, track.id) ?? roleOf(track, nodes);
+  const role = roleIn(houseRules, track, nodes);
   const limits = limitsAt(houseRules, loopGap, role, { file, clip: track.clip, track: track.id });
   if (limits === undefined || track.times.length < 3) return undefined;
   return Math.max(limits['gap'] ?? 0, 2 * angleFloor(track.storage, track.interpolation) * DEGREES);

@@ -14,12 +14,11 @@ import { claimSpots, type Found } from './claim-order.js';
 import { withDeclaredCuts } from './declared-cuts.js';
 import { describeFinding, type Subject } from './describe-finding.js';
 import type { Finding } from './finding.js';
-import { NO_HOUSE_RULES, levelAt, limitsAt, roleAt, type Address, type HouseRules } from './house-rules.js';
+import { NO_HOUSE_RULES, levelAt, limitsAt, roleIn, type Address, type HouseRules } from './house-rules.js';
 import { declaredHere, isExcused } from './declared-here.js';
 import { keptKeys } from './kept-keys.js';
 import { latticeOf } from './lattice.js';
 import { RULES } from './registry.js';
-import { roleOf } from './roles.js';
 import type { Limits, PlayedTrack, Rule, TrackContext } from './rule.js';
 import { visibleEffect } from './visible-effect.js';
 
@@ -94,7 +93,7 @@ function contextOf(
   address: Address,
 ): TrackContext {
   const { clip = alone(track), nodes = [], playbacks = ['as-written'] } = settings;
-  const role = roleAt(house, track.id) ?? roleOf(track, nodes);
+  const role = roleIn(house, track, nodes);
   const stored = withLattice(withDeclaredCuts(track, house));
   const playable = playableTrack(stored);
   return {

@@ -1,5 +1,4 @@
 import { sayTime, type TimeForm } from '@slewcurve/core';
-import { sayStep } from '@slewcurve/mend';
 import type { Level } from '@slewcurve/survey';
 import {
   isAtLeast,
@@ -7,7 +6,6 @@ import {
   type GonePlace,
   type Report,
   type ReportedFinding,
-  type StepReport,
   type TrackReport,
 } from '../report.js';
 import { sayConventions } from '../conventions.js';
@@ -15,7 +13,10 @@ import { gatherByRule, sayGathered, type Gathered } from './gathered.js';
 import { textMatrix } from './matrix-text.js';
 import { printable } from './printable.js';
 import { sayEvent, sayLoopGuesses } from './say-event.js';
+import { sayCaution } from './say-caution.js';
+import { sayDone } from './say-done.js';
 import { sayFault, sayPlace, sayRemedy } from './say-finding.js';
+import { sayFigure } from './say-figure.js';
 import { counted, sayVerdict } from './say-verdict.js';
 
 /** How words of a level, or of the verdict, are coloured for a terminal; elsewhere they stand as they are. */
@@ -42,6 +43,7 @@ export function textReport(
     ...(report.gone ?? []).map(sayGone),
     ...(report.steps ?? []).map(sayDone),
     ...results,
+    ...(report.cautions ?? []).map(sayCaution),
     paint(sayVerdict(report), report.verdict),
     '',
   ].join('\n');
@@ -110,17 +112,6 @@ function sayGone({ file, rule, clip, track }: GonePlace): string {
   return printable(`${file}: ${track} in ${clip}: gone since the baseline was written. ${rule}`);
 }
 
-function sayDone(step: StepReport): string {
-  const keys = step.changed === 1 ? '1 key changed' : `${step.changed} keys changed`;
-  return `${sayStep(step.step)} ${keys}, the largest by ${number(step.largest)}°; outside its span ${number(step.outside)}°; ${number(step.added)} s added.${(step.dropped ?? []).map(sayDropped).join('')}`;
-}
-
-function sayDropped({ track, keys }: NonNullable<StepReport['dropped']>[number]): string {
-  const listed =
-    keys.length > 20 ? `${keys.slice(0, 20).join(', ')} and ${keys.length - 20} more` : keys.join(', ');
-  return ` Dropped of ${track}: ${keys.length === 1 ? 'key' : 'keys'} ${listed}.`;
-}
-
 function frameRateOf({ clips }: FileReport, name: string): number | undefined {
   return clips.find(({ clip }) => clip === name)?.frameRate;
 }
@@ -136,11 +127,11 @@ const COLUMNS: readonly Column[] = [
   { head: 'keys', cell: (track) => String(track.keys) },
   { head: 'from', time: (track) => track.start, cell: (track) => track.start.toFixed(3) },
   { head: 'to', time: (track) => track.end, cell: (track) => track.end.toFixed(3) },
-  { head: 'turned °', cell: (track) => number(track.travelled) },
-  { head: 'median °/s', cell: (track) => number(track.medianRate) },
-  { head: 'peak °/s', cell: (track) => number(track.peakRate) },
+  { head: 'turned °', cell: (track) => sayFigure(track.travelled) },
+  { head: 'median °/s', cell: (track) => sayFigure(track.medianRate) },
+  { head: 'peak °/s', cell: (track) => sayFigure(track.peakRate) },
   { head: 'peak at', time: (track) => track.peakAt, cell: (track) => track.peakAt.toFixed(3) },
-  { head: 'floor °/s', cell: (track) => number(track.noiseFloor) },
+  { head: 'floor °/s', cell: (track) => sayFigure(track.noiseFloor) },
 ];
 
 function fileRoster(file: FileReport, form: TimeForm): string[] {
@@ -187,11 +178,4 @@ function faultsOf(file: FileReport, track: TrackReport): string {
     (part) => !part.startsWith('0'),
   );
   return parts.join(' ') || '-';
-}
-
-/** At most six significant digits, without an exponent for anything a person meets. */
-function number(value: number): string {
-  const digits = Math.abs(value) >= 100 ? 0 : Math.abs(value) >= 10 ? 1 : 2;
-  if (value !== 0 && Math.abs(value) < 0.005) return value.toPrecision(2);
-  return value.toLocaleString('en-GB', { minimumFractionDigits: digits, maximumFractionDigits: digits });
 }

@@ -15,6 +15,7 @@ import {
 import { placeOf } from '../acted-keys.js';
 import { DEGREES, editResult } from '../edit-result.js';
 import type { Step } from '../step.js';
+import { storedBytes } from '../stored-bytes.js';
 import { storedValue, tangentFor } from '../stored-key.js';
 import type { EditResult, Price, TimeMap } from '../verb.js';
 import { bendsOf } from './bends.js';
@@ -198,18 +199,15 @@ export function priceOf(
       const t = times[key] + ((times[key + 1] - times[key]) * (part + 0.5)) / 4;
       degrees = Math.max(degrees, angleBetween(stored.orientation(p, t), paced.orientation(q, t)) * DEGREES);
     }
-  return { seconds: lastOf(times) - lastOf(before.times), degrees, bytes: bytesOf(after) - bytesOf(before) };
+  return {
+    seconds: lastOf(times) - lastOf(before.times),
+    degrees,
+    bytes: storedBytes(after) - storedBytes(before),
+  };
 }
 
 function lastOf(times: Float64Array): number {
   return times[times.length - 1];
-}
-
-/** Bytes of one number by storage; text counts as eight letters. */
-const BYTES = { float64: 8, float32: 4, int16: 2, uint16: 2, int8: 1, uint8: 1, text: 8 } as const;
-
-function bytesOf({ times, values, storage }: RotationTrack): number {
-  return times.length * BYTES[storage.timeComponent] + values.length * BYTES[storage.component];
 }
 
 /** @throws SlewcurveError `step.no-room` where two keys would have one time */
