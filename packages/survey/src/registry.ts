@@ -1,4 +1,5 @@
 import { coarse } from './rules/file/coarse.js';
+import { hole } from './rules/file/hole.js';
 import { idle } from './rules/file/idle.js';
 import { notFinite } from './rules/file/not-finite.js';
 import { notNormalised } from './rules/file/not-normalised.js';
@@ -50,6 +51,7 @@ export const RULES: readonly Rule[] = Object.freeze([
   timeGrid,
   coarse,
   idle,
+  hole,
   ragged,
   signFlip,
   half,
