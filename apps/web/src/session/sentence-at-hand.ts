@@ -51,7 +51,8 @@ export function tryOut(text: string, time: number, { after, above, nodes }: Tria
 
 /** Why a step can't be done, without "Step 1": there is but one sentence. */
 function reasonOf(error: unknown): string {
-  const reason = error instanceof SlewcurveError && error.cause instanceof SlewcurveError ? error.cause : error;
+  const reason =
+    error instanceof SlewcurveError && error.cause instanceof SlewcurveError ? error.cause : error;
   return reason instanceof Error ? reason.message : String(reason);
 }
 
