@@ -24,7 +24,7 @@ export function moved(t: number, from: number, to: number, degrees: number): num
 }
 
 /** Three normal numbers by Box and Muller's polar form. */
-export function normals(seed: number): () => readonly [number, number, number] {
+function normals(seed: number): () => readonly [number, number, number] {
   const random = seededRandom(seed);
   const one = (): number => Math.sqrt(-2 * Math.log(1 - random())) * Math.cos(2 * Math.PI * random());
   return () => [one(), one(), one()];

@@ -37,6 +37,13 @@ describe('explainWord', () => {
     ['alignSigns', ['turn.sign-flip']],
     ['NaN', ['file.not-finite']],
     ['C1', ['pace.elbow']],
+    ['jitter', ['shake.grain', 'smooth']],
+    ['denoise', ['shake.grain', 'smooth']],
+    ['filter', ['smooth']],
+    ['vibration', ['shake.hum', 'take out hum']],
+    ['drift', ['shake.creep', 'take out drift']],
+    ['walk cycle', ['seam.loop-gap', 'seam.loop-kink', 'seam.doubled-end', 'close loop']],
+    ['seamless', ['seam.loop-gap', 'close loop']],
   ])('%s lands on %j', (word, names) => {
     expect(namesOf(word)).toEqual(expect.arrayContaining(names));
   });

@@ -7,7 +7,7 @@ const REACH = 4;
 const FAR = (2 * Math.PI) / 3;
 
 /** Where a local polynomial stands and how it turns at a key, against that key. Own axes, radians and rad/s. */
-export interface LocalFit {
+interface LocalFit {
   readonly turn: Float64Array;
   readonly rate: Float64Array;
 }
