@@ -58,6 +58,17 @@ describe('the motion of a curve', () => {
     expect(apart[0]).toBeLessThan(1e-9);
   });
 
+  test('draws the same whether it was measured ahead, in one go or in slices, or not at all', () => {
+    const long = playAs(turning(Array.from({ length: 4000 }, (_, i) => (i * 7) % 150)), 'as-written');
+    const [sliced, whole, never] = [curveMotion(long), curveMotion(long), curveMotion(long)];
+    let slices = 1;
+    for (; !sliced.prepare(1); slices++) expect(slices).toBeLessThan(100_000);
+    expect(whole.prepare(1e6)).toBe(true);
+    for (const motion of [sliced, whole])
+      expect(motion.columns(3, 390, 120)).toEqual(never.columns(3, 390, 120));
+    expect(sliced.read(200).odometer).toBe(never.read(200).odometer);
+  });
+
   test('finds a segment: the later one at a knot, the last at the end', () => {
     expect([-1, 0, 0.5, 1, 2, 9].map((t) => segmentAt([0, 1, 2], t))).toEqual([0, 0, 0, 1, 1, 1]);
   });

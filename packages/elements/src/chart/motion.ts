@@ -116,7 +116,9 @@ export function curveMotion(curve: Curve): Motion {
       const end = performance.now() + milliseconds;
       while (measured < tops.length && performance.now() < end)
         measure(Math.min(tops.length, measured + MEASURED_AT_ONCE));
-      return measured === tops.length;
+      if (performance.now() >= end) return pyramid !== undefined;
+      segments();
+      return true;
     },
     orientation: (time) => curve.orientation<[number, number, number, number]>([0, 0, 0, 1], time),
   };
