@@ -6,6 +6,8 @@ export function nearestWord(word: string, known: readonly string[]): string | un
   let nearest: string | undefined;
   let least = Math.max(1, Math.floor(word.length / 3)) + 1;
   for (const candidate of known) {
+    // So many letters at least are missing or too many; a word of any length costs no more than its own.
+    if (Math.abs(word.length - candidate.length) >= least) continue;
     const distance = editDistance(word.toLowerCase(), candidate.toLowerCase());
     if (distance < least) [nearest, least] = [candidate, distance];
   }

@@ -110,7 +110,8 @@ function headerReader(file: string): { take(line: TextLine): boolean; done(): He
   return {
     take(line) {
       if (over) return false;
-      const [, name, text = ''] = /^\s*(frames|frame\s*time)\s*:\s*(.*?)\s*$/i.exec(line.text) ?? [];
+      const [, name, value = ''] = /^(frames|frame\s*time)\s*:(.*)$/i.exec(line.text.trim()) ?? [];
+      const text = value.trim();
       if (name === undefined) {
         if (!frameTime)
           throw lineError(

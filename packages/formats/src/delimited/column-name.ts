@@ -45,9 +45,15 @@ const FAMILIES: readonly (readonly [Family, RegExp])[] = [
   ['plain', /^(?:(.+)[_.\s])?([xyzw])$/i],
 ];
 
+/** Longer names are no names; a bound keeps a hostile one from being searched at length. */
+const LONGEST_NAME = 256;
+
 /** What a column of this name holds; undefined where the name means no time and no part of an orientation. */
 export function meaningOf(name: string): ColumnMeaning | undefined {
-  const trimmed = name.trim();
+  return name.length > LONGEST_NAME ? undefined : meaningOfTrimmed(name.trim());
+}
+
+function meaningOfTrimmed(trimmed: string): ColumnMeaning | undefined {
   const [, base = trimmed, bracketed, suffix] = UNIT.exec(trimmed) ?? [];
   const unit = (bracketed ?? suffix ?? '').toLowerCase();
   if (TIME.test(base)) {

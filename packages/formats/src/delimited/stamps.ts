@@ -16,7 +16,8 @@ export interface StampReader {
   done(): Stamps;
 }
 
-const NUMBER = /^([+-]?)(\d*)\.?(\d*)(?:[eE]([+-]?\d{1,4}))?$/;
+// One way to match each text: a long one that fails, fails at once.
+const NUMBER = /^([+-]?)(\d*)(?:\.(\d*))?(?:[eE]([+-]?\d{1,4}))?$/;
 const NO_STAMP = /^[+-]?(?:nan|inf|infinity)$/i;
 /** Digits that float64 keeps whatever they are. */
 const SAFE_DIGITS = 15;

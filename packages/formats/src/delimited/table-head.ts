@@ -106,7 +106,7 @@ function namesInWords(file: string, words: readonly TextLine[], separator: Separ
 function namesInComment(line: TextLine): Named | undefined {
   const text = readable(line)
     .text.replace(/^\s*#+\s*/, '')
-    .replaceAll(/\s+(?=[[(])/g, '');
+    .replaceAll(/(?<!\s)\s+(?=[[(])/g, '');
   const separator = SEPARATORS.find((one) => text.includes(one)) ?? ' ';
   const names = text.split(separator === ' ' ? /\s+/ : separator).map((name) => name.trim());
   const kinds = new Set(names.map((name) => meaningOf(name)?.kind));

@@ -15,6 +15,7 @@ import type { Buffers } from './buffers.js';
 import type { Container } from './container.js';
 import { uniqueLabels } from '../node-paths.js';
 import { type Problem, problem, problemOf } from './problem.js';
+import type { Problems } from './problem-list.js';
 import type { ReadTrack } from './track-change.js';
 import { type ColumnsOf, type Columns, readColumns } from './rotation-columns.js';
 import { flawFinder } from './sampler-flaws.js';
@@ -22,6 +23,9 @@ import { type RotationChannel, channelPointer, rotationChannel, samplerPointer }
 
 /** Pointers kept of what shares an accessor. A take of a thousand joints on one clock would list a million otherwise. */
 const MOST_SHARERS = 16;
+
+/** How often each number may be read by way of shared accessors, on average. Tracks are surveyed one by one, whatever they share. */
+const MOST_SHARED = 64;
 
 /** The clips of a file, and every track of theirs with what writing it back needs. */
 export interface ReadClips {
@@ -34,7 +38,7 @@ export async function readClips(
   container: Container,
   paths: readonly string[],
   buffers: Buffers,
-  problems: Problem[],
+  problems: Problems,
 ): Promise<ReadClips> {
   const stated = member(container.json, 'animations');
   if (stated !== undefined && !Array.isArray(stated))
@@ -60,6 +64,7 @@ export async function readClips(
   const columnsOf = await readColumns(container, channels.flat(), buffers);
   const sharers = sharersOf(container.json);
   const flawsOf = flawFinder(container);
+  let left = MOST_SHARED * (65_536 + container.source.size + buffers.opened());
   const all: ReadTrack[] = [];
   const clips = names.map((name, index) => {
     const own = channels[index] ?? [];
@@ -70,6 +75,11 @@ export async function readClips(
     const tracks = own.flatMap((channel, i) => {
       const columns = columnsOrProblem(channel, columnsOf, name, problems);
       if (!columns) return [];
+      left -= columns.times.length + columns.values.length;
+      if (left < 0) {
+        problems.push(tooShared(container, channel, name));
+        return [];
+      }
       const id = ids[i] ?? '';
       problems.push(...flawsOf(channel, columns, id, name));
       const track = trackOf(channel, columns, id, name, sharers);
@@ -85,7 +95,7 @@ function rotationChannels(
   container: Container,
   clipIndex: number,
   clip: string,
-  problems: Problem[],
+  problems: Problems,
 ): RotationChannel[] {
   const json = listMember(container.json, 'animations')[clipIndex];
   const pointer = `/animations/${clipIndex}`;
@@ -131,8 +141,23 @@ function rotationChannels(
   return found;
 }
 
+function tooShared(
+  container: Container,
+  { clipIndex, channel, node }: RotationChannel,
+  clip: string,
+): Problem {
+  return problem(
+    container,
+    'gltf.more-than-held',
+    channelPointer(clipIndex, channel),
+    `and those before it read more keys, over and over, than a file of ${container.source.size} bytes can mean; it has no track.`,
+    { clip, node },
+    'error',
+  );
+}
+
 /** A list that the format allows only with something in it. */
-function noteEmpty(container: Container, pointer: string, list: Json | undefined, problems: Problem[]): void {
+function noteEmpty(container: Container, pointer: string, list: Json | undefined, problems: Problems): void {
   if (Array.isArray(list) && list.length === 0)
     problems.push(
       problem(container, 'gltf.empty-list', pointer, 'is empty, and should be left out then.', {}, 'note'),
@@ -143,7 +168,7 @@ function columnsOrProblem(
   channel: RotationChannel,
   columnsOf: ColumnsOf,
   clip: string,
-  problems: Problem[],
+  problems: Problems,
 ): Columns | undefined {
   try {
     return columnsOf(channel);

@@ -2,7 +2,7 @@ import { SlewcurveError } from '@slewcurve/core';
 import type { Follower } from '../animation-file.js';
 import { type Json, countMember, listMember, member, textMember } from '../json-value.js';
 import { FLOAT, accessorLayout } from './accessor-layout.js';
-import { decodeAccessor } from './accessor-data.js';
+import { type Decode, boundedDecoder } from './bounded-decoder.js';
 import type { Buffers } from './buffers.js';
 import type { Container } from './container.js';
 import { type RotationChannel, movedNode, samplerPointer } from './rotation-channel.js';
@@ -30,8 +30,9 @@ export async function followerChanges(
       else byChannel.set(key, { channel, followers: [follower] });
     }
   const changes: TrackChange[] = [];
+  const decode = boundedDecoder(container, buffers);
   for (const { channel, followers: own } of byChannel.values()) {
-    const change = await changeOf(container, buffers, channel, own);
+    const change = await changeOf(container, buffers, channel, own, decode);
     if (change) changes.push(change);
   }
   return changes;
@@ -82,6 +83,7 @@ async function changeOf(
   buffers: Buffers,
   channel: RotationChannel,
   followers: readonly Follower[],
+  decode: Decode,
 ): Promise<TrackChange | undefined> {
   const input = accessorLayout(container, channel.input);
   const output = accessorLayout(container, channel.output);
@@ -90,8 +92,8 @@ async function changeOf(
     ...(sparse ? [sparse.indices, sparse.values] : []),
   ]);
   const bytesOf = await readRuns(runs, buffers, container.file);
-  const times = decodeAccessor(input, bytesOf);
-  const values = decodeAccessor(output, bytesOf);
+  const times = decode(input, bytesOf);
+  const values = decode(output, bytesOf);
   const perKey = times.length === 0 ? 0 : output.count / times.length;
   if (input.type !== 'SCALAR' || input.componentType !== FLOAT || !Number.isInteger(perKey) || perKey === 0)
     throw cannotFollow(container, channel, 'its times and values do not fit together');

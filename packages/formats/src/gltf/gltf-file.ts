@@ -6,30 +6,32 @@ import { readClips } from './clips.js';
 import type { Container } from './container.js';
 import { nodeTree } from './node-tree.js';
 import { type Problem, problem } from './problem.js';
+import { type Problems, problemList } from './problem-list.js';
 import { writePlan } from './write-plan.js';
 
 /** Reads a glTF asset that has been taken apart into tracks. */
 export async function gltfFile(container: Container, options: OpenOptions): Promise<AnimationFile> {
-  const problems: Problem[] = [];
+  const problems = problemList(container);
   checkVersion(container, problems);
   checkLength(container, problems);
   const nodes = nodeTree(container, problems);
   const buffers = fileBuffers(container, options.sibling);
   const paths = nodes.map(({ path }) => path);
   const { clips, tracks } = await readClips(container, paths, buffers, problems);
-  refuseHidden(problems);
+  const found = problems.all();
+  refuseHidden(found);
   return Object.freeze({
     format: container.format,
     fixedTimes: false,
     nodes: Object.freeze(nodes),
     clips: Object.freeze(clips),
-    problems: Object.freeze(problems),
+    problems: Object.freeze(found),
     plan: async (changed: readonly RotationTrack[], followers?: readonly Follower[]) =>
       writePlan(container, buffers, tracks, changed, followers),
   });
 }
 
-function checkVersion(container: Container, problems: Problem[]): void {
+function checkVersion(container: Container, problems: Problems): void {
   const version = textMember(member(container.json, 'asset'), 'version');
   const pointer = '/asset/version';
   if (version === undefined)
@@ -44,7 +46,7 @@ function checkVersion(container: Container, problems: Problem[]): void {
     );
 }
 
-function checkLength({ source, file, declaredLength }: Container, problems: Problem[]): void {
+function checkLength({ source, file, declaredLength }: Container, problems: Problems): void {
   if (declaredLength !== undefined && declaredLength < source.size)
     problems.push({
       code: 'gltf.trailing-bytes',

@@ -11,10 +11,11 @@ import {
 } from '../json-value.js';
 import { nodePaths } from '../node-paths.js';
 import type { Container } from './container.js';
-import { type Problem, problem } from './problem.js';
+import { problem } from './problem.js';
+import type { Problems } from './problem-list.js';
 
 /** The node tree at rest, in the file's own order. Whatever can't be a tree is cut and reported. */
-export function nodeTree(container: Container, problems: Problem[]): SceneNode[] {
+export function nodeTree(container: Container, problems: Problems): SceneNode[] {
   const nodes = listMember(container.json, 'nodes');
   const parents = parentsOf(container, nodes, problems);
   const paths = nodePaths(
@@ -40,7 +41,7 @@ export function nodeTree(container: Container, problems: Problem[]): SceneNode[]
 }
 
 /** Parent of every node, -1 at roots. The first parent that claims a node keeps it; a ring is cut at its first node. */
-function parentsOf(container: Container, nodes: readonly Json[], problems: Problem[]): number[] {
+function parentsOf(container: Container, nodes: readonly Json[], problems: Problems): number[] {
   const parents = nodes.map(() => -1);
   nodes.forEach((node, parent) => {
     const children = member(node, 'children');
@@ -80,7 +81,7 @@ function parentsOf(container: Container, nodes: readonly Json[], problems: Probl
   return parents;
 }
 
-function cutRings(container: Container, parents: number[], problems: Problem[]): void {
+function cutRings(container: Container, parents: number[], problems: Problems): void {
   // 0 not seen, 1 on the way up that is being walked, 2 known to end at a root.
   const state = new Uint8Array(parents.length);
   for (let start = 0; start < parents.length; start++) {
@@ -103,7 +104,7 @@ function cutRings(container: Container, parents: number[], problems: Problem[]):
 
 type RestPose = Pick<SceneNode, 'rotation' | 'translation' | 'scale'>;
 
-function restPose(container: Container, node: Json, index: number, problems: Problem[]): RestPose {
+function restPose(container: Container, node: Json, index: number, problems: Problems): RestPose {
   const matrix = numbersMember(node, 'matrix', 16);
   if (matrix) return poseOfMatrix(container, matrix, index, problems);
   return {
@@ -117,7 +118,7 @@ function poseOfMatrix(
   container: Container,
   matrix: readonly number[],
   index: number,
-  problems: Problem[],
+  problems: Problems,
 ): RestPose {
   try {
     const { orientation, translation, scale } = splitMatrix(matrix);

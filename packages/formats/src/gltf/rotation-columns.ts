@@ -1,6 +1,7 @@
 import { VALUES_PER_KEY } from '@slewcurve/core';
 import { type AccessorLayout, AccessorFault, FLOAT, accessorLayout } from './accessor-layout.js';
-import { decodeAccessor, hasRisingIndices, type RunBytes } from './accessor-data.js';
+import { hasRisingIndices } from './accessor-data.js';
+import { boundedDecoder } from './bounded-decoder.js';
 import type { Buffers } from './buffers.js';
 import type { Container } from './container.js';
 import type { RotationChannel } from './rotation-channel.js';
@@ -42,14 +43,14 @@ export async function readColumns(
     ...(sparse ? [sparse.indices, sparse.values] : []),
   ]);
   const bytesOf = await readRuns(runs, buffers, container.file);
-  const decode = decoder(container, bytesOf, 65_536 + 2 * (container.source.size + buffers.opened()));
+  const decode = boundedDecoder(container, buffers);
   const decoded = new Map<AccessorLayout, Float64Array | AccessorFault>();
   const outOfOrder = new Set<number>();
   for (const layout of wanted)
     decoded.set(
       layout,
       attempt(() => {
-        const numbers = decode(layout);
+        const numbers = decode(layout, bytesOf);
         if (!hasRisingIndices(layout, bytesOf)) outOfOrder.add(layout.index);
         return numbers;
       }),
@@ -121,38 +122,6 @@ function checkedPair(container: Container, channel: RotationChannel, layouts: La
 
 function described(layout: AccessorLayout): string {
   return `${layout.normalized ? 'normalised ' : ''}${layout.component.name} ${layout.type}`;
-}
-
-/**
- * Decodes within a budget: views may overlap and accessors without a view hold nothing, so a small file could ask for far
- * more numbers than it has bytes.
- */
-function decoder(
-  container: Container,
-  bytesOf: RunBytes,
-  budget: number,
-): (layout: AccessorLayout) => Float64Array {
-  let left = budget;
-  return (layout) => {
-    const pointer = `/accessors/${layout.index}`;
-    const place = { file: container.file, pointer };
-    const numbers = layout.count * layout.size;
-    if (numbers > left)
-      throw new AccessorFault(
-        'gltf.more-than-held',
-        `${container.file}: ${pointer} asks for ${numbers} numbers; a file of ${container.source.size} bytes can have at most ${budget} in all. Its count is wrong.`,
-        place,
-      );
-    left -= numbers;
-    try {
-      return decodeAccessor(layout, bytesOf);
-    } catch (cause) {
-      if (!(cause instanceof RangeError)) throw cause;
-      throw new AccessorFault('gltf.bad-sparse', `${container.file}: ${pointer}: ${cause.message}.`, place, {
-        cause,
-      });
-    }
-  };
 }
 
 function attempt<T>(make: () => T): T | AccessorFault {
