@@ -119,6 +119,7 @@ describe('the page on builds', () => {
       ['npx slewcurve check clips --baseline baseline.json --baseline-exact', 0],
       ["npx slewcurve check clips/walk.glb --stamp jump.lone-key --reason 'the hit is meant'", 0],
       ['npx slewcurve compare clips/walk.glb clips/walk-again.glb --angle 0.5 --rate 20', 1],
+      ['npx slewcurve docket clips/walk.glb --format html -o docket.html', 0],
       ['npx slewcurve check clips --shard 1/2 --format json -o part-1.json', 1],
       ['npx slewcurve check clips --shard 2/2 --format json -o part-2.json', 1],
       ['npx slewcurve check --merge part-1.json part-2.json', 1],

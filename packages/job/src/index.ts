@@ -27,6 +27,10 @@ export {
   type PlaybackMatrix,
 } from './playback-matrix.js';
 export { desk, type Desk } from './desk.js';
+export { docketHtml } from './docket/docket-html.js';
+export { docketMarkdown } from './docket/docket-markdown.js';
+export { docketOf, type DocketBlock, type DocketParts, type FileBytes } from './docket/docket.js';
+export { tracePicture } from './docket/trace-picture.js';
 export { explanationText } from './explanation-text.js';
 export { mendFile, type MendedFile } from './mend-file.js';
 export { mendProposed, type ProposedMend } from './mend-proposed.js';

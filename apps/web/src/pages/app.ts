@@ -9,7 +9,7 @@ import { saveCopy } from '../files/save-file.js';
 import { stepsOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
 import { keptWork, type SavedWork } from '../session/recovery.js';
-import { Session } from '../session/session.js';
+import { Session, settingsOf } from '../session/session.js';
 import { appStyles } from './app-styles.js';
 import type { SlewChartPage } from './chart-page.js';
 import { docketPage } from './docket-page.js';
@@ -285,9 +285,14 @@ export class SlewApp extends LitElement {
         ></slew-chart-page>
       </section>
       <section class="docket" aria-label="Docket: report">
-        ${this.page === 'docket' ? docketPage(this.files, (name, text) => saveCopy(name, text, 'application/json')) : nothing}
+        ${this.page === 'docket' ? docketPage(this.files, this.docketDoings) : nothing}
       </section>`;
   }
+
+  private readonly docketDoings = {
+    settingsOf: (file: FileWork) => settingsOf(file, this.session.settings),
+    saveText: (name: string, text: string) => void saveCopy(name, text, 'application/json'),
+  };
 
   private readonly fileActions = {
     askConventions: (file: FileWork): TemplateResult =>

@@ -1,114 +1,106 @@
-import { html, nothing, type TemplateResult } from 'lit';
-import { trackName } from '@slewcurve/elements/plot';
-import { LEVELS } from '@slewcurve/job';
-import { sayStep } from '@slewcurve/mend';
-import type { Finding } from '@slewcurve/survey';
+import { html, type TemplateResult } from 'lit';
+import { docketOf, type DocketBlock, type JobSettings } from '@slewcurve/job';
 import { linesOf, stepsOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
 
+/** What the docket page needs of the page around it. */
+interface DocketDoings {
+  settingsOf(file: FileWork): JobSettings;
+  saveText(name: string, text: string): void;
+}
+
 /** Docket: report. The record that is handed on, one printable page a file. */
-export function docketPage(
-  files: readonly FileWork[],
-  saveText: (name: string, text: string) => void,
-): TemplateResult {
+export function docketPage(files: readonly FileWork[], doings: DocketDoings): TemplateResult {
   const ready = files.filter((file) => file.report);
   if (ready.length === 0)
     return html`<p class="empty">
       No file is surveyed yet. What is found and what is mended will stand here, to be printed or handed on.
     </p>`;
-  return html`${ready.map((file) => docketOf(file, saveText))}`;
+  return html`${ready.map((file) => pageOf(file, doings))}`;
 }
 
-function docketOf(file: FileWork, saveText: (name: string, text: string) => void): TemplateResult {
-  const { report, history, proofs } = file;
-  const findings = [...file.findings.values()]
-    .flat()
-    .toSorted((a, b) => LEVELS.indexOf(a.level) - LEVELS.indexOf(b.level));
+function pageOf(file: FileWork, doings: DocketDoings): TemplateResult {
+  const { report, history, proofs, opened } = file;
+  if (!report) return html``;
+  const { playbacks, houseRules } = doings.settingsOf(file);
   const steps = stepsOf(history);
   const card = { schemaVersion: 1, steps };
+  const blocks = docketOf({
+    before: { size: opened?.size ?? 0, report },
+    after: { findings: [...file.findings.values()].flat(), tracks: [] },
+    playbacks,
+    houseRules,
+    lines: linesOf(history),
+    proofs,
+    command: commandOf(file),
+  });
+  const cautions = blocks.filter(({ kind }) => kind === 'caution');
   return html`<article class="docket" aria-label="Docket of ${file.name}">
     <h2>${file.name}</h2>
-    <p>
-      ${file.opened?.size.toLocaleString('en')} bytes, ${report?.tracks.length ?? 0} rotation tracks.
-      Slewcurve measured every motion exactly, as played by the playback named in each line; degrees, seconds
-      of the file’s own clock.
-    </p>
-    <h3>Job card</h3>
-    ${
-      steps.length === 0
-        ? html`<p>Nothing was edited.</p>`
-        : html`<ol>
-            ${linesOf(history).map((line) =>
-              line.skipped
-                ? html`<li><s>${sayStep(line.step)}</s> Skipped.</li>`
-                : html`<li>${sayStep(line.step)} ${proofWords(file, line.step)}</li>`,
-            )}
-          </ol>`
-    }
-    ${
-      proofs.length > 0
-        ? html`<p>
-            Proof: outside the spans of these steps the motion changes by at most
-            ${Math.max(...proofs.map((proof) => proof.outside))}°; tracks that no step names keep every
-            number.
-          </p>`
-        : nothing
-    }
-    <h3>Open findings</h3>
-    ${findings.length === 0 ? html`<p>None.</p>` : findingsTable(findings)}
-    <h3>The same by command</h3>
-    <p><code>${commandOf(file)}</code></p>
+    ${blocks
+      .slice(1)
+      .filter(({ kind }) => kind !== 'caution')
+      .map(blockOf)}
     <p class="doings on-screen">
       <button @click=${() => print()}>Print this page</button>
-      <button @click=${() => saveText('report.json', `${JSON.stringify(report, null, 2)}\n`)}>
+      <button @click=${() => doings.saveText('report.json', `${JSON.stringify(report, null, 2)}\n`)}>
         Save the report as JSON
       </button>
       <button
         ?disabled=${steps.length === 0}
-        @click=${() => saveText('card.json', `${JSON.stringify(card, null, 2)}\n`)}
+        @click=${() => doings.saveText('card.json', `${JSON.stringify(card, null, 2)}\n`)}
       >
         Save the job card as JSON
       </button>
     </p>
-    <p class="caution">
-      With motorised heads and cranes, check limits and stops against the maker’s data and local rules, by a
-      licensed or responsible operator, at reduced speed first. Comfort numbers for headsets are guidance, not
-      a standard. No figure here calls a motion safe.
-    </p>
+    ${cautions.map(blockOf)}
   </article>`;
 }
 
-function findingsTable(findings: readonly Finding[]): TemplateResult {
+/** A piece of the docket on the page. */
+function blockOf(block: DocketBlock): TemplateResult {
+  switch (block.kind) {
+    case 'heading':
+      return html`<h3>${block.text}</h3>`;
+    case 'paragraph':
+      return html`<p>${block.text}</p>`;
+    case 'caution':
+      return html`<p class="caution">${block.text}</p>`;
+    case 'code':
+      return html`<p><code>${block.text}</code></p>`;
+    case 'list': {
+      const items = block.items.map(({ text, struck }) =>
+        struck ? html`<li><s>${text}</s></li>` : html`<li>${text}</li>`,
+      );
+      return block.ordered
+        ? html`<ol>
+            ${items}
+          </ol>`
+        : html`<ul>
+            ${items}
+          </ul>`;
+    }
+    default:
+      return tableOf(block);
+  }
+}
+
+function tableOf({ head, rows, short = [] }: Extract<DocketBlock, { kind: 'table' }>): TemplateResult {
   return html`<table>
     <thead>
       <tr>
-        <th scope="col">level</th>
-        <th scope="col">track</th>
-        <th scope="col">at</th>
-        <th scope="col">what</th>
-        <th scope="col">rule, as played</th>
+        ${head.map((cell) => html`<th scope="col">${cell}</th>`)}
       </tr>
     </thead>
     <tbody>
-      ${findings.map(
-        (finding) =>
+      ${rows.map(
+        (row) =>
           html`<tr>
-            <td class="whole">${finding.level}</td>
-            <td>${trackName(finding.track)} <i>${finding.clip}</i></td>
-            <td class="whole">${finding.keys.length === 0 ? 'all along' : `${finding.time.toFixed(3)} s`}</td>
-            <td>${finding.message}${finding.count > 1 ? ` (the worst of ${finding.count} places)` : ''}</td>
-            <td>${finding.rule}, ${finding.playback.replaceAll('-', ' ')}</td>
+            ${row.map((cell, at) => html`<td class=${short.includes(at) ? 'whole' : ''}>${cell}</td>`)}
           </tr>`,
       )}
     </tbody>
   </table>`;
-}
-
-function proofWords(file: FileWork, step: unknown): string {
-  const proof = file.proofs.find((other) => JSON.stringify(other.step) === JSON.stringify(step));
-  if (!proof) return '';
-  const keys = proof.changed === 1 ? '1 key' : `${proof.changed} keys`;
-  return `${keys} changed, the largest by ${proof.largest}°; ${proof.added} s added.`;
 }
 
 function commandOf({ name, history }: FileWork): string {

@@ -350,8 +350,8 @@ function leftOut({ verb, clip }: Step, why: string): string {
   return `Left out in ${clip}: ${reason}.`;
 }
 
-/** The demo scene has house rules of its own. */
-function settingsOf(file: FileWork | undefined, settings: JobSettings): JobSettings {
+/** What a file is surveyed by: the demo scene brings house rules of its own. */
+export function settingsOf(file: FileWork | undefined, settings: JobSettings): JobSettings {
   return file && !file.blob ? { ...settings, houseRules: kestrelPointRules } : settings;
 }
 

@@ -1,6 +1,7 @@
 import type { CommandIo } from '../command-io.js';
 import type { Arguments, CommandName } from '../flags.js';
 import { compare } from './compare.js';
+import { docket } from './docket.js';
 import { explain } from './explain.js';
 import { mend } from './mend.js';
 import { check, survey } from './survey.js';
@@ -38,6 +39,12 @@ export const COMMANDS: readonly Command[] = Object.freeze([
     usage: 'compare A B [--angle DEG] [--rate DEG_PER_S]',
     summary: 'tells how far two files are apart as played, track by track',
     run: compare,
+  },
+  {
+    name: 'docket',
+    usage: 'docket FILE [--card JOB] [--format html -o OUT]',
+    summary: 'writes the record that is handed on, of FILE as it is or as a job card leaves it',
+    run: docket,
   },
   {
     name: 'explain',
