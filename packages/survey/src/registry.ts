@@ -1,4 +1,7 @@
+import { axesSuspect } from './rules/file/axes-suspect.js';
 import { coarse } from './rules/file/coarse.js';
+import { componentOrder } from './rules/file/component-order.js';
+import { degreesOrRadians } from './rules/file/degrees-or-radians.js';
 import { hole } from './rules/file/hole.js';
 import { idle } from './rules/file/idle.js';
 import { notFinite } from './rules/file/not-finite.js';
@@ -50,6 +53,9 @@ export const RULES: readonly Rule[] = Object.freeze([
   timeOrder,
   timeGrid,
   coarse,
+  componentOrder,
+  degreesOrRadians,
+  axesSuspect,
   idle,
   hole,
   ragged,

@@ -1,4 +1,4 @@
-import type { Clip, Curve, Playback, Regime, RotationTrack } from '@slewcurve/core';
+import type { Clip, Curve, Playback, Regime, RotationTrack, SceneNode } from '@slewcurve/core';
 import type { Step } from '@slewcurve/mend';
 import type { Level, Way } from './finding.js';
 import type { Role } from './roles.js';
@@ -44,6 +44,8 @@ export interface TrackContext {
   /** The playbacks chosen, those left out that can't play this track. */
   readonly played: readonly PlayedTrack[];
   readonly clip: Clip;
+  /** The file's node tree at rest; empty where it is not known. */
+  readonly nodes: readonly SceneNode[];
   /** Horizontal view angle of the camera on the track's node, radians; absent where there is none. */
   readonly view?: number;
   /** A rule's thresholds for this track, house rules applied; undefined where it is off. */

@@ -102,6 +102,7 @@ function contextOf(
     role,
     regime: regime(playable, clip.frameRate),
     clip,
+    nodes,
     ...viewOf(nodes[track.source.node]),
     declared: declaredHere(track, clip, house),
     loop: clip.loop || house.loops.some((pattern) => matchesPattern(pattern, track.clip)),
