@@ -55,3 +55,23 @@ test('playbacks by tick rate stand in a table, and a number leads to its place',
     .poll(() => table.getByRole('row', { name: /^as written/ }).textContent(), SOON)
     .toMatch(/0\.\d+°/);
 });
+
+test('one switch writes all times of the page as frames or timecode, by the grid that was found or is said', async () => {
+  const page = await openApp({ address: '?demo' });
+  await page.getByText('12 rotation tracks in').waitFor();
+  await page.getByRole('searchbox', { name: 'Find a track' }).fill('crane-head');
+  await page.locator('slew-roster .option', { hasText: 'crane-head' }).first().click();
+  const chart = page.locator('slew-chart', { hasText: 'crane-head' });
+  await chart.waitFor();
+  const rows = chart.locator('.from');
+  expect(await rows.nth(1).textContent()).toBe('10 s');
+  await page.getByLabel('times in').selectOption('timecode');
+  await expect.poll(() => rows.nth(1).textContent(), SOON).toBe('00:00:10:00');
+  const notes = chart.locator('.notes').first();
+  expect(await notes.textContent()).toMatch(/00:00:\d\d:\d\d/);
+  expect(await page.getByText('3-D view at').textContent()).toContain('00:00:00:00');
+  await page.getByLabel('times in').selectOption('frames');
+  await page.getByLabel(/^frames a second/).fill('24');
+  await page.getByLabel(/^frames a second/).blur();
+  await expect.poll(() => rows.nth(1).textContent(), SOON).toBe('frame 240');
+});

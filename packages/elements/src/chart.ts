@@ -18,7 +18,7 @@ import { chartHead, keyWords, readingWords, rowTable, twinWords } from './chart/
 import { closeUpSpan } from './chart/close-up-span.js';
 import { foldRows, rowAt, type FoldRow } from './chart/fold.js';
 import { marginOf, packNotes } from './chart/margin.js';
-import { sayAngle, sayTime } from './chart/quantity.js';
+import { readTimesAs, sayAngle, sayTime } from './chart/quantity.js';
 import { RowsInSight } from './chart/rows-in-sight.js';
 import { linearScale, speedScale, type ScaleKind, type SpeedScale } from './chart/scale.js';
 import { SheetPointer } from './chart/sheet-pointer.js';
@@ -45,7 +45,8 @@ type Span = readonly [number, number];
  * @fires cursor-moved - `{ time: number, settled: boolean }` seconds; not settled while a pointer passes over
  * @fires span-chosen - `{ span: [number, number] | undefined }` seconds
  * @fires note-chosen - `{ id: string }`
- * @fires remedy-chosen - `{ id: string }` the button of a note's remedy
+ * @fires remedy-chosen - `{ id: string, way: number }` the button of a note's remedy; 0 the proposed one, from 1 on the others
+ * @fires rule-asked - `{ rule: string }` the rule's name in a note
  * @fires play-asked - the space bar
  * @fires edit-sketched - `{ edit: HandEdit, settled: boolean, idle: boolean, motion?: Motion }` an edit is made by hand
  * @fires edit-taken - the edit at hand is to be done
@@ -165,6 +166,7 @@ export class SlewChart extends LitElement implements CursorHost {
   protected override willUpdate(changed: PropertyValues<this>): void {
     const { data } = this;
     if (!data) return;
+    readTimesAs(data.timeForm, data.frameRate);
     if (changed.has('data')) {
       this.numbered = numberNotes(data.notes);
       const before = changed.get('data');
@@ -311,7 +313,8 @@ export class SlewChart extends LitElement implements CursorHost {
       <div class="notes">
         ${marginOf(row.index, notes, this.chosen, this.unfolded.has(row.index), {
           choose: (note) => this.cursor.choose(note.id),
-          mend: (note) => this.send('remedy-chosen', { id: note.id }),
+          mend: (note, way) => this.send('remedy-chosen', { id: note.id, way }),
+          explain: (rule) => this.send('rule-asked', { rule }),
           unfold: (index) => (this.unfolded = new Set([...this.unfolded, index])),
         })}
       </div>

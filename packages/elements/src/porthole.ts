@@ -9,7 +9,7 @@ import {
 } from 'lit';
 import { frameLength, trackName, usualSpeed, type ChartData } from './chart/chart-data.js';
 import { frameBy } from './chart/chart-keys.js';
-import { sayNumber, sayRate, sayTime } from './chart/quantity.js';
+import { readTimesAs, sayNumber, sayRate, sayTime } from './chart/quantity.js';
 import { NO_TURN, nudgedTurn, turnOfDrag, type Turn } from './gesture/key-turn.js';
 import { describeMoment } from './porthole/describe.js';
 import { drawGlobe } from './porthole/globe.js';
@@ -116,6 +116,7 @@ export class SlewPorthole extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues<this>): void {
+    if (this.data) readTimesAs(this.data.timeForm, this.data.frameRate);
     if (changed.has('data') && this.data)
       this.fullRod = Math.max(1.5 * usualSpeed(this.data.motion), this.data.noiseFloor, 1e-9);
     if (changed.has('playing')) this.wind();

@@ -2,14 +2,14 @@ import { playAs, type PlaybackId, type RotationTrack } from '@slewcurve/core';
 import {
   curveMotion,
   rateNames,
-  remedyButton,
+  remedyWays,
   type ChartData,
   type MarginNote,
   type Motion,
 } from '@slewcurve/elements/plot';
-import { sayStep } from '@slewcurve/mend';
 import { roleOf, type Finding, type Occurrence } from '@slewcurve/survey';
 import { trackKey, type FileWork } from '../session/file-work.js';
+import type { Clock } from './clock-choice.js';
 import type { ChosenTrack } from './roster-rows.js';
 
 /** Notes a chart shows at most; the rest is told by count. */
@@ -26,6 +26,7 @@ export interface ChartSubject {
   readonly playback: PlaybackId;
   readonly second?: PlaybackId;
   readonly kept?: readonly number[];
+  readonly clock: Clock;
 }
 
 // By track, then by playback: compiling a curve and measuring its segments costs.
@@ -43,7 +44,7 @@ export function motionOf(track: RotationTrack, playback: PlaybackId): Motion {
 /** Whether two subjects make the same chart: a file changes at every step of a survey, its one track hardly ever. */
 export function drawsTheSame(a: ChartSubject, b: ChartSubject): boolean {
   const key = trackKey(a.chosen.clip, a.chosen.track);
-  const rest = ['chosen', 'before', 'after', 'preview', 'playback', 'second', 'kept'] as const;
+  const rest = ['chosen', 'before', 'after', 'preview', 'playback', 'second', 'kept', 'clock'] as const;
   return (
     rest.every((name) => a[name] === b[name]) &&
     a.file.report === b.file.report &&
@@ -70,10 +71,15 @@ export function chartDataOf(subject: ChartSubject): ChartData {
     noiseFloor: report?.noiseFloor ?? 0,
     rateNames: rateNames(roleOf(shown, file.opened?.nodes ?? [])),
     notes: notesOf(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? []),
-    ...(clip?.frameRate !== undefined && { frameRate: clip.frameRate }),
+    ...clockOf(subject.clock, clip?.frameRate),
     ...(kept && { kept }),
     ...comparedWith(subject, shown),
   };
+}
+
+function clockOf({ form, frameRate }: Clock, found: number | undefined): Partial<ChartData> {
+  const rate = frameRate ?? found;
+  return { timeForm: form, ...(rate !== undefined && { frameRate: rate }) };
 }
 
 /** The motions that stand beside the one shown. */
@@ -121,7 +127,8 @@ function hasOneRemedy({ occurrences }: Finding): boolean {
 
 function noteOf(finding: Finding, place: Occurrence | undefined): MarginNote {
   const one = !hasOneRemedy(finding) && place !== undefined;
-  const { time, level, remedy } = place ?? finding;
+  const { time, level, remedy, alternatives = [] } = place ?? finding;
+  const [proposed, ...others] = remedy ? remedyWays([remedy, ...alternatives]) : [];
   return {
     id: place ? noteId(finding, place) : finding.fingerprint,
     rule: finding.rule,
@@ -131,7 +138,8 @@ function noteOf(finding: Finding, place: Occurrence | undefined): MarginNote {
     places: one ? [place] : finding.occurrences,
     count: one ? 1 : finding.count,
     status: 'open',
-    ...(remedy && { remedy: { sentence: sayStep(remedy), button: remedyButton(remedy) } }),
+    ...(proposed && { remedy: proposed }),
+    ...(others.length > 0 && { others }),
   };
 }
 

@@ -6,7 +6,7 @@ import {
   type PropertyValues,
   type TemplateResult,
 } from 'lit';
-import { PLAYBACKS, playAs, type PlaybackId, type RotationTrack } from '@slewcurve/core';
+import type { PlaybackId } from '@slewcurve/core';
 import type { SlewChart } from '@slewcurve/elements/chart';
 import type { MatrixWish } from '@slewcurve/elements/playback-matrix';
 import type { SlewPorthole } from '@slewcurve/elements/porthole';
@@ -20,7 +20,6 @@ import {
   type Turn,
 } from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
-import { valueOf } from '@slewcurve/elements/theme/value-of';
 import type { TrackAnswer } from '@slewcurve/job';
 import { sayStep, type Step } from '@slewcurve/mend';
 import type { FileWork } from '../session/file-work.js';
@@ -28,9 +27,13 @@ import { trackKey } from '../session/file-work.js';
 import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
 import type { Session } from '../session/session.js';
 import { chartDataOf, drawsTheSame, motionOf, placeOfNote, type ChartSubject } from './chart-data-of.js';
+import { clockChoice, type Clock } from './clock-choice.js';
+import { cautionsOf } from './cautions-of.js';
 import { chartPageStyles } from './chart-page-styles.js';
+import { explanationOf } from './explanation-of.js';
 import { jobCardOf } from './job-card-of.js';
 import { NOT_TURNING, keyTurnOf, layOverEdit, turnAtHand, turnedKey, type Turning } from './key-turn-of.js';
+import { playbackChoice } from './playback-choice.js';
 import { pageStyles } from './page-styles.js';
 import type { ChosenTrack } from './roster-rows.js';
 
@@ -55,10 +58,12 @@ export class SlewChartPage extends LitElement {
     edit: { state: true },
     sketched: { state: true },
     turning: { state: true },
+    word: { state: true },
     note: { state: true },
     busy: { state: true },
     fold: { state: true },
     narrow: { state: true },
+    clock: { state: true },
   };
   static override styles = [pageStyles, chartPageStyles];
 
@@ -76,6 +81,9 @@ export class SlewChartPage extends LitElement {
   /** What the hand that is at work would make of the motion. */
   declare private sketched: Motion | undefined;
   declare private turning: Turning;
+  /** A word that is being explained. */
+  declare private word: string | undefined;
+  declare private clock: Clock;
   declare private note: string | undefined;
   declare private busy: boolean;
   /** Seconds a row, where somebody chose. */
@@ -83,6 +91,8 @@ export class SlewChartPage extends LitElement {
   /** The 3-D view is folded away, above the trace. */
   declare private narrow: boolean;
   private readonly width = matchMedia('(width < 40rem)');
+  /** Where the keyboard was when a word was asked for. */
+  private asked: HTMLElement | undefined;
   private data: ChartData | undefined;
   /** The keyboard waits for the trace. */
   private awaited = false;
@@ -95,6 +105,7 @@ export class SlewChartPage extends LitElement {
     super();
     this.time = 0;
     this.busy = false;
+    this.clock = { form: 'seconds' };
     this.turning = NOT_TURNING;
     this.narrow = this.width.matches;
     this.width.addEventListener('change', () => (this.narrow = this.width.matches));
@@ -147,6 +158,7 @@ export class SlewChartPage extends LitElement {
       ...(sentence?.preview && { preview: sentence.preview }),
       ...(second && second !== playback && { second }),
       ...(kept && { kept }),
+      clock: this.clock,
     };
     // Compiling a curve of an hour costs; moving the cursor must not.
     if (this.data && this.subject && drawsTheSame(this.subject, subject)) return this.data;
@@ -179,7 +191,8 @@ export class SlewChartPage extends LitElement {
         Choose a track on the roster, and its angular speed over time is drawn here.
       </p>`;
     if (!data || !file) return html`<p class="empty" role="status">Drawing ${chosen.track}.</p>`;
-    return html`${this.playbacks()}
+    return html`${cautionsOf(file)} ${this.playbacks()}
+      ${explanationOf(this.word, () => this.explained())}
       <div class="sheet" @keydown=${this.keyed}>
         <slew-chart
           .data=${data}
@@ -195,7 +208,8 @@ export class SlewChartPage extends LitElement {
           @cursor-moved=${(event: CustomEvent<{ time: number }>) => (this.time = event.detail.time)}
           @span-chosen=${(event: CustomEvent<{ span: [number, number] | undefined }>) => (this.span = event.detail.span)}
           @note-chosen=${(event: CustomEvent<{ id: string }>) => (this.note = event.detail.id)}
-          @remedy-chosen=${(event: CustomEvent<{ id: string }>) => this.openRemedy(event.detail.id)}
+          @remedy-chosen=${(event: CustomEvent<{ id: string; way: number }>) => this.openRemedy(event.detail.id, event.detail.way)}
+          @rule-asked=${(event: CustomEvent<{ rule: string }>) => this.explain(event.detail.rule)}
           @play-asked=${() => this.renderRoot.querySelector<SlewPorthole>('slew-porthole')?.toggle()}
           >${this.sentenceAt()}</slew-chart
         >
@@ -230,23 +244,18 @@ export class SlewChartPage extends LitElement {
 
   private playbacks(): TemplateResult {
     const [playback = 'as-written'] = this.session.settings.playbacks;
-    const can = this.answer ? playbacksFor(this.answer.after) : [];
     return html`<p class="playbacks on-screen">
-      <label
-        >as played:
-        <select @change=${(event: Event) => this.choosePlayback(can.find((id) => id === valueOf(event)))}>
-          ${can.map((id) => option(id, id === playback))}
-        </select></label
-      >
-      <label
-        >compare with:
-        <select @change=${(event: Event) => (this.second = can.find((id) => id === valueOf(event)))}>
-          <option value="">nothing</option>
-          ${can.filter((id) => id !== playback).map((id) => option(id, id === this.second))}
-        </select></label
-      >
-      <span class="says">${PLAYBACKS[playback].says}</span>
+      ${playbackChoice(this.answer?.after, playback, this.second, {
+        play: (id) => this.choosePlayback(id),
+        compare: (id) => (this.second = id),
+      })}
+      ${clockChoice(this.clock, this.gridFound, (clock) => (this.clock = clock))}
     </p>`;
+  }
+
+  /** Frames per second that the clip was found to have. */
+  private get gridFound(): number | undefined {
+    return this.file?.opened?.clips.find(({ clip }) => clip === this.chosen?.clip)?.frameRate;
   }
 
   /** A place of the matrix: the playback's trace beside the first, and the cursor there. */
@@ -287,17 +296,30 @@ export class SlewChartPage extends LitElement {
     else if (this.note !== undefined) this.openRemedy(this.note);
   };
 
-  private openRemedy(id: string): void {
+  private openRemedy(id: string, way = 0): void {
     const { file, chosen, answer } = this;
     if (!file || !chosen || !answer) return;
     const found = placeOfNote(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? [], id);
-    if (!found?.place.remedy) return;
+    const remedy = way === 0 ? found?.place.remedy : found?.place.alternatives?.[way - 1];
+    if (!found || !remedy) return;
     this.note = id;
     this.time = found.place.time;
-    this.sentence = this.tried(sayStep(found.place.remedy), found.place.time);
+    this.sentence = this.tried(sayStep(remedy), found.place.time);
     void this.updateComplete.then(() =>
       this.renderRoot.querySelector<SlewSentence>('slew-sentence')?.focus(),
     );
+  }
+
+  /** Opens what a rule is; the keyboard goes there, and back when it is put away. */
+  private explain(rule: string): void {
+    this.word = rule;
+    this.asked = focusedWithin(this.chart);
+    void this.updateComplete.then(() => this.renderRoot.querySelector<HTMLElement>('.explanation')?.focus());
+  }
+
+  private explained(): void {
+    this.word = undefined;
+    this.asked?.focus({ preventScroll: true });
   }
 
   private rewrite(text: string): void {
@@ -308,7 +330,14 @@ export class SlewChartPage extends LitElement {
 
   private tried(text: string, time: number): SentenceAtHand | undefined {
     const { answer, file } = this;
-    return answer && tryOut(text, time, { ...answer, nodes: file?.opened?.nodes ?? [] });
+    return (
+      answer &&
+      tryOut(text, time, {
+        ...answer,
+        nodes: file?.opened?.nodes ?? [],
+        frameRate: this.clock.frameRate ?? this.gridFound,
+      })
+    );
   }
 
   /** The key under the cursor is turned; the globe follows at once. */
@@ -371,23 +400,6 @@ interface Sketched {
 function sketchedData(data: ChartData, motion: Motion): ChartData {
   const motionBefore = data.tried ? data.before?.motion : data.motion;
   return { ...data, motion, ...(motionBefore && { before: { motion: motionBefore, name: 'before' } }) };
-}
-
-function option(id: PlaybackId, chosen: boolean): TemplateResult {
-  return html`<option value=${id} ?selected=${chosen}>${id.replaceAll('-', ' ')}</option>`;
-}
-
-/** Playbacks that need nothing that the track does not store. Asked of its kind alone, without its keys: compiling them costs. */
-function playbacksFor(track: RotationTrack): PlaybackId[] {
-  const kind = { ...track, times: new Float64Array(), values: new Float64Array(), breaks: [] };
-  return Object.values(PLAYBACKS).flatMap(({ id }) => {
-    try {
-      playAs(kind, id);
-      return [id];
-    } catch {
-      return [];
-    }
-  });
 }
 
 /** A clip shorter than a row of ten seconds takes the whole row. */

@@ -28,12 +28,18 @@ export interface TrialGround {
   readonly after: RotationTrack;
   readonly above: readonly RotationTrack[];
   readonly nodes: readonly SceneNode[];
+  /** Frames per second, by which times may be written as frames or timecode. */
+  readonly frameRate: number | undefined;
 }
 
 /** Read a sentence and try it on a track. */
-export function tryOut(text: string, time: number, { after, above, nodes }: TrialGround): SentenceAtHand {
+export function tryOut(
+  text: string,
+  time: number,
+  { after, above, nodes, frameRate }: TrialGround,
+): SentenceAtHand {
   try {
-    const step = parseSentence(text);
+    const step = parseSentence(text, frameRate);
     const { tracks, results } = applySteps([after, ...above], [step], nodes);
     const result = results[0]?.result;
     return {

@@ -1,4 +1,6 @@
+import type { TimeForm } from '@slewcurve/core';
 import type { Motion } from './motion.js';
+import type { RemedyWay } from './remedy-ways.js';
 
 /** How bad a finding is. */
 export type NoteLevel = 'error' | 'warning' | 'note';
@@ -27,7 +29,9 @@ export interface MarginNote {
   /** Stamped: accepted with a reason; its note is struck through. */
   readonly status: 'open' | 'mended' | 'stamped';
   /** The edit that would take it away, as a sentence, and what the button that opens it says: "Lift out key 19". */
-  readonly remedy?: { readonly sentence: string; readonly button: string };
+  readonly remedy?: RemedyWay;
+  /** Other edits that would, where a person must choose: each a button of its own. */
+  readonly others?: readonly RemedyWay[];
 }
 
 /** Another motion to compare with. */
@@ -57,6 +61,8 @@ export interface ChartData {
   readonly cuts?: readonly number[];
   /** Frames per second, where the clip has a grid; a frame is 1/60 s elsewhere. */
   readonly frameRate?: number;
+  /** How times are written. Default seconds; without a grid always seconds. */
+  readonly timeForm?: TimeForm;
   /** deg/s below which nothing is claimed. */
   readonly noiseFloor: number;
   /** A speed that should not be passed, deg/s, and whose it is: "house rule", "maker's limit". */

@@ -1,3 +1,5 @@
+import { sayTime as timeText, type TimeForm } from '@slewcurve/core';
+
 /** Numbers as people read them on the page: always with a unit, minus as a true minus sign, thousands apart. */
 
 const DEGREES = 180 / Math.PI;
@@ -34,9 +36,22 @@ export function sayAngle(angle: number, digits = 3): string {
   return `${sayNumber(angle, digits)}°`;
 }
 
-/** Seconds to the millisecond: "0.633 s"; fewer places by `places`. */
+/** The clock that all times of a page are read by: one switch for all of them. */
+let clock: { readonly form: TimeForm; readonly frameRate: number | undefined } = {
+  form: 'seconds',
+  frameRate: undefined,
+};
+
+/** Lets `sayTime` write times as seconds, frames or timecode from now on. Frames per second that are not known leave seconds. */
+export function readTimesAs(form: TimeForm = 'seconds', frameRate?: number): void {
+  clock = { form, frameRate };
+}
+
+/** A time by the page's clock: to the millisecond "0.633 s", fewer places by `places`; or "frame 19", "00:00:00:19". */
 export function sayTime(seconds: number, places = 3): string {
   if (!Number.isFinite(seconds)) return 'none';
+  if (clock.form !== 'seconds' && clock.frameRate !== undefined)
+    return timeText(seconds, clock.form, clock.frameRate).replace('-', '−');
   const text = Math.abs(seconds).toFixed(places);
   return `${seconds < 0 && Number(text) !== 0 ? '−' : ''}${text} s`;
 }
