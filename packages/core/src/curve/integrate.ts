@@ -27,11 +27,15 @@ export function integrate(
   floor = 0,
 ): number {
   const edges = cuts(a, b, narrow);
+  const firsts: Estimate[] = [];
   let rough = 0;
-  for (let i = 0; i + 1 < edges.length; i++) rough += Math.abs(rule(f, edges[i], edges[i + 1]).fine);
+  for (let i = 0; i + 1 < edges.length; i++) {
+    firsts.push(rule(f, edges[i], edges[i + 1]));
+    rough += Math.abs(firsts[i].fine);
+  }
   const limit = { error: Math.max(1e-13 * rough, floor), halvings: MOST_HALVINGS };
   let sum = 0;
-  for (let i = 0; i + 1 < edges.length; i++) sum += refine(f, edges[i], edges[i + 1], limit);
+  for (let i = 0; i + 1 < edges.length; i++) sum += refine(f, edges[i], edges[i + 1], limit, firsts[i]);
   return sum;
 }
 
@@ -52,8 +56,8 @@ function refine(
   a: number,
   b: number,
   limit: { readonly error: number; halvings: number },
+  { fine, coarse }: Estimate,
 ): number {
-  const { fine, coarse } = rule(f, a, b);
   const size = Math.abs(fine);
   const difference = Math.abs(fine - coarse) / size;
   // The difference is the error of the coarser rule; that of the finer one is about its 3/2 power (QUADPACK's estimate).
@@ -61,10 +65,16 @@ function refine(
   if (!(error > limit.error) || limit.halvings === 0) return fine;
   limit.halvings--;
   const middle = (a + b) / 2;
-  return refine(f, a, middle, limit) + refine(f, middle, b, limit);
+  return refine(f, a, middle, limit, rule(f, a, middle)) + refine(f, middle, b, limit, rule(f, middle, b));
 }
 
-function rule(f: (x: number) => number, a: number, b: number): { fine: number; coarse: number } {
+/** An integral by both rules. */
+interface Estimate {
+  readonly fine: number;
+  readonly coarse: number;
+}
+
+function rule(f: (x: number) => number, a: number, b: number): Estimate {
   const middle = (a + b) / 2;
   const half = (b - a) / 2;
   const centre = f(middle);

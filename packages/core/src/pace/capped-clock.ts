@@ -28,10 +28,12 @@ const STILL = 1e-9;
  * have, as far as the limits let them; so do corners, unless they are stops.
  */
 export function cappedClock(curve: Curve, span: Span, limits: Limits): InnerClock {
-  const places = placesAlong(curve, span, (rough) => [
-    ...crossings(curve, rough, limits.rate),
-    ...(limits.acceleration === undefined ? [] : nearStops(curve, rough)),
-  ]);
+  const isBent = limits.acceleration !== undefined;
+  const places = placesAlong(curve, span, {
+    more: (rough) => [...crossings(curve, rough, limits.rate), ...(isBent ? nearStops(curve, rough) : [])],
+    skipLevel: !isBent,
+    skipBends: !isBent,
+  });
   const speeds = places.speeds.map((speed) => Math.min(speed, limits.rate));
   if (limits.acceleration !== undefined)
     slowForAcceleration(speeds, places, limits.acceleration, new Set(limits.stops));

@@ -74,17 +74,25 @@ const JUMP = 0.2;
 
 /** Where pieces that keep their time, that run at one speed, and that do neither, follow each other, and where the acceleration jumps between those. */
 function pieceEnds(news: Float64Array, same: Uint8Array, speeds: Float64Array): number[] {
-  const slopes = Float64Array.from(same, (_, i) =>
-    news[i + 1] > news[i] ? (speeds[2 * i + 1] - speeds[2 * i]) / (news[i + 1] - news[i]) : 0,
-  );
-  const most = slopes.reduce(
-    (greatest, slope, i) => (same[i] === 1 ? greatest : Math.max(greatest, Math.abs(slope))),
-    0,
-  );
-  const jumps = (i: number): boolean => same[i] === 0 && Math.abs(slopes[i] - slopes[i - 1]) > JUMP * most;
-  const kind = (i: number): number =>
-    same[i] === 1 ? -1 : speeds[2 * i] === speeds[2 * i + 1] ? speeds[2 * i] : -2;
+  const slopes = new Float64Array(same.length);
+  let most = 0;
+  for (let i = 0; i < same.length; i++) {
+    const gap = news[i + 1] - news[i];
+    if (same[i] === 1 || !(gap > 0)) continue;
+    slopes[i] = (speeds[2 * i + 1] - speeds[2 * i]) / gap;
+    most = Math.max(most, Math.abs(slopes[i]));
+  }
   const knots = [0];
-  for (let i = 1; i < same.length; i++) if (kind(i) !== kind(i - 1) || jumps(i)) knots.push(news[i]);
-  return [...knots, news[news.length - 1]];
+  for (let i = 1; i < same.length; i++) {
+    const jumps = same[i] === 0 && Math.abs(slopes[i] - slopes[i - 1]) > JUMP * most;
+    if (jumps || kindOf(i, same, speeds) !== kindOf(i - 1, same, speeds)) knots.push(news[i]);
+  }
+  knots.push(news[news.length - 1]);
+  return knots;
+}
+
+/** -1 where a piece keeps its time, the speed where it runs at one, -2 otherwise. */
+function kindOf(i: number, same: Uint8Array, speeds: Float64Array): number {
+  if (same[i] === 1) return -1;
+  return speeds[2 * i] === speeds[2 * i + 1] ? speeds[2 * i] : -2;
 }

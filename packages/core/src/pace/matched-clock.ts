@@ -84,7 +84,10 @@ function stretchOf(curve: Curve, [start, end]: Span, { at, side, rate, reach }: 
 function keepingClock(curve: Curve, turned: TurnedAngle, stretch: Stretch): InnerClock {
   const [from, to] = stretch.span;
   const middle = (from + to) / 2;
-  const { times: places, speeds: olds } = placesAlong(curve, stretch.span, () => [middle]);
+  const { times: places, speeds: olds } = placesAlong(curve, stretch.span, {
+    more: () => [middle],
+    skipBends: true,
+  });
   const times: number[] = [];
   const speeds: number[] = [];
   const lent: number[] = [];
@@ -116,7 +119,7 @@ function runningClock(curve: Curve, stretch: Stretch): InnerClock {
       'pace.stands-still',
       `Brought to no speed at ${stretch.join} s, time would run for ever. Keep the same ends, or ease in or out.`,
     );
-  const places = placesAlong(curve, stretch.span, () => []);
+  const places = placesAlong(curve, stretch.span, { skipBends: true });
   const speeds = places.speeds.map((speed, side) => towards(stretch, places.times[(side + 1) >> 1], speed));
   return clockAtSpeeds(curve, { ...places, speeds, same: new Uint8Array(places.angles.length) });
 }

@@ -21,35 +21,49 @@ export interface Places {
   readonly across: Float64Array;
 }
 
+/** What is asked of places. */
+export interface PlacesWanted {
+  /** Further times, by those that there are. */
+  readonly more?: (rough: Float64Array) => readonly number[];
+  /** Whether pieces that turn at one speed about one axis need no places inside. */
+  readonly skipLevel?: boolean;
+  /** Whether `across` is not needed, and left at 0. */
+  readonly skipBends?: boolean;
+}
+
 /** Places at the curve's knots, evenly between them, and at the `more` times. */
 export function placesAlong(
   curve: Curve,
   span: Span,
-  more: (rough: Float64Array) => readonly number[],
+  { more, skipLevel = false, skipBends = false }: PlacesWanted = {},
 ): Places {
-  const rough = evenTimes(curve, span);
-  const times = ascendingOnce([...rough, ...more(rough)]);
+  const rough = evenTimes(curve, span, skipLevel);
+  const further = more?.(rough) ?? [];
+  const times = further.length > 0 ? ascendingOnce([...rough, ...further]) : rough;
   const count = Math.max(0, times.length - 1);
   const angles = new Float64Array(count);
   const speeds = new Float64Array(2 * count);
   const across = new Float64Array(2 * count);
   const rate = new Float64Array(3);
   const acceleration = new Float64Array(3);
+  const look = (side: number, t: number): void => {
+    curve.rate(rate, t, 'own');
+    const speed = Math.hypot(rate[0], rate[1], rate[2]);
+    speeds[side] = speed;
+    if (skipBends || !(speed > 0)) return;
+    curve.acceleration(acceleration, t, 'own');
+    const along =
+      (rate[0] * acceleration[0] + rate[1] * acceleration[1] + rate[2] * acceleration[2]) / (speed * speed);
+    across[side] = Math.hypot(
+      acceleration[0] - along * rate[0],
+      acceleration[1] - along * rate[1],
+      acceleration[2] - along * rate[2],
+    );
+  };
   for (let i = 0; i < count; i++) {
     angles[i] = curve.length(times[i], times[i + 1]);
-    for (const side of [0, 1]) {
-      const t = side === 0 ? times[i] : times[i + 1] - BEFORE * (times[i + 1] - times[i]);
-      curve.rate(rate, t, 'own');
-      curve.acceleration(acceleration, t, 'own');
-      const speed = Math.hypot(rate[0], rate[1], rate[2]);
-      const [x, y, z] = rate.map((part) => (speed > 0 ? part / speed : 0));
-      const along = x * acceleration[0] + y * acceleration[1] + z * acceleration[2];
-      speeds[2 * i + side] = speed;
-      across[2 * i + side] =
-        speed > 0
-          ? Math.hypot(acceleration[0] - along * x, acceleration[1] - along * y, acceleration[2] - along * z)
-          : 0;
-    }
+    look(2 * i, times[i]);
+    look(2 * i + 1, times[i + 1] - BEFORE * (times[i + 1] - times[i]));
   }
   return { times, angles, speeds, across };
 }
@@ -102,15 +116,28 @@ export function nearStops(curve: Curve, times: Float64Array): number[] {
   return found.filter((t) => t > times[0] && t < times[times.length - 1]);
 }
 
-function evenTimes(curve: Curve, [from, to]: Span): Float64Array {
-  const knots = [from, ...curve.knots.filter((knot) => knot > from && knot < to), to];
-  const parts = Math.max(LEAST_PARTS, Math.ceil(WANTED_PLACES / (knots.length - 1)));
-  const times = knots
-    .slice(1)
-    .flatMap((knot, i) =>
-      Array.from({ length: parts }, (_, part) => knots[i] + ((knot - knots[i]) * part) / parts),
-    );
-  return Float64Array.of(...times, to);
+function evenTimes(curve: Curve, [from, to]: Span, skipLevel: boolean): Float64Array {
+  const inside = curve.knots.filter((knot) => knot > from && knot < to);
+  const parts = Math.max(LEAST_PARTS, Math.ceil(WANTED_PLACES / (inside.length + 1)));
+  const times = new Float64Array((inside.length + 1) * parts + 1);
+  let count = 0;
+  for (let i = 0; i <= inside.length; i++) {
+    const a = i === 0 ? from : inside[i - 1];
+    const b = i === inside.length ? to : inside[i];
+    const own = skipLevel && isLevel(curve, a, b) ? 1 : parts;
+    for (let part = 0; part < own; part++) times[count++] = a + ((b - a) * part) / own;
+  }
+  times[count++] = to;
+  return times.subarray(0, count);
+}
+
+/** Great arcs, and rests, say exactly at every place that they do not accelerate. */
+function isLevel(curve: Curve, a: number, b: number): boolean {
+  const now = new Float64Array(3);
+  return [0.1, 0.5, 0.8].every((u) => {
+    curve.acceleration(now, a + u * (b - a), 'own');
+    return now[0] === 0 && now[1] === 0 && now[2] === 0;
+  });
 }
 
 function ascendingOnce(numbers: readonly number[]): Float64Array {

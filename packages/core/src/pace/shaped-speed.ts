@@ -51,9 +51,10 @@ export function pressedClock(curve: Curve, turned: TurnedAngle, span: Span, pres
       'pace.bad-press',
       `A press needs a reach above 0 s and a place between ${from} s and ${to} s; got ${reach} s at ${at} s.`,
     );
-  const places = placesAlong(curve, span, () =>
-    [at, at - reach, at + reach].filter((t) => t > from && t < to),
-  );
+  const places = placesAlong(curve, span, {
+    more: () => [at, at - reach, at + reach].filter((t) => t > from && t < to),
+    skipBends: true,
+  });
   const bell = (t: number): number => 1 - step(Math.abs(t - at) / reach);
   const drawn = speedOver(places);
   const pressed = drawn.speeds.map((speed, i) => Math.max(0, speed + by * bell(from + drawn.times[i])));
