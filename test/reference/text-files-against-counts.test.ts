@@ -2,6 +2,8 @@
 // from an optical system against the gyroscope on the same body (BROAD, D. Laidig et al., Data 6(7), 2021, CC BY 4.0).
 import { describe, expect, test } from 'vitest';
 import {
+  eulerSequence,
+  fromEuler,
   keyOrientation,
   logMap,
   measure,
@@ -20,6 +22,11 @@ import { sharedFile } from '../support/shared-data.js';
 interface CountedJoint {
   readonly order: string;
   readonly euler_jumps_over_180: number;
+  readonly first_euler_jump_frames: readonly number[];
+  readonly naive_quat_sign_flips: number;
+  readonly flip_frames: readonly number[];
+  readonly isolated_spikes: number;
+  readonly spike_frames: readonly number[];
   readonly max_span_deg: number;
   readonly max_span_frame: number;
   readonly spans_over_170: number;
@@ -31,6 +38,8 @@ interface CountedJoint {
 
 interface CountedBvh {
   readonly joints: number;
+  readonly channels: number;
+  readonly declared_frames: number;
   readonly rows: number;
   readonly frame_time: number;
   readonly joint: Readonly<Record<string, CountedJoint>>;
@@ -50,6 +59,14 @@ interface CountedTrajectory {
   readonly max_norm_error: number;
   readonly median_deg_per_s: number;
   readonly max_deg_per_s: number;
+  readonly min_dt_s: number;
+  readonly max_dt_s: number;
+  readonly non_increasing_times: number;
+  readonly spans_over_170: number;
+  readonly non_unit_over_1e_3: number;
+  readonly isolated_spikes: number;
+  readonly spike_at: readonly number[];
+  readonly samples_with_abs_x_over_85?: number;
   readonly euler_jump_at?: readonly number[];
 }
 
@@ -101,6 +118,28 @@ function angleJumps({ interpolation, times, values }: RotationTrack): number[] {
     .filter((key) => [0, 1, 2].some((part) => jumps(3 * key + part)));
 }
 
+/** Later keys of the steps across which quaternions made one by one change sides. */
+function naiveFlips(track: RotationTrack): number[] {
+  const sequence = eulerSequence(track.sequence ?? 'XYZ');
+  const quaternions = Array.from(track.times, (_, key) =>
+    fromEuler([0, 0, 0, 1], track.values.subarray(3 * key, 3 * key + 3), sequence),
+  );
+  return Array.from(quaternions.keys())
+    .slice(1)
+    .filter((key) => quaternions[key].reduce((sum, x, i) => sum + x * quaternions[key - 1][i], 0) < 0);
+}
+
+/** Segments faster than 60 deg/s and than six times both neighbours, by their earlier key. */
+function spikesOf(speeds: readonly number[]): number[] {
+  return Array.from(speeds.keys()).filter(
+    (key) =>
+      key > 0 &&
+      key + 1 < speeds.length &&
+      speeds[key] > 60 &&
+      speeds[key] > 6 * Math.max(speeds[key - 1], speeds[key + 1]),
+  );
+}
+
 const widest = (all: readonly Segment[]): Segment =>
   all.reduce((most, one) => (one.angle > most.angle ? one : most));
 
@@ -137,8 +176,27 @@ describe.skipIf(counts.absent)('BVH files', () => {
         );
         expect(all.filter(({ angle }) => angle > 170)).toHaveLength(expected.spans_over_170);
         expect(all.filter(({ angle }) => angle > 90)).toHaveLength(expected.spans_over_90);
-        expect(angleJumps(track)).toHaveLength(expected.euler_jumps_over_180);
+        const flips = naiveFlips(track);
+        const spikes = spikesOf(all.map(({ rate }) => rate));
+        expect([angleJumps(track).length, flips.length, spikes.length]).toEqual([
+          expected.euler_jumps_over_180,
+          expected.naive_quat_sign_flips,
+          expected.isolated_spikes,
+        ]);
+        // The first ones are listed.
+        for (const [found, listed] of [
+          [angleJumps(track), expected.first_euler_jump_frames],
+          [flips, expected.flip_frames],
+          [spikes, expected.spike_frames],
+        ])
+          expect(found.slice(0, listed.length)).toEqual(listed);
       }
+      const text = new TextDecoder('latin1').decode(sharedFile(`data/${name}`).read());
+      const named = [...text.matchAll(/CHANNELS\s+(\d+)/gi)].map(([, channels]) => Number(channels));
+      expect(named.reduce((sum, x) => sum + x, 0)).toBe(count.channels);
+      expect(/Frames:\s*(\d+)/i.exec(text)?.[1]).toBe(String(count.declared_frames));
+      // A frame count that lies is a problem, and there are none.
+      expect(count.declared_frames).toBe(count.rows);
     },
   );
 
@@ -177,6 +235,10 @@ describe.skipIf(counts.absent)('BVH files', () => {
   });
 });
 
+function lengthErrors({ times, values }: RotationTrack): number[] {
+  return Array.from(times, (_, key) => Math.abs(Math.hypot(...values.subarray(4 * key, 4 * key + 4)) - 1));
+}
+
 describe.skipIf(counts.absent)('trajectories', () => {
   test.each(counted<CountedTrajectory>('trajectories/'))(
     '%s has the samples, holes and spans that were counted',
@@ -198,6 +260,31 @@ describe.skipIf(counts.absent)('trajectories', () => {
       expect(Math.abs(median(all.map(({ rate }) => rate)) - count.median_deg_per_s)).toBeLessThan(0.02);
       expect(signChanges(track)).toEqual(track.interpolation === 'LINEAR' ? count.flip_at : []);
       expect(angleJumps(track)).toEqual(count.euler_jump_at ?? []);
+      const gaps = Array.from(track.times.subarray(1), (time, key) => time - track.times[key]).filter(
+        (_, key) => rows || !held.has(key),
+      );
+      // Their clock again.
+      expect(Math.abs(Math.min(...gaps) - count.min_dt_s)).toBeLessThan(5e-7);
+      expect(Math.abs(Math.max(...gaps) - count.max_dt_s)).toBeLessThan(5e-7);
+      expect(gaps.filter((gap) => !(gap > 0))).toHaveLength(count.non_increasing_times);
+      expect(all.filter(({ angle }) => angle > 170)).toHaveLength(count.spans_over_170);
+      const norms = track.interpolation === 'LINEAR' ? lengthErrors(track) : [0];
+      expect(norms.filter((error) => error > 1e-3)).toHaveLength(count.non_unit_over_1e_3);
+      // Angles make quaternions that are off by rounding alone.
+      expect(Math.abs(Math.max(...norms) - count.max_norm_error)).toBeLessThan(1e-12);
+      const speeds = all.map(({ rate }) => rate);
+      // Two places, and their clock: 2.4e-7 s of the shortest gap.
+      const fastest = Math.max(...speeds);
+      expect(Math.abs(fastest - count.max_deg_per_s)).toBeLessThan(0.006 + (5e-7 / count.min_dt_s) * fastest);
+      const spikes = spikesOf(speeds);
+      expect([spikes.length, spikes.slice(0, count.spike_at.length)]).toEqual([
+        count.isolated_spikes,
+        count.spike_at,
+      ]);
+      const steep = Array.from(track.times.keys()).filter(
+        (key) => Math.abs(track.values[3 * key + 1]) * DEGREES > 85,
+      );
+      expect(track.interpolation === 'LINEAR' ? 0 : steep.length).toBe(count.samples_with_abs_x_over_85 ?? 0);
     },
   );
 
