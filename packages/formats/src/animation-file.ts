@@ -26,9 +26,14 @@ export interface AnimationFile {
    * Plan that writes the given tracks (matched by `clip` and `id`) into the file, lets what follows them travel, and changes nothing
    * else.
    *
+   * @param axes changes of axes that all its rotations went through, as `axisChange` reads them, in order: what else has axes goes along
    * @throws SlewcurveError `plan.unknown-track`, `plan.doubled-track`, `plan.cannot-write`
    */
-  plan(changed: readonly RotationTrack[], followers?: readonly Follower[]): Promise<PatchPlan>;
+  plan(
+    changed: readonly RotationTrack[],
+    followers?: readonly Follower[],
+    axes?: readonly string[],
+  ): Promise<PatchPlan>;
 }
 
 /**

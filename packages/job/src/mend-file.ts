@@ -55,7 +55,7 @@ export async function mendFile(
   const cut = tracks.map((track) => withDeclaredCuts(track, settings.houseRules));
   const applied = applySteps(cut, card.steps, opened.file.nodes);
   const changed = applied.tracks.filter((track) => !cut.includes(track));
-  const plan = await opened.file.plan(changed, followersOf(applied.results));
+  const plan = await opened.file.plan(changed, followersOf(applied.results), axesOf(applied.results));
   const result = patchedSource(opened.source, plan);
   const again = await openFile(result, options);
   assertOthersEqual(tracks, again, changed);
@@ -71,6 +71,12 @@ export async function mendFile(
     steps: stepReports(applied.results),
     raised: newFaults(before.findings, report.findings),
   };
+}
+
+/** Changes of axes, in the order of the steps; each is of all tracks. */
+function axesOf(applied: readonly AppliedStep[]): string[] {
+  const bySteps = new Map(applied.map(({ number, result }) => [number, result.axes]));
+  return [...bySteps.values()].filter((axes) => axes !== undefined);
 }
 
 /** What else goes by the new clocks, in the order of the steps. */

@@ -11,6 +11,8 @@ export interface EditResult {
   readonly inserted: readonly number[];
   /** Where keys were dropped or changed places: the old number of every key of the new track, -1 for one that was put in. */
   readonly oldKeys?: readonly number[];
+  /** restate alone: the change of axes that it went through, which whatever else has axes must follow. */
+  readonly axes?: string;
   /** Keys of the old track that the new one lacks. Ascending. */
   readonly dropped?: readonly number[];
   /** Largest turn of any key of the old track, degrees. Keys that had no orientation before are left out. */

@@ -7,7 +7,7 @@ import {
   type RotationTrack,
   type SceneNode,
 } from '@slewcurve/core';
-import type { AnimationFile, FileProblem } from '../animation-file.js';
+import type { AnimationFile, FileProblem, Follower } from '../animation-file.js';
 import { nodePaths } from '../node-paths.js';
 import type { Source } from '../source.js';
 import { textLines } from '../text/text-lines.js';
@@ -44,7 +44,8 @@ export async function bvhFile(source: Source, name: string): Promise<AnimationFi
     nodes: Object.freeze(nodes),
     clips: Object.freeze([clipOf(joints.map(({ track }) => track))]),
     problems: Object.freeze(problems),
-    plan: (changed: readonly RotationTrack[]) => writePlan(source, name, motionAt, joints, changed),
+    plan: (changed: readonly RotationTrack[], _followers?: readonly Follower[], axes?: readonly string[]) =>
+      writePlan(source, name, motionAt, joints, changed, axes),
   });
 }
 

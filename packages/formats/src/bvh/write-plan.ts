@@ -3,7 +3,9 @@ import { pairTracks } from '../changed-tracks.js';
 import type { PatchPlan } from '../patch-plan.js';
 import type { Source } from '../source.js';
 import { type CellChange, cellRanges, planOfRanges } from '../text/cell-change.js';
-import { textLines } from '../text/text-lines.js';
+import { textLines, type TextLine } from '../text/text-lines.js';
+import { encodeUtf8 } from '../utf8.js';
+import { type AxisMap, axisMap, restatedHead, restatedSequence } from './restated-axes.js';
 import { findWords } from './row-words.js';
 
 /** A track as it was read, with the columns that hold its angles. */
@@ -16,23 +18,65 @@ export interface ReadJoint {
 
 const DEGREES = 180 / Math.PI;
 
-/** Plans how to write changed tracks into a file. See `AnimationFile.plan`; also throws `bvh.fixed-grid`. */
+/**
+ * Plans how to write changed tracks into a file. See `AnimationFile.plan`; also throws `bvh.fixed-grid`. All joints on another even grid together are another
+ * `Frame Time`; changed axes are new OFFSETs, CHANNELS and signs, every digit kept.
+ */
 export async function writePlan(
   source: Source,
   file: string,
   motionAt: number,
   joints: readonly ReadJoint[],
   changed: readonly RotationTrack[],
+  axes: readonly string[] = [],
 ): Promise<PatchPlan> {
   const rows = new Map<number, CellChange[]>();
-  for (const { read, track } of pairTracks(file, joints, changed)) {
-    checkHolds(file, read, track);
+  const map = axes.length > 0 ? axisMap(axes) : undefined;
+  const pairs = pairTracks(file, joints, changed);
+  const frameTime = newFrameTime(pairs, joints.length);
+  for (const { read, track } of pairs) {
+    checkHolds(file, read, track, { map, anyTimes: frameTime !== undefined });
     for (let row = 0; row < track.times.length; row++)
       for (const [part, column] of read.columns.entries())
         addChange(rows, row, column, read, track.values[3 * row + part], read.track.values[3 * row + part]);
   }
-  if (rows.size === 0) return planOfRanges([], source.size);
-  return planOfRanges(await rangesOf(source, file, motionAt, rows), source.size);
+  const head = map && (await restatedHead(source, file, motionAt, map));
+  const order = { rows, negated: head?.negated ?? [], frameTime };
+  if (rows.size === 0 && !head && frameTime === undefined) return planOfRanges([], source.size);
+  const ranges = [...(head?.ranges ?? []), ...(await rangesOf(source, file, motionAt, order))];
+  return planOfRanges(ranges, source.size);
+}
+
+/** Seconds from row to row where all joints went to one other grid that is even from 0 on; undefined where their times stay or are no such grid. */
+function newFrameTime(
+  pairs: readonly { readonly read: ReadJoint; readonly track: RotationTrack }[],
+  count: number,
+): number | undefined {
+  const [first] = pairs;
+  if (!first || pairs.length !== count || first.track.times.length < 2) return undefined;
+  const { times } = first.track;
+  const frame = times[1] ?? NaN;
+  const isEven = times.every((time, row) => Math.abs(time - row * frame) <= 1e-9 * Math.max(1, time));
+  const isShared = pairs.every(
+    ({ read, track }) =>
+      track.times.length === read.track.times.length && track.times.every((time, row) => time === times[row]),
+  );
+  return isEven && isShared && !sameTimes(first.read.track, first.track) ? frame : undefined;
+}
+
+function sameTimes(a: RotationTrack, b: RotationTrack): boolean {
+  return (
+    a.times === b.times ||
+    (a.times.length === b.times.length && a.times.every((time, key) => time === b.times[key]))
+  );
+}
+
+/** What is to be written after MOTION. */
+interface MotionOrder {
+  readonly rows: ReadonlyMap<number, readonly CellChange[]>;
+  /** Columns whose numbers change their sign in every row. */
+  readonly negated: readonly number[];
+  readonly frameTime: number | undefined;
 }
 
 function addChange(
@@ -46,14 +90,15 @@ function addChange(
   if (Object.is(value, was)) return;
   const changes = rows.get(row) ?? [];
   rows.set(row, changes);
-  changes.push({ cell: column, value: value * DEGREES, decimals, what: `${track.id}, row ${row}` });
+  const negated = value === -was;
+  changes.push({ cell: column, value: value * DEGREES, negated, decimals, what: `${track.id}, row ${row}` });
 }
 
 async function rangesOf(
   source: Source,
   file: string,
   motionAt: number,
-  rows: ReadonlyMap<number, readonly CellChange[]>,
+  { rows, negated, frameTime }: MotionOrder,
 ): Promise<PatchPlan['ranges']> {
   const ranges: PatchPlan['ranges'][number][] = [];
   const found: number[] = [];
@@ -64,9 +109,12 @@ async function rangesOf(
     for (const line of lines) {
       if (line.number <= motionAt || line.text.trim() === '') continue;
       inRows ||= !line.text.includes(':');
-      if (!inRows) continue;
-      const changes = rows.get(++row);
-      if (!changes) continue;
+      if (!inRows) {
+        if (frameTime !== undefined) ranges.push(...frameTimeRange(line, frameTime));
+        continue;
+      }
+      const changes = [...(rows.get(++row) ?? []), ...negated.map((cell) => negation(cell, row))];
+      if (changes.length === 0) continue;
       const words = findWords(found, line.text);
       const cells = Array.from({ length: words }, (_, i) => ({
         start: found[2 * i] ?? 0,
@@ -77,22 +125,36 @@ async function rangesOf(
   return ranges;
 }
 
-function checkHolds(file: string, read: ReadJoint, track: RotationTrack): void {
+function frameTimeRange({ text, at }: TextLine, frameTime: number): PatchPlan['ranges'] {
+  const [, before, old] = /^(\s*frame\s*time\s*:\s*)(\S+)/i.exec(text) ?? [];
+  if (before === undefined || old === undefined) return [];
+  return [
+    { at: at + before.length, length: old.length, bytes: encodeUtf8(String(frameTime)), what: 'Frame Time' },
+  ];
+}
+
+function negation(cell: number, row: number): CellChange {
+  return { cell, value: NaN, negated: true, decimals: 0, what: `position, row ${row}` };
+}
+
+function checkHolds(
+  file: string,
+  read: ReadJoint,
+  track: RotationTrack,
+  { map, anyTimes }: { readonly map: AxisMap | undefined; readonly anyTimes: boolean },
+): void {
   const place = { file, clip: track.clip, track: track.id };
-  if (track.interpolation !== 'EULER' || track.sequence !== read.track.sequence)
+  const sequence = map ? restatedSequence(read.track.sequence, map) : read.track.sequence;
+  if (track.interpolation !== 'EULER' || track.sequence !== sequence)
     throw new SlewcurveError(
       'plan.cannot-write',
-      `${track.id} is ${track.interpolation} ${track.sequence ?? ''}; the file holds angles in the order ${read.track.sequence ?? ''}. Convert it to those first.`,
+      `${track.id} is ${track.interpolation} ${track.sequence ?? ''}; the file holds angles in the order ${sequence ?? ''}. Convert it to those first.`,
       place,
     );
-  if (
-    track.times !== read.track.times &&
-    (track.times.length !== read.track.times.length ||
-      track.times.some((time, key) => time !== read.track.times[key]))
-  )
+  if (!anyTimes && !sameTimes(track, read.track))
     throw new SlewcurveError(
       'bvh.fixed-grid',
-      `${track.id} would have ${track.times.length} keys at times of its own; a BVH file has one row for all joints every Frame Time, ${read.track.times.length} rows here. Re-grid the track to them, or write another format.`,
+      `${track.id} would have ${track.times.length} keys at times of its own; a BVH file has one row for all joints every Frame Time, ${read.track.times.length} rows here. Re-grid the track to them, re-time all joints to one even grid, or write another format.`,
       place,
     );
   for (let i = 0; i < track.values.length; i++) {

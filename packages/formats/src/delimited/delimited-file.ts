@@ -1,5 +1,5 @@
 import { frameGrid, SlewcurveError, type Clip, type RotationTrack, type SceneNode } from '@slewcurve/core';
-import type { AnimationFile, FileProblem } from '../animation-file.js';
+import type { AnimationFile, FileProblem, Follower } from '../animation-file.js';
 import { nodePaths } from '../node-paths.js';
 import type { Source } from '../source.js';
 import { lineError } from '../text/text-fault.js';
@@ -48,8 +48,30 @@ export async function delimitedFile(
     nodes: Object.freeze(nodes),
     clips: Object.freeze([clipOf(bodies.map(({ track }) => track))]),
     problems: Object.freeze(problems),
-    plan: (changed: readonly RotationTrack[]) => writePlan(source, name, head, bodies, changed),
+    plan: async (
+      changed: readonly RotationTrack[],
+      _followers?: readonly Follower[],
+      axes: readonly string[] = [],
+    ) => {
+      if (axes.length > 0) refusePositions(name, options.columns ?? head.names ?? []);
+      return writePlan(source, name, head, bodies, changed);
+    },
   });
+}
+
+/**
+ * Positions have axes too, and no column of them is rewritten.
+ *
+ * @throws SlewcurveError `delimited.positions-stay`
+ */
+function refusePositions(file: string, names: readonly string[]): void {
+  const position = names.find((name) => /^(?:.+[_.\s])?t[_.]?[xyz]$/i.test(name.trim()));
+  if (position === undefined) return;
+  throw new SlewcurveError(
+    'delimited.positions-stay',
+    `${file}: the positions in ${position.trim().slice(0, 24)} and its like would stay in the old axes while the orientations turn. Restate the table where it is made.`,
+    { file },
+  );
 }
 
 interface Table {

@@ -26,9 +26,23 @@ export async function gltfFile(container: Container, options: OpenOptions): Prom
     nodes: Object.freeze(nodes),
     clips: Object.freeze(clips),
     problems: Object.freeze(found),
-    plan: async (changed: readonly RotationTrack[], followers?: readonly Follower[]) =>
-      writePlan(container, buffers, tracks, changed, followers),
+    plan: async (
+      changed: readonly RotationTrack[],
+      followers?: readonly Follower[],
+      axes: readonly string[] = [],
+    ) => {
+      if (axes.length > 0) throw fixedAxes(container.file);
+      return writePlan(container, buffers, tracks, changed, followers);
+    },
   });
+}
+
+function fixedAxes(file: string): SlewcurveError {
+  return new SlewcurveError(
+    'gltf.fixed-axes',
+    `${file}: glTF has one set of axes, right-handed with y up, and its nodes, meshes and skins would stay in them while the rotations turn. Turn its root instead, or restate the file that it was made from.`,
+    { file },
+  );
 }
 
 function checkVersion(container: Container, problems: Problems): void {

@@ -8,6 +8,8 @@ export interface CellChange {
   /** Which cell of the row. */
   readonly cell: number;
   readonly value: number;
+  /** The number that stands there changes its sign alone, and keeps its digits. */
+  readonly negated?: boolean;
   /** Decimal places that its column has. */
   readonly decimals: number;
   /** What stands there, for the docket. */
@@ -33,10 +35,10 @@ export function cellRanges(
   // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
   ascending.sort((a, b) => a.cell - b.cell);
   const pieces: { start: number; end: number; text: string; cell: number; what: string }[] = [];
-  for (const { cell, value, decimals, what } of ascending) {
+  for (const { cell, value, negated = false, decimals, what } of ascending) {
     const { start = 0, end = 0 } = cells[cell] ?? {};
     const old = line.text.slice(start, end);
-    const text = writeDecimal(old, value, decimals);
+    const text = negated ? negatedText(old) : writeDecimal(old, value, decimals);
     if (text === old) continue;
     const padded = inWidth(line.text, start, end, text);
     const open = pieces.at(-1);
@@ -52,6 +54,13 @@ export function cellRanges(
     bytes: encodeUtf8(text),
     what,
   }));
+}
+
+/** The same digits with the other sign; zero has none. */
+export function negatedText(text: string): string {
+  if (Number(text) === 0) return text;
+  if (text.startsWith('-')) return text.slice(1);
+  return `-${text.replace(/^\+/, '')}`;
 }
 
 /** Two spaces or more between numbers, or before the first: a row that is padded to columns. */

@@ -59,7 +59,7 @@ export const restate: Verb = Object.freeze({
       ({ values, sequence } = turnedAngles(values, sequence ?? 'XYZ', axes));
     else if (axes !== undefined) values = turnedComponents(values, axes);
     const after = replaceTrack(track, { values, ...(sequence !== undefined && { sequence }) });
-    return editResult(track, after);
+    return { ...editResult(track, after), ...(axes !== undefined && { axes }) };
   },
 });
 
