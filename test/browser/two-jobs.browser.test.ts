@@ -153,7 +153,7 @@ async function findByKeyboard(page: Page, find: string): Promise<void> {
 /** Page Down to the finding, Ctrl+Enter for its remedy, Ctrl+Enter to apply it. */
 async function applyByKeyboard(page: Page, remedy: RegExp): Promise<void> {
   await expect.poll(() => focused(page), SOON).toMatch(/^Cursor on the trace/);
-  const chosen = page.locator('slew-chart li.chosen button');
+  const chosen = page.locator('slew-chart li.chosen button').first();
   for (let pressed = 0; pressed < 20; pressed++) {
     await page.keyboard.press('PageDown');
     if (remedy.test(await chosen.textContent().then((text) => text?.trim() ?? ''))) break;

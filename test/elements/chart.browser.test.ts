@@ -125,7 +125,7 @@ describe('the chart', () => {
     const element = await chart();
     const chosen = heard(element, 'remedy-chosen');
     await page.getByRole('button', { name: 'Lift out key 12' }).click();
-    expect(chosen).toEqual([{ id: 'pop' }]);
+    expect(chosen).toEqual([{ id: 'pop', way: 0 }]);
     expect(page.getByRole('button', { name: 'Lift out key 5' }).elements()).toEqual([]);
   });
 

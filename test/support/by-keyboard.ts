@@ -1,7 +1,7 @@
 import type { Page } from 'playwright';
 
 /** Presses before Tab is held to lead nowhere. */
-const MOST_TABS = 60;
+const MOST_TABS = 120;
 
 /** What the keyboard is on, by what a person reads there: its label or its words. */
 export function focused(page: Page): Promise<string> {

@@ -11,6 +11,7 @@ export * from './chart/pack-margin.js';
 export * from './chart/posts.js';
 export * from './chart/pyramid.js';
 export * from './chart/quantity.js';
+export * from './chart/remedy-ways.js';
 export * from './chart/scale.js';
 export * from './chart/text-twin.js';
 export * from './chart/trace-path.js';

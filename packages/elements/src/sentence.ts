@@ -124,12 +124,18 @@ export class SlewSentence extends LitElement {
           ${this.busy ? 'Applying it' : 'Apply it'}
         </button>
         <button @click=${() => this.send('left-alone', undefined)}>Leave it</button>
-        <button class="plain" @click=${() => (this.whole = !this.whole)}>
+        <button class="plain" @click=${this.turnOver}>
           ${this.whole ? 'Show the slots' : 'Write the whole sentence'}
         </button>
       </div>
     </section>`;
   }
+
+  /** The other way to write it; the keyboard goes into it. */
+  private readonly turnOver = (): void => {
+    this.whole = !this.whole;
+    void this.updateComplete.then(() => this.focus());
+  };
 
   private pieces(): unknown {
     let slot = -1;

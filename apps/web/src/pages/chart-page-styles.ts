@@ -39,4 +39,30 @@ export const chartPageStyles: CSSResult = css`
       top: 0.5rem;
     }
   }
+  /* Over the page, at its right, so that nobody loses their place. */
+  .explanation {
+    position: fixed;
+    z-index: 5;
+    inset: 1rem 1rem 1rem auto;
+    width: min(34rem, 100vw - 4rem);
+    overflow-y: auto;
+    padding: 0.75rem 1rem 1rem;
+    border: 1px solid var(--_ink);
+    background: var(--_sheet);
+    box-shadow: -6px 0 0 -5px var(--_rule);
+  }
+  .explanation h2 {
+    font-size: 1.25rem;
+    font-weight: 400;
+    margin: 0;
+  }
+  .explanation h3 {
+    font-size: 1rem;
+    font-style: italic;
+    color: var(--_soft);
+    margin: 0.75rem 0 0;
+  }
+  .explanation p {
+    margin: 0.15rem 0;
+  }
 `;

@@ -141,7 +141,10 @@ export class SlewChartPage extends LitElement {
       const motion = await inTurn(() => motionOf(track, playback));
       while (this.chosen === chosen && !(await inTurn(() => motion.prepare(PREPARING_MS))));
     }
-    if (this.chosen === chosen) this.answer = answer;
+    if (this.chosen !== chosen) return;
+    this.answer = answer;
+    // One that is being applied leaves by itself.
+    if (this.sentence && !this.busy) this.rewrite(this.sentence.text);
   }
 
   private makeData(): ChartData | undefined {
@@ -191,8 +194,7 @@ export class SlewChartPage extends LitElement {
         Choose a track on the roster, and its angular speed over time is drawn here.
       </p>`;
     if (!data || !file) return html`<p class="empty" role="status">Drawing ${chosen.track}.</p>`;
-    return html`${cautionsOf(file)} ${this.playbacks()}
-      ${explanationOf(this.word, () => this.explained())}
+    return html`${cautionsOf(file)} ${this.playbacks()} ${explanationOf(this.word, () => this.explained())}
       <div class="sheet" @keydown=${this.keyed}>
         <slew-chart
           .data=${data}
@@ -378,7 +380,9 @@ export class SlewChartPage extends LitElement {
     this.busy = true;
     const done = await this.session.apply(chosen.file, [sentence.step]);
     this.busy = false;
-    if (done) this.leaveSentence();
+    // Another may have been begun meanwhile.
+    if (done && this.sentence === sentence) this.leaveSentence();
+    else if (this.sentence) this.rewrite(this.sentence.text);
   }
 
   private leaveSentence(): void {
@@ -395,6 +399,11 @@ interface Sketched {
   readonly settled: boolean;
   readonly idle: boolean;
   readonly motion?: Motion;
+}
+
+function focusedWithin(element: Element | null): HTMLElement | undefined {
+  const focused = element?.shadowRoot?.activeElement;
+  return focused instanceof HTMLElement ? focused : undefined;
 }
 
 function sketchedData(data: ChartData, motion: Motion): ChartData {

@@ -11,14 +11,14 @@ import { overshoots, tracePath, withinMotion, type TracePlace } from './trace-pa
 
 /** Heights of a row's bands, CSS pixels from its top. */
 export const ROW = {
-  top: 18,
-  base: 94,
-  posts: 98,
-  feet: 109,
-  times: 122,
-  carets: 114,
+  top: 20,
+  base: 120,
+  posts: 124,
+  feet: 135,
+  times: 148,
+  carets: 140,
   caret: 9,
-  bottom: 138,
+  bottom: 164,
 } as const;
 /** The same for the close-up, which is tall and has room for the keys' numbers. */
 export const TALL_ROW = {

@@ -110,7 +110,7 @@ export const chartStyles: CSSResult = css`
   }
   .row > .from,
   .row > .carried {
-    padding-top: 82px;
+    padding-top: 108px;
     font-size: 0.875rem;
     line-height: 1;
     color: var(--_soft);
@@ -212,6 +212,11 @@ export const chartStyles: CSSResult = css`
     display: block;
     margin-left: -0.25rem;
     text-align: left;
+  }
+  .notes a.rule {
+    color: inherit;
+    text-decoration: underline dotted 1px;
+    text-underline-offset: 0.2em;
   }
   @media (pointer: fine) {
     .notes button {

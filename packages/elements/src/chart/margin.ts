@@ -12,7 +12,9 @@ const NOTE_GAP = 6;
 /** What the margin tells the chart. */
 export interface MarginEvents {
   choose(note: MarginNote): void;
-  mend(note: MarginNote): void;
+  /** `way`: 0 the proposed remedy, from 1 on the others. */
+  mend(note: MarginNote, way: number): void;
+  explain(rule: string): void;
   unfold(row: number): void;
 }
 
@@ -54,18 +56,26 @@ function noteItem(
     <span class="number">${number}${note.level === 'error' ? '!' : ''}</span>
     <p class="message" @click=${() => events.choose(note)}>${note.message}</p>
     <span class="level"
-      >${note.level} ${note.rule},
-      <span class="whole">${sayTime(note.time, 2)}</span>${places}${STATUS[note.status]}</span
+      >${note.level}
+      <a
+        class="rule"
+        href="#${note.rule}"
+        title="What ${note.rule} is"
+        @click=${(event: Event) => {
+          event.preventDefault();
+          events.explain(note.rule);
+        }}
+        >${note.rule}</a
+      >, <span class="whole">${sayTime(note.time, 2)}</span>${places}${STATUS[note.status]}</span
     >
     ${
       note.remedy && note.status === 'open'
-        ? html`<button
-            class="plain on-screen"
-            title=${note.remedy.sentence}
-            @click=${() => events.mend(note)}
-          >
-            ${note.remedy.button}<span class="unseen">, finding ${number}</span>
-          </button>`
+        ? [note.remedy, ...(note.others ?? [])].map(
+            ({ sentence, button }, way) =>
+              html`<button class="plain on-screen" title=${sentence} @click=${() => events.mend(note, way)}>
+                ${button}<span class="unseen">, finding ${number}</span>
+              </button>`,
+          )
         : nothing
     }
   </li>`;

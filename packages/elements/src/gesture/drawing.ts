@@ -81,7 +81,7 @@ function drawing(
     edit: { verb: 'shape', speeds: points, span: sayable(span) },
     label: `Drawn speed at ${sayTime(timeAt(place))}`,
     says,
-    tag: says,
+    tag: changed ? `${sayCount(points.length, 'point')}, ×${sayNumber(scale)}` : '',
     amount: tidy(speeds[place], 0.01),
     dragged: (from: Place, to: Place) => drawn(stroked(speeds, span, from, to)),
     nudged(press) {

@@ -168,7 +168,8 @@ function priceTag({ paper, hand, sketch, here }: HandScene): SVGTemplateResult |
   const time = (sketch ? sketch.newTime(hand.time) : hand.time) + (hand.later ?? 0);
   if (time < paper.row.from || time >= paper.row.to) return nothing;
   const x = xOf(paper, time);
-  const anchor = x + 14 + words.length * LETTER > paper.width ? 'end' : 'start';
+  const room = words.length * LETTER + 14;
+  const anchor = x + room > paper.width && x > room ? 'end' : 'start';
   const beside = anchor === 'end' ? -14 : 14;
   return svg`<text class="price ${hand.kind}" text-anchor=${anchor} x=${x + beside} y=${paper.bands.top - 6}>${words}</text>`;
 }
