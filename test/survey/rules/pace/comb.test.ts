@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import type { RotationTrack } from '@slewcurve/core';
+import { applySteps } from '@slewcurve/mend';
 import { surveyTrack } from '@slewcurve/survey';
 import { turningTrack } from '../../../support/turning-track.js';
 
@@ -27,6 +28,26 @@ describe('pace.comb', () => {
   test('25 at 30 repeat every sixth; 30 at 60 is on twos, a note', () => {
     expect(comb(converted(25, 30))?.message).toContain('every 6th step');
     expect(comb(converted(30, 60))).toMatchObject({ level: 'note' });
+  });
+
+  test.each([
+    [24, 30],
+    [25, 30],
+    [50, 60],
+  ])(
+    'of %d frames a second at %d a re-grid is proposed that takes the comb off and keeps the frames',
+    (made, shown) => {
+      const track = converted(made, shown);
+      const { remedy } = comb(track)!;
+      expect(remedy).toMatchObject({ verb: 're-grid', fps: shown, source: made });
+      const [after] = applySteps([track], [remedy!]).tracks;
+      expect(after.times).toEqual(track.times);
+      expect(surveyTrack(after).filter(({ level }) => level !== 'note')).toEqual([]);
+    },
+  );
+
+  test('on twos there is no remedy: it is meant', () => {
+    expect(comb(converted(30, 60))?.remedy).toBeUndefined();
   });
 
   test('its own rate, a freeze and a hold are clean', () => {

@@ -1,5 +1,6 @@
-import { angleBetween } from '@slewcurve/core';
+import { FRAME_RATES, angleBetween, frameGrid } from '@slewcurve/core';
 import type { Limits, Place, Remedy, Rule, TrackContext } from '../../rule.js';
+import { triedStep } from '../../tried-step.js';
 import { segmentsOf, type Segments } from '../../segments.js';
 
 const DEGREES = 180 / Math.PI;
@@ -57,8 +58,14 @@ export const comb: Rule = Object.freeze({
     const keys = [first + 1, last + 1];
     return [{ keys, time: span[0], span, value, limit: least, level, facts: { period } }];
   },
-  // `re-grid` has to be told the rate that the motion was made at.
-  remedy: (): Remedy | undefined => undefined,
+  remedy({ track, clip }: TrackContext, { facts }: Place): Remedy | undefined {
+    const period = facts?.['period'] ?? 0;
+    const shown = clip.frameRate ?? frameGrid([track.times]);
+    if (shown === undefined) return undefined;
+    const made = madeAt(shown, period);
+    // On twos is meant; any other rate than a usual one is a guess.
+    return made === undefined ? undefined : triedStep(track, { verb: 're-grid', fps: shown, source: made });
+  },
   message({ value, limit, facts }: Place): string {
     const period = facts?.['period'] ?? 0;
     return `while it moves every ${period}${period === 2 ? 'nd' : period === 3 ? 'rd' : 'th'} step repeats the key before (${value.toFixed(0)} % of them, limit ${limit} %)${period === 2 ? ', as in a motion drawn on twos' : ''}: the frame rate looks converted by doubling frames`;
@@ -75,7 +82,7 @@ export const comb: Rule = Object.freeze({
     spares:
       'Animation on twos (a note), freezes without a period, holds, coarse storage (`file.coarse` tells it), STEP and sparse tracks, eyes.',
     remedy:
-      'Bake again from the source’s own frames, or drop the repeats and give the times of the source’s rate.',
+      '`re-grid` drops the repeats, sets the other keys to the rate that the motion was made at, and reads it at the frames again. Better still: bake from the source’s own frames.',
   },
 });
 
@@ -113,4 +120,11 @@ function periodOf(repeats: readonly number[]): number | undefined {
   for (const [distance, count] of counts) if (count > most) [period, most] = [distance, count];
   const isRegular = repeats.length >= LEAST_REPEATS && most > REGULAR * (repeats.length - 1);
   return isRegular && period > 1 ? period : undefined;
+}
+
+/** The usual frame rate of which every `period`-th frame was shown twice; undefined where there is none. */
+function madeAt(shown: number, period: number): number | undefined {
+  if (period < 3) return undefined;
+  const made = (shown * (period - 1)) / period;
+  return FRAME_RATES.find((rate) => Math.abs(rate / made - 1) < 5e-4);
 }
