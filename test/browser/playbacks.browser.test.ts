@@ -11,9 +11,9 @@ test('the address ?demo opens the demo scene, under its own house rules', async 
   // Only the house rules say that the beetle's clips repeat; the knee's end is 3.0° off its start (DEMO).
   await page.getByRole('searchbox', { name: 'Find a track' }).fill('beetle-knee');
   await page.locator('slew-roster .option').first().click();
-  expect(await page.locator('slew-chart .notes .message').allTextContents()).toContainEqual(
-    expect.stringContaining('The loop ends 3.0° off its start'),
-  );
+  await page
+    .locator('slew-chart .notes .message', { hasText: 'The loop ends 3.0° off its start' })
+    .waitFor(SOON);
 });
 
 test('another playback is surveyed anew, and two stand on one paper with what they differ by', async () => {
@@ -22,7 +22,7 @@ test('another playback is surveyed anew, and two stand on one paper with what th
   await page.getByRole('searchbox', { name: 'Find a track' }).fill('beetle-hip');
   await page.locator('slew-roster .option').first().click();
   const note = page.locator('slew-chart .notes .level');
-  expect(await note.allTextContents()).toContainEqual(expect.stringContaining('note turn.sign-flip'));
+  await note.filter({ hasText: 'note turn.sign-flip' }).first().waitFor(SOON);
 
   await page.getByLabel('compare with:').selectOption('finite-cubic');
   const legend = page.locator('slew-chart .legend');

@@ -33,6 +33,8 @@ describe('finding a track', () => {
   test('by every word, in file, clip or track', () => {
     expect(found('chop LOWERLEG')).toEqual(['lowerleg.r', 'lowerleg.l']);
     expect(found('melee-attack hand')).toEqual(['hand.r']);
+    // Joined by a hyphen or a line they are one word.
+    expect(found('melee_chop')).toEqual([]);
     expect(found('')).toHaveLength(KNIGHT.length);
   });
 

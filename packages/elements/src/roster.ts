@@ -372,6 +372,8 @@ export class SlewRoster extends LitElement {
     this.find = valueOf(event);
     this.top = 0;
     this.renderRoot.querySelector('.scroll')?.scrollTo({ top: 0 });
+    // What is typed next, Enter perhaps, is about the rows that are found now; their turn may come too late.
+    this.performUpdate();
   };
 
   /** Enter opens the best match, Down walks into the list, Escape lets go of what was typed. */

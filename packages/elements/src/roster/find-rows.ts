@@ -15,7 +15,7 @@ export function findRows(
   family = '',
   book: readonly Word[] = [],
 ): RosterRow[] {
-  const words = plainWord(text).split(' ').filter(Boolean);
+  const words = text.trim().split(/\s+/).map(plainWord).filter(Boolean);
   const called = new Map(book.map(({ name, alsoCalled }) => [name, alsoCalled.map(plainWord)]));
   return rows.filter(
     (row) =>
