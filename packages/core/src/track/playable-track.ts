@@ -7,9 +7,16 @@ import { VALUES_PER_KEY, type RotationTrack } from './rotation-track.js';
  * before. `track` itself where nothing is dropped, a new track otherwise.
  */
 export function playableTrack(track: RotationTrack): RotationTrack {
+  // Asked for by every curve and measure of one track.
+  if (sound.has(track)) return track;
   const kept = playableKeys(track);
-  return kept.length === track.times.length ? track : keepKeys(track, kept);
+  if (kept.length < track.times.length) return keepKeys(track, kept);
+  sound.add(track);
+  return track;
 }
+
+/** Tracks all of whose keys can be played. */
+const sound = new WeakSet<RotationTrack>();
 
 /**
  * Numbers of the keys that can be played, ascending. Those that cannot: numbers that are not finite (a time beyond ±1e300 s

@@ -47,7 +47,7 @@ function pass(
         let y = 0;
         // The angle of e^(−2πi(out·j/factor + group·out·stride/count)), in parts of `count`.
         for (let j = 0, turn = twist; j < factor; j++, turn += out * root) {
-          if (turn >= count) turn %= count;
+          if (turn >= count) turn -= count;
           const at = k + stride * (group + groups * j);
           x += cosines[turn]! * re[at]! - sines[turn]! * im[at]!;
           y += cosines[turn]! * im[at]! + sines[turn]! * re[at]!;
