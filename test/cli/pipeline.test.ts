@@ -285,6 +285,37 @@ describe('a stamp', () => {
   });
 });
 
+describe('house rules', () => {
+  test.each([
+    [{ level: {} }, '"level" at /level is no key. Did you mean levels?', 'house-rules.unknown-key'],
+    [
+      { levels: { 'jump.shelf': 'loud' } },
+      'There are: off, note, warning, error.',
+      'house-rules.unknown-level',
+    ],
+    [{ limits: { joint: { 'jump.shef': 3 } } }, 'Did you mean jump.shelf?', 'house-rules.unknown-rule'],
+    [{ limits: { jiont: {} } }, '/limits/jiont is no role', 'house-rules.unknown-role'],
+    [{ loops: 'walk' }, '/loops of the house rules must be a list', 'house-rules.bad-shape'],
+  ])(
+    '%j stop the run, and are told with the file, the key and what is allowed',
+    async (rules, words, code) => {
+      const { run, path } = await library();
+      writeFileSync(path('rules.json'), JSON.stringify(rules));
+      const ran = await run('check', 'clips', '--rules', 'rules.json');
+      expect([ran.code, ran.stdout]).toEqual([2, '']);
+      for (const part of ['slewcurve: rules.json: ', words, code]) expect(ran.stderr).toContain(part);
+    },
+  );
+
+  test('say by which playback files are looked at where no flag does', async () => {
+    const { run, path } = await library();
+    writeFileSync(path('rules.json'), JSON.stringify({ playback: ['finite-cubic'] }));
+    const check = ['check', 'clips/a.glb', '--rules', 'rules.json', '--format', 'json'];
+    expect(reportOf(await run(...check)).playbacks).toEqual(['finite-cubic']);
+    expect(reportOf(await run(...check, '--playback', 'chord')).playbacks).toEqual(['chord']);
+  });
+});
+
 describe('flags', () => {
   test('--role says what turns, for all tracks or some', async () => {
     const { run } = await library();

@@ -193,8 +193,21 @@ export function measureOf(args: Arguments, flag: 'angle' | 'rate'): number | und
   throw new SlewcurveError('usage.bad-value', `--${flag} takes a number, 0 or more; got ${value}.`);
 }
 
+/** House rules of a file; what is wrong in it is told with its name. */
 async function houseRulesOf(path: string | undefined, cwd: string): Promise<HouseRules> {
-  return path === undefined ? NO_HOUSE_RULES : parseHouseRules(await readJson(path, cwd));
+  if (path === undefined) return NO_HOUSE_RULES;
+  const json = await readJson(path, cwd);
+  try {
+    return parseHouseRules(json);
+  } catch (cause) {
+    if (!(cause instanceof SlewcurveError)) throw cause;
+    throw new SlewcurveError(
+      cause.code,
+      `${path}: ${cause.message}`,
+      { ...cause.place, file: path },
+      { cause },
+    );
+  }
 }
 
 function badValue(flag: string, value: string, allowed: readonly string[]): SlewcurveError {
