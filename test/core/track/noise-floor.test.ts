@@ -66,9 +66,9 @@ describe('the rate and acceleration floors', () => {
   });
   const f = angleFloor(SINGLE);
 
-  test('of a segment is 2f/Δt, and its speed times what half a step of stored time adds', () => {
+  test('of a segment is 2f/Δt, and its speed times what half a step of stored time adds at either end', () => {
     // Times up to 4.5 s in float32 lie 2^-21 s apart: half a step is 2^-22.
-    const due = (2 * f) / 0.5 + ((Math.PI / 2 / 0.5) * 2 ** -22) / 0.5;
+    const due = (2 * f) / 0.5 + ((Math.PI / 2 / 0.5) * 2 * 2 ** -22) / 0.5;
     expect(rateFloor(track, 0) / due).toBeCloseTo(1, 12);
   });
 

@@ -49,16 +49,16 @@ function timeFloor(storage: Storage, time: number): number {
 
 /**
  * Largest error of the mean angular rate from key number `key` to the next by rounding of orientations and times, rad/s:
- * 2f/Δt + s·δt/Δt (f the angle floor, s the segment's speed, δt half a step of the stored time). Infinite where the next key is
- * not later.
+ * 2f/Δt + s·(δ₀ + δ₁)/Δt (f the angle floor, s the segment's speed, δ half a step of the stored time, which either end may be off
+ * by). Infinite where the next key is not later.
  */
 export function rateFloor(track: RotationTrack, key: number): number {
   const duration = track.times[key + 1] - track.times[key];
   if (!(duration > 0)) return Infinity;
   const floor = 2 * angleFloor(track.storage, track.interpolation);
   const speed = segmentAngle(track, key) / duration;
-  const later = Math.max(Math.abs(track.times[key]), Math.abs(track.times[key + 1]));
-  return (floor + speed * timeFloor(track.storage, later)) / duration;
+  const times = timeFloor(track.storage, track.times[key]) + timeFloor(track.storage, track.times[key + 1]);
+  return (floor + speed * times) / duration;
 }
 
 /**

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { applySteps } from '@slewcurve/mend';
+import { rateFloor, segmentAngle, storedTrack } from '@slewcurve/core';
 import { surveyTrack } from '@slewcurve/survey';
 import { turningTrack } from '../../../support/turning-track.js';
 
@@ -53,5 +54,28 @@ describe('file.time-grid', () => {
     expect(grid((key) => key / 50, 2250)).toBeUndefined();
     expect(grid((key) => key / 60 + 0.001 * Math.sin(key), 200)).toBeUndefined();
     expect(grid((key) => 0.0333 * key, 200)).toBeUndefined();
+  });
+
+  // NEEDS A25: ten minutes at 60 keys a second, times and values in float32.
+  test('a steady spin of ten minutes in float32 ripples within its noise floor, and nothing is found', () => {
+    const exact = turningTrack((key) => key / 2, 36_000, 60);
+    const track = storedTrack({
+      ...exact,
+      times: exact.times.map(Math.fround),
+      values: exact.values.map(Math.fround),
+      storage: { component: 'float32', timeComponent: 'float32' },
+    });
+    let ripple = 0;
+    let outside = 0;
+    for (let key = 0; key + 1 < track.times.length; key++) {
+      const rate = segmentAngle(track, key) / (track.times[key + 1] - track.times[key]);
+      const off = Math.abs(rate - Math.PI / 6);
+      ripple = Math.max(ripple, off);
+      if (off > rateFloor(track, key)) outside++;
+    }
+    expect(outside).toBe(0);
+    // Float32 times at 600 s lie 6.1e-5 s apart: half of that at both ends of 1/60 s is 0.37 %.
+    expect(ripple / (Math.PI / 6)).toBeGreaterThan(0.002);
+    expect(surveyTrack(track)).toEqual([]);
   });
 });
