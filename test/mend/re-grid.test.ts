@@ -128,7 +128,9 @@ describe('re-grid', () => {
       expect(angleBetween(was.orientation([], t), is.orientation([], t))).toBeLessThan(1e-9);
   });
 
-  it('refuses what it would change by more than is allowed, and repeats among cubics', () => {
+  it('refuses what it would change by more than is allowed, repeats among cubics, and more keys than anybody has', () => {
+    const endless = rotationTrack({ times: [0, 1e9], values: [0, 0, 0, 1, 0, 0, 1, 0] });
+    expect(codeOf(() => applied(endless, { verb: 're-grid', fps: 30 }))).toBe('step.too-many-frames');
     const track = keyed({ ...WAVE, hertz: 3 }, grid(61, 60), 'LINEAR');
     expect(codeOf(() => applied(track, { verb: 're-grid', fps: 12, within: 0.1 }))).toBe(
       'step.beyond-tolerance',

@@ -24,6 +24,8 @@ import { withoutRepeats } from '../without-repeats.js';
 
 /** Nearer than this share of a frame to the end there is no frame beside it. */
 const AT_END = 0.01;
+/** More keys than anybody has: a day at 115 frames a second. */
+const MOST_KEYS = 1e7;
 /** A grid whose gap is longer than the keys' by this factor is coarser: what it can't hold is filtered out first. */
 const COARSER = 1.25;
 
@@ -72,6 +74,12 @@ export const reGrid: Verb = Object.freeze({
 function gridTimes(track: RotationTrack, rate: number): Float64Array {
   const start = track.times[0];
   const end = track.times[track.times.length - 1];
+  if (!((end - start) * rate <= MOST_KEYS))
+    throw new SlewcurveError(
+      'step.too-many-frames',
+      `${Number((end - start).toPrecision(6))} s at ${rate} frames a second are more than ${MOST_KEYS} keys. Mend the times first, or take fewer frames a second.`,
+      placeOf(track),
+    );
   const times = [start];
   for (let frame = 1; (end - start) * rate - frame > AT_END; frame++)
     times.push(stored(track, start + frame / rate));
