@@ -48,6 +48,19 @@ describe('fingerprints', () => {
     for (const track of [later, single, trimmed]) expect(printsOf(track)).toEqual(printsOf(popped));
   });
 
+  test('a re-export that starts two keys earlier keeps every print, its keys and times shifted', () => {
+    const early = keyed(
+      { spin: [0, 20, 0], swing: [0, 0, 0], hertz: 0.4, phase: 1 - (2 * Math.PI * 0.4 * 2) / 30 },
+      grid(92),
+      'LINEAR',
+    );
+    const shifted = turned(early, [32, 62], [0, 0, 12]);
+    const keysOf = (track: typeof popped): number[] =>
+      surveyTrack(track)[0].occurrences.map(({ keys }) => keys[0]);
+    expect(printsOf(shifted)).toEqual(printsOf(popped));
+    expect(keysOf(shifted)).toEqual(keysOf(popped).map((key) => key + 2));
+  });
+
   test('another size, clip or track makes others', () => {
     const others = [
       turned(smooth, [30, 60], [0, 0, 14]),

@@ -23,6 +23,29 @@ describe('rule pages', () => {
     },
   );
 
+  test.each(RULES.map((rule) => [rule.id, rule] as const))('the page of %s has every section', (_, rule) => {
+    const page = rulePage(rule);
+    const headings = [...page.matchAll(/^## (.*)$/gm)].map(([, heading]) => heading);
+    expect(headings).toEqual([
+      'What it is',
+      'How it looks in the trace',
+      'What the standard says',
+      'What programs do',
+      'What people see',
+      'Test',
+      'Default thresholds',
+      'Where the defaults come from',
+      'What it spares',
+      'Remedy',
+      'How to silence it',
+    ]);
+    for (const section of page.split(/^## .*$/m).slice(1)) expect(section.trim().length).toBeGreaterThan(5);
+    // Where numbers come from is said, or said to be unknown.
+    expect(rule.page.source).toMatch(
+      /no source|measured|glTF 2\.0|[Gg]eometry|[Aa]rithmetic|arithmetic|no threshold|by definition|house rules/,
+    );
+  });
+
   test('ids are all different', () => {
     expect(new Set(RULES.map((rule) => rule.id)).size).toBe(RULES.length);
   });
