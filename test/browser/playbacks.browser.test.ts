@@ -3,7 +3,7 @@ import { focused } from '../support/by-keyboard.js';
 import { openApp } from '../support/open-app.js';
 
 /** A page under load may be late. */
-const SOON = { timeout: 10_000 };
+const SOON = { timeout: 20_000 };
 
 test('the address ?demo opens the demo scene, under its own house rules', async () => {
   const page = await openApp({ address: '?demo' });
