@@ -28,18 +28,24 @@ describe('paces by command', () => {
       { ...QUAY, verb: 'cap', rate: 12.05 },
       { ...QUAY, verb: 'ease in/out', shoulders: 0.5, ends: 'run' },
     );
-    const flags = ['mend', 'in.glb', '--card', 'card.json', '--rules', 'rules.json'];
-    const { stdout } = await run(...flags, '--dry-run');
+    const { stdout, code } = await run(
+      'mend',
+      'in.glb',
+      '--card',
+      'card.json',
+      '--rules',
+      'rules.json',
+      '--dry-run',
+    );
+    // What is left on other tracks fails.
+    expect(code).toBe(1);
     expect(stdout).toMatch(
       /Cap the speed of all keys of \* in quay-flight, to at most 12\.05 deg\/s\. .*; 1\.73 s added; as stored up to 0\.0\d+° off; \d+ bytes more\./,
     );
-    expect(stdout).toContain('letting time run, with shoulders of 0.5 s.');
-    const report = reportOf(await run(...flags, '-o', 'out.glb', '--format', 'json'));
-    const left = report.files.flatMap(({ findings }) =>
-      findings.filter(({ clip }) => clip === 'quay-flight'),
-    );
-    expect(left.filter(({ rule }) => /^(pace|limit|jump)\./.test(rule))).toEqual([]);
-    expect(report.steps?.map(({ price }) => price?.seconds)).toEqual([0, expect.closeTo(1.73, 2), 1]);
+    expect(stdout).toMatch(/letting time run, with shoulders of 0\.5 s\. .*; 1\.00 s added/);
+    // Its roll is left, which no pace can straighten; other clips keep what they have.
+    expect(stdout).toContain('in scope-pass');
+    expect(stdout).not.toMatch(/in quay-flight.*: .*(error|warning|note) (pace|limit|jump)\./);
   });
 
   test('a camera whose place and aim are both keyed keeps its target through even out', async () => {
@@ -51,24 +57,30 @@ describe('paces by command', () => {
   });
 
   test('cautions stand in text and JSON where a machine or a headset is in play, and nowhere else', async () => {
-    const { run } = await withCard(kestrelPoint(), kestrelPointRules, {
-      clip: 'scope-pass',
-      track: '*',
-      verb: 'cap',
-      rate: 20,
-    });
-    const machine =
-      "caution, 2 tracks of role machine: Check limits and stops against the maker's data and local rules, by a licensed or responsible operator, at reduced speed first. No figure here calls a motion safe.";
+    const rules = { roles: { boat: 'machine', camera: 'camera-headset' } };
+    const { run } = await withCard(flight(), rules, { ...CAMERA, verb: 'cap', rate: 20 });
     const flags = ['--rules', 'rules.json'];
-    expect((await run('check', 'in.glb', ...flags)).stdout).toContain(machine);
-    expect((await run('survey', 'in.glb', ...flags)).stdout).toContain(machine);
-    const mended = await run('mend', 'in.glb', '--card', 'card.json', '--dry-run', ...flags);
-    expect(mended.stdout).toContain(machine);
+    const machine =
+      "caution, 1 track of role machine: Check limits and stops against the maker's data and local rules, by a licensed or responsible operator, at reduced speed first. No figure here calls a motion safe.";
+    const headset =
+      'caution, 1 track of role camera-headset: Comfort numbers are guidance, not a standard: speeds above them are marked, and none is called safe.';
+    for (const command of [
+      ['check', 'in.glb'],
+      ['survey', 'in.glb'],
+      ['mend', 'in.glb', '--card', 'card.json', '--dry-run'],
+    ]) {
+      const { stdout } = await run(...command, ...flags);
+      expect(stdout).toContain(machine);
+      expect(stdout).toContain(headset);
+      expect((await run(...command)).stdout).not.toContain('caution');
+    }
     const { cautions, files } = reportOf(await run('check', 'in.glb', '--format', 'json', ...flags));
-    expect(cautions?.map(({ role, tracks }) => [role, tracks])).toEqual([['machine', 2]]);
+    expect(cautions?.map(({ role, tracks }) => [role, tracks])).toEqual([
+      ['machine', 1],
+      ['camera-headset', 1],
+    ]);
     expect(files[0].cautions).toEqual(cautions);
-    const worn = await run('check', 'in.glb', '--role', '*/quay-camera=camera-headset');
-    expect(worn.stdout).toContain('caution, 1 track of role camera-headset: Comfort numbers are guidance');
-    expect((await run('check', 'in.glb')).stdout).not.toContain('caution');
+    const worn = await run('check', 'in.glb', '--role', 'camera=camera-headset');
+    expect(worn.stdout).toContain(headset);
   });
 });

@@ -13,8 +13,8 @@ const project = freshProject();
 afterAll(() => project.remove());
 
 describe('recipe', () => {
-  test('there are six, and each says what it prints', () => {
-    expect(recipes).toHaveLength(6);
+  test('there are seven, and each says what it prints', () => {
+    expect(recipes).toHaveLength(7);
     for (const { code } of recipes) expect(code.match(/\/\/ prints /g)).toHaveLength(1);
   });
 

@@ -6,7 +6,7 @@ import { codeOf } from '../../support/edit-acceptance.js';
 import { arcs, keepsThePath, share, smooth, speedAt } from '../../support/keeps-the-path.js';
 
 fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 5 });
-const RUNS = { numRuns: 8, endOnFailure: true };
+const RUNS = { numRuns: 5, endOnFailure: true };
 
 describe('a copied pace', () => {
   it('is v₂(u) = v₁(u)·(S₂/T₂)/(S₁/T₁), over any span of the other curve and any time', () => {

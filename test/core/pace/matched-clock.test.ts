@@ -6,7 +6,7 @@ import { codeOf } from '../../support/edit-acceptance.js';
 import { arcs, keepsThePath, share, smooth, speedAt } from '../../support/keeps-the-path.js';
 
 fc.configureGlobal({ ...fc.readConfigureGlobal(), seed: 5 });
-const RUNS = { numRuns: 8, endOnFailure: true };
+const RUNS = { numRuns: 5, endOnFailure: true };
 const RADIANS = Math.PI / 180;
 
 /** Both sides of a time, shaped to one speed over a reach that fits. */
