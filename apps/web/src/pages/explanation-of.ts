@@ -10,7 +10,7 @@ export function explanationOf(word: string | undefined, close: () => void): Temp
     event.preventDefault();
     close();
   };
-  return html`<aside
+  return html`<div
     class="explanation"
     role="dialog"
     aria-label=${`What ${entry.name} is`}
@@ -19,7 +19,7 @@ export function explanationOf(word: string | undefined, close: () => void): Temp
   >
     ${blocksOf(entry.page).map(block)}
     <button @click=${close}>Put it away</button>
-  </aside>`;
+  </div>`;
 }
 
 /** Markdown as rule pages use it: headings, tables, paragraphs. */

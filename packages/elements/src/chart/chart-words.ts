@@ -134,6 +134,9 @@ const KEYS: readonly (readonly [string, string])[] = [
 /** The keys, shown on the page. */
 export function keyWords(): TemplateResult {
   return html`<p class="keys on-screen" id="keys">
-    On the trace: ${KEYS.map(([key, does], i) => html`${i > 0 ? '; ' : ''}<kbd>${key}</kbd> ${does}`)}.
+    The trace is drawn up or down where it stands, or by its ring at the cursor; the rust bar draws a limit
+    down; the arrow keys do the same on ring and bar, <kbd>+</kbd> and <kbd>−</kbd> widen and narrow a press,
+    <kbd>Enter</kbd> takes it and <kbd>Escape</kbd> lets it go. On the trace:
+    ${KEYS.map(([key, does], i) => html`${i > 0 ? '; ' : ''}<kbd>${key}</kbd> ${does}`)}.
   </p>`;
 }

@@ -31,7 +31,7 @@ const COLUMN = 1;
 /** About what a letter of the price takes, px. */
 const LETTER = 6.5;
 /** A label keeps this far from both ends of the paper, px. */
-const LABEL_ROOM = 68;
+const LABEL_ROOM = 78;
 
 /** The new trace, what is borrowed for it or pressed flat, and its price. */
 export function handPicture(scene: HandScene): SVGTemplateResult {
