@@ -37,6 +37,24 @@ describe('slewcurve docket', () => {
     expect(html).toContain('Angular speed from 0.500 s to 1.500 s');
   });
 
+  test('tells where playbacks disagree when there are two', async () => {
+    const { run, path } = await commandFolder();
+    writeFileSync(path('walk.glb'), POPS);
+    expect((await run('docket', 'walk.glb')).stdout).not.toContain('playbacks disagree');
+    const { stdout } = await run('docket', 'walk.glb', '--playback', 'short-way,finite-cubic');
+    const row =
+      /## Where playbacks disagree\n\n\|.*\n\|.*\n\| joint-0\/joint-1 in Take \| finite cubic \| ([\d.]+)° \| (\d\.\d{3}) s/.exec(
+        stdout,
+      );
+    // Hermite from 0° with a slope of 10°/2h to 10° with slope 0, less the straight line: 20u² − 15u³ − 5u, at most 1.17° at u = 0.738.
+    // The sway beneath adds a few hundredths.
+    expect(Math.abs(Number(row?.[1]) - 1.17)).toBeLessThan(0.1);
+    expect(Math.abs(Number(row?.[2]) - 1)).toBeLessThan(1 / 30);
+    expect((await run('docket', 'walk.glb', '--playback', 'as-written,short-way')).stdout).toContain(
+      'Nowhere: they play every track alike.',
+    );
+  });
+
   test.each([
     [['docket'], 'usage.one-file'],
     [['docket', 'none.glb'], 'file.not-found'],

@@ -99,9 +99,14 @@ export function compareFiles(
   };
 }
 
-/** How two tracks differ as one playback plays them; outside its keys a track holds its ends. */
-export function compareTracks(a: RotationTrack, b: RotationTrack, playback: PlaybackId): TrackComparison {
-  const curves: readonly [Curve, Curve] = [curveOf(a, playback), curveOf(b, playback)];
+/** How two tracks differ, each as a playback plays it, one for both where a second is not named; outside its keys a track holds its ends. */
+export function compareTracks(
+  a: RotationTrack,
+  b: RotationTrack,
+  playback: PlaybackId,
+  playbackOfB: PlaybackId = playback,
+): TrackComparison {
+  const curves: readonly [Curve, Curve] = [curveOf(a, playback), curveOf(b, playbackOfB)];
   const { angle, angleAt } = largestAngle(curves);
   const { rate, rateOver } = largestRate([a, b], curves);
   return {

@@ -1,6 +1,7 @@
 import { SlewcurveError } from '@slewcurve/core';
 import {
   LEVELS,
+  compareTracks,
   docketHtml,
   docketMarkdown,
   docketOf,
@@ -27,6 +28,8 @@ import { withFile, type FileInHand } from '../with-file.js';
 
 /** Findings that are drawn: the worst; a page of hundreds is not looked at. */
 const MOST_PICTURES = 60;
+/** Tracks whose playbacks disagree that are listed. */
+const MOST_DISAGREEMENTS = 20;
 
 /** `slewcurve docket FILE`: the record that is handed on, of the file as it is or as a job card leaves it. Nothing is mended. */
 export async function docket(args: Arguments, io: CommandIo): Promise<number> {
@@ -56,7 +59,12 @@ async function partsOf(
   const stamps = await readStamps(file.path, opened.name);
   const report = withStamps(await surveyFile(opened.name, opened.file, settings, watch), stamps);
   const before = { size: opened.source.size, sha256: await sha256Of(opened.source, watch), report };
-  const common = { before, playbacks: settings.playbacks, houseRules: settings.houseRules };
+  const common = {
+    before,
+    playbacks: settings.playbacks,
+    houseRules: settings.houseRules,
+    ...(settings.playbacks.length > 1 && { disagreements: disagreementsOf(file, settings) }),
+  };
   const picture = pictures(file, report, settings);
   const card = args.value('card');
   const rules = args.value('rules') === undefined ? '' : ` --rules ${args.value('rules')}`;
@@ -86,6 +94,28 @@ async function partsOf(
     picture,
     command,
   };
+}
+
+/** Where the tracks are furthest apart under the first playback and another; tracks that one of them can't play are left out. */
+function disagreementsOf(
+  { opened }: FileInHand,
+  { playbacks: [first = 'as-written', ...others] }: JobSettings,
+): DocketParts['disagreements'] {
+  const tracks = opened.file.clips.flatMap((clip) => clip.tracks);
+  const all = others.flatMap((playback) =>
+    tracks.flatMap((track) => {
+      try {
+        return [{ ...compareTracks(track, track, first, playback), playback }];
+      } catch (error) {
+        if (error instanceof SlewcurveError) return [];
+        throw error;
+      }
+    }),
+  );
+  return all
+    .filter(({ angle, rate }) => angle > 0 || rate > 0)
+    .toSorted((a, b) => b.angle - a.angle || b.rate - a.rate)
+    .slice(0, MOST_DISAGREEMENTS);
 }
 
 /** Draws the worst findings on the file as it came. */

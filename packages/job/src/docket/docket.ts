@@ -1,6 +1,7 @@
 import { PLAYBACKS, type PlaybackId } from '@slewcurve/core';
 import { sayStep, type Step } from '@slewcurve/mend';
 import { RULES, type HouseRules } from '@slewcurve/survey';
+import type { TrackComparison } from '../compare.js';
 import { sayConventions } from '../conventions.js';
 import { LEVELS, type FileReport, type ReportedFinding, type StepReport } from '../report.js';
 import { sayDone } from '../reporters/say-done.js';
@@ -41,6 +42,8 @@ export interface DocketParts {
   readonly after?: Partial<FileBytes> & Pick<FileReport, 'findings' | 'tracks'>;
   readonly playbacks: readonly PlaybackId[];
   readonly houseRules: HouseRules;
+  /** How far tracks are apart under the first playback and another one, the worst first; left out where there is one playback. */
+  readonly disagreements?: readonly (TrackComparison & { readonly playback: PlaybackId })[];
   /** Lines of the job card; skipped ones are struck out. */
   readonly lines: readonly { readonly step: Step; readonly skipped?: boolean }[];
   readonly proofs: readonly StepReport[];
@@ -57,6 +60,7 @@ export function docketOf(parts: DocketParts): readonly DocketBlock[] {
     ...fileBlocks(parts),
     { kind: 'heading', text: 'Findings' },
     ...findingBlocks(parts),
+    ...playbackBlocks(parts),
     { kind: 'heading', text: 'Job card' },
     ...cardBlocks(parts),
     { kind: 'heading', text: 'Not checked' },
@@ -120,6 +124,28 @@ function findingBlocks(parts: DocketParts): DocketBlock[] {
 /** Distance to the limit in per cent of it; negative beyond it. Where the limit is none to stay under, there is none to tell. */
 function headroom({ value, limit }: ReportedFinding): string {
   return limit > 0 && value > limit ? `${Math.round(100 * (1 - value / limit))} %` : '';
+}
+
+function playbackBlocks({ disagreements, playbacks }: DocketParts): DocketBlock[] {
+  if (disagreements === undefined) return [];
+  const first = playbacks[0]?.replaceAll('-', ' ') ?? '';
+  const rows = disagreements.map(({ clip, track, playback, angle, angleAt, rate }) => [
+    `${track} in ${clip}`,
+    playback.replaceAll('-', ' '),
+    `${angle}°`,
+    `${angleAt.toFixed(3)} s`,
+    `${rate} deg/s`,
+  ]);
+  return [
+    { kind: 'heading', text: 'Where playbacks disagree' },
+    rows.length === 0
+      ? { kind: 'paragraph', text: 'Nowhere: they play every track alike.' }
+      : {
+          kind: 'table',
+          head: ['track', `${first} against`, 'at most apart', 'at', 'speed off by, over a key interval'],
+          rows,
+        },
+  ];
 }
 
 function cardBlocks({ before, after, lines, proofs }: DocketParts): DocketBlock[] {
