@@ -93,17 +93,17 @@ describe('alignSigns', () => {
   });
 });
 
+function canonicalValues(track: RotationTrack): Float64Array {
+  const values = track.values.slice();
+  for (let key = 0; key < track.times.length; key++)
+    canonical(values.subarray(4 * key, 4 * key + 4), track.values.subarray(4 * key, 4 * key + 4));
+  return values;
+}
+
 // NEEDS A23: continuity is of tracks, the canonical side of single poses; the one destroys the other, and gives it back.
 describe('canonical poses of a track', () => {
-  const HEMISPHERES = (track: RotationTrack): Float64Array => {
-    const values = track.values.slice();
-    for (let key = 0; key < track.times.length; key++)
-      canonical(values.subarray(4 * key, 4 * key + 4), track.values.subarray(4 * key, 4 * key + 4));
-    return values;
-  };
-
   test('tear a spin through 180° where it passes there; brought to one side it is whole again', () => {
-    const torn = rotationTrack({ ...spin(3), values: HEMISPHERES(spin(3)) });
+    const torn = rotationTrack({ ...spin(3), values: canonicalValues(spin(3)) });
     // Half turns at 0.5, 1.5 and 2.5 turns; keys stand every quarter turn.
     expect(signChanges(torn)).toHaveLength(3);
     const { track } = alignSigns(torn);
@@ -115,7 +115,7 @@ describe('canonical poses of a track', () => {
     const linear = fc.tuple(motions, keyTimes()).map(([motion, times]) => keyed(motion, times, 'LINEAR'));
     fc.assert(
       fc.property(linear, (track) => {
-        const { track: whole } = alignSigns(rotationTrack({ ...track, values: HEMISPHERES(track) }));
+        const { track: whole } = alignSigns(rotationTrack({ ...track, values: canonicalValues(track) }));
         const { track: aligned } = alignSigns(track);
         const sign = Math.sign(whole.values[3] * aligned.values[3]) || 1;
         expect(whole.values.every((part, i) => part === sign * aligned.values[i] || part === 0)).toBe(true);

@@ -192,7 +192,7 @@ describe('a BVH file', () => {
       const rows = motion.map((_, key) =>
         Array.from(angles.subarray(3 * key, 3 * key + 3), (x) => (x / RADIANS).toFixed(6)).join(' '),
       );
-      const channels = `3 ${[...sequence].map((axis) => `${axis}rotation`).join(' ')}`;
+      const channels = `3 ${sequence.replaceAll(/./g, (axis) => `${axis}rotation `)}`;
       const file = await open(oneJoint(channels, rows, '0.016666666666666666'));
       const [track] = tracksOf(file);
       expect(track.sequence).toBe(sequence);
