@@ -33,6 +33,7 @@ describe('rule pages', () => {
       'What programs do',
       'What people see',
       'Test',
+      'Examples',
       'Default thresholds',
       'Where the defaults come from',
       'What it spares',

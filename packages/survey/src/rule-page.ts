@@ -1,4 +1,5 @@
 import { ROLES } from './roles.js';
+import { RULE_EXAMPLES } from './rule-examples.js';
 import type { Rule } from './rule.js';
 
 /** A rule's page as Markdown: what `explain` prints and what the file beside the rule holds. */
@@ -11,6 +12,7 @@ export function rulePage(rule: Rule): string {
     ['What programs do', page.programs],
     ['What people see', page.people],
     ['Test', page.test],
+    ...examples(rule),
     ['Default thresholds', thresholds(rule)],
     ['Where the defaults come from', page.source],
     ['What it spares', page.spares],
@@ -25,6 +27,11 @@ export function rulePage(rule: Rule): string {
   ]
     .join('\n\n')
     .concat('\n');
+}
+
+function examples({ id }: Rule): readonly (readonly [string, string])[] {
+  const both = RULE_EXAMPLES[id];
+  return both === undefined ? [] : [['Examples', `Named: ${both[0]}\n\nNot named: ${both[1]}`]];
 }
 
 function thresholds(rule: Rule): string {
