@@ -93,7 +93,7 @@ describe('change space', () => {
           ),
         ).toBeLessThanOrEqual(0.02);
       }),
-      { numRuns: 30 },
+      { numRuns: 12 },
     );
   });
 

@@ -40,6 +40,7 @@ describe('mirror', () => {
         const once = applied(track, { verb: 'mirror', normal }).track;
         expect(applied(once, { verb: 'mirror', normal }).track.values).toEqual(track.values);
       }),
+      { numRuns: 50 },
     );
   });
 
@@ -56,6 +57,7 @@ describe('mirror', () => {
         const now = rotateVector<number[]>([], is.orientation([], t), flip(vector));
         old.forEach((part, i) => expect(now[i]).toBeCloseTo(part, 12));
       }),
+      { numRuns: 50 },
     );
   });
 

@@ -69,6 +69,7 @@ describe('re-time to grid', () => {
           interpolation !== 'CUBICSPLINE' || (i % 12 >= 4 && i % 12 < 8);
         expect(after.values.filter(isValue)).toEqual(track.values.filter(isValue));
       }),
+      { numRuns: 40 },
     );
   });
 

@@ -49,6 +49,7 @@ describe('set tangents', () => {
         expect([...after.values.subarray(0, 4)]).toEqual([0, 0, 0, 0]);
         expect([...after.values.subarray(-4)]).toEqual([0, 0, 0, 0]);
       }),
+      { numRuns: 30 },
     );
     const dense = keyed(WAVE, grid(60, 60), 'CUBICSPLINE');
     const { track: after } = applied(dense, { verb: 'set tangents' });

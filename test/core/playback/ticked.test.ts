@@ -24,9 +24,12 @@ describe('ticked', () => {
         expect(seen.start).toBe(own.start);
         expect(seen.end).toBeGreaterThanOrEqual(own.end - 1e-9);
         expect(seen.end).toBeLessThan(own.end + 1 / rate);
-        for (const time of seen.knots)
-          expect(angleBetween(own.orientation([], time), seen.orientation([], time))).toBeLessThan(1e-12);
+        const apart = Array.from(seen.knots, (time) =>
+          angleBetween(own.orientation([], time), seen.orientation([], time)),
+        );
+        expect(Math.max(...apart)).toBeLessThan(1e-12);
       }),
+      { numRuns: 40 },
     );
   });
 

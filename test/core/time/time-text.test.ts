@@ -77,13 +77,11 @@ describe('times as text', () => {
   test('every frame of ten minutes at every rate has one label, later ones later, and none that is dropped', () => {
     for (const fps of [23.976, 25, 29.97]) {
       const rate = exactRate(fps);
-      let before = '';
-      for (let frame = 0; frame < 600 * Math.round(fps); frame += 1) {
-        const label = sayTime(frame / rate, 'timecode', fps);
-        expect(label > before).toBe(true);
-        expect(label).not.toMatch(/:\d[1-9]:00;0[01]$/);
-        before = label;
-      }
+      const labels = Array.from({ length: 600 * Math.round(fps) }, (_, frame) =>
+        sayTime(frame / rate, 'timecode', fps),
+      );
+      expect(labels.filter((label, frame) => frame > 0 && !(label > (labels[frame - 1] ?? '')))).toEqual([]);
+      expect(labels.filter((label) => /:\d[1-9]:00;0[01]$/.test(label))).toEqual([]);
     }
   });
 
