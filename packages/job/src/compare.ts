@@ -24,7 +24,7 @@ export interface TrackComparison {
 }
 
 /** A track by name. */
-interface TrackAddress {
+export interface TrackAddress {
   readonly clip: string;
   readonly track: string;
 }

@@ -7,6 +7,7 @@ export {
   type ComparedFile,
   type Comparison,
   type ComparisonLimits,
+  type TrackAddress,
   type TrackComparison,
 } from './compare.js';
 export { kestrelPointRules } from './demo/house-rules.js';
