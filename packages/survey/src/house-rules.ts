@@ -121,6 +121,6 @@ export function roleIn(house: HouseRules, track: RotationTrack, nodes: readonly 
 }
 
 /** The role that the house gives a node path; undefined where it says nothing. */
-export function roleAt(house: HouseRules, path: string): Role | undefined {
+function roleAt(house: HouseRules, path: string): Role | undefined {
   return Object.entries(house.roles).find(([pattern]) => matchesPattern(pattern, path))?.[1];
 }
