@@ -1,4 +1,4 @@
-import { type RotationTrack, playAs, replaceTrack, rotationTrack } from '@slewcurve/core';
+import { type RotationTrack, playAs, rotationTrack } from '@slewcurve/core';
 import { type Step, applySteps, parseSentence, sayStep } from '@slewcurve/mend';
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
@@ -26,7 +26,7 @@ describe('copy pace', () => {
     fc.assert(
       fc.property(played, played, (track, given) => {
         fc.pre(travelled(track) > 5 && travelled(given) > 5);
-        const other = replaceTrack(given, { id: 'Other', clip: 'There' });
+        const other = { ...given, id: 'Other', clip: 'There' };
         const step: Omit<Step, 'clip' | 'track'> = {
           verb: 'copy pace',
           fromTrack: 'Other',
@@ -49,7 +49,7 @@ describe('copy pace', () => {
     const one: Motion = { spin: [0, 30, 0], swing: [10, 0, 5], hertz: 0.4, phase: 1 };
     const two: Motion = { spin: [0, 10, 5], swing: [25, 10, 0], hertz: 0.5, phase: 2 };
     const track = keyed(one, grid(90), 'LINEAR');
-    const other = replaceTrack(keyed(two, grid(120, 60), 'LINEAR'), { id: 'Other' });
+    const other = { ...keyed(two, grid(120, 60), 'LINEAR'), id: 'Other' };
     const { track: after } = repaced(
       track,
       { verb: 'copy pace', fromTrack: 'Other' },
@@ -84,7 +84,7 @@ describe('copy pace', () => {
 
   it('runs as a step of a card, and is said and read back', () => {
     const [track] = fc.sample(played, { numRuns: 1, seed: 2 });
-    const other = replaceTrack(track, { id: 'Other' });
+    const other = { ...track, id: 'Other' };
     const step = { verb: 'copy pace', clip: track.clip, track: 'Other', fromTrack: track.id || '*' };
     const sentence = { ...step, clip: 'A', fromTrack: 'arm left', fromClip: 'B', fromSpan: [1, 2] as const };
     expect(sayStep(sentence)).toBe(
@@ -92,7 +92,7 @@ describe('copy pace', () => {
     );
     expect(parseSentence(sayStep(sentence))).toEqual(sentence);
     const run = (more: object): unknown =>
-      applySteps([replaceTrack(track, { id: 'One' }), other], [{ ...step, fromTrack: 'One', ...more }]);
+      applySteps([{ ...track, id: 'One' }, other], [{ ...step, fromTrack: 'One', ...more }]);
     expect(codeOf(() => run({}))).toBeUndefined();
     expect(codeOf(() => run({ fromTrack: 'Nobody' }))).toBe('step.no-other');
     expect(codeOf(() => run({ fromTrack: '*' }))).toBe('step.many-others');

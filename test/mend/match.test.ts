@@ -1,4 +1,4 @@
-import { playAs, replaceTrack, rotationTrack } from '@slewcurve/core';
+import { playAs, rotationTrack } from '@slewcurve/core';
 import { parseSentence, sayStep } from '@slewcurve/mend';
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
@@ -69,10 +69,7 @@ describe('match', () => {
 
   it("takes the speed of another track's facing end, and lets time run where asked", () => {
     const slow = turning((t) => t / 2);
-    const fast = replaceTrack(
-      turning((t) => t),
-      { id: 'Fast', clip: 'Next' },
-    );
+    const fast = { ...turning((t) => t), id: 'Fast', clip: 'Next' };
     const scene = { nodes: [], tracks: [slow, fast], named: [slow] };
     const from = { fromTrack: 'Fast', fromClip: 'Next' };
     const out = repaced(slow, { verb: 'match', ...from }, scene);
