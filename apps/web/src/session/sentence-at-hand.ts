@@ -29,7 +29,7 @@ export interface TrialGround {
   readonly above: readonly RotationTrack[];
   readonly nodes: readonly SceneNode[];
   /** Frames per second, by which times may be written as frames or timecode. */
-  readonly frameRate: number | undefined;
+  readonly frameRate?: number | undefined;
 }
 
 /** Read a sentence and try it on a track. */
