@@ -71,10 +71,13 @@ describe('shape, drawn', () => {
           const lost = Math.abs(travelled(result.track) - travelled(track));
           expect(result.price.degrees < 0.005 ? lost : 0).toBeLessThan(0.01);
           // By the middle of the drawing its own share of the area is turned, as near as frames tell.
-          const half = track.times[0] + length / 2;
+          const middle = track.times[0] + length / 2;
           const { retiming } = result.repaced;
-          const done = playAs(track, 'as-written').length(times[0], retiming.oldTime(half)) * DEGREES;
-          expect(done / travelled(track)).toBeCloseTo(areaUpTo(speeds, half) / areaUpTo(speeds, Infinity), 6);
+          const done = playAs(track, 'as-written').length(times[0], retiming.oldTime(middle)) * DEGREES;
+          expect(done / travelled(track)).toBeCloseTo(
+            areaUpTo(speeds, middle) / areaUpTo(speeds, Infinity),
+            6,
+          );
         },
       ),
       RUNS,

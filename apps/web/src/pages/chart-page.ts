@@ -26,6 +26,7 @@ import type { FileWork } from '../session/file-work.js';
 import { trackKey } from '../session/file-work.js';
 import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
 import type { Session } from '../session/session.js';
+import { turnSketch } from '../session/turn-sketch.js';
 import { chartDataOf, drawsTheSame, motionOf, placeOfNote, type ChartSubject } from './chart-data-of.js';
 import { clockChoice, type Clock } from './clock-choice.js';
 import { cautionsOf } from './cautions-of.js';
@@ -344,15 +345,15 @@ export class SlewChartPage extends LitElement {
 
   /** The key under the cursor is turned; the globe follows at once. */
   private turnKey(turn: Turn, about: About, settled: boolean): void {
-    const { data, answer, chosen } = this;
+    const { data, answer, chosen, file } = this;
     if (!data || !answer || !chosen) return;
     const edit = layOverEdit(turnedKey(data, this.time, this.edit), turn, about);
     if (settled) return this.follow({ edit, settled, idle: turn.every((angle) => angle === 0) });
     this.edit = edit;
     const step: Step = { ...edit, clip: chosen.clip, track: chosen.track };
-    const { preview } = this.tried(sayStep(step), this.time) ?? {};
-    const [playback = 'as-written'] = this.session.settings.playbacks;
-    this.sketched = preview && motionOf(preview, playback);
+    const base = (data.tried && data.before?.motion) || data.motion;
+    const nodes = file?.opened?.nodes ?? [];
+    this.sketched = turnSketch(base, { ...answer, nodes }, step, edit.keys?.[0] ?? 0);
   }
 
   private chooseTurning(next: Turning): void {

@@ -60,7 +60,7 @@ export function priceWords(sketch: PaceSketch | undefined): string {
 }
 
 /** "14.2° from 1.00–1.40 s". */
-export function sayLent({ from, to, angle }: LentStretch): string {
+function sayLent({ from, to, angle }: LentStretch): string {
   return `${sayAngle(angle)} from ${sayTime(from, 2).replace(' s', '')}–${sayTime(to, 2)}`;
 }
 
