@@ -64,8 +64,7 @@ describe('the motion of a curve', () => {
     let slices = 1;
     for (; !sliced.prepare(1); slices++) expect(slices).toBeLessThan(100_000);
     expect(whole.prepare(1e6)).toBe(true);
-    for (const motion of [sliced, whole])
-      expect(motion.columns(3, 390, 120)).toEqual(never.columns(3, 390, 120));
+    for (const each of [sliced, whole]) expect(each.columns(3, 390, 120)).toEqual(never.columns(3, 390, 120));
     expect(sliced.read(200).odometer).toBe(never.read(200).odometer);
   });
 

@@ -76,7 +76,7 @@ describe('a remedy that a rule names', () => {
   });
 
   test('guards declared whips and marks when it smooths', () => {
-    const marks = [{ clip: '*', time: 8 }];
+    const marks = [{ clip: '*', time: 8, name: 'a hit' }];
     const house = { ...whip, declared: { ...whip.declared, marks } };
     expect(placeOf('shake.grain', gust, house)?.remedy).toMatchObject({
       sigma: 0.1,

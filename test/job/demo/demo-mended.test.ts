@@ -1,4 +1,12 @@
-import { type RotationTrack, angleBetween, expMap, keyOrientation, multiply, playAs } from '@slewcurve/core';
+import {
+  type ReadonlyNumberStore,
+  type RotationTrack,
+  angleBetween,
+  expMap,
+  keyOrientation,
+  multiply,
+  playAs,
+} from '@slewcurve/core';
 import { bufferSource, patchedBytes } from '@slewcurve/formats';
 import {
   type JobSettings,
@@ -76,7 +84,7 @@ function pan(one: RotationTrack): number[] {
 }
 
 /** The most that is turned in ten key gaps of the crane. */
-function fastest(at: (key: number) => ArrayLike<number>): number {
+function fastest(at: (key: number) => ReadonlyNumberStore): number {
   return Math.max(...Array.from({ length: 2239 }, (_, key) => angleBetween(at(key), at(key + 10))));
 }
 
