@@ -20,6 +20,7 @@ import { stepReports } from './step-reports.js';
 import { placeIn } from './place-in.js';
 import { surveyFile } from './survey-file.js';
 import { trackReport } from './track-report.js';
+import { tryStep, type TrialAnswer } from './try-step.js';
 import { undoPlan } from './undo-plan.js';
 import { betweenSlices, type Watch } from './watch.js';
 import { withEvents } from './with-events.js';
@@ -46,6 +47,8 @@ export interface Desk {
   track(file: string, clip: string, track: string): TrackAnswer;
   /** Worst speed and departure of a track as the card leaves it, by playback and tick rate. Throws `job.no-track`. */
   matrix(file: string, clip: string, track: string, settings: MatrixSettings): PlaybackMatrix;
+  /** What a step would make of a track as the card leaves it; nothing is kept. Throws `job.no-track` and what the step throws. */
+  trial(file: string, clip: string, track: string, step: Step): TrialAnswer;
   /** Makes `steps` the file's whole card; an error leaves the card before in force. */
   card(file: string, steps: readonly Step[], watch: Watch): Promise<CardAnswer>;
   /** The remedies of what the survey found, less those that would do harm. */
@@ -108,6 +111,8 @@ export function desk(): Desk {
     },
     matrix: (file, clip, track, settings) =>
       playbackMatrix(trackIn(folderOf(file), clip, track).after, settings),
+    trial: (file, clip, track, step) =>
+      trialOf(folderOf(file), trackIn(folderOf(file), clip, track).after, step),
     card: (file, steps, watch) => setCard(folderOf(file), steps, watch),
     propose(file, allow) {
       const folder = surveyed(folderOf(file));
@@ -198,6 +203,24 @@ async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Pr
   folder.current = tracks;
   folder.changed = changed;
   return { tracks: answers, steps: stepReports(results), raised };
+}
+
+/** On the very tracks that a card would find: with their declared cuts. */
+function trialOf(folder: Folder, track: RotationTrack, step: Step): TrialAnswer {
+  const { opened, current, settings } = folder;
+  const cut = (one: RotationTrack): RotationTrack =>
+    settings ? withDeclaredCuts(one, settings.houseRules) : one;
+  const on = cut(track);
+  const answer = tryStep(
+    {
+      track: on,
+      above: tracksAbove(folder, track).map(cut),
+      all: current.map(cut),
+      nodes: opened.file.nodes,
+    },
+    step,
+  );
+  return answer.after ? { ...answer, after: copyOf(answer.after) } : answer;
 }
 
 function surveyed(folder: Folder): Folder & { report: FileReport; settings: JobSettings } {

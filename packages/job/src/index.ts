@@ -87,6 +87,7 @@ export {
   type Stamp,
 } from './stamps.js';
 export { surveyFile, unreadableFile } from './survey-file.js';
+export type { TrialAnswer } from './try-step.js';
 export { takeBack, undoPlan, type UndoPlan } from './undo-plan.js';
 export { VERSION } from './version.js';
 export { UNWATCHED, type Watch } from './watch.js';

@@ -8,6 +8,7 @@ import type { TableTrial } from './table-trial.js';
 import type { ClipReport, FileReport, StepReport, TrackReport } from './report.js';
 import type { RosterRow } from './roster-row.js';
 import type { JobSettings } from './settings.js';
+import type { TrialAnswer } from './try-step.js';
 
 /** A track by name, with its length: known as soon as the file is open. */
 export interface TrackName {
@@ -76,6 +77,8 @@ export interface Asks<Blob, Row = RosterRow> {
   /** Rows are told as they come; the answer is the whole report. */
   survey: { ask: { file: string; settings: JobSettings }; answer: FileReport };
   track: { ask: { file: string; clip: string; track: string }; answer: TrackAnswer };
+  /** What a step would make of a track as the card leaves it; nothing is kept. */
+  try: { ask: { file: string; clip: string; track: string; step: Step }; answer: TrialAnswer };
   card: { ask: { file: string; steps: readonly Step[] }; answer: CardAnswer<Row> };
   propose: {
     ask: { file: string; allow: readonly string[] };

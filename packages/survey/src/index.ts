@@ -27,6 +27,7 @@ export type {
   TrackContext,
 } from './rule.js';
 export { RULES } from './registry.js';
+export { allowedSpeed } from './allowed-speed.js';
 export { withDeclaredCuts } from './declared-cuts.js';
 export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings } from './survey.js';
 export { gatherEvents, type Gathered, type SurveyEvent } from './events.js';

@@ -7,6 +7,7 @@ import {
   type MarginNote,
   type Motion,
 } from '@slewcurve/elements/plot';
+import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { roleOf, type Finding, type Occurrence } from '@slewcurve/survey';
 import { trackKey, type FileWork } from '../session/file-work.js';
 import type { Clock } from './clock-choice.js';
@@ -14,6 +15,8 @@ import type { ChosenTrack } from './roster-rows.js';
 
 /** Notes a chart shows at most; the rest is told by count. */
 const MOST_NOTES = 60;
+/** Milliseconds of measuring between two pictures. */
+const PREPARING_MS = 10;
 
 /** What is drawn of a track. */
 export interface ChartSubject {
@@ -27,6 +30,8 @@ export interface ChartSubject {
   readonly second?: PlaybackId;
   readonly kept?: readonly number[];
   readonly clock: Clock;
+  /** The speed that the house rules allow, deg/s. */
+  readonly limit?: number | undefined;
 }
 
 // By track, then by playback: compiling a curve and measuring its segments costs.
@@ -41,10 +46,30 @@ export function motionOf(track: RotationTrack, playback: PlaybackId): Motion {
   return motion;
 }
 
+/** Measures what drawing a track will ask for, between pictures; goes on while it is `wanted`. */
+export async function measureAhead(
+  track: RotationTrack,
+  playback: PlaybackId,
+  wanted: () => boolean,
+): Promise<void> {
+  const motion = await inTurn(() => motionOf(track, playback));
+  while (wanted() && !(await inTurn(() => motion.prepare(PREPARING_MS))));
+}
+
 /** Whether two subjects make the same chart: a file changes at every step of a survey, its one track hardly ever. */
 export function drawsTheSame(a: ChartSubject, b: ChartSubject): boolean {
   const key = trackKey(a.chosen.clip, a.chosen.track);
-  const rest = ['chosen', 'before', 'after', 'preview', 'playback', 'second', 'kept', 'clock'] as const;
+  const rest = [
+    'chosen',
+    'before',
+    'after',
+    'preview',
+    'playback',
+    'second',
+    'kept',
+    'clock',
+    'limit',
+  ] as const;
   return (
     rest.every((name) => a[name] === b[name]) &&
     a.file.report === b.file.report &&
@@ -54,7 +79,7 @@ export function drawsTheSame(a: ChartSubject, b: ChartSubject): boolean {
 
 /** The chart's data: after solid, before dotted where they differ. */
 export function chartDataOf(subject: ChartSubject): ChartData {
-  const { chosen, file, playback, kept } = subject;
+  const { chosen, file, playback, kept, limit } = subject;
   const shown = subject.preview ?? subject.after;
   const clip = file.report?.clips.find((other) => other.clip === chosen.clip);
   const report = file.report?.tracks.find(
@@ -73,6 +98,7 @@ export function chartDataOf(subject: ChartSubject): ChartData {
     notes: notesOf(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? []),
     ...clockOf(subject.clock, clip?.frameRate),
     ...(kept && { kept }),
+    ...(limit !== undefined && { limit: { speed: limit, name: 'house rule' } }),
     ...comparedWith(subject, shown),
   };
 }

@@ -22,12 +22,13 @@ import {
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import type { TrackAnswer } from '@slewcurve/job';
 import { sayStep, type Step } from '@slewcurve/mend';
+import { allowedSpeed } from '@slewcurve/survey';
 import type { FileWork } from '../session/file-work.js';
 import { trackKey } from '../session/file-work.js';
-import { tryOut, type SentenceAtHand } from '../session/sentence-at-hand.js';
-import type { Session } from '../session/session.js';
+import { SentenceTrial } from '../session/sentence-trial.js';
+import { settingsOf, type Session } from '../session/session.js';
 import { turnSketch } from '../session/turn-sketch.js';
-import { chartDataOf, drawsTheSame, motionOf, placeOfNote, type ChartSubject } from './chart-data-of.js';
+import { chartDataOf, drawsTheSame, measureAhead, placeOfNote, type ChartSubject } from './chart-data-of.js';
 import { clockChoice, type Clock } from './clock-choice.js';
 import { cautionsOf } from './cautions-of.js';
 import { chartPageStyles } from './chart-page-styles.js';
@@ -37,9 +38,6 @@ import { NOT_TURNING, keyTurnOf, layOverEdit, turnAtHand, turnedKey, type Turnin
 import { playbackChoice } from './playback-choice.js';
 import { pageStyles } from './page-styles.js';
 import type { ChosenTrack } from './roster-rows.js';
-
-/** Milliseconds of measuring between two pictures. */
-const PREPARING_MS = 10;
 
 /**
  * Chart: one track, with its 3-D view, the sentence that edits it, and the job card of its file.
@@ -55,9 +53,7 @@ export class SlewChartPage extends LitElement {
     answer: { state: true },
     time: { state: true },
     span: { state: true },
-    sentence: { state: true },
     edit: { state: true },
-    sketched: { state: true },
     turning: { state: true },
     word: { state: true },
     note: { state: true },
@@ -76,11 +72,8 @@ export class SlewChartPage extends LitElement {
   declare private answer: TrackAnswer | undefined;
   declare private time: number;
   declare private span: readonly [number, number] | undefined;
-  declare private sentence: SentenceAtHand | undefined;
   /** The step of the sentence, or of the hand that is making one. */
   declare private edit: HandEdit | undefined;
-  /** What the hand that is at work would make of the motion. */
-  declare private sketched: Motion | undefined;
   declare private turning: Turning;
   /** A word that is being explained. */
   declare private word: string | undefined;
@@ -91,6 +84,17 @@ export class SlewChartPage extends LitElement {
   declare private fold: number | undefined;
   /** The 3-D view is folded away, above the trace. */
   declare private narrow: boolean;
+  private readonly trial = new SentenceTrial({
+    ground: () =>
+      this.answer && { track: this.answer.after, frameRate: this.clock.frameRate ?? this.gridFound },
+    ask: async (step) => {
+      const { chosen, session } = this;
+      if (!chosen) throw new Error('No track is chosen.');
+      return session.trial(chosen.file, step, chosen);
+    },
+    measure: (preview) => measureAhead(preview, this.playback, () => this.chosen !== undefined),
+    requestUpdate: () => this.requestUpdate(),
+  });
   private readonly width = matchMedia('(width < 40rem)');
   /** Where the keyboard was when a word was asked for. */
   private asked: HTMLElement | undefined;
@@ -126,9 +130,8 @@ export class SlewChartPage extends LitElement {
   private forget(): void {
     this.time = 0;
     this.answer = undefined;
-    this.sentence = undefined;
+    this.trial.leave();
     this.edit = undefined;
-    this.sketched = undefined;
     this.span = undefined;
     this.note = undefined;
     this.fold = undefined;
@@ -137,21 +140,22 @@ export class SlewChartPage extends LitElement {
   private async fetch(chosen: ChosenTrack): Promise<void> {
     const answer = await this.session.track(chosen.file, chosen.clip, chosen.track).catch(() => undefined);
     if (!answer) return;
-    const [playback = 'as-written'] = this.session.settings.playbacks;
-    for (const track of new Set([answer.before, answer.after])) {
-      const motion = await inTurn(() => motionOf(track, playback));
-      while (this.chosen === chosen && !(await inTurn(() => motion.prepare(PREPARING_MS))));
-    }
+    for (const track of new Set([answer.before, answer.after]))
+      await measureAhead(track, this.playback, () => this.chosen === chosen);
     if (this.chosen !== chosen) return;
     this.answer = answer;
     // One that is being applied leaves by itself.
-    if (this.sentence && !this.busy) this.rewrite(this.sentence.text);
+    if (this.trial.sentence && !this.busy) this.rewrite(this.trial.sentence.text);
+  }
+
+  private get playback(): PlaybackId {
+    return this.session.settings.playbacks[0] ?? 'as-written';
   }
 
   private makeData(): ChartData | undefined {
-    const { answer, chosen, file, sentence, second, session } = this;
+    const { answer, chosen, file, second, session, playback } = this;
+    const { sentence } = this.trial;
     if (!answer || !chosen || !file) return undefined;
-    const [playback = 'as-written'] = session.settings.playbacks;
     const kept = sentence?.step?.keep;
     const subject: ChartSubject = {
       chosen,
@@ -163,6 +167,8 @@ export class SlewChartPage extends LitElement {
       ...(second && second !== playback && { second }),
       ...(kept && { kept }),
       clock: this.clock,
+      limit:
+        file.opened && allowedSpeed(settingsOf(file, session.settings).houseRules, answer.after, file.opened),
     };
     // Compiling a curve of an hour costs; moving the cursor must not.
     if (this.data && this.subject && drawsTheSame(this.subject, subject)) return this.data;
@@ -219,7 +225,7 @@ export class SlewChartPage extends LitElement {
         <details class="figure" ?open=${!this.narrow}>
           <summary>3-D view</summary>
           <slew-porthole
-            .data=${this.sketched ? sketchedData(data, this.sketched) : data}
+            .data=${this.trial.sketch ? sketchedData(data, this.trial.sketch) : data}
             .time=${this.time}
             .span=${this.span}
             ?camera=${data.rateNames[0] === 'tilt'}
@@ -246,9 +252,8 @@ export class SlewChartPage extends LitElement {
   }
 
   private playbacks(): TemplateResult {
-    const [playback = 'as-written'] = this.session.settings.playbacks;
     return html`<p class="playbacks on-screen">
-      ${playbackChoice(this.answer?.after, playback, this.second, {
+      ${playbackChoice(this.answer?.after, this.playback, this.second, {
         play: (id) => this.choosePlayback(id),
         compare: (id) => (this.second = id),
       })}
@@ -276,7 +281,8 @@ export class SlewChartPage extends LitElement {
   }
 
   private sentenceAt(): TemplateResult | typeof nothing {
-    const { sentence, chart, data } = this;
+    const { chart, data } = this;
+    const { sentence } = this.trial;
     if (!sentence || !data) return nothing;
     const row = chart ? (chart.rows[rowAt(chart.rows, sentence.time)]?.index ?? 0) : 0;
     return html`<slew-sentence
@@ -295,7 +301,7 @@ export class SlewChartPage extends LitElement {
   private readonly keyed = (event: KeyboardEvent): void => {
     if (event.key !== 'Enter' || !(event.ctrlKey || event.metaKey) || event.defaultPrevented) return;
     event.preventDefault();
-    if (this.sentence) void this.applySentence();
+    if (this.trial.sentence) void this.applySentence();
     else if (this.note !== undefined) this.openRemedy(this.note);
   };
 
@@ -307,7 +313,7 @@ export class SlewChartPage extends LitElement {
     if (!found || !remedy) return;
     this.note = id;
     this.time = found.place.time;
-    this.sentence = this.tried(sayStep(remedy), found.place.time);
+    this.trial.begin(sayStep(remedy), found.place.time);
     void this.updateComplete.then(() =>
       this.renderRoot.querySelector<SlewSentence>('slew-sentence')?.focus(),
     );
@@ -326,21 +332,11 @@ export class SlewChartPage extends LitElement {
   }
 
   private rewrite(text: string): void {
-    if (!this.sentence || !this.answer) return;
-    this.sentence = this.tried(text, this.sentence.time);
-    if (this.sentence?.step) this.edit = this.sentence.step;
-  }
-
-  private tried(text: string, time: number): SentenceAtHand | undefined {
-    const { answer, file } = this;
-    return (
-      answer &&
-      tryOut(text, time, {
-        ...answer,
-        nodes: file?.opened?.nodes ?? [],
-        frameRate: this.clock.frameRate ?? this.gridFound,
-      })
-    );
+    const { sentence } = this.trial;
+    if (!sentence || !this.answer) return;
+    this.trial.begin(text, sentence.time);
+    const { step } = this.trial.sentence ?? {};
+    if (step) this.edit = step;
   }
 
   /** The key under the cursor is turned; the globe follows at once. */
@@ -348,12 +344,13 @@ export class SlewChartPage extends LitElement {
     const { data, answer, chosen, file } = this;
     if (!data || !answer || !chosen) return;
     const edit = layOverEdit(turnedKey(data, this.time, this.edit), turn, about);
-    if (settled) return this.follow({ edit, settled, idle: turn.every((angle) => angle === 0) });
-    this.edit = edit;
     const step: Step = { ...edit, clip: chosen.clip, track: chosen.track };
     const base = (data.tried && data.before?.motion) || data.motion;
     const nodes = file?.opened?.nodes ?? [];
-    this.sketched = turnSketch(base, { ...answer, nodes }, step, edit.keys?.[0] ?? 0);
+    const motion = turnSketch(base, answer, nodes, step, edit.keys?.[0] ?? 0);
+    if (!settled) this.edit = edit;
+    const idle = turn.every((angle) => angle === 0);
+    this.follow({ edit, settled, idle, ...(motion && { motion }) });
   }
 
   private chooseTurning(next: Turning): void {
@@ -367,29 +364,30 @@ export class SlewChartPage extends LitElement {
   private follow({ edit, settled, idle, motion }: Sketched): void {
     const { answer, chosen } = this;
     if (!answer || !chosen) return;
-    this.sketched = settled ? undefined : motion;
-    if (!settled) return;
+    if (!settled) return this.trial.sketching(motion);
     this.edit = edit;
     const step: Step = { ...edit, clip: chosen.clip, track: chosen.track };
-    this.sentence = idle ? undefined : this.tried(sayStep(step), edit.at ?? this.time);
+    if (idle) this.trial.leave();
+    else this.trial.begin(sayStep(step), edit.at ?? this.time, motion);
   }
 
-  /** Apply what is written. The keyboard goes back to the trace. */
+  /** Apply what is written, as it was tried. The keyboard goes back to the trace. */
   async applySentence(): Promise<void> {
-    const { sentence, chosen } = this;
-    if (!sentence?.step || !chosen || this.busy) return;
+    const { chosen, trial } = this;
+    if (!trial.sentence?.step || !chosen || this.busy) return;
     this.busy = true;
-    const done = await this.session.apply(chosen.file, [sentence.step]);
+    const sentence = await trial.settled;
+    const step = chosen === this.chosen ? sentence?.step : undefined;
+    const done = step !== undefined && (await this.session.apply(chosen.file, [step]));
     this.busy = false;
     // Another may have been begun meanwhile.
-    if (done && this.sentence === sentence) this.leaveSentence();
-    else if (this.sentence) this.rewrite(this.sentence.text);
+    if (done && trial.sentence === sentence) this.leaveSentence();
+    else if (step && trial.sentence) this.rewrite(trial.sentence.text);
   }
 
   private leaveSentence(): void {
-    this.sentence = undefined;
+    this.trial.leave();
     this.edit = undefined;
-    this.sketched = undefined;
     void this.updateComplete.then(() => this.focus());
   }
 }

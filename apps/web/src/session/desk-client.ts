@@ -28,6 +28,7 @@ export class DeskError extends Error {
 type Answer = Asks<Blob, InkedRow>[AskName]['answer'];
 
 interface Waiting {
+  readonly name: AskName;
   readonly options: AskOptions;
   readonly resolve: (answer: Answer) => void;
   readonly reject: (error: Error) => void;
@@ -36,6 +37,9 @@ interface Waiting {
 const PING_MS = 1000;
 /** The desk works in slices and answers within 50 ms; silent this long, it is gone. */
 const SILENT_MS = 4000;
+/** But one edit is one slice, however long the track. */
+const EDITING_MS = 60_000;
+const EDITS: readonly AskName[] = ['try', 'card', 'propose', 'bytes'];
 
 /** The page's end of the desk in its worker. Says `lost` once where the worker stops answering, and starts another. */
 export class DeskClient extends EventTarget {
@@ -59,7 +63,7 @@ export class DeskClient extends EventTarget {
     const id = this.#next++;
     options.signal?.addEventListener('abort', () => this.#send({ id, name: 'stop' }));
     const answer = new Promise<Answer>((resolve, reject) => {
-      this.#waiting.set(id, { options, resolve, reject });
+      this.#waiting.set(id, { name, options, resolve, reject });
     });
     // The desk answers an ask of a name by the answer of that name; the types of its messages say so one by one.
     // oxlint-disable-next-line typescript/no-unsafe-type-assertion
@@ -98,7 +102,8 @@ export class DeskClient extends EventTarget {
     this.#asleepAt = now;
     // A page that was asleep has heard nothing either.
     if (slept) this.#heard = now;
-    if (now - this.#heard > SILENT_MS) this.#lose();
+    const editing = [...this.#waiting.values()].some(({ name }) => EDITS.includes(name));
+    if (now - this.#heard > (editing ? EDITING_MS : SILENT_MS)) this.#lose();
     else this.ask('ping', {}).catch(() => {});
   }
 

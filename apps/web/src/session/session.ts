@@ -8,6 +8,7 @@ import {
   type SaidConventions,
   type TableTrial,
   type TrackAnswer,
+  type TrialAnswer,
 } from '@slewcurve/job';
 import type { Step } from '@slewcurve/mend';
 import { PAGE_WORDS } from '@slewcurve/elements/plot';
@@ -105,6 +106,11 @@ export class Session extends EventTarget {
 
   track(id: string, clip: string, track: string): Promise<TrackAnswer> {
     return this.desk.ask('track', { file: id, clip, track });
+  }
+
+  /** What a step would make of a track as the card leaves it; nothing is kept. */
+  trial(id: string, step: Step, { clip, track }: { clip: string; track: string }): Promise<TrialAnswer> {
+    return this.desk.ask('try', { file: id, clip, track, step });
   }
 
   /** What a table of text becomes by what is said of it; nothing is opened. */

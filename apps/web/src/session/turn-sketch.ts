@@ -1,7 +1,7 @@
-import { VALUES_PER_KEY, playAs, replaceTrack, type RotationTrack } from '@slewcurve/core';
+import { VALUES_PER_KEY, playAs, replaceTrack, type RotationTrack, type SceneNode } from '@slewcurve/core';
 import type { Motion } from '@slewcurve/elements/plot';
+import type { TrackAnswer } from '@slewcurve/job';
 import { applySteps, type Step } from '@slewcurve/mend';
-import type { TrialGround } from './sentence-at-hand.js';
 
 /**
  * The motion while a key is being turned by hand: the edit itself, done to the key and its two neighbours alone, so that a long take costs no more than a
@@ -9,7 +9,8 @@ import type { TrialGround } from './sentence-at-hand.js';
  */
 export function turnSketch(
   motion: Motion,
-  { after, above, nodes }: Omit<TrialGround, 'frameRate'>,
+  { after, above }: Omit<TrackAnswer, 'before'>,
+  nodes: readonly SceneNode[],
   step: Step,
   key: number,
 ): Motion | undefined {

@@ -44,6 +44,7 @@ const answers: {
       tell({ id, told: 'row', row }, inkOf(row));
     }),
   track: ({ file, clip, track }) => here.track(file, clip, track),
+  try: ({ file, clip, track, step }) => here.trial(file, clip, track, step),
   card: async ({ file, steps }, watch) => {
     const made = await here.card(file, steps, watch);
     return { ...made, tracks: made.tracks.map((track) => ({ ...track, row: inked(track.row) })) };
@@ -122,6 +123,7 @@ function buffersOf(made: Answer<AskName>): Transferable[] {
       track.times.buffer,
       track.values.buffer,
     ]);
+  if ('largest' in made) return made.after ? [made.after.times.buffer, made.after.values.buffer] : [];
   if ('bytes' in made) return [made.bytes.buffer];
   if ('raised' in made) return made.tracks.flatMap(({ row }) => inkOf(row));
   return [];
