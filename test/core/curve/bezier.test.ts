@@ -2,6 +2,7 @@ import {
   angleBetween,
   cumulativeBezier,
   cumulativeBSpline,
+  cumulativeHermite,
   fromAxisAngle,
   multiply,
   nestedBezier,
@@ -118,3 +119,9 @@ test.each([nestedBezier, cumulativeBezier])(
     );
   },
 );
+
+test('curves of one piece say that acceleration is continuous: 2, the most that a curve claims', () => {
+  const turns = [0, 0.4, 0.9, 1.1].map((angle) => fromAxisAngle<number[]>([], [1, 2, -2], angle));
+  expect(cumulativeHermite(turns[0], turns[1], [1, 0, 0], [0, 1, 0], 2).continuity).toBe(2);
+  for (const make of [cumulativeBezier, nestedBezier]) expect(make(turns, 2).continuity).toBe(2);
+});

@@ -6,6 +6,7 @@ import {
   changeAxesOfRate,
   changeBasis,
   conjugate,
+  dot,
   fromAxisAngle,
   lookAlong,
   lookAlongPath,
@@ -87,6 +88,18 @@ describe('views', () => {
     }
     expect(rolls.carried).toBeLessThan(1);
     expect(rolls.byUp).toBeGreaterThan(170);
+  });
+
+  test('carried along a path begin at the frame they are given', () => {
+    fc.assert(
+      fc.property(anyQuaternion, anyDirection, anyDirection, (first, view, next) => {
+        const carried = lookAlongPath<number[]>([], [...view, ...next], first);
+        const begun = lookLeastTwist<number[]>([], first, view);
+        expect(carried.slice(0, 4)).toEqual(begun);
+        expect(carried.slice(4)).toEqual(lookLeastTwist<number[]>([], begun, next));
+      }),
+      { seed: 23 },
+    );
   });
 
   test('of least twist turn the frame before by the angle between the views and no more', () => {
@@ -269,6 +282,21 @@ describe('taking a matrix apart', () => {
     // Both leaning columns share the lean.
     expect(angleBetween(found.orientation, fromAxisAngle<number[]>([], [0, 0, 1], -0.1))).toBeLessThan(1e-14);
   });
+});
+
+test('the chordal mean lies on the side of the first orientation', () => {
+  fc.assert(
+    fc.property(anyQuaternion, (q) => {
+      // A little to each side of q: the mean is q itself, up to its sign.
+      const either = [-0.1, 0.1].flatMap((angle) =>
+        multiply<number[]>([], q, fromAxisAngle<number[]>([], [1, 2, -2], angle)),
+      );
+      const found = mean<number[]>([], either);
+      expect(dot(found, either)).toBeGreaterThan(0);
+      expect(angleBetween(found, q)).toBeLessThan(1e-14);
+    }),
+    { seed: 24 },
+  );
 });
 
 test('the chordal mean of two is not slerp: a quarter of the weight on 120° gives 19.1°, and signs and order do not matter', () => {
