@@ -47,6 +47,8 @@ type Span = readonly [number, number];
  * @fires note-chosen - `{ id: string }`
  * @fires remedy-chosen - `{ id: string, way: number }` the button of a note's remedy; 0 the proposed one, from 1 on the others
  * @fires rule-asked - `{ rule: string }` the rule's name in a note
+ * @fires accept-asked - `{ id: string }` a note's finding is to be accepted with a reason
+ * @fires take-back-asked - `{ id: string }` what was accepted of it is to be taken back
  * @fires play-asked - the space bar
  * @fires edit-sketched - `{ edit: HandEdit, settled: boolean, idle: boolean, motion?: Motion }` an edit is made by hand
  * @fires edit-taken - the edit at hand is to be done
@@ -314,6 +316,8 @@ export class SlewChart extends LitElement implements CursorHost {
         ${marginOf(row.index, notes, this.chosen, this.unfolded.has(row.index), {
           choose: (note) => this.cursor.choose(note.id),
           mend: (note, way) => this.send('remedy-chosen', { id: note.id, way }),
+          accept: ({ id }) => this.send('accept-asked', { id }),
+          takeBack: ({ id }) => this.send('take-back-asked', { id }),
           explain: (rule) => this.send('rule-asked', { rule }),
           unfold: (index) => (this.unfolded = new Set([...this.unfolded, index])),
         })}

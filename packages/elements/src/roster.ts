@@ -7,11 +7,13 @@ import {
   type PropertyValues,
   type TemplateResult,
 } from 'lit';
+import { guard } from 'lit/directives/guard.js';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Word } from '@slewcurve/survey';
 import { trackName } from './chart/chart-data.js';
 import { sayCount, sayRate, saySpan } from './chart/quantity.js';
 import { drawInk, type InkPlace, type RosterInks } from './roster/draw-ink.js';
+import { eventList, rankEvents, type RosterEvent } from './roster/roster-event.js';
 import { findRows, foundNothing } from './roster/find-rows.js';
 import { ROSTER_ORDERS, familiesOf, rankRows, type RosterOrder } from './roster/rank.js';
 import { countWords, rowWords, worstLevel, type RosterRow } from './roster/roster-row.js';
@@ -42,6 +44,7 @@ const DRAWING_MS = 8;
 export class SlewRoster extends LitElement {
   static override properties: PropertyDeclarations = {
     rows: { attribute: false },
+    events: { attribute: false },
     chosen: { type: String },
     order: { type: String },
     find: { type: String },
@@ -50,6 +53,8 @@ export class SlewRoster extends LitElement {
     spacing: { type: String },
     message: { type: String },
     active: { state: true },
+    unfolded: { state: true },
+    allEvents: { state: true },
     top: { state: true },
     height: { state: true },
     inkWidth: { state: true },
@@ -59,6 +64,8 @@ export class SlewRoster extends LitElement {
 
   /** A change is a new list. */
   declare rows: readonly RosterRow[];
+  /** What happens on several tracks at one instant. A change is a new list. */
+  declare events: readonly RosterEvent[];
   /** Id of the row whose chart is open. */
   declare chosen: string | undefined;
   declare order: RosterOrder;
@@ -73,6 +80,9 @@ export class SlewRoster extends LitElement {
   /** What an empty roster says. */
   declare message: string;
   declare private active: string | undefined;
+  /** Events whose tracks are shown. */
+  declare private unfolded: ReadonlySet<string>;
+  declare private allEvents: boolean;
   declare private top: number;
   declare private height: number;
   declare private inkWidth: number;
@@ -89,6 +99,9 @@ export class SlewRoster extends LitElement {
   constructor() {
     super();
     this.rows = [];
+    this.events = [];
+    this.unfolded = new Set();
+    this.allEvents = false;
     this.order = 'wrong';
     this.find = '';
     this.family = '';
@@ -160,8 +173,28 @@ export class SlewRoster extends LitElement {
     if (this.rows.length === 0) return html`<p class="empty">${this.message}</p>`;
     return html`${this.tools()}
       <p class="tally" role="status">${tally(this.rows, this.shown)}</p>
+      ${guard([this.events, this.unfolded, this.allEvents], () => this.eventsSeen())}
       ${this.shown.length === 0 ? this.nothing() : this.list()}
       <span class="swatch"></span>`;
+  }
+
+  private eventsSeen(): TemplateResult | typeof nothing {
+    return eventList(
+      rankEvents(this.events),
+      { open: this.unfolded, all: this.allEvents },
+      {
+        choose: (id) => {
+          const row = this.rows.find((other) => other.id === id);
+          if (row) this.choose(row);
+        },
+        toggle: (id) => {
+          const rest = new Set(this.unfolded);
+          if (!rest.delete(id)) rest.add(id);
+          this.unfolded = rest;
+        },
+        showAll: () => (this.allEvents = true),
+      },
+    );
   }
 
   private nothing(): TemplateResult {

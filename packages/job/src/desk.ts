@@ -16,6 +16,7 @@ import type { Asks, CardAnswer, OpenedAnswer, TrackAnswer } from './protocol.js'
 import type { FileReport } from './report.js';
 import { rosterRow, type RosterRow } from './roster-row.js';
 import type { JobSettings } from './settings.js';
+import { withStamps, type Stamp } from './stamps.js';
 import { stepReports } from './step-reports.js';
 import { placeIn } from './place-in.js';
 import { surveyFile } from './survey-file.js';
@@ -51,8 +52,12 @@ export interface Desk {
   trial(file: string, clip: string, track: string, step: Step): TrialAnswer;
   /** Makes `steps` the file's whole card; an error leaves the card before in force. */
   card(file: string, steps: readonly Step[], watch: Watch): Promise<CardAnswer>;
-  /** The remedies of what the survey found, less those that would do harm. */
-  propose(file: string, allow: readonly string[]): Asks<never>['propose']['answer'];
+  /** The remedies of what the survey found and no stamp accepts, less those that would do harm. */
+  propose(
+    file: string,
+    allow: readonly string[],
+    stamps?: readonly Stamp[],
+  ): Asks<never>['propose']['answer'];
   /** The bytes that the card makes of the file, and what takes them back. */
   bytes(file: string, watch: Watch): Promise<Asks<never>['bytes']['answer']>;
   /** Puts a file away. */
@@ -114,9 +119,9 @@ export function desk(): Desk {
     trial: (file, clip, track, step) =>
       trialOf(folderOf(file), trackIn(folderOf(file), clip, track).after, step),
     card: (file, steps, watch) => setCard(folderOf(file), steps, watch),
-    propose(file, allow) {
+    propose(file, allow, stamps = []) {
       const folder = surveyed(folderOf(file));
-      const proposal = propose(currentReport(folder), folder.settings, allow);
+      const proposal = propose(withStamps(currentReport(folder), stamps), folder.settings, allow);
       return declineHarmful(folder.opened, proposal, folder.settings, folder.current);
     },
     async bytes(file, watch) {
@@ -202,7 +207,8 @@ async function setCard(folder: Folder, steps: readonly Step[], watch: Watch): Pr
   folder.steps = steps;
   folder.current = tracks;
   folder.changed = changed;
-  return { tracks: answers, steps: stepReports(results), raised };
+  const { events = [] } = currentReport({ ...folder, report });
+  return { tracks: answers, steps: stepReports(results), raised, events };
 }
 
 /** On the very tracks that a card would find: with their declared cuts. */

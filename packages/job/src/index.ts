@@ -71,6 +71,7 @@ export { csvReport } from './reporters/csv.js';
 export { jsonReport } from './reporters/json.js';
 export { markdownReport } from './reporters/markdown.js';
 export { REPORTERS, REPORT_FORMATS, type ReportFormat, type ReporterOptions } from './reporters/registry.js';
+export { sayEvent, sayLoopGuess } from './reporters/say-event.js';
 export { sarifReport } from './reporters/sarif.js';
 export { textReport, textRoster, type Paint } from './reporters/text.js';
 export { rosterRow, type RosterRow } from './roster-row.js';
@@ -80,10 +81,12 @@ export { sha256Of } from './sha256-of.js';
 export {
   addStamps,
   parseStamps,
+  stampFindings,
   stampsFileName,
   stampsFor,
   stampsJson,
   withStamps,
+  withoutStamps,
   type Stamp,
 } from './stamps.js';
 export { surveyFile, unreadableFile } from './survey-file.js';

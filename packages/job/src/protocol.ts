@@ -1,13 +1,14 @@
 import type { RotationTrack, SceneNode } from '@slewcurve/core';
 import type { TableOptions } from '@slewcurve/formats';
 import type { JobCard, Step } from '@slewcurve/mend';
-import type { Finding, Word } from '@slewcurve/survey';
+import type { Finding, SurveyEvent, Word } from '@slewcurve/survey';
 import type { Convention, SaidConventions } from './conventions.js';
 import type { MatrixSettings, PlaybackMatrix } from './playback-matrix.js';
 import type { TableTrial } from './table-trial.js';
 import type { ClipReport, FileReport, StepReport, TrackReport } from './report.js';
 import type { RosterRow } from './roster-row.js';
 import type { JobSettings } from './settings.js';
+import type { Stamp } from './stamps.js';
 import type { TrialAnswer } from './try-step.js';
 
 /** A track by name, with its length: known as soon as the file is open. */
@@ -47,6 +48,8 @@ export interface CardAnswer<Row = RosterRow> {
   readonly steps: readonly StepReport[];
   /** Warnings and errors that the file did not have before the card. */
   readonly raised: readonly Finding[];
+  /** What happens at once on several tracks, of the whole file as the card leaves it. */
+  readonly events: readonly SurveyEvent[];
 }
 
 /** The mended file's bytes and what takes them back. */
@@ -81,7 +84,7 @@ export interface Asks<Blob, Row = RosterRow> {
   try: { ask: { file: string; clip: string; track: string; step: Step }; answer: TrialAnswer };
   card: { ask: { file: string; steps: readonly Step[] }; answer: CardAnswer<Row> };
   propose: {
-    ask: { file: string; allow: readonly string[] };
+    ask: { file: string; allow: readonly string[]; stamps: readonly Stamp[] };
     answer: { steps: readonly Step[]; declined: readonly { step: Step; why: string }[] };
   };
   bytes: { ask: { file: string }; answer: BytesAnswer };

@@ -53,8 +53,7 @@ export function stampsJson(stamps: readonly Stamp[]): string {
 /** The report of a file with its stamped places marked. A stamp that fits nothing any more is told among the problems. */
 export function withStamps(report: FileReport, stamps: readonly Stamp[]): FileReport {
   if (stamps.length === 0 || report.status !== 'surveyed') return report;
-  const byPrint = new Map(stamps.map((stamp) => [stamp.fingerprint, stamp]));
-  const findings = report.findings.map((finding) => stampedFinding(finding, byPrint));
+  const findings = stampFindings(report.findings, stamps);
   const used = new Set(
     report.findings.flatMap((finding) => [
       finding.fingerprint,
@@ -72,6 +71,19 @@ export function withStamps(report: FileReport, stamps: readonly Stamp[]): FileRe
     ...(problems.length > 0 && { problems: [...(report.problems ?? []), ...problems] }),
     findings,
   };
+}
+
+/** Findings with their stamped places marked; one that no stamp is for is the same object. */
+export function stampFindings(
+  findings: readonly ReportedFinding[],
+  stamps: readonly Stamp[],
+): ReportedFinding[] {
+  const byPrint = new Map(stamps.map((stamp) => [stamp.fingerprint, stamp]));
+  return findings.map((finding) =>
+    byPrint.has(finding.fingerprint) || finding.occurrences.some((place) => byPrint.has(place.fingerprint))
+      ? stampedFinding(finding, byPrint)
+      : finding,
+  );
 }
 
 function stampedFinding(finding: ReportedFinding, stamps: ReadonlyMap<string, Stamp>): ReportedFinding {
@@ -108,6 +120,20 @@ export function stampsFor(report: FileReport, named: string, words: StampWords):
 export function addStamps(older: readonly Stamp[], added: readonly Stamp[]): Stamp[] {
   const byPrint = new Map([...older, ...added].map((stamp) => [stamp.fingerprint, stamp]));
   return [...byPrint.values()];
+}
+
+/** The stamps that are left when those for what is named are taken back: one place by its fingerprint, or a whole finding by its own. */
+export function withoutStamps(
+  stamps: readonly Stamp[],
+  findings: readonly ReportedFinding[],
+  named: string,
+): Stamp[] {
+  const whole = findings.filter(({ fingerprint }) => fingerprint === named);
+  const lifted = new Set([named, ...whole.flatMap(namedPlaces).map(({ fingerprint }) => fingerprint)]);
+  // Where one place is open again, so is its finding as a whole.
+  for (const finding of findings)
+    if (finding.occurrences.some(({ fingerprint }) => fingerprint === named)) lifted.add(finding.fingerprint);
+  return stamps.filter(({ fingerprint }) => !lifted.has(fingerprint));
 }
 
 /** A day as ISO 8601 writes it, or with a time after it. */

@@ -66,6 +66,29 @@ export function gatherEvents<F extends Finding>(
   };
 }
 
+/**
+ * The event that a place of a finding is part of; undefined where it stands alone.
+ *
+ * @param time of the place, seconds
+ * @param frameRate of the clip, where it lies on a grid
+ */
+export function eventAt(
+  events: readonly SurveyEvent[],
+  { rule, clip, track }: Pick<Finding, 'rule' | 'clip' | 'track'>,
+  time: number,
+  frameRate?: number,
+): SurveyEvent | undefined {
+  const frame = SLACK / (frameRate ?? 1 / USUAL_FRAME);
+  return events.find(
+    (event) =>
+      event.clip === clip &&
+      event.family === familyOf(rule) &&
+      time >= event.time &&
+      time - event.time <= frame &&
+      event.places.some((place) => place.track === track && place.rule === rule),
+  );
+}
+
 /** One place of one finding. */
 interface Spot {
   readonly finding: Finding;

@@ -30,7 +30,7 @@ export { RULES } from './registry.js';
 export { allowedSpeed } from './allowed-speed.js';
 export { withDeclaredCuts } from './declared-cuts.js';
 export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings } from './survey.js';
-export { gatherEvents, type Gathered, type SurveyEvent } from './events.js';
+export { eventAt, gatherEvents, type Gathered, type SurveyEvent } from './events.js';
 export { guessLoop, type LoopGuess } from './loop-guess.js';
 export { explainWord, wordBook, type Entry, type Explanation } from './explain.js';
 export { rulePage } from './rule-page.js';

@@ -1,3 +1,5 @@
+import { recordsAmong, type ChosenRecord } from './record.js';
+
 // Not in every browser.
 declare global {
   interface Window {
@@ -17,6 +19,12 @@ export interface ChosenFile {
   readonly handle?: FileSystemFileHandle;
 }
 
+/** What somebody chose: animations, and what stands beside them. */
+export interface Chosen {
+  readonly files: readonly ChosenFile[];
+  readonly records: readonly ChosenRecord[];
+}
+
 interface LooseFile {
   /** Path within what was chosen. */
   readonly path: string;
@@ -25,16 +33,18 @@ interface LooseFile {
 }
 
 /** Animation files among what was chosen or dropped, each with the rest as its siblings. */
-function chosenFrom(files: readonly LooseFile[]): ChosenFile[] {
+function chosenFrom(files: readonly LooseFile[]): Chosen {
   const animations = files.filter(({ path }) => isAnimation(path));
+  const records = recordsAmong(files, animations.length > 0);
   // Nothing known by name: let the reader say what is wrong with it.
-  const subjects = animations.length > 0 ? animations : files;
-  return subjects.map((subject) => ({
+  const subjects = animations.length > 0 || records.length > 0 ? animations : files;
+  const chosen = subjects.map((subject) => ({
     name: subject.path,
     blob: subject.file,
     siblings: siblingsOf(subject, files),
     ...(subject.handle && { handle: subject.handle }),
   }));
+  return { files: chosen, records };
 }
 
 function isAnimation(path: string): boolean {
@@ -51,7 +61,7 @@ function siblingsOf(subject: LooseFile, files: readonly LooseFile[]): Record<str
 }
 
 /** Every file in a drop, folders opened. Must be called within the drop event: the browser forgets the items afterwards. */
-export async function droppedFiles(transfer: DataTransfer): Promise<ChosenFile[]> {
+export async function droppedFiles(transfer: DataTransfer): Promise<Chosen> {
   const items = [...transfer.items].filter((item) => item.kind === 'file');
   const handles = items.map((item) => handleOf(item));
   const entries = items.map((item) => item.webkitGetAsEntry());
@@ -70,12 +80,12 @@ export async function droppedFiles(transfer: DataTransfer): Promise<ChosenFile[]
 }
 
 /** Files from a file field, a folder field among them. */
-export function pickedFiles(list: FileList | readonly File[]): ChosenFile[] {
+export function pickedFiles(list: FileList | readonly File[]): Chosen {
   return chosenFrom([...list].map((file) => ({ path: file.webkitRelativePath || file.name, file })));
 }
 
 /** Ask for files by the browser's own dialogue, which lets them be written back; undefined where it has none. */
-export async function askForFiles(): Promise<ChosenFile[] | undefined> {
+export async function askForFiles(): Promise<Chosen | undefined> {
   if (!window.showOpenFilePicker) return undefined;
   const handles = await window.showOpenFilePicker({ multiple: true }).catch((error: unknown) => {
     if (error instanceof DOMException && error.name === 'AbortError') return [];

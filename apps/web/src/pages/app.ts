@@ -1,21 +1,25 @@
 import { LitElement, html, nothing, type PropertyDeclarations, type TemplateResult } from 'lit';
 import type { PlaybackId } from '@slewcurve/core';
-import { rankRows, type RosterRow } from '@slewcurve/elements/plot';
+import { rankRows, type RosterEvent, type RosterRow } from '@slewcurve/elements/plot';
 import type { SlewRoster } from '@slewcurve/elements/roster';
-import type { SaidConventions } from '@slewcurve/job';
+import { stampsFileName, stampsJson, type SaidConventions } from '@slewcurve/job';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
-import { askForFiles, droppedFiles, pickedFiles, type ChosenFile } from '../files/chosen-file.js';
+import { askForFiles, droppedFiles, pickedFiles, type Chosen } from '../files/chosen-file.js';
 import { saveCopy } from '../files/save-file.js';
 import { stepsOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
 import { keptWork, type SavedWork } from '../session/recovery.js';
-import { Session, settingsOf } from '../session/session.js';
+import { baseName } from '../session/read-records.js';
+import { Session } from '../session/session.js';
+import { settingsOf } from '../session/survey-terms.js';
 import { appStyles } from './app-styles.js';
 import type { SlewChartPage } from './chart-page.js';
 import { docketPage } from './docket-page.js';
-import { filesList } from './files-list.js';
+import { filesList, type FileActions } from './files-list.js';
+import { isWorthKeeping, keptOffer } from './kept-offer.js';
 import { keysHelp } from './keys-help.js';
 import { welcome } from './welcome.js';
+import { rosterEvents } from './roster-events.js';
 import { rosterRows, rowId, trackOfRow, type ChosenTrack } from './roster-rows.js';
 
 type PageName = 'roster' | 'chart' | 'docket';
@@ -35,6 +39,7 @@ export class SlewApp extends LitElement {
     page: { state: true },
     files: { state: true },
     rows: { state: true },
+    events: { state: true },
     chosen: { state: true },
     notice: { state: true },
     kept: { state: true },
@@ -45,6 +50,7 @@ export class SlewApp extends LitElement {
   declare private page: PageName;
   declare private files: readonly FileWork[];
   declare private rows: readonly RosterRow[];
+  declare private events: readonly RosterEvent[];
   declare private chosen: ChosenTrack | undefined;
   declare private notice: string;
   declare private kept: readonly SavedWork[];
@@ -61,6 +67,7 @@ export class SlewApp extends LitElement {
     this.page = 'roster';
     this.files = [];
     this.rows = [];
+    this.events = [];
     this.notice = '';
     this.kept = [];
     this.over = false;
@@ -88,13 +95,14 @@ export class SlewApp extends LitElement {
   /** The demo scene where the address says so; work that an earlier visit left is offered. */
   private async begin(): Promise<void> {
     const left = await keptWork();
-    this.kept = left.filter((work) => work.lines.length > 0);
+    this.kept = left.filter(isWorthKeeping);
     if (new URLSearchParams(location.search).has('demo') && this.kept.length === 0)
       await this.session.openDemo();
   }
 
   private follow(): void {
     this.files = this.session.files;
+    this.events = rosterEvents(this.files, this.events);
     this.drawRows();
     const { chosen } = this;
     if (chosen && !this.files.some((file) => file.id === chosen.file))
@@ -134,9 +142,9 @@ export class SlewApp extends LitElement {
     return first && trackOfRow(first.id);
   }
 
-  private async take(chosen: readonly ChosenFile[]): Promise<void> {
-    if (chosen.length === 0) return;
-    this.kept = [];
+  private async take(chosen: Chosen): Promise<void> {
+    if (chosen.files.length + chosen.records.length === 0) return;
+    if (chosen.files.length > 0) this.kept = [];
     this.notice = '';
     await this.session.open(chosen);
   }
@@ -244,21 +252,14 @@ export class SlewApp extends LitElement {
   }
 
   private keptOffer(): TemplateResult | typeof nothing {
-    if (this.kept.length === 0) return nothing;
-    const names = this.kept.map((work) => work.name).join(', ');
-    const edits = this.kept.reduce((sum, work) => sum + work.lines.length, 0);
-    const resume = (): void => {
-      const works = this.kept;
-      this.kept = [];
-      void this.session.resume(works);
-    };
-    return html`<aside class="kept" aria-label="Work that was left">
-      <p>An earlier visit left ${edits === 1 ? '1 edit' : `${edits} edits`} on ${names}.</p>
-      <p class="doings">
-        <button class="main" @click=${resume}>Go on with it</button
-        ><button @click=${() => (this.kept = [])}>Leave it</button>
-      </p>
-    </aside>`;
+    return keptOffer(this.kept, {
+      resume: () => {
+        const works = this.kept;
+        this.kept = [];
+        void this.session.resume(works);
+      },
+      leave: () => (this.kept = []),
+    });
   }
 
   private welcome(): TemplateResult {
@@ -270,6 +271,7 @@ export class SlewApp extends LitElement {
     return html`<section class="roster" aria-label="Roster: all tracks">
         <slew-roster
           .rows=${this.rows}
+          .events=${this.events}
           .book=${this.session.words}
           .chosen=${chosen ? rowId(chosen) : undefined}
           .message=${this.files.some((file) => file.status === 'ready') ? 'There is no rotation track in these files.' : 'Reading.'}
@@ -292,9 +294,17 @@ export class SlewApp extends LitElement {
   private readonly docketDoings = {
     settingsOf: (file: FileWork) => settingsOf(file, this.session.settings),
     saveText: (name: string, text: string) => void saveCopy(name, text, 'application/json'),
+    saveStamps,
   };
 
-  private readonly fileActions = {
+  private get fileActions(): FileActions {
+    return { ...this.doings, house: this.session.house?.name };
+  }
+
+  private readonly doings = {
+    setLoop: (id: string, clip: string, on: boolean): void => void this.session.setLoop(id, clip, on),
+    saveStamps,
+    leaveHouse: (): void => void this.session.setHouse(undefined),
     askConventions: (file: FileWork): TemplateResult =>
       html`<slew-ask-conventions
         .session=${this.session}
@@ -307,4 +317,9 @@ export class SlewApp extends LitElement {
     mendAll: (id: string): void => void this.session.mendAll(id),
     save: (id: string, how: 'in place' | 'download'): void => void this.session.save(id, how),
   };
+}
+
+/** As the command writes it beside the file. */
+function saveStamps({ name, stamps }: FileWork): void {
+  saveCopy(stampsFileName(baseName(name)), stampsJson(stamps), 'application/json');
 }

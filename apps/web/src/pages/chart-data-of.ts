@@ -8,7 +8,8 @@ import {
   type Motion,
 } from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
-import { roleOf, type Finding, type Occurrence } from '@slewcurve/survey';
+import type { ReportedFinding, ReportedOccurrence } from '@slewcurve/job';
+import { eventAt, roleOf } from '@slewcurve/survey';
 import { trackKey, type FileWork } from '../session/file-work.js';
 import type { Clock } from './clock-choice.js';
 import type { ChosenTrack } from './roster-rows.js';
@@ -32,6 +33,8 @@ export interface ChartSubject {
   readonly clock: Clock;
   /** The speed that the house rules allow, deg/s. */
   readonly limit?: number | undefined;
+  /** The clip is declared to play as a loop. */
+  readonly looped: boolean;
 }
 
 // By track, then by playback: compiling a curve and measuring its segments costs.
@@ -69,10 +72,12 @@ export function drawsTheSame(a: ChartSubject, b: ChartSubject): boolean {
     'kept',
     'clock',
     'limit',
+    'looped',
   ] as const;
   return (
     rest.every((name) => a[name] === b[name]) &&
     a.file.report === b.file.report &&
+    a.file.events === b.file.events &&
     a.file.findings.get(key) === b.file.findings.get(key)
   );
 }
@@ -95,7 +100,8 @@ export function chartDataOf(subject: ChartSubject): ChartData {
     cuts: shown.breaks,
     noiseFloor: report?.noiseFloor ?? 0,
     rateNames: rateNames(roleOf(shown, file.opened?.nodes ?? [])),
-    notes: notesOf(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? []),
+    notes: notesOf(subject, clip?.frameRate),
+    ...(clip && subject.looped && { loop: clip.seconds }),
     ...clockOf(subject.clock, clip?.frameRate),
     ...(kept && { kept }),
     ...(limit !== undefined && { limit: { speed: limit, name: 'house rule' } }),
@@ -123,11 +129,22 @@ function comparedWith(
   };
 }
 
+/** By what the acceptance of a note is taken back: the finding where the note stands for all its places, else its place. */
+export function acceptedAs({
+  finding,
+  place,
+}: {
+  readonly finding: ReportedFinding;
+  readonly place: ReportedOccurrence;
+}): string {
+  return hasOneRemedy(finding) || finding.muted === 'stamped' ? finding.fingerprint : place.fingerprint;
+}
+
 /** A place of a finding by the id of its note. */
 export function placeOfNote(
-  findings: readonly Finding[],
+  findings: readonly ReportedFinding[],
   id: string,
-): { readonly finding: Finding; readonly place: Occurrence } | undefined {
+): { readonly finding: ReportedFinding; readonly place: ReportedOccurrence } | undefined {
   for (const finding of findings) {
     const place = finding.occurrences.find((other) => noteId(finding, other) === id);
     if (place) return { finding, place };
@@ -135,25 +152,32 @@ export function placeOfNote(
   return undefined;
 }
 
-function notesOf(findings: readonly Finding[]): MarginNote[] {
-  return findings
+function notesOf({ chosen, file }: ChartSubject, frameRate: number | undefined): MarginNote[] {
+  return (file.findings.get(trackKey(chosen.clip, chosen.track)) ?? [])
     .flatMap((finding) =>
       hasOneRemedy(finding)
         ? [noteOf(finding, finding.occurrences[0])]
         : finding.occurrences.map((place) => noteOf(finding, place)),
     )
-    .slice(0, MOST_NOTES);
+    .slice(0, MOST_NOTES)
+    .map((note) => {
+      const event = eventAt(file.events, { ...chosen, rule: note.rule }, note.time, frameRate);
+      return event && event.tracks > 2 ? { ...note, event } : note;
+    });
 }
 
 /** All places are mended by one and the same step: one note stands for them. */
-function hasOneRemedy({ occurrences }: Finding): boolean {
+function hasOneRemedy({ occurrences }: ReportedFinding): boolean {
   const [first] = occurrences;
   return occurrences.every(({ remedy }) => JSON.stringify(remedy) === JSON.stringify(first?.remedy));
 }
 
-function noteOf(finding: Finding, place: Occurrence | undefined): MarginNote {
+function noteOf(finding: ReportedFinding, place: ReportedOccurrence | undefined): MarginNote {
   const one = !hasOneRemedy(finding) && place !== undefined;
-  const { time, level, remedy, alternatives = [] } = place ?? finding;
+  const places = one ? [place] : finding.occurrences;
+  const open = places.filter(({ stamp }) => stamp === undefined);
+  const { effect } = finding;
+  const { time, level, remedy, alternatives = [] } = open[0] ?? place ?? finding;
   const [proposed, ...others] = remedy ? remedyWays([remedy, ...alternatives]) : [];
   return {
     id: place ? noteId(finding, place) : finding.fingerprint,
@@ -161,15 +185,26 @@ function noteOf(finding: Finding, place: Occurrence | undefined): MarginNote {
     level,
     message: asSentence(place && one ? place.message : finding.message),
     time,
-    places: one ? [place] : finding.occurrences,
+    places: open.length > 0 ? open : places,
     count: one ? 1 : finding.count,
-    status: 'open',
+    status: finding.muted === 'stamped' || (one && open.length === 0) ? 'stamped' : 'open',
+    // Said of a finding's worst place alone.
+    ...(effect && time === finding.time && { effect }),
+    ...acceptedOf(places),
     ...(proposed && { remedy: proposed }),
     ...(others.length > 0 && { others }),
   };
 }
 
-function noteId(finding: Finding, place: Occurrence): string {
+/** Which of a note's places are accepted, and why. */
+function acceptedOf(places: readonly ReportedOccurrence[]): Pick<MarginNote, 'accepted'> {
+  const stamps = places.flatMap(({ stamp }) => stamp ?? []);
+  if (stamps.length === 0) return {};
+  const reasons = stamps.map(({ reason, by, date }) => `${reason} (${by}, ${date})`);
+  return { accepted: { places: stamps.length, reasons: [...new Set(reasons)] } };
+}
+
+function noteId(finding: ReportedFinding, place: ReportedOccurrence): string {
   return `${finding.fingerprint}/${place.fingerprint}`;
 }
 

@@ -22,19 +22,29 @@ import {
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import type { TrackAnswer } from '@slewcurve/job';
 import { sayStep, type Step } from '@slewcurve/mend';
-import { allowedSpeed } from '@slewcurve/survey';
+import { allowedSpeed, type HouseRules } from '@slewcurve/survey';
 import type { FileWork } from '../session/file-work.js';
 import { trackKey } from '../session/file-work.js';
 import { SentenceTrial } from '../session/sentence-trial.js';
-import { settingsOf, type Session } from '../session/session.js';
+import type { Session } from '../session/session.js';
+import { playsAsLoop, settingsOf } from '../session/survey-terms.js';
 import { turnSketch } from '../session/turn-sketch.js';
-import { chartDataOf, drawsTheSame, measureAhead, placeOfNote, type ChartSubject } from './chart-data-of.js';
+import type { Accepted, SlewAcceptForm, ToAccept } from './accept-form.js';
+import {
+  chartDataOf,
+  drawsTheSame,
+  acceptedAs,
+  measureAhead,
+  placeOfNote,
+  type ChartSubject,
+} from './chart-data-of.js';
 import { clockChoice, type Clock } from './clock-choice.js';
 import { cautionsOf } from './cautions-of.js';
 import { chartPageStyles } from './chart-page-styles.js';
 import { explanationOf } from './explanation-of.js';
 import { jobCardOf } from './job-card-of.js';
 import { NOT_TURNING, keyTurnOf, layOverEdit, turnAtHand, turnedKey, type Turning } from './key-turn-of.js';
+import { loopChoice } from './loop-choice.js';
 import { playbackChoice } from './playback-choice.js';
 import { pageStyles } from './page-styles.js';
 import type { ChosenTrack } from './roster-rows.js';
@@ -57,6 +67,7 @@ export class SlewChartPage extends LitElement {
     turning: { state: true },
     word: { state: true },
     note: { state: true },
+    accepting: { state: true },
     busy: { state: true },
     fold: { state: true },
     narrow: { state: true },
@@ -79,6 +90,8 @@ export class SlewChartPage extends LitElement {
   declare private word: string | undefined;
   declare private clock: Clock;
   declare private note: string | undefined;
+  /** Id of the note whose finding is being accepted. */
+  declare private accepting: string | undefined;
   declare private busy: boolean;
   /** Seconds a row, where somebody chose. */
   declare private fold: number | undefined;
@@ -134,6 +147,7 @@ export class SlewChartPage extends LitElement {
     this.edit = undefined;
     this.span = undefined;
     this.note = undefined;
+    this.accepting = undefined;
     this.fold = undefined;
   }
 
@@ -152,8 +166,12 @@ export class SlewChartPage extends LitElement {
     return this.session.settings.playbacks[0] ?? 'as-written';
   }
 
+  private get houseRules(): HouseRules {
+    return settingsOf(this.file, this.session.settings).houseRules;
+  }
+
   private makeData(): ChartData | undefined {
-    const { answer, chosen, file, second, session, playback } = this;
+    const { answer, chosen, file, second, playback } = this;
     const { sentence } = this.trial;
     if (!answer || !chosen || !file) return undefined;
     const kept = sentence?.step?.keep;
@@ -167,8 +185,8 @@ export class SlewChartPage extends LitElement {
       ...(second && second !== playback && { second }),
       ...(kept && { kept }),
       clock: this.clock,
-      limit:
-        file.opened && allowedSpeed(settingsOf(file, session.settings).houseRules, answer.after, file.opened),
+      limit: file.opened && allowedSpeed(this.houseRules, answer.after, file.opened),
+      looped: playsAsLoop(this.houseRules, chosen.clip),
     };
     // Compiling a curve of an hour costs; moving the cursor must not.
     if (this.data && this.subject && drawsTheSame(this.subject, subject)) return this.data;
@@ -205,7 +223,7 @@ export class SlewChartPage extends LitElement {
       <div class="sheet" @keydown=${this.keyed}>
         <slew-chart
           .data=${data}
-          .fold=${this.fold ?? wholeClip(data)}
+          .fold=${this.fold ?? data.loop ?? wholeClip(data)}
           .time=${this.time}
           .span=${this.span}
           .chosen=${this.note}
@@ -219,8 +237,10 @@ export class SlewChartPage extends LitElement {
           @note-chosen=${(event: CustomEvent<{ id: string }>) => (this.note = event.detail.id)}
           @remedy-chosen=${(event: CustomEvent<{ id: string; way: number }>) => this.openRemedy(event.detail.id, event.detail.way)}
           @rule-asked=${(event: CustomEvent<{ rule: string }>) => this.explain(event.detail.rule)}
+          @accept-asked=${(event: CustomEvent<{ id: string }>) => this.openAccept(event.detail.id)}
+          @take-back-asked=${(event: CustomEvent<{ id: string }>) => void this.takeBack(event.detail.id)}
           @play-asked=${() => this.renderRoot.querySelector<SlewPorthole>('slew-porthole')?.toggle()}
-          >${this.sentenceAt()}</slew-chart
+          >${this.sentenceAt()}${this.acceptAt()}</slew-chart
         >
         <details class="figure" ?open=${!this.narrow}>
           <summary>3-D view</summary>
@@ -257,8 +277,16 @@ export class SlewChartPage extends LitElement {
         play: (id) => this.choosePlayback(id),
         compare: (id) => (this.second = id),
       })}
-      ${clockChoice(this.clock, this.gridFound, (clock) => (this.clock = clock))}
+      ${clockChoice(this.clock, this.gridFound, (clock) => (this.clock = clock))} ${this.loop()}
     </p>`;
+  }
+
+  private loop(): TemplateResult | typeof nothing {
+    const { file, chosen } = this;
+    if (!file || !chosen) return nothing;
+    return loopChoice(file, chosen.clip, playsAsLoop(this.houseRules, chosen.clip), (clip, on) => {
+      void this.session.setLoop(file.id, clip, on);
+    });
   }
 
   /** Frames per second that the clip was found to have. */
@@ -295,6 +323,55 @@ export class SlewChartPage extends LitElement {
       @apply-asked=${() => void this.applySentence()}
       @left-alone=${() => this.leaveSentence()}
     ></slew-sentence>`;
+  }
+
+  /** The finding and the place that a note stands for. */
+  private noted(id: string | undefined): ToAccept | undefined {
+    const { file, chosen } = this;
+    if (!file || !chosen || id === undefined) return undefined;
+    return placeOfNote(file.findings.get(trackKey(chosen.clip, chosen.track)) ?? [], id);
+  }
+
+  private acceptAt(): TemplateResult | typeof nothing {
+    const { chart, chosen } = this;
+    const noted = this.noted(this.accepting);
+    if (!noted || !chosen) return nothing;
+    const row = chart ? (chart.rows[rowAt(chart.rows, noted.place.time)]?.index ?? 0) : 0;
+    return html`<slew-accept-form
+      slot=${`row-${row}`}
+      .subject=${noted}
+      .by=${this.session.by}
+      @accepted=${(event: CustomEvent<Accepted>) => void this.accept(event.detail)}
+      @left-alone=${() => this.leaveAccept()}
+    ></slew-accept-form>`;
+  }
+
+  private openAccept(id: string): void {
+    this.note = id;
+    this.accepting = id;
+    void this.updateComplete.then(async () => {
+      const form = this.renderRoot.querySelector<SlewAcceptForm>('slew-accept-form');
+      await form?.updateComplete;
+      form?.focus();
+    });
+  }
+
+  private async accept({ named, words }: Accepted): Promise<void> {
+    if (!this.chosen) return;
+    await this.session.accept(this.chosen.file, this.chosen, named, words);
+    this.leaveAccept();
+  }
+
+  private async takeBack(id: string): Promise<void> {
+    const noted = this.noted(id);
+    if (!noted || !this.chosen) return;
+    await this.session.takeBack(this.chosen.file, this.chosen, acceptedAs(noted));
+    this.focus();
+  }
+
+  private leaveAccept(): void {
+    this.accepting = undefined;
+    void this.updateComplete.then(() => this.focus());
   }
 
   /** Ctrl+Enter on the trace opens the remedy of the chosen finding; the sentence has the keyboard then. */

@@ -1,5 +1,5 @@
 import { html, type TemplateResult } from 'lit';
-import { docketOf, type DocketBlock, type JobSettings } from '@slewcurve/job';
+import { docketOf, withStamps, type DocketBlock, type JobSettings } from '@slewcurve/job';
 import { linesOf, stepsOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
 
@@ -7,6 +7,7 @@ import type { FileWork } from '../session/file-work.js';
 interface DocketDoings {
   settingsOf(file: FileWork): JobSettings;
   saveText(name: string, text: string): void;
+  saveStamps(file: FileWork): void;
 }
 
 /** Docket: report. The record that is handed on, one printable page a file. */
@@ -20,8 +21,9 @@ export function docketPage(files: readonly FileWork[], doings: DocketDoings): Te
 }
 
 function pageOf(file: FileWork, doings: DocketDoings): TemplateResult {
-  const { report, history, proofs, opened } = file;
-  if (!report) return html``;
+  const { history, proofs, opened, stamps } = file;
+  if (!file.report) return html``;
+  const report = withStamps(file.report, stamps);
   const { playbacks, houseRules } = doings.settingsOf(file);
   const steps = stepsOf(history);
   const card = { schemaVersion: 1, steps };
@@ -51,6 +53,9 @@ function pageOf(file: FileWork, doings: DocketDoings): TemplateResult {
         @click=${() => doings.saveText('card.json', `${JSON.stringify(card, null, 2)}\n`)}
       >
         Save the job card as JSON
+      </button>
+      <button ?disabled=${stamps.length === 0} @click=${() => doings.saveStamps(file)}>
+        Save what is accepted
       </button>
     </p>
     ${cautions.map(blockOf)}

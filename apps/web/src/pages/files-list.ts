@@ -1,7 +1,10 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import { sayConventions } from '@slewcurve/job';
+import { houseRulesLine } from './house-rules-line.js';
+import { loopOffers } from './loop-choice.js';
 import { linesOf } from '../session/card-history.js';
 import type { FileWork } from '../session/file-work.js';
+import { acceptedOf, idleStamps } from '../session/stamped.js';
 
 /** What the list of files may ask for. */
 export interface FileActions {
@@ -10,6 +13,11 @@ export interface FileActions {
   close(id: string): void;
   mendAll(id: string): void;
   save(id: string, how: 'in place' | 'download'): void;
+  setLoop(id: string, clip: string, on: boolean): void;
+  saveStamps(file: FileWork): void;
+  /** Name of the house rules that somebody opened, and how they are put away. */
+  readonly house: string | undefined;
+  leaveHouse(): void;
   /** What asks by which conventions a file is read. */
   askConventions(file: FileWork): TemplateResult;
 }
@@ -35,10 +43,17 @@ function oneFile(file: FileWork, actions: FileActions): TemplateResult {
   const steps = linesOf(file.history).filter((line) => !line.skipped).length;
   return html`<p><b>${name}</b>: ${sayFile(file)}</p>
     ${readBy(file, actions)}
+    ${houseRulesLine(file.blob ? actions.house : 'its own', file.blob ? actions.leaveHouse : undefined)}
+    ${loopOffers(file, (clip, on) => actions.setLoop(id, clip, on))} ${unusedStamps(file)}
     ${(file.opened?.problems ?? []).map((problem) => html`<p class="problem">${problem.message} <code>${problem.code}</code></p>`)}
     <p class="doings on-screen">
       ${
-        [...file.findings.values()].flat().some((finding) => finding.remedy)
+        file.stamps.length > 0
+          ? html`<button @click=${() => actions.saveStamps(file)}>Save what is accepted</button>`
+          : nothing
+      }
+      ${
+        [...file.findings.values()].flat().some((finding) => finding.remedy && finding.muted === undefined)
           ? html`<button @click=${() => actions.mendAll(id)}>Mend all that is proposed</button>`
           : nothing
       }
@@ -101,14 +116,18 @@ function inProgress({ id, name, status, progress }: FileWork, actions: FileActio
 }
 
 function sayFile({ opened, report, findings, saved, history }: FileWork): string {
-  const found = [...findings.values()].flat();
+  const all = [...findings.values()].flat();
+  const found = all.filter(({ muted }) => muted === undefined);
   const count = (level: string): number => found.filter((finding) => finding.level === level).length;
   const places = found.reduce((sum, finding) => sum + finding.count, 0);
+  const accepted = acceptedOf(all);
   const parts = [
     counted(opened?.tracks.length ?? 0, 'rotation track'),
     `in ${counted(report?.clips.length ?? 0, 'clip')};`,
     `${counted(count('error'), 'error')}, ${counted(count('warning'), 'warning')}, ${counted(count('note'), 'note')}${places > found.length ? ` at ${counted(places, 'place')}` : ''}.`,
   ];
+  if (accepted.whole > 0) parts.push(`${accepted.whole.toLocaleString('en')} accepted.`);
+  if (accepted.inPart > 0) parts.push(`${accepted.inPart.toLocaleString('en')} accepted in part.`);
   const steps = linesOf(history).length;
   if (steps > 0)
     parts.push(`${counted(steps, 'edit')} on the job card, ${saved ? 'saved' : 'not saved yet'}.`);
@@ -118,6 +137,17 @@ function sayFile({ opened, report, findings, saved, history }: FileWork): string
 /** Messages for the terminal begin with the file's name, which stands before it here. */
 function withoutName(message: string, name: string): string {
   return message.startsWith(`${name}: `) ? message.slice(name.length + 2) : message;
+}
+
+/** What was accepted and is found no more. */
+function unusedStamps({ found, stamps, history }: FileWork): TemplateResult | typeof nothing {
+  // Under an edit what was accepted may be gone and come back.
+  if (linesOf(history).length > 0) return nothing;
+  const idle = idleStamps(found, stamps).length;
+  if (idle === 0) return nothing;
+  return html`<p class="problem">
+    ${counted(idle, 'stamp')} ${idle === 1 ? 'fits' : 'fit'} nothing any more. <code>stamps.unused</code>
+  </p>`;
 }
 
 function counted(count: number, what: string): string {

@@ -1,5 +1,5 @@
 import type { RosterRow } from '@slewcurve/elements/plot';
-import type { Finding } from '@slewcurve/survey';
+import type { ReportedFinding } from '@slewcurve/job';
 import type { FileWork, InkedRow } from '../session/file-work.js';
 
 /** A track among all open files. */
@@ -28,14 +28,14 @@ export function trackOfRow(id: string): ChosenTrack {
 
 /** A row as it was made, and of which findings. */
 interface Made {
-  readonly of: readonly Finding[] | undefined;
+  readonly of: readonly ReportedFinding[] | undefined;
   readonly row: RosterRow;
 }
 
 // A survey changes the roster many times a second, and one row at a time.
 const made = new WeakMap<InkedRow, Made>();
 
-function rowOf(file: FileWork, row: InkedRow, findings: readonly Finding[] | undefined): RosterRow {
+function rowOf(file: FileWork, row: InkedRow, findings: readonly ReportedFinding[] | undefined): RosterRow {
   const known = made.get(row);
   if (known && known.of === findings) return known.row;
   const fresh = rosterRow(file, row, findings ?? []);
@@ -43,9 +43,11 @@ function rowOf(file: FileWork, row: InkedRow, findings: readonly Finding[] | und
   return fresh;
 }
 
-function rosterRow(file: FileWork, row: InkedRow, findings: readonly Finding[]): RosterRow {
-  const places = findings.flatMap((finding) => finding.occurrences);
-  const count = (level: string): number => findings.filter((finding) => finding.level === level).length;
+function rosterRow(file: FileWork, row: InkedRow, findings: readonly ReportedFinding[]): RosterRow {
+  const open = findings.filter(({ muted }) => muted === undefined);
+  const places = open.flatMap(({ occurrences }) => occurrences.filter(({ stamp }) => stamp === undefined));
+  const effect = worstEffect(open);
+  const count = (level: string): number => open.filter((finding) => finding.level === level).length;
   return {
     id: rowId({ file: file.id, clip: row.clip, track: row.track }),
     file: file.name,
@@ -54,18 +56,30 @@ function rosterRow(file: FileWork, row: InkedRow, findings: readonly Finding[]):
     seconds: row.end - row.start,
     ink: row.ink,
     counts: { error: count('error'), warning: count('warning'), note: count('note') },
-    places: findings.reduce((sum, finding) => sum + finding.count, 0),
+    ...(findings.length > open.length && { accepted: findings.length - open.length }),
+    places: open.reduce(
+      (sum, { count: all, occurrences }) => sum + all - occurrences.filter(({ stamp }) => stamp).length,
+      0,
+    ),
     rules: [...new Set(findings.map(({ rule }) => rule))],
-    families: familiesOf(findings),
+    families: familiesOf(open),
     marks: places.map(({ time, level }) => ({ time: time - row.start, level })),
     // Under the floor nothing is claimed.
     peak: row.peak > row.noiseFloor ? row.peak : 0,
     travel: row.travelled,
-    ...(findings[0]?.effect && { effect: findings[0].effect }),
+    ...(effect && { effect }),
   };
 }
 
-function familiesOf(findings: readonly Finding[]): Record<string, number> {
+/** What is seen of the finding that is seen most. */
+function worstEffect(findings: readonly ReportedFinding[]): ReportedFinding['effect'] {
+  return findings.reduce<ReportedFinding['effect']>(
+    (worst, { effect }) => (effect && effect.value > (worst?.value ?? 0) ? effect : worst),
+    undefined,
+  );
+}
+
+function familiesOf(findings: readonly ReportedFinding[]): Record<string, number> {
   const families: Record<string, number> = {};
   for (const { rule } of findings) {
     const family = rule.slice(0, rule.indexOf('.'));

@@ -1,6 +1,14 @@
 import type { Inked } from '@slewcurve/elements/plot';
-import type { OpenedAnswer, FileReport, RosterRow, SaidConventions, StepReport } from '@slewcurve/job';
-import type { Finding } from '@slewcurve/survey';
+import type {
+  OpenedAnswer,
+  FileReport,
+  ReportedFinding,
+  RosterRow,
+  SaidConventions,
+  Stamp,
+  StepReport,
+} from '@slewcurve/job';
+import type { Finding, SurveyEvent } from '@slewcurve/survey';
 import type { CardHistory } from './card-history.js';
 import type { Progress } from './desk-client.js';
 
@@ -25,7 +33,15 @@ export interface FileWork {
   readonly report?: FileReport;
   /** By `trackKey`, as the job card leaves the tracks. */
   readonly rows: ReadonlyMap<string, InkedRow>;
-  readonly findings: ReadonlyMap<string, readonly Finding[]>;
+  readonly found: ReadonlyMap<string, readonly Finding[]>;
+  /** The same with what is accepted marked. */
+  readonly findings: ReadonlyMap<string, readonly ReportedFinding[]>;
+  /** What happens at once on several tracks, as the job card leaves them. */
+  readonly events: readonly SurveyEvent[];
+  /** Places that somebody accepted. */
+  readonly stamps: readonly Stamp[];
+  /** Clips that are said to play as loops. */
+  readonly loops: readonly string[];
   readonly history: CardHistory;
   readonly proofs: readonly StepReport[];
   readonly raised: readonly Finding[];

@@ -1,4 +1,4 @@
-import type { SaidConventions } from '@slewcurve/job';
+import type { SaidConventions, Stamp } from '@slewcurve/job';
 import type { CardLine } from './card-history.js';
 
 // Work in progress in the browser's own database: it survives a reload or a crash, and never leaves the machine.
@@ -13,6 +13,9 @@ export interface SavedWork {
   /** What was said of the file where it is silent. */
   readonly said?: SaidConventions;
   readonly lines: readonly CardLine[];
+  /** Left out by visits before there were any. */
+  readonly stamps?: readonly Stamp[];
+  readonly loops?: readonly string[];
   readonly savedAt: number;
 }
 

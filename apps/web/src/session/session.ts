@@ -1,24 +1,29 @@
 import type { PlaybackId } from '@slewcurve/core';
 import {
-  kestrelPointRules,
+  addStamps,
+  stampsFor,
+  withoutStamps,
   type CardAnswer,
   type JobSettings,
   type MatrixSettings,
   type PlaybackMatrix,
   type SaidConventions,
+  type Stamp,
+  type StampWords,
   type TableTrial,
   type TrackAnswer,
   type TrialAnswer,
+  type TrackName,
 } from '@slewcurve/job';
 import type { Step } from '@slewcurve/mend';
 import { PAGE_WORDS } from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import { NO_HOUSE_RULES, type Finding, type Word } from '@slewcurve/survey';
-import type { ChosenFile } from '../files/chosen-file.js';
+import type { Chosen } from '../files/chosen-file.js';
+import { stampedPath } from '../files/record.js';
 import { mendedName, saveCopy, saveInPlace, type Saved } from '../files/save-file.js';
 import {
   EMPTY_HISTORY,
-  linesOf,
   redone,
   stepsOf,
   undone,
@@ -29,7 +34,11 @@ import {
 } from './card-history.js';
 import { DeskClient, DeskError } from './desk-client.js';
 import { trackKey, type FileWork, type InkedRow } from './file-work.js';
+import { baseName, readRecords, type NamedHouseRules, type NamedStamps } from './read-records.js';
+import { newWork, savedWork } from './new-work.js';
 import { keepWork, type SavedWork } from './recovery.js';
+import { stamped } from './stamped.js';
+import { settingsOf } from './survey-terms.js';
 
 /** The page's work: files, their surveys and job cards. Fires `change` once a picture at most, `notice` where there is something to say. */
 export class Session extends EventTarget {
@@ -45,9 +54,12 @@ export class Session extends EventTarget {
     allowWarnings: 0,
     houseRules: NO_HOUSE_RULES,
   };
+  /** House rules that somebody opened. */
+  house: NamedHouseRules | undefined;
   #next = 1;
   #stops = new Map<string, AbortController>();
   #cards = Promise.resolve();
+  #surveys = Promise.resolve();
   /** A `change` is on its way. */
   #told = false;
 
@@ -61,9 +73,34 @@ export class Session extends EventTarget {
     return this.files.find((file) => file.id === id);
   }
 
-  /** Open files, one after the other; a broken one says so and the rest goes on. */
-  async open(chosen: readonly ChosenFile[]): Promise<void> {
-    await this.#take(chosen.map((file) => newWork(`file-${this.#next++}`, file)));
+  /** Open files, one after the other; a broken one says so and the rest goes on. House rules and stamps hold before anything is surveyed. */
+  async open({ files, records }: Chosen): Promise<void> {
+    const read = await readRecords(records);
+    const rest = read.stamps.filter(({ path }) => !files.some(({ name }) => name === stampedPath(path)));
+    const works = files.map((file) => {
+      const own = read.stamps.find(({ path }) => file.name === stampedPath(path));
+      return newWork(`file-${this.#next++}`, own ? { ...file, stamps: own.stamps } : file);
+    });
+    const said = [...read.problems, ...rest.flatMap((own) => this.#stampOpen(own))];
+    if (said.length > 0) this.#say(said.join(' '));
+    if (read.house) await this.setHouse(read.house);
+    await this.#take(works);
+  }
+
+  /** House rules for all files but the demo scene, which has its own; undefined: none. */
+  async setHouse(house: NamedHouseRules | undefined): Promise<void> {
+    this.house = house;
+    this.settings = { ...this.settings, houseRules: house?.rules ?? NO_HOUSE_RULES };
+    await this.#surveyAnew(this.files.filter(({ blob }) => blob));
+  }
+
+  /** Puts stamps on the open file that they are for; what is wrong where there is none. */
+  #stampOpen({ path, stamps }: NamedStamps): string[] {
+    const name = baseName(stampedPath(path));
+    const file = this.files.find((other) => baseName(other.name) === name);
+    if (!file) return [`${path} holds stamps for ${name}, which is not open; open both together.`];
+    void this.setStamps(file.id, addStamps(file.stamps, stamps));
+    return [`${stamps.length.toLocaleString('en')} accepted in ${path} are taken over.`];
   }
 
   async openDemo(): Promise<void> {
@@ -101,7 +138,51 @@ export class Session extends EventTarget {
 
   async setPlaybacks(playbacks: readonly PlaybackId[]): Promise<void> {
     this.settings = { ...this.settings, playbacks };
-    await this.#surveyAll();
+    await this.#surveyAnew(this.files);
+  }
+
+  /** Say that a clip plays as a loop, or that it does not; its file is surveyed anew. */
+  async setLoop(id: string, clip: string, on: boolean): Promise<void> {
+    const file = this.file(id);
+    if (!file || file.loops.includes(clip) === on) return;
+    this.#put(id, { loops: on ? [...file.loops, clip] : file.loops.filter((other) => other !== clip) });
+    await this.#surveyAnew([file]);
+    await this.#keep();
+  }
+
+  /** Accept what is named on a track: one place by its fingerprint, or every place of a finding by the finding's. */
+  async accept(
+    id: string,
+    track: Pick<TrackName, 'clip' | 'track'>,
+    named: string,
+    words: StampWords,
+  ): Promise<void> {
+    const file = this.file(id);
+    if (!file?.report) return;
+    const findings = file.found.get(trackKey(track.clip, track.track)) ?? [];
+    const added = stampsFor({ ...file.report, findings }, named, words);
+    await this.setStamps(id, addStamps(file.stamps, added));
+  }
+
+  /** Who accepted last. */
+  get by(): string {
+    return this.files.findLast(({ stamps }) => stamps.length > 0)?.stamps.at(-1)?.by ?? '';
+  }
+
+  /** Take back what was accepted. */
+  async takeBack(id: string, track: Pick<TrackName, 'clip' | 'track'>, named: string): Promise<void> {
+    const file = this.file(id);
+    if (!file) return;
+    const findings = file.found.get(trackKey(track.clip, track.track)) ?? [];
+    await this.setStamps(id, withoutStamps(file.stamps, findings, named));
+  }
+
+  /** Make these a file's stamps. */
+  async setStamps(id: string, stamps: readonly Stamp[]): Promise<void> {
+    const file = this.file(id);
+    if (!file) return;
+    this.#put(id, { stamps, findings: stamped(file.found, stamps) });
+    await this.#keep();
   }
 
   track(id: string, clip: string, track: string): Promise<TrackAnswer> {
@@ -121,7 +202,14 @@ export class Session extends EventTarget {
   /** Read a file anew by what is said of it. */
   async readBy(id: string, said: SaidConventions): Promise<void> {
     this.#stops.delete(id);
-    this.#put(id, { said, status: 'opening', rows: new Map(), findings: new Map() });
+    this.#put(id, {
+      said,
+      status: 'opening',
+      rows: new Map(),
+      found: new Map(),
+      findings: new Map(),
+      events: [],
+    });
     await this.#openAndSurvey(id);
     await this.#keep();
   }
@@ -155,7 +243,8 @@ export class Session extends EventTarget {
 
   /** Put the remedy of every finding on the card. */
   async mendAll(id: string): Promise<void> {
-    const { steps, declined } = await this.desk.ask('propose', { file: id, allow: [] });
+    const stamps = this.file(id)?.stamps ?? [];
+    const { steps, declined } = await this.desk.ask('propose', { file: id, allow: [], stamps });
     if (steps.length > 0) await this.apply(id, steps);
     this.#say(
       [
@@ -233,6 +322,7 @@ export class Session extends EventTarget {
     const { signal } = this.#stopOf(id);
     const rows = new Map(this.file(id)?.rows);
     const { settings } = this;
+    const loops = this.file(id)?.loops;
     const report = await this.desk.ask(
       'survey',
       { file: id, settings: settingsOf(this.file(id), settings) },
@@ -245,23 +335,32 @@ export class Session extends EventTarget {
         },
       },
     );
-    if (settings !== this.settings) return;
-    const findings = new Map<string, Finding[]>();
+    // What was asked for meanwhile is surveyed next.
+    if (settings !== this.settings || loops !== this.file(id)?.loops) return;
+    const found = new Map<string, Finding[]>();
     for (const finding of report.findings) {
       const key = trackKey(finding.clip, finding.track);
-      findings.set(key, [...(findings.get(key) ?? []), finding]);
+      const own = found.get(key);
+      if (own) own.push(finding);
+      else found.set(key, [finding]);
     }
-    this.#put(id, { report, findings, status: 'ready' });
+    const findings = stamped(found, this.file(id)?.stamps ?? []);
+    this.#put(id, { report, found, findings, events: report.events ?? [], status: 'ready' });
     const history = this.file(id)?.history ?? EMPTY_HISTORY;
     if (stepsOf(history).length > 0) await this.#changeCard(id, () => history);
   }
 
-  async #surveyAll(): Promise<void> {
-    for (const { id, opened } of this.files) {
-      if (!opened) continue;
-      this.#put(id, { status: 'surveying' });
-      await this.#survey(id).catch((error: unknown) => this.#fail(id, error));
-    }
+  /** One after the other, so that the last word counts. */
+  #surveyAnew(files: readonly FileWork[]): Promise<void> {
+    const open = files.flatMap(({ id, opened }) => (opened ? [id] : []));
+    for (const id of open) this.#put(id, { status: 'surveying' });
+    this.#surveys = this.#surveys.then(async () => {
+      for (const id of open) {
+        this.#put(id, { status: 'surveying' });
+        await this.#survey(id).catch((error: unknown) => this.#fail(id, error));
+      }
+    });
+    return this.#surveys;
   }
 
   #fail(id: string, error: unknown): void {
@@ -295,16 +394,16 @@ export class Session extends EventTarget {
     }
   }
 
-  #applyAnswer(id: string, { tracks, steps, raised }: CardAnswer<InkedRow>): void {
+  #applyAnswer(id: string, { tracks, steps, raised, events }: CardAnswer<InkedRow>): void {
     const file = this.file(id);
     if (!file) return;
     const rows = new Map(file.rows);
-    const findings = new Map(file.findings);
-    for (const { row, findings: found } of tracks) {
+    const found = new Map(file.found);
+    for (const { row, findings } of tracks) {
       rows.set(trackKey(row.clip, row.track), row);
-      findings.set(trackKey(row.clip, row.track), found);
+      found.set(trackKey(row.clip, row.track), findings);
     }
-    this.#put(id, { rows, findings, proofs: steps, raised });
+    this.#put(id, { rows, found, findings: stamped(found, file.stamps), events, proofs: steps, raised });
   }
 
   async #startOver(): Promise<void> {
@@ -356,42 +455,10 @@ function leftOut({ verb, clip }: Step, why: string): string {
   return `Left out in ${clip}: ${reason}.`;
 }
 
-/** What a file is surveyed by: the demo scene brings house rules of its own. */
-export function settingsOf(file: FileWork | undefined, settings: JobSettings): JobSettings {
-  return file && !file.blob ? { ...settings, houseRules: kestrelPointRules } : settings;
-}
-
 /** Pages out of sight draw no pictures, and must go on all the same. */
 function inNextPicture(work: () => void): void {
   if (document.hidden) setTimeout(work);
   else requestAnimationFrame(() => void inTurn(work));
-}
-
-function newWork(
-  id: string,
-  file: Omit<ChosenFile, 'blob'> & { readonly blob?: Blob; readonly said?: SaidConventions },
-): FileWork {
-  const { name, blob, siblings, handle, said } = file;
-  return {
-    id,
-    name,
-    siblings,
-    status: 'opening',
-    rows: new Map(),
-    findings: new Map(),
-    history: EMPTY_HISTORY,
-    proofs: [],
-    raised: [],
-    saved: true,
-    ...(blob && { blob }),
-    ...(handle && { handle }),
-    ...(said && { said }),
-  };
-}
-
-function savedWork({ name, blob, siblings, handle, said, history }: FileWork): SavedWork {
-  const work = { name, siblings, lines: linesOf(history), savedAt: Date.now() };
-  return { ...work, ...(blob && { blob }), ...(handle && { handle }), ...(said && { said }) };
 }
 
 function messageOf(error: unknown): string {

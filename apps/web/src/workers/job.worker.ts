@@ -49,7 +49,7 @@ const answers: {
     const made = await here.card(file, steps, watch);
     return { ...made, tracks: made.tracks.map((track) => ({ ...track, row: inked(track.row) })) };
   },
-  propose: ({ file, allow }) => here.propose(file, allow),
+  propose: ({ file, allow, stamps }) => here.propose(file, allow, stamps),
   bytes: ({ file }, watch) => here.bytes(file, watch),
   hash: async ({ blob }, watch) => ({ size: blob.size, sha256: await sha256Of(blobSource(blob), watch) }),
   close: ({ file }) => {

@@ -32,6 +32,12 @@ export interface MarginNote {
   readonly remedy?: RemedyWay;
   /** Other edits that would, where a person must choose: each a button of its own. */
   readonly others?: readonly RemedyWay[];
+  /** What is seen of it: millimetres at the farthest joint, pixels of a picture. */
+  readonly effect?: { readonly value: number; readonly unit: string };
+  /** What happens at the same instant on other tracks too: on how many in all, when, and the track to look at first. */
+  readonly event?: { readonly tracks: number; readonly time: number; readonly owner: string };
+  /** Places that somebody accepted, and why: "the hit is meant (Ada, 2026-05-17)". */
+  readonly accepted?: { readonly places: number; readonly reasons: readonly string[] };
 }
 
 /** Another motion to compare with. */

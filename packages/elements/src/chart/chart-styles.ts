@@ -198,6 +198,10 @@ export const chartStyles: CSSResult = css`
   .notes li.stamped .message {
     text-decoration: line-through;
   }
+  .notes .more {
+    display: block;
+    color: var(--_soft);
+  }
   .notes .remedy {
     margin: 0;
     color: var(--_soft);

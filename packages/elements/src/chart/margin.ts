@@ -1,6 +1,7 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { NumberedNote } from './carets.js';
 import type { MarginNote } from './chart-data.js';
+import { acceptedWords, effectWords, eventWords } from './note-words.js';
 import { packMargin } from './pack-margin.js';
 import { sayTime } from './quantity.js';
 
@@ -15,6 +16,10 @@ export interface MarginEvents {
   /** `way`: 0 the proposed remedy, from 1 on the others. */
   mend(note: MarginNote, way: number): void;
   explain(rule: string): void;
+  /** Accept it with a reason. */
+  accept(note: MarginNote): void;
+  /** Take back what was accepted of it. */
+  takeBack(note: MarginNote): void;
   unfold(row: number): void;
 }
 
@@ -68,6 +73,9 @@ function noteItem(
         >${note.rule}</a
       >, <span class="whole">${sayTime(note.time, 2)}</span>${places}${STATUS[note.status]}</span
     >
+    ${[effectWords(note), eventWords(note), acceptedWords(note)].map((words) =>
+      words === undefined ? nothing : html`<span class="more">${words}</span>`,
+    )}
     ${
       note.remedy && note.status === 'open'
         ? [note.remedy, ...(note.others ?? [])].map(
@@ -78,7 +86,18 @@ function noteItem(
           )
         : nothing
     }
+    ${stampButtons(note, number, events)}
   </li>`;
+}
+
+function stampButtons(note: MarginNote, number: number, events: MarginEvents): TemplateResult {
+  const button = (says: string, press: (note: MarginNote) => void): TemplateResult =>
+    html`<button class="plain on-screen stamp" @click=${() => press(note)}>
+      ${says}<span class="unseen">, finding ${number}</span>
+    </button>`;
+  return html`${note.status === 'open' ? button('Accept with a reason', events.accept) : nothing}${
+    note.accepted ? button('Take the acceptance back', events.takeBack) : nothing
+  }`;
 }
 
 const STATUS: Readonly<Record<MarginNote['status'], string>> = {

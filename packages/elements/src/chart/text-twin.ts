@@ -2,6 +2,7 @@ import { numberNotes } from './carets.js';
 import { peakSpeed, trackName, type ChartData } from './chart-data.js';
 import { foldRows, type FoldRow } from './fold.js';
 import type { Motion, Reading } from './motion.js';
+import { acceptedWords, effectWords, eventWords } from './note-words.js';
 import { firstKeyAfter, firstKeyAt } from './posts.js';
 import { sayAngle, sayCount, sayList, sayRate, saySpan, sayTime } from './quantity.js';
 
@@ -24,7 +25,8 @@ export function textTwin(data: ChartData): string[] {
   }
   if (data.before) paragraphs.push(compared(data.before.motion, `Before the edits`, peak.speed));
   if (data.second) paragraphs.push(compared(data.second.motion, `Played ${data.second.name}`, peak.speed));
-  paragraphs.push(findingsSentence(data));
+  if (data.loop !== undefined) paragraphs.push('It plays as a loop: its end meets its start.');
+  paragraphs.push(findingsSentence(data), ...noteSentences(data));
   return paragraphs;
 }
 
@@ -93,4 +95,14 @@ function findingsSentence(data: ChartData): string {
     .filter(({ count }) => count > 0)
     .map(({ level, count }) => sayCount(count, level));
   return `There ${open.length === 1 ? 'is' : 'are'} ${sayList(levels)} in the margin.`;
+}
+
+/** What is seen of findings, what they share their instant with, and what is accepted. */
+function noteSentences({ notes }: ChartData): string[] {
+  return numberNotes(notes).flatMap(({ note, number }) => {
+    const words = [effectWords(note), eventWords(note), acceptedWords(note)].filter(
+      (said) => said !== undefined,
+    );
+    return words.length === 0 ? [] : [`Finding ${number}: ${words.join('. ')}.`];
+  });
 }

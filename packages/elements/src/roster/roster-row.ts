@@ -1,5 +1,6 @@
 import { sayAngle, sayCount, sayRate } from '../chart/quantity.js';
 import { trackName, type NoteLevel } from '../chart/chart-data.js';
+import { sayEffect } from '../chart/note-words.js';
 import type { TrackInk } from './ink.js';
 
 /** One track as the roster shows it. */
@@ -12,7 +13,10 @@ export interface RosterRow {
   readonly seconds: number;
   /** From `trackInk`. */
   readonly ink: TrackInk;
+  /** Findings that nobody accepted. */
   readonly counts: Readonly<Record<NoteLevel, number>>;
+  /** Findings that somebody accepted. */
+  readonly accepted?: number;
   /** Places of them all: a finding is one fault of one track, and may stand at many. */
   readonly places: number;
   /** Ids of the rules that found something. */
@@ -39,10 +43,13 @@ export function rowWords(row: RosterRow): string {
   return `${trackName(row.track)} in ${row.clip}: ${countWords(row) || 'nothing found'}, peak ${sayRate(row.peak)}, turns ${sayAngle(row.travel)}`;
 }
 
-/** "1 error, 2 notes at 14 places", as many as the chart has carets; empty where nothing was found. */
+/** "1 error, 2 notes, 18 mm at 14 places, 1 accepted", with what is seen of the worst and as many as the chart has carets; empty where nothing was found. */
 export function countWords(row: RosterRow): string {
   const levels = (['error', 'warning', 'note'] as const).filter((level) => row.counts[level] > 0);
-  const said = levels.map((level) => sayCount(row.counts[level], level)).join(', ');
   const findings = levels.reduce((sum, level) => sum + row.counts[level], 0);
-  return row.places > findings ? `${said} at ${sayCount(row.places, 'place')}` : said;
+  const seen = row.effect && findings > 0 ? `, ${sayEffect(row.effect)}` : '';
+  const places = row.places > findings ? ` at ${sayCount(row.places, 'place')}` : '';
+  const accepted = row.accepted ? [`${row.accepted.toLocaleString('en')} accepted`] : [];
+  const found = `${levels.map((level) => sayCount(row.counts[level], level)).join(', ')}${seen}${places}`;
+  return [...(findings > 0 ? [found] : []), ...accepted].join(', ');
 }

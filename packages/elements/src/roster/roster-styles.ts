@@ -18,6 +18,28 @@ export const rosterStyles: CSSResult = css`
     color: var(--_soft);
     font-size: 0.9375rem;
   }
+  .events ul {
+    list-style: none;
+    margin: 0 0 0.25rem;
+    padding: 0 0.5rem;
+    max-height: 14rem;
+    overflow-y: auto;
+    font-size: 0.9375rem;
+  }
+  .events li.error > span {
+    color: var(--_limit);
+    font-weight: 600;
+  }
+  .events .tracks {
+    display: flex;
+    flex-wrap: wrap;
+    max-height: none;
+  }
+  @media (pointer: fine) {
+    .events button {
+      min-height: 28px;
+    }
+  }
   .heads,
   .gauge,
   .option {

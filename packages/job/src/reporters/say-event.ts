@@ -26,10 +26,16 @@ export function sayEvent(event: SurveyEvent, form?: TimeForm, fps?: number): str
 export function sayLoopGuesses(clips: readonly ClipReport[]): string | undefined {
   const closed = clips.filter(({ loopGuess }) => loopGuess !== undefined);
   const [only] = closed;
-  if (only?.loopGuess === undefined) return undefined;
+  const guess = only && sayLoopGuess(only);
+  if (guess === undefined) return undefined;
   if (closed.length > 1)
     return `${closed.length} of ${clips.length} clips end where they start (${closed.map(({ clip }) => clip).join(', ')}): of those that repeat, say so with --loop, and their seams are looked at`;
-  const { closed: tracks, moving } = only.loopGuess;
-  const where = moving === 1 ? 'its one moving track' : `${tracks} of ${moving} moving tracks`;
-  return `${only.clip} ends where it starts in ${where}: if it repeats, say so with --loop, and its seam is looked at`;
+  return `${guess}: if it repeats, say so with --loop, and its seam is looked at`;
+}
+
+/** `Walk ends where it starts in 38 of 40 moving tracks`; undefined where nothing is guessed. */
+export function sayLoopGuess({ clip, loopGuess }: ClipReport): string | undefined {
+  if (loopGuess === undefined) return undefined;
+  const { closed, moving } = loopGuess;
+  return `${clip} ends where it starts in ${moving === 1 ? 'its one moving track' : `${closed} of ${moving} moving tracks`}`;
 }
