@@ -7,8 +7,8 @@ const FILE = '../data/demo-manifest.json';
 const ABOUT =
   'Every finding at note or above of the named rules on the demo scene under its own house rules, played as written. ' +
   "Worked out by test/reference/demo-manifest from the rules' text, with a reader and quaternion maths of its own; it imports " +
-  'nothing of the packages. Keys are zero-based; of a segment the later key. `npx vitest run --project node -u ' +
-  'test/reference/demo-manifest` writes it anew.';
+  'nothing of the packages. Keys are zero-based; of a segment the later key. `npx vitest run --project node ' +
+  'test/reference/demo-manifest -u` writes it anew.';
 
 const found = demoManifest(kestrelPoint(), kestrelPointRules);
 

@@ -9,6 +9,7 @@ export {
   type Interpolation,
   type RotationTrack,
   type RotationTrackInput,
+  type MatrixFlaws,
   type TrackSource,
 } from './track/rotation-track.js';
 export type { Curve, Frame, Peak, SegmentAcceleration } from './curve/curve.js';

@@ -4,6 +4,7 @@ import { componentOrder } from './rules/file/component-order.js';
 import { degreesOrRadians } from './rules/file/degrees-or-radians.js';
 import { hole } from './rules/file/hole.js';
 import { idle } from './rules/file/idle.js';
+import { mirrorMatrix } from './rules/file/mirror-matrix.js';
 import { notFinite } from './rules/file/not-finite.js';
 import { notNormalised } from './rules/file/not-normalised.js';
 import { ragged } from './rules/file/ragged.js';
@@ -56,6 +57,7 @@ export const RULES: readonly Rule[] = Object.freeze([
   componentOrder,
   degreesOrRadians,
   axesSuspect,
+  mirrorMatrix,
   idle,
   hole,
   ragged,

@@ -30,6 +30,10 @@ export const RULE_EXAMPLES: Readonly<Record<string, readonly [fires: string, qui
       'A figure whose root begins turned by 90° about x.',
       'A figure that begins turned by 90° about the up axis.',
     ],
+    'file.mirror-matrix': [
+      'A table of matrices whose first columns are negated; a node 0.1 off square above a joint.',
+      'A node of scale −1, 1, 1; matrices with uneven scales.',
+    ],
     'file.idle': ['24 keys that all say the same.', 'A single key.'],
     'file.hole': ['Five samples lost out of a turn of 30 deg/s.', 'A declared cut between two frames.'],
     'file.ragged': [

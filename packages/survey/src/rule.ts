@@ -64,6 +64,8 @@ export interface Place {
   readonly playback?: string;
   readonly confidence?: number;
   readonly ways?: readonly Way[];
+  /** Another clip or node that the place is about, by name. */
+  readonly other?: string;
   /** Further numbers that the rule's sentence needs. */
   readonly facts?: Readonly<Record<string, number>>;
 }

@@ -182,11 +182,13 @@ describe('delimited text', () => {
 
   test('tells a matrix that is no rotation', async () => {
     const names = 't,m00,m01,m02,m10,m11,m12,m20,m21,m22';
-    const file = await open(`${names}\n0,-1,0,0,0,1,0,0,0,1\n1,-1,0,0,0,1,0,0,0,1\n`);
-    expect(file.problems).toMatchObject([{ code: 'delimited.reflected-matrix' }]);
-    expect((await open(`${names}\n0,1,0,0.5,0,1,0,0,0,1\n1,1,0,0,0,1,0,0,0,1\n`)).problems).toMatchObject([
-      { code: 'delimited.sheared-matrix' },
-    ]);
+    const reflected = await first(`${names}\n0,-1,0,0,0,1,0,0,0,1\n1,1,0,0,0,1,0,0,0,1\n`);
+    expect([...reflected.source.matrices!.reflected]).toEqual([1, 0]);
+    const sheared = await first(`${names}\n0,1,0,0.5,0,1,0,0,0,1\n1,1,0,0,0,1,0,0,0,1\n`);
+    expect([...sheared.source.matrices!.reflected]).toEqual([0, 0]);
+    // The cosine between (1, 0, 0) and (0.5, 0, 1).
+    expect(sheared.source.matrices!.shear[0]).toBeCloseTo(0.5 / Math.hypot(0.5, 1), 15);
+    expect(sheared.source.matrices!.shear[1]).toBe(0);
   });
 
   test('reads stamps in every unit, to the nearest float64', async () => {

@@ -114,6 +114,8 @@ describe('the rest pose', () => {
     // Rounding of nine float64 products and a 4×4 eigenvector.
     for (const part of nodes[0].rotation) expect(part).toBeCloseTo(0.5, 12);
     expect(nodes[0].scale[0]).toBeCloseTo(2, 12);
+    expect(nodes[0].matrix).toMatchObject({ reflected: false });
+    expect(nodes[0].matrix!.shear).toBeLessThan(1e-15);
     expect(nodes[1]).toMatchObject({ rotation: [0, 0, 0, 1], translation: [4, 5, 6], scale: [0, 1, 1] });
   });
 

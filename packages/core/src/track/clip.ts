@@ -12,6 +12,8 @@ export interface SceneNode {
   readonly scale: readonly number[];
   /** Joint of a skin. */
   readonly joint: boolean;
+  /** What keeps the matrix, where the file gives the node by one, from being a turn and a scale. */
+  readonly matrix?: { readonly reflected: boolean; readonly shear: number };
   /** Horizontal and vertical view angle, radians, where the node carries a perspective camera that tells. */
   readonly camera?: { readonly verticalView: number; readonly aspect?: number };
 }

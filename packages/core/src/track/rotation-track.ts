@@ -13,6 +13,14 @@ export const VALUES_PER_KEY: Readonly<Record<Interpolation, number>> = Object.fr
   EULER: 3,
 });
 
+/** What keeps stored matrices from being a turn and a scale, a number each key as the file has it. */
+export interface MatrixFlaws {
+  /** 1 where a matrix turns a right hand into a left. */
+  readonly reflected: Uint8Array;
+  /** Largest cosine between two columns; 0 where they are square. */
+  readonly shear: Float64Array;
+}
+
 /** Where a track came from, in the file's own numbering. */
 export interface TrackSource {
   readonly clip: string;
@@ -23,6 +31,8 @@ export interface TrackSource {
   /** Accessors (or columns) that hold times and values. */
   readonly times?: number;
   readonly values?: number;
+  /** Where the file stores matrices. */
+  readonly matrices?: MatrixFlaws;
   /** JSON pointers of everything else that reads the same times or values. */
   readonly sharedWith: readonly string[];
 }

@@ -1,4 +1,11 @@
-import { medianGap, regime, replaceTrack, storedTrack, type RotationTrack } from '@slewcurve/core';
+import {
+  medianGap,
+  regime,
+  replaceTrack,
+  storedTrack,
+  type MatrixFlaws,
+  type RotationTrack,
+} from '@slewcurve/core';
 import type { Body } from './layout.js';
 import { type OrientationForm, orientationForm } from './orientation-form.js';
 import type { Rows } from './row-reader.js';
@@ -14,8 +21,6 @@ export interface ReadBody {
   readonly decimals: readonly number[];
   /** The numbers of a row as written. */
   text(row: number): readonly number[];
-  /** First row whose matrix is no rotation, and why. */
-  readonly fault: { readonly row: number; readonly kind: 'reflected' | 'sheared' } | undefined;
 }
 
 /** A gap this many times the median is a hole of the capture. */
@@ -44,13 +49,7 @@ export function bodyTrack(
     else if (keyRows.length > 0 && breaks.at(-1) !== keyRows.length - 1) breaks.push(keyRows.length - 1);
   }
   const values = new Float64Array(form.perKey * keyRows.length);
-  let fault: ReadBody['fault'];
-  keyRows.forEach((row, key) => {
-    const own = text(row);
-    values.set(form.read(own), form.perKey * key);
-    const kind = fault ? undefined : form.fault?.(own);
-    if (kind) fault = { row, kind };
-  });
+  keyRows.forEach((row, key) => values.set(form.read(text(row)), form.perKey * key));
   const decimals = rows.decimals.slice(first, first + body.columns.length);
   const whole = keyRows.length === stamps.seconds.length;
   const track = storedTrack({
@@ -66,10 +65,27 @@ export function bodyTrack(
       clipIndex: 0,
       node: place.node,
       values: body.columns[0] ?? 0,
+      ...flawsOf(form, keyRows, text),
       sharedWith: [],
     },
   });
-  return { track: withGaps(track), body, form, rows: Int32Array.from(keyRows), decimals, text, fault };
+  return { track: withGaps(track), body, form, rows: Int32Array.from(keyRows), decimals, text };
+}
+
+/** What keeps a body's matrices from being turns; nothing where it stores none. */
+function flawsOf(
+  form: OrientationForm,
+  rows: readonly number[],
+  text: ReadBody['text'],
+): { matrices?: MatrixFlaws } {
+  if (!form.flaw) return {};
+  const flaws = rows.map((row) => form.flaw?.(text(row)));
+  return {
+    matrices: {
+      reflected: Uint8Array.from(flaws, (flaw) => (flaw?.reflected === true ? 1 : 0)),
+      shear: Float64Array.from(flaws, (flaw) => flaw?.shear ?? 0),
+    },
+  };
 }
 
 function withGaps(track: RotationTrack): RotationTrack {

@@ -4,7 +4,7 @@ import { nodePaths } from '../node-paths.js';
 import type { Source } from '../source.js';
 import { lineError } from '../text/text-fault.js';
 import { textLines, type TextLine } from '../text/text-lines.js';
-import { bodyTrack, type ReadBody } from './body-track.js';
+import { bodyTrack } from './body-track.js';
 import { type Layout, layoutOf, refuseUnnamed } from './layout.js';
 import { rowReader, type RowReader } from './row-reader.js';
 import { headReader, isComment, type TableHead } from './table-head.js';
@@ -41,7 +41,7 @@ export async function delimitedFile(
     return made;
   });
   if (read.stamps.epoch !== 0n) problems.push(epochProblem(name, read.stamps.epoch));
-  problems.push(...bodyProblems(name, layout, bodies));
+  problems.push(...bodyProblems(name, layout));
   return Object.freeze({
     format: 'delimited',
     fixedTimes: true,
@@ -176,24 +176,11 @@ function epochProblem(file: string, epoch: bigint): FileProblem {
   };
 }
 
-function bodyProblems(file: string, layout: Layout, bodies: readonly ReadBody[]): FileProblem[] {
-  const twice = layout.doubled.map((name): FileProblem => ({
+function bodyProblems(file: string, layout: Layout): FileProblem[] {
+  return layout.doubled.map((name): FileProblem => ({
     code: 'delimited.two-forms',
     level: 'note',
     message: `${file}: the orientation of ${name || NAMELESS} stands in two forms; the quaternion or the matrix is read and written, the other stays as it is.`,
     place: { file },
   }));
-  const matrices = bodies.flatMap(({ track, fault }): FileProblem[] =>
-    fault
-      ? [
-          {
-            code: `delimited.${fault.kind}-matrix`,
-            level: 'warning',
-            message: `${file}: the matrix of ${track.id} in row ${fault.row} is ${fault.kind}, so no rotation; its turn is read without that.`,
-            place: { file, track: track.id },
-          },
-        ]
-      : [],
-  );
-  return [...twice, ...matrices];
 }

@@ -20,13 +20,11 @@ export interface OrientationForm {
   write(key: readonly number[], was: readonly number[]): readonly number[];
   /** Noise floor of text with so many decimals in each column. */
   storage(decimals: readonly number[]): Pick<Storage, 'component' | 'decimals' | 'lattice'>;
-  /** What is wrong with a text that is read all the same. */
-  fault?(text: readonly number[]): 'reflected' | 'sheared' | undefined;
+  /** Of a matrix: what keeps it from being a turn and a scale. Undefined where it holds no orientation. */
+  flaw?(text: readonly number[]): { readonly reflected: boolean; readonly shear: number } | undefined;
 }
 
 const DEGREE = Math.PI / 180;
-/** Cosine between columns from which a matrix is no rotation (RULES, file.mirror-matrix). */
-const SHEARED = 1e-3;
 
 /** The form of a body's numbers. */
 export function orientationForm(form: Form): OrientationForm {
@@ -111,11 +109,7 @@ const MATRIX: OrientationForm = {
     return toMat3(Array<number>(9).fill(0), key).map((part, i) => part * (scale[Math.floor(i / 3)] ?? 1));
   },
   storage: (decimals) => ({ component: 'text', decimals: Math.max(...decimals) }),
-  fault(text) {
-    const parts = split(text);
-    if (parts?.reflected === true) return 'reflected';
-    return parts && parts.shear > SHEARED ? 'sheared' : undefined;
-  },
+  flaw: split,
 };
 
 function split(text: readonly number[]): ReturnType<typeof splitMatrix> | undefined {

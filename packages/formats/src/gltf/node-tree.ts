@@ -102,7 +102,7 @@ function cutRings(container: Container, parents: number[], problems: Problems): 
   }
 }
 
-type RestPose = Pick<SceneNode, 'rotation' | 'translation' | 'scale'>;
+type RestPose = Pick<SceneNode, 'rotation' | 'translation' | 'scale' | 'matrix'>;
 
 function restPose(container: Container, node: Json, index: number, problems: Problems): RestPose {
   const matrix = numbersMember(node, 'matrix', 16);
@@ -121,8 +121,8 @@ function poseOfMatrix(
   problems: Problems,
 ): RestPose {
   try {
-    const { orientation, translation, scale } = splitMatrix(matrix);
-    return { rotation: orientation, translation, scale };
+    const { orientation, translation, scale, reflected, shear } = splitMatrix(matrix);
+    return { rotation: orientation, translation, scale, matrix: { reflected, shear } };
   } catch (error) {
     if (!(error instanceof SlewcurveError)) throw error;
     problems.push(
