@@ -2,6 +2,7 @@
 // that bear on it, and counts the mutants that no test notices. Part of `npm run long`; the result is test/data/mutants.json.
 //
 //   node .ci/mutants.mjs [--per-file 5] [--only quaternion/mean.ts] [--dry-run]
+//   node .ci/mutants.mjs --again   tries those that went unnoticed once more: after tests were added
 import { fork } from 'node:child_process';
 import {
   cpSync,
@@ -217,8 +218,30 @@ function lane(copy) {
   return { survives, stop };
 }
 
+/**
+ * @typedef {{ perFile: number, results: { file: string, possible: number, unnoticed: { line: number, from: string, to: string }[] }[] }} Result
+ */
+
+/** @returns {Result} */
+function earlierResult() {
+  return JSON.parse(readFileSync(RESULT, 'utf8'));
+}
+
+/**
+ * Whether a mutant went unnoticed, or may have: its file is not the one that was tried.
+ *
+ * @param {Result} earlier
+ * @param {{ name: string, possible: number, line: number, from: string, to: string }} mutant
+ */
+function wasUnnoticed(earlier, { name, possible, line, from, to }) {
+  const result = earlier.results.find(({ file }) => file === `${SOURCE}/${name}`);
+  if (result?.possible !== possible) return true;
+  return result.unnoticed.some((each) => each.line === line && each.from === from && each.to === to);
+}
+
 async function main() {
-  const perFile = Number(option('--per-file', '5'));
+  const earlier = process.argv.includes('--again') ? earlierResult() : undefined;
+  const perFile = earlier?.perFile ?? Number(option('--per-file', '5'));
   const only = option('--only', '');
   const files = FOLDERS.flatMap((folder) =>
     readdirSync(`${SOURCE}/${folder}`)
@@ -239,8 +262,9 @@ async function main() {
       survives: false,
     }));
   });
-  console.log(`${mutants.length} mutants of ${files.length} files`);
-  const [first] = mutants;
+  const asked = mutants.filter((mutant) => !earlier || wasUnnoticed(earlier, mutant));
+  console.log(`${asked.length} mutants of ${files.length} files`);
+  const [first] = asked;
   if (process.argv.includes('--dry-run') || first === undefined) return 0;
 
   const root = mkdtempSync(path.join(tmpdir(), 'mutants-'));
@@ -255,11 +279,11 @@ async function main() {
     let next = 0;
     await Promise.all(
       lanes.map(async ({ survives }) => {
-        for (let mutant = mutants[next++]; mutant; mutant = mutants[next++]) {
+        for (let mutant = asked[next++]; mutant; mutant = asked[next++]) {
           mutant.survives = await survives(mutant.order);
           const { name, line, from, to } = mutant;
           if (mutant.survives) console.log(`${name}:${line}: ${to} for ${from} goes unnoticed`);
-          if (next % 50 === 0) console.log(`${next} of ${mutants.length} tried`);
+          if (next % 50 === 0) console.log(`${next} of ${asked.length} tried`);
         }
       }),
     );
