@@ -29,6 +29,7 @@ import { pearls } from './rules/pace/pearls.js';
 import { reverse } from './rules/pace/reverse.js';
 import { tangentScale } from './rules/pace/tangent-scale.js';
 import { doubledEnd } from './rules/seam/doubled-end.js';
+import { tooMany } from './rules/keys/too-many.js';
 import { loopGap } from './rules/seam/loop-gap.js';
 import { loopKink } from './rules/seam/loop-kink.js';
 import { creep } from './rules/shake/creep.js';
@@ -96,4 +97,5 @@ export const RULES: readonly Rule[] = Object.freeze([
   accelLimit,
   jerkLimit,
   pictureLimit,
+  tooMany,
 ]);

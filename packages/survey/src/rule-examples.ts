@@ -134,6 +134,10 @@ export const RULE_EXAMPLES: Readonly<Record<string, readonly [fires: string, qui
       'A declared loop whose last two keys are the same while it turns.',
       'A loop that slows down to its end.',
     ],
+    'keys.too-many': [
+      'A steady turn in 61 keys, 30 % asked for in the house rules: 59 could go.',
+      'The same where nobody asked; keys that zigzag by 1°.',
+    ],
     'limit.speed': [
       'A machine limited to 30 deg/s that reaches 43 deg/s.',
       'A joint without a limit in the house rules.',

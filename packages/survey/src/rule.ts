@@ -4,7 +4,8 @@ import type { Level, Way } from './finding.js';
 import type { Role } from './roles.js';
 
 /** Families of rules: the part of an id before the full stop. */
-export type Family = 'file' | 'turn' | 'jump' | 'pace' | 'shake' | 'seam' | 'limit' | 'horizon' | 'space';
+export type Family =
+  'file' | 'turn' | 'jump' | 'pace' | 'shake' | 'seam' | 'limit' | 'horizon' | 'space' | 'keys';
 
 /** Named thresholds of one rule for one role, in the units that the rule's page states. */
 export type Limits = Readonly<Record<string, number>>;
