@@ -232,7 +232,11 @@ export class SlewApp extends LitElement {
 
   private openers(): TemplateResult {
     const picked = ({ target }: Event): void => {
-      if (target instanceof HTMLInputElement) void this.take(pickedFiles(target.files ?? []));
+      if (!(target instanceof HTMLInputElement)) return;
+      const chosen = pickedFiles(target.files ?? []);
+      // Else the same file, changed meanwhile, could not be chosen again.
+      target.value = '';
+      void this.take(chosen);
     };
     return html`<div class="openers on-screen">
       <button @click=${() => void this.pick()}>Open files</button>

@@ -45,6 +45,15 @@ export const pageStyles: CSSResult[] = [
       align-items: baseline;
       margin: 0.5rem 0;
     }
+    label.loop,
+    .loops p {
+      min-height: 44px;
+    }
+    .loops ul {
+      list-style: none;
+      margin: 0;
+      padding: 0 0 0 1rem;
+    }
     .says {
       color: var(--_soft);
       font-style: italic;

@@ -71,7 +71,7 @@ function noteItem(
           events.explain(note.rule);
         }}
         >${note.rule}</a
-      >, <span class="whole">${sayTime(note.time, 2)}</span>${places}${STATUS[note.status]}</span
+      >, <span class="whole">${sayTime(note.time, 2)}</span>${places}${note.accepted ? '' : STATUS[note.status]}</span
     >
     ${[effectWords(note), eventWords(note), acceptedWords(note)].map((words) =>
       words === undefined ? nothing : html`<span class="more">${words}</span>`,

@@ -35,7 +35,7 @@ export const PAGE_WORDS: readonly Word[] = [
     kind: 'page',
     name: 'Stamps and house rules',
     summary:
-      'A finding is accepted with a reason, and limits are set for a project, by the slewcurve command: --stamp, --baseline, --rules.',
+      'A finding is accepted with a reason on its note in the margin; limits are set for a project by a house-rules file that is dropped on the page. The slewcurve command does the same: --stamp, --baseline, --rules.',
     alsoCalled: [
       'suppress',
       'waive',

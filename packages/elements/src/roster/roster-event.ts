@@ -68,7 +68,7 @@ function eventItem(
 ): TemplateResult {
   const name = trackName(rows.find((row) => row.id === owner)?.track ?? '');
   return html`<li class=${level}>
-    <span>${says}. ${level}</span>
+    <span>${says} (${level}).</span>
     <button class="plain on-screen" @click=${() => tell.choose(owner)}>Open ${name}</button>
     <button class="plain on-screen" aria-expanded=${open ? 'true' : 'false'} @click=${() => tell.toggle(id)}>
       ${open ? 'Hide' : 'Show'} its ${sayCount(rows.length, 'track')}
