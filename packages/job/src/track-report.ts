@@ -16,6 +16,7 @@ const DEGREES = 180 / Math.PI;
 export function trackReport(track: RotationTrack, playback: PlaybackId): TrackReport {
   const curve = playAs(track, playback);
   const measured = measure(curve);
+  const angles = segmentAngles(track);
   return {
     clip: track.clip,
     track: track.id,
@@ -32,9 +33,9 @@ export function trackReport(track: RotationTrack, playback: PlaybackId): TrackRe
     peakAcceleration: degrees(measured.peakAcceleration),
     rmsAcceleration: degrees(measured.rmsAcceleration),
     accelerationIs: measured.accelerationIs,
-    noiseFloor: degrees(largestRateFloor(track)),
+    noiseFloor: degrees(largestRateFloor(track, angles)),
     signChanges: signChanges(track).length,
-    widestSegment: degrees(largest(track, (key) => segmentAngle(track, key))),
+    widestSegment: degrees(largest(track, (key) => angles[key] ?? 0)),
   };
 }
 
@@ -42,9 +43,16 @@ function degrees(radians: number): number {
   return significant(radians * DEGREES);
 }
 
+/** Shortest angle of every segment, radians. */
+function segmentAngles(track: RotationTrack): Float64Array {
+  const angles = new Float64Array(Math.max(0, track.times.length - 1));
+  for (let key = 0; key < angles.length; key++) angles[key] = segmentAngle(track, key);
+  return angles;
+}
+
 /** Largest rate floor of any segment of a track, rad/s: nothing under it is claimed anywhere on the track. */
-export function largestRateFloor(track: RotationTrack): number {
-  return largest(track, (key) => rateFloor(track, key));
+export function largestRateFloor(track: RotationTrack, angles: Float64Array = segmentAngles(track)): number {
+  return largest(track, (key) => rateFloor(track, key, angles[key]));
 }
 
 /** Largest finite value over the segments of a track; 0 where there are none. */

@@ -48,7 +48,10 @@ function measured({ track }: TrackContext): Segments {
     }
     // b·a⁻¹ has the turn's axis in parent axes.
     multiply(turn, turn, conjugate(before, before));
-    const [x = 0, y = 0, z = 0, w = 0] = turn;
+    const x = turn[0] ?? 0;
+    const y = turn[1] ?? 0;
+    const z = turn[2] ?? 0;
+    const w = turn[3] ?? 0;
     const sine = Math.sqrt(x * x + y * y + z * z);
     const angle = 2 * Math.atan2(sine, Math.abs(w)) * DEGREES;
     const gap = (times[k + 1] ?? 0) - (times[k] ?? 0);

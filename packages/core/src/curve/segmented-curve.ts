@@ -86,7 +86,8 @@ export function segmentedCurve(parts: SegmentedCurveParts): Curve {
     return rotateVector(out, orientation(orientationNow, t), vectorNow);
   }
 
-  const over = motion.accelerationOver?.bind(motion);
+  // What turns at a constant rate says so once for all.
+  const over = motion.acceleration === still ? stillOver : motion.accelerationOver?.bind(motion);
 
   return {
     start: last < 0 ? 0 : times[0],
@@ -177,6 +178,12 @@ function identity(out: NumberStore): void {
   out[1] = 0;
   out[2] = 0;
   out[3] = 1;
+}
+
+const STILL = Object.freeze({ u: 0, peak: 0, meanSquare: 0 });
+
+function stillOver(): typeof STILL {
+  return STILL;
 }
 
 /** Writes the rate, or the acceleration, of a thing that does not turn. */

@@ -107,9 +107,8 @@ function mayReach(d: Float64Array, key: number, gains: readonly [number, number]
   let lone = 0;
   let shelf = 0;
   for (let i = 4 * key; i < 4 * key + 4; i++) {
-    const [a, b, c, e] = [d[i - 8], d[i - 4], d[i], d[i + 4]];
-    lone += (a - 4 * b + 6 * c - 4 * e + d[i + 8]) ** 2;
-    shelf += (a - 3 * b + 3 * c - e) ** 2;
+    lone += (d[i - 8] - 4 * d[i - 4] + 6 * d[i] - 4 * d[i + 4] + d[i + 8]) ** 2;
+    shelf += (d[i - 8] - 3 * d[i - 4] + 3 * d[i] - d[i + 4]) ** 2;
   }
   const floor = (2 * POSITIONS + 1) * noise;
   return (

@@ -50,7 +50,8 @@ export function keyGrain(
 
 /** Over some keys on each side, so that the noise itself is not taken for motion. */
 function isSlowAt(times: Float64Array, q: Float64Array, key: number): boolean {
-  const [from, to] = [Math.max(0, key - AROUND), Math.min(times.length - 1, key + AROUND)];
+  const from = Math.max(0, key - AROUND);
+  const to = Math.min(times.length - 1, key + AROUND);
   let square = 0;
   for (let i = 0; i < 4; i++) square += (q[4 * to + i] - q[4 * from + i]) ** 2;
   return 2 * Math.sqrt(square) < SLOW * (times[to] - times[from]);

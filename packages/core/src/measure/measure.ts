@@ -35,96 +35,98 @@ export interface Measures {
  */
 export function measure(curve: Curve): Measures {
   const { rate: peakRate, time: peakAt } = curve.peak(curve.start, curve.end);
-  const segments = segmentsOf(curve);
-  const jumps = curve.continuity >= 1 ? [] : rateJumps(curve, segments);
-  const worstJump = jumps.reduce(larger('size'), { size: 0, time: curve.start, step: 0, share: 0 });
-  const worstStep = jumps.reduce(larger('step'), { size: 0, time: curve.start, step: 0, share: 0 });
-  const inside = insideAccelerations(curve, segments);
-  const stepped = worstStep.step > inside.peak;
-  const squares = jumps.reduce((sum, { step, share }) => sum + step * step * share, inside.squares);
+  const held = heldSegments(curve);
+  const inside = insideAccelerations(curve, held);
+  const jumps = rateJumps(curve, held);
+  const stepped = jumps.step > inside.peak;
   const duration = curve.end - curve.start;
   return {
     peakRate,
     peakAt,
-    worstRateJump: worstJump.size,
-    worstRateJumpAt: worstJump.time,
-    peakAcceleration: stepped ? worstStep.step : inside.peak,
-    peakAccelerationAt: stepped ? worstStep.time : inside.at,
-    rmsAcceleration: duration > 0 ? Math.sqrt(squares / duration) : 0,
+    worstRateJump: jumps.size,
+    worstRateJumpAt: jumps.sizeAt,
+    peakAcceleration: stepped ? jumps.step : inside.peak,
+    peakAccelerationAt: stepped ? jumps.stepAt : inside.at,
+    rmsAcceleration: duration > 0 ? Math.sqrt((inside.squares + jumps.squares) / duration) : 0,
     accelerationIs: curve.continuity >= 1 ? 'exact' : 'step',
-    medianRate: median(segments.map(({ from, to }) => curve.length(from, to) / (to - from))),
+    medianRate: median(meanSpeeds(curve)),
     travelled: curve.length(curve.start, curve.end),
   };
 }
 
-interface Segment {
-  readonly from: number;
-  readonly to: number;
-  /** The orientation is held, then jumps. */
-  readonly held: boolean;
-}
-
-interface RateJump {
-  readonly size: number;
-  readonly time: number;
-  readonly step: number;
-  /** Seconds over which the step is spread. */
-  readonly share: number;
-}
-
-const larger =
-  (by: 'size' | 'step') =>
-  (a: RateJump, b: RateJump): RateJump =>
-    b[by] > a[by] ? b : a;
-
-function segmentsOf(curve: Curve): Segment[] {
+/** 1 for each segment between knots whose orientation is held and then jumps. */
+function heldSegments(curve: Curve): Uint8Array {
   const { knots } = curve;
+  const held = new Uint8Array(Math.max(0, knots.length - 1));
+  if (curve.continuity >= 0) return held;
   const before = new Float64Array(4);
   const after = new Float64Array(4);
-  const segments: Segment[] = [];
-  for (let i = 0; i + 1 < knots.length; i++) {
-    const to = knots[i + 1];
-    let held = false;
-    if (curve.continuity < 0) {
-      curve.orientation(before, lastBefore(to));
-      curve.orientation(after, to);
-      // A curve moves far less than 1e-9 rad through one spacing of float64 times.
-      held = angleBetween(before, after) > 1e-9;
-    }
-    segments.push({ from: knots[i], to, held });
+  for (let i = 0; i < held.length; i++) {
+    curve.orientation(before, lastBefore(knots[i + 1]));
+    curve.orientation(after, knots[i + 1]);
+    // A curve moves far less than 1e-9 rad through one spacing of float64 times.
+    held[i] = angleBetween(before, after) > 1e-9 ? 1 : 0;
   }
-  return segments;
+  return held;
+}
+
+function meanSpeeds(curve: Curve): Float64Array {
+  const { knots } = curve;
+  const speeds = new Float64Array(Math.max(0, knots.length - 1));
+  for (let i = 0; i < speeds.length; i++)
+    speeds[i] = curve.length(knots[i], knots[i + 1]) / (knots[i + 1] - knots[i]);
+  return speeds;
+}
+
+/** Steps of the rate at inner knots: the greatest, the greatest over the time that it is spread over, and the integral of that one's square. */
+interface RateJumps {
+  size: number;
+  sizeAt: number;
+  step: number;
+  stepAt: number;
+  squares: number;
 }
 
 /** What the rate jumps by at every inner knot between two segments that are played. */
-function rateJumps(curve: Curve, segments: readonly Segment[]): RateJump[] {
+function rateJumps(curve: Curve, held: Uint8Array): RateJumps {
+  const { knots, start } = curve;
+  const jumps: RateJumps = { size: 0, sizeAt: start, step: 0, stepAt: start, squares: 0 };
+  if (curve.continuity >= 1) return jumps;
   const before = new Float64Array(3);
   const after = new Float64Array(3);
-  const jumps: RateJump[] = [];
-  for (let i = 1; i < segments.length; i++) {
-    if (segments[i - 1].held || segments[i].held) continue;
-    const time = segments[i].from;
+  for (let i = 1; i < held.length; i++) {
+    if (held[i - 1] || held[i]) continue;
+    const time = knots[i];
     // Own axes are the same on both sides: the orientation is continuous here.
     curve.rate(before, lastBefore(time), 'own');
     curve.rate(after, time, 'own');
     const size = length(after[0] - before[0], after[1] - before[1], after[2] - before[2]);
-    const share = (segments[i].to - segments[i - 1].from) / 2;
-    jumps.push({ size, time, step: size / share, share });
+    const share = (knots[i + 1] - knots[i - 1]) / 2;
+    const step = size / share;
+    if (size > jumps.size) {
+      jumps.size = size;
+      jumps.sizeAt = time;
+    }
+    if (step > jumps.step) {
+      jumps.step = step;
+      jumps.stepAt = time;
+    }
+    jumps.squares += step * step * share;
   }
   return jumps;
 }
 
 /** Greatest acceleration inside the segments, and the integral of its square. */
-function insideAccelerations(
-  curve: Curve,
-  segments: readonly Segment[],
-): { peak: number; at: number; squares: number } {
+function insideAccelerations(curve: Curve, held: Uint8Array): { peak: number; at: number; squares: number } {
+  const { knots } = curve;
   const now = new Float64Array(3);
   let peak = 0;
   let at = curve.start;
   let squares = 0;
-  for (const [i, { from, to, held }] of segments.entries()) {
-    if (held) continue;
+  for (let i = 0; i < held.length; i++) {
+    if (held[i]) continue;
+    const from = knots[i];
+    const to = knots[i + 1];
     if (curve.segmentAcceleration !== undefined) {
       const own = curve.segmentAcceleration(i);
       if (own.peak > peak) ({ peak, time: at } = own);
@@ -137,7 +139,7 @@ function insideAccelerations(
       curve.acceleration(now, Math.min(last, from + u * (to - from)), 'own');
       return length(now[0], now[1], now[2]);
     };
-    // Constant rate (great arcs) says so exactly, at every place.
+    // Constant rate says so exactly, at every place.
     if (size(0) === 0 && size(0.3) === 0 && size(0.8) === 0) continue;
     const narrow = narrowPlace(curve, from, to);
     const u = greatest(size, 0, 1, narrow);
@@ -158,13 +160,22 @@ function narrowPlace(curve: Curve, from: number, to: number): NarrowPlace[] {
 }
 
 const spacing = new Float64Array(1);
-const bits = new BigInt64Array(spacing.buffer);
+const halves = new Uint32Array(spacing.buffer);
+/** Which half holds sign and exponent: machines differ. */
+const HIGH = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1 ? 1 : 0;
 
 /** The last float64 before `time`. */
 function lastBefore(time: number): number {
   if (time === 0) return -Number.MIN_VALUE;
   spacing[0] = time;
-  bits[0] += time > 0 ? -1n : 1n;
+  // Both halves are one whole number, which grows with the magnitude.
+  if (time > 0) {
+    if (halves[1 - HIGH] === 0) halves[HIGH]--;
+    halves[1 - HIGH]--;
+  } else {
+    halves[1 - HIGH]++;
+    if (halves[1 - HIGH] === 0) halves[HIGH]++;
+  }
   return spacing[0];
 }
 
@@ -172,10 +183,11 @@ function length(x: number, y: number, z: number): number {
   return Math.sqrt(x * x + y * y + z * z);
 }
 
-function median(numbers: readonly number[]): number {
+/** Sorts the numbers. */
+function median(numbers: Float64Array): number {
   if (numbers.length === 0) return 0;
   // oxlint-disable-next-line unicorn/no-array-sort -- our own list: sorted where it is, no copy
-  const sorted = Float64Array.from(numbers).sort();
+  const sorted = numbers.sort();
   const middle = sorted.length >> 1;
   return sorted.length % 2 === 1 ? sorted[middle] : (sorted[middle - 1] + sorted[middle]) / 2;
 }

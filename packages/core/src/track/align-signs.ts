@@ -27,14 +27,13 @@ export interface AlignedTrack {
  * no signs and come back as they are.
  */
 export function alignSigns(track: RotationTrack, options: AlignSignsOptions = {}): AlignedTrack {
-  const dots = successiveDots(track);
   const size = VALUES_PER_KEY[track.interpolation];
   const negated: number[] = [];
   let side = 1;
-  for (const { key, dot } of dots) {
+  eachDot(track, (key, dot) => {
     if (dot < 0) side = -side;
     if (side < 0) negated.push(key);
-  }
+  });
   const seamOpposed = options.loop === true && seamDot(track) * side < 0;
   if (negated.length === 0) return { track, negated, seamOpposed };
   const values = Float64Array.from(track.values);
@@ -44,22 +43,22 @@ export function alignSigns(track: RotationTrack, options: AlignSignsOptions = {}
 
 /** Keys, ascending, that lie on the other side of the key before them (dot < 0 as stored): the later key's number. */
 export function signChanges(track: RotationTrack): number[] {
-  return successiveDots(track)
-    .filter(({ dot }) => dot < 0)
-    .map(({ key }) => key);
+  const changes: number[] = [];
+  eachDot(track, (key, dot) => {
+    if (dot < 0) changes.push(key);
+  });
+  return changes;
 }
 
-/** Dot of each usable key with the usable key before it. */
-function successiveDots(track: RotationTrack): { key: number; dot: number }[] {
-  if (track.interpolation === 'EULER') return [];
-  const dots: { key: number; dot: number }[] = [];
+/** Tells the dot of each usable key with the usable key before it. */
+function eachDot(track: RotationTrack, tell: (key: number, dot: number) => void): void {
+  if (track.interpolation === 'EULER') return;
   let before = -1;
   for (let key = 0; key < track.times.length; key++) {
     if (!isUsable(track, key)) continue;
-    if (before >= 0) dots.push({ key, dot: keyDot(track, before, key) });
+    if (before >= 0) tell(key, keyDot(track, before, key));
     before = key;
   }
-  return dots;
 }
 
 function seamDot(track: RotationTrack): number {

@@ -34,12 +34,12 @@ const INTEGER_STEP = Object.freeze({ int16: 1 / 32767, int8: 1 / 127, uint16: 1 
 
 /** Largest error of a stored time, seconds: half a step at `time`. */
 function timeFloor(storage: Storage, time: number): number {
-  const magnitude = Math.max(Math.abs(time), Number.MIN_VALUE);
+  const magnitude = Math.abs(time);
   switch (storage.timeComponent) {
     case 'float64':
-      return 2 ** (Math.floor(Math.log2(magnitude)) - 53);
+      return binade(magnitude) * 2 ** -53;
     case 'float32':
-      return 2 ** (Math.floor(Math.log2(magnitude)) - 24);
+      return binade(magnitude) * 2 ** -24;
     case 'text':
       return 0.5 * 10 ** -(storage.timeDecimals ?? 15);
     default:
@@ -47,16 +47,35 @@ function timeFloor(storage: Storage, time: number): number {
   }
 }
 
+const number = new Float64Array(1);
+const halves = new Uint32Array(number.buffer);
+/** Which half holds the exponent: machines differ. */
+const HIGH = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1 ? 1 : 0;
+
+/** The greatest power of two that is not above `magnitude`; 0 below float64's normal numbers. */
+function binade(magnitude: number): number {
+  number[0] = magnitude;
+  halves[HIGH] &= 0x7ff00000;
+  halves[1 - HIGH] = 0;
+  return number[0];
+}
+
 /**
  * Largest error of the mean angular rate from key number `key` to the next by rounding of orientations and times, rad/s:
  * 2f/Δt + s·(δ₀ + δ₁)/Δt (f the angle floor, s the segment's speed, δ half a step of the stored time, which either end may be off
  * by). Infinite where the next key is not later.
+ *
+ * @param angle the segment's, radians, where it is known already
  */
-export function rateFloor(track: RotationTrack, key: number): number {
+export function rateFloor(
+  track: RotationTrack,
+  key: number,
+  angle: number = segmentAngle(track, key),
+): number {
   const duration = track.times[key + 1] - track.times[key];
   if (!(duration > 0)) return Infinity;
   const floor = 2 * angleFloor(track.storage, track.interpolation);
-  const speed = segmentAngle(track, key) / duration;
+  const speed = angle / duration;
   const times = timeFloor(track.storage, track.times[key]) + timeFloor(track.storage, track.times[key + 1]);
   return (floor + speed * times) / duration;
 }

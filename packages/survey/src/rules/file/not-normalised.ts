@@ -73,7 +73,10 @@ export const notNormalised: Rule = Object.freeze({
 /** Length of a key's quaternion; NaN where a number of it is not finite. */
 function lengthOf({ interpolation, values }: RotationTrack, key: number): number {
   const at = interpolation === 'CUBICSPLINE' ? key * 12 + 4 : key * 4;
-  const [x, y, z, w] = [values[at] ?? 0, values[at + 1] ?? 0, values[at + 2] ?? 0, values[at + 3] ?? 0];
+  const x = values[at] ?? 0;
+  const y = values[at + 1] ?? 0;
+  const z = values[at + 2] ?? 0;
+  const w = values[at + 3] ?? 0;
   const finite = Number.isFinite(x) && Number.isFinite(y) && Number.isFinite(z) && Number.isFinite(w);
   return finite ? Math.hypot(x, y, z, w) : Number.NaN;
 }

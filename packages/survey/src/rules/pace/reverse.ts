@@ -89,9 +89,11 @@ function piecesOf(context: TrackContext): Pieces {
 
 function ofKeys(context: TrackContext): Pieces {
   const { times } = context.track;
-  const turns = segmentsOf(context).rates.map(
-    (rate, i) => rate * ((times[Math.floor(i / 3) + 1] ?? 0) - (times[Math.floor(i / 3)] ?? 0)),
-  );
+  const turns = segmentsOf(context).rates.slice();
+  for (let k = 0, i = 0; k + 1 < times.length; k++) {
+    const gap = (times[k + 1] ?? 0) - (times[k] ?? 0);
+    for (let axis = 0; axis < 3; axis++, i++) turns[i] = (turns[i] ?? 0) * gap;
+  }
   return { times, turns };
 }
 

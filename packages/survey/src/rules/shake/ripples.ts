@@ -29,7 +29,8 @@ export function ripplesOf(
 ): Ripple[] {
   const { times } = context.track;
   const gap = medianGap(context.track);
-  const rates = segmentsOf(context).rates.map((rate) => (Number.isNaN(rate) ? 0 : rate));
+  const rates = segmentsOf(context).rates.slice();
+  for (let i = 0; i < rates.length; i++) if (Number.isNaN(rates[i])) rates[i] = 0;
   const rate = 1 / gap;
   const window = Math.round(WINDOW * rate);
   // Half steps go up, whichever way a float32 clock leans.
@@ -94,7 +95,8 @@ function gateOf(
   for (let k = 0; k < count; k++) {
     let square = 0;
     let change = 0;
-    for (const [axis, sum] of sums.entries()) {
+    for (let axis = 0; axis < 3; axis++) {
+      const sum = sums[axis]!;
       const value = rates[3 * k + axis] ?? 0;
       sum[k + 1] = (sum[k] ?? 0) + value;
       square += value * value;

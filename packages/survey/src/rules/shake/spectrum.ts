@@ -34,8 +34,10 @@ export function spectrum(count: number, rate: number, least: number, worth: numb
       }
       transform(real, imaginary);
       for (let bin = 1; bin < powers.length; bin++) {
-        const [re = 0, im = 0] = [real[bin], imaginary[bin]];
-        const [reBack = 0, imBack = 0] = [real[count - bin], imaginary[count - bin]];
+        const re = real[bin]!;
+        const im = imaginary[bin]!;
+        const reBack = real[count - bin]!;
+        const imBack = imaginary[count - bin]!;
         powers[bin] = (powers[bin] ?? 0) + (re * re + im * im + reBack * reBack + imBack * imBack) / 2;
       }
     }
@@ -97,14 +99,17 @@ function finest(centred: Float64Array, count: number, rate: number, hertz: numbe
 function linePower(centred: Float64Array, count: number, turn: number): number {
   const [cosine, sine] = [Math.cos(turn), Math.sin(turn)];
   const sums = new Float64Array(6);
-  let [c, s] = [1, 0];
+  let c = 1;
+  let s = 0;
   for (let n = 0; n < count; n++) {
     for (let axis = 0; axis < 3; axis++) {
       const value = centred[3 * n + axis] ?? 0;
       sums[axis] = (sums[axis] ?? 0) + c * value;
       sums[3 + axis] = (sums[3 + axis] ?? 0) + s * value;
     }
-    [c, s] = [c * cosine - s * sine, s * cosine + c * sine];
+    const turned = c * cosine - s * sine;
+    s = s * cosine + c * sine;
+    c = turned;
   }
   return sums.reduce((all, sum) => all + sum * sum, 0);
 }
