@@ -4,6 +4,7 @@ import type { Page } from 'playwright';
 import { expect, test } from 'vitest';
 import { generatedTake, THREE_MINUTES } from '../support/generated-take.js';
 import { openApp } from '../support/open-app.js';
+import { TASKS, longestTasks } from '../support/page-tasks.js';
 import { commandFolder } from '../support/run-command.js';
 
 // 80 joints, 3 minutes, 120 Hz: 1,728,000 keys. Goals from the project's own design: first trace 3 s, roster 5 s, no frame over 50 ms.
@@ -37,7 +38,7 @@ test('a take of 1.7 million keys is drawn while it loads, and its one-frame pop 
   const page = await openApp({ viewport: { width: 1720, height: 1400 } });
   await page.evaluate(watchLoading);
   const browser = page.context().browser();
-  await browser?.startTracing(page, { categories: ['toplevel'] });
+  await browser?.startTracing(page, { categories: [...TASKS] });
   await page.locator('input.files').setInputFiles(place.path('take.glb'));
   // Not by a locator, which would search the whole page at every frame.
   await page.evaluate(() => window.surveyed);
@@ -104,28 +105,6 @@ function watchLoading(): void {
     },
     { capture: true, once: true },
   );
-}
-
-interface TraceEvent {
-  readonly name: string;
-  readonly pid: number;
-  readonly tid: number;
-  readonly tdur?: number;
-  readonly args?: { readonly name?: string };
-}
-
-/** Milliseconds of processor time that the page's longest tasks took: unlike a frame, they do not wait for others. */
-function longestTasks(trace: string): number[] {
-  // oxlint-disable-next-line typescript/no-unsafe-type-assertion -- the browser's own format
-  const { traceEvents } = JSON.parse(trace) as { traceEvents: TraceEvent[] };
-  const pages = traceEvents
-    .filter(({ name, args }) => name === 'thread_name' && args?.name === 'CrRendererMain')
-    .map(({ pid, tid }) => `${pid} ${tid}`);
-  const tasks = traceEvents.filter(
-    ({ name, pid, tid }) => name === 'ThreadControllerImpl::RunTask' && pages.includes(`${pid} ${tid}`),
-  );
-  const longest = tasks.map(({ tdur = 0 }) => tdur / 1000).toSorted((a, b) => b - a);
-  return longest.slice(0, 5);
 }
 
 /** Ink (opacity summed over the row's height) at a share of a row's width, and the most ink within 40 px of it on both sides. */

@@ -19,6 +19,7 @@ import { closeUpSpan } from './chart/close-up-span.js';
 import { foldRows, rowAt, type FoldRow } from './chart/fold.js';
 import { marginOf, packNotes } from './chart/margin.js';
 import { readTimesAs, sayAngle, sayTime } from './chart/quantity.js';
+import { RowPictures } from './chart/row-pictures.js';
 import { RowsInSight } from './chart/rows-in-sight.js';
 import { linearScale, speedScale, type ScaleKind, type SpeedScale } from './chart/scale.js';
 import { SheetPointer } from './chart/sheet-pointer.js';
@@ -104,6 +105,7 @@ export class SlewChart extends LitElement implements CursorHost {
   private watched: Element | undefined;
   private readonly cursor = new TraceCursor(this);
   private readonly hands = new ChartHands(this);
+  private readonly pictures = new RowPictures(this);
   private readonly inSight = new RowsInSight(this, () => this.renderRoot.querySelectorAll('.row'));
   private readonly pointer = new SheetPointer({
     hover: (time) => this.cursor.hoverAt(time),
@@ -175,6 +177,7 @@ export class SlewChart extends LitElement implements CursorHost {
       if (before && (before.track !== data.track || before.clip !== data.clip || before.file !== data.file)) {
         this.opened = undefined;
         this.unfolded = new Set();
+        this.pictures.forget();
       }
       this.time = Math.min(data.motion.end, Math.max(data.motion.start, this.time));
     }
@@ -202,6 +205,7 @@ export class SlewChart extends LitElement implements CursorHost {
   }
 
   private readonly showAll = (): void => {
+    this.pictures.forget();
     this.inSight.showAll(this.rows.length);
     this.performUpdate();
   };
@@ -299,11 +303,8 @@ export class SlewChart extends LitElement implements CursorHost {
         @pointercancel=${() => this.pointer.cancel()}
         @dblclick=${() => this.cursor.act({ kind: 'open-close-up' })}
       >
-        ${guard(
-          [data, this.speedScale, this.width, this.chosen, row.from, row.to, this.inSight.has(row.index)],
-          () => this.picture(data, row),
-        )}
-        ${this.spanMark(row)} ${this.hands.picture(on, row.index === rowAt(rows, this.time))}
+        ${this.picture(data, row)} ${this.spanMark(row)}
+        ${this.hands.picture(on, row.index === rowAt(rows, this.time))}
         ${row.index === here ? html`<div class="cursor" .style=${`left:${this.left(row, now)}px`}></div>` : nothing}
         ${this.hands.grips(on, row.index === rowAt(rows, this.time))}
       </div>
@@ -327,9 +328,15 @@ export class SlewChart extends LitElement implements CursorHost {
     </li>`;
   }
 
-  private picture(data: ChartData, row: FoldRow): TemplateResult {
+  private picture(data: ChartData, row: FoldRow): unknown {
     if (this.width === 0 || !this.inSight.has(row.index))
       return html`<svg class="paper" width="1" height=${rowHeight(data, ROW)} aria-hidden="true"></svg>`;
+    const of = [data, this.speedScale, this.width, this.chosen, row.from, row.to];
+    const drawn = this.pictures.drawn(row.index, of, () => this.drawRow(data, row));
+    return guard([drawn], () => drawn.picture);
+  }
+
+  private drawRow(data: ChartData, row: FoldRow): TemplateResult {
     return rowPicture({
       data,
       row,
@@ -428,6 +435,7 @@ export class SlewChart extends LitElement implements CursorHost {
   private chooseFold(fold: number): void {
     this.fold = fold;
     this.inSight.forget();
+    this.pictures.forget();
     this.send('fold-chosen', { fold });
   }
 

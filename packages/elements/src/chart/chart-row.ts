@@ -76,9 +76,20 @@ export function rowPicture(scene: RowScene): TemplateResult {
   </svg>`;
 }
 
-function columnsOf(scene: RowScene, motion: Motion, count: number): SpeedColumns {
-  return withinMotion(motion.columns(scene.row.from, scene.row.to, count), scene.row, motion);
+function columnsOf({ row }: RowScene, motion: Motion, count: number): SpeedColumns {
+  const known = columnsKnown.get(motion) ?? new Map<string, SpeedColumns>();
+  columnsKnown.set(motion, known);
+  if (known.size > MOST_KNOWN) known.clear();
+  const name = `${row.from} ${row.to} ${count}`;
+  const columns = known.get(name) ?? withinMotion(motion.columns(row.from, row.to, count), row, motion);
+  known.set(name, columns);
+  return columns;
 }
+
+// A motion stays as it is while an edit beside it is tried again and again.
+const columnsKnown = new WeakMap<Motion, Map<string, SpeedColumns>>();
+/** Rows of one motion that are kept. */
+const MOST_KNOWN = 400;
 
 function traceLine(scene: RowScene, columns: SpeedColumns, kind: string): TemplateResult {
   const place: TracePlace = {

@@ -25,6 +25,8 @@ export class HandAtWork implements ReactiveController {
   /** While a pointer holds it. */
   held = false;
   private grabbed: { readonly hand: Hand; readonly from: Place } | undefined;
+  /** What `sketch` is of. */
+  private drawn: { readonly motion: Motion; readonly law: HandLaw } | undefined;
   private outline: { readonly motion: Motion; readonly span: string; readonly curve: Curve } | undefined;
   private readonly host: HandHost;
 
@@ -128,6 +130,8 @@ export class HandAtWork implements ReactiveController {
   private draw(law: HandLaw): void {
     const ground = this.host.ground();
     if (!ground) return;
+    const { motion } = ground;
+    if (this.drawn?.law === law && this.drawn.motion === motion && this.sketch) return;
     const span = law.span.join(' ');
     if (this.outline?.motion !== ground.motion || this.outline.span !== span)
       this.outline = {
@@ -136,7 +140,8 @@ export class HandAtWork implements ReactiveController {
         curve: speedOutline(ground.motion, ground.keys, law.span),
       };
     try {
-      this.sketch = sketchPace(ground.motion, this.outline.curve, law);
+      this.sketch = sketchPace(motion, this.outline.curve, law);
+      this.drawn = { motion, law };
     } catch (error) {
       if (!(error instanceof SlewcurveError)) throw error;
       this.problem = error.message;
