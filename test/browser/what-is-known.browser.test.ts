@@ -51,7 +51,6 @@ test('one instant on five tracks is one event, and a finding of it is accepted a
   expect(await words.textContent()).toContain(
     'one of 5 tracks at 0.50 s; owner joint-0. Accepted: the hit is',
   );
-  await pictures(page, 'accepted');
   await expectCommandsStamps(place, page);
 
   await page.getByRole('button', { name: 'Docket: report' }).click();

@@ -10,6 +10,7 @@ import {
   stampsJson,
   textReport,
   withStamps,
+  withoutStamps,
   type FileReport,
   type Stamp,
 } from '@slewcurve/job';
@@ -146,6 +147,29 @@ describe('a file of stamps', () => {
       expect.objectContaining({ code, message: expect.stringContaining(words) }),
     );
     expect(() => parseStamps(bad, 'walk.glb.stamps.json')).toThrow(/^walk\.glb\.stamps\.json: /);
+  });
+});
+
+describe('what is taken back', () => {
+  const report = fileReportWith([findingWith([A, B], { count: 5 })]);
+  const whole = stampsFor(report, 'jump.lone-key', WORDS);
+
+  test('of a finding is all that was accepted of it', () => {
+    expect(withoutStamps(whole, report.findings, 'f'.repeat(16))).toEqual([]);
+  });
+
+  test('of one place opens that place and leaves the other listed one accepted', () => {
+    const left = withoutStamps(whole, report.findings, A);
+    expect(left.map(({ fingerprint }) => fingerprint)).toEqual([B]);
+    const [finding] = withStamps(report, left).findings;
+    expect([finding.muted, finding.occurrences.map(({ stamp }) => stamp !== undefined)]).toEqual([
+      undefined,
+      [false, true],
+    ]);
+  });
+
+  test('goes by no other name', () => {
+    expect(withoutStamps(whole, report.findings, D)).toEqual(whole);
   });
 });
 

@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import type { Clip } from '@slewcurve/core';
-import { gatherEvents, surveyClip } from '@slewcurve/survey';
+import { eventAt, gatherEvents, surveyClip } from '@slewcurve/survey';
 import { grid, keyed, turned } from '../support/smooth-track.js';
 
 const smooth = keyed({ spin: [0, 20, 0], swing: [0, 0, 0], hertz: 0.4, phase: 1 }, grid(90), 'LINEAR');
@@ -24,6 +24,19 @@ const gathered = (popped: Readonly<Record<string, readonly number[]>>) =>
   gatherEvents(surveyClip(clipOf(popped), []), RATES);
 
 describe('events', () => {
+  test('a place knows its event by clip, family, track and instant', () => {
+    const { events } = gathered({ Root: [30], 'Root/Spine': [30], 'Root/Arm': [60] });
+    const place = { rule: 'jump.lone-key', clip: 'Wave', track: 'Root/Spine' };
+    expect(eventAt(events, place, 1, 30)?.owner).toBe('Root');
+    // A frame later is the same instant, two are not; before the first place there is nothing.
+    expect(eventAt(events, place, 1 + 1 / 30, 30)).toBe(events[0]);
+    expect(eventAt(events, place, 1 + 2 / 30, 30)).toBeUndefined();
+    expect(eventAt(events, place, 1 - 1 / 30, 30)).toBeUndefined();
+    expect(eventAt(events, { ...place, track: 'Root/Arm' }, 1, 30)).toBeUndefined();
+    expect(eventAt(events, { ...place, rule: 'turn.half' }, 1, 30)).toBeUndefined();
+    expect(eventAt(events, { ...place, clip: 'Walk' }, 1, 30)).toBeUndefined();
+  });
+
   test('80 joints that pop at once are one event, and its owner is the one nearest to the root', () => {
     const joints = Object.fromEntries(
       Array.from({ length: 80 }, (_, i) => [`Root/${'Spine/'.repeat(i)}Joint`, [30]]),

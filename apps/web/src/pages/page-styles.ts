@@ -49,6 +49,11 @@ export const pageStyles: CSSResult[] = [
     .loops p {
       min-height: 44px;
     }
+    .loops summary {
+      line-height: 1.4;
+      padding: 0.65rem 0;
+      box-sizing: border-box;
+    }
     .loops ul {
       list-style: none;
       margin: 0;
