@@ -60,9 +60,13 @@ describe('house rules', () => {
       '/limits/prop/jump.shelf',
     ],
     [{ limits: { prop: { 'jump.shelf': '2' } } }, 'house-rules.bad-shape', '/limits/prop/jump.shelf'],
+    [{ limits: { prop: { 'limit.accel': -1 } } }, 'house-rules.bad-shape', '/limits/prop/limit.accel'],
     [{ playback: ['as-writen'] }, 'house-rules.unknown-playback', '/playback/0'],
     [{ declared: { cuts: [{ time: null }] } }, 'house-rules.bad-shape', '/declared/cuts/0/time'],
     [{ declared: { holds: [{ span: [2, 1] }] } }, 'house-rules.bad-shape', '/declared/holds/0/span'],
+    [{ declared: { joins: [{ from: 'Walk' }] } }, 'house-rules.bad-shape', '/declared/joins/0/to'],
+    [{ declared: { blends: [{ clips: ['Walk'] }] } }, 'house-rules.bad-shape', '/declared/blends/0/clips'],
+    [{ declared: { blends: [{ clip: [] }] } }, 'house-rules.unknown-key', '/declared/blends/0/clip'],
     [{ loops: 'Walk' }, 'house-rules.bad-shape', '/loops'],
   ])('%j is refused with %s at %j', (json, code, pointer) => {
     let thrown: unknown;
@@ -94,6 +98,8 @@ describe('house rules', () => {
         whips: [],
         spins: [{ clip: '*', track: 'Wheel', rpm: 1200 }],
         marks: [{ clip: 'Shots', time: 4, name: 'door' }],
+        joins: [{ from: 'Walk', to: 'Run', track: '*' }],
+        blends: [{ clips: ['Walk', 'Run*'], track: 'Hip' }],
       },
       playback: ['as-written', 'raw-chord'],
       leaveOut: ['*.bak.glb'],

@@ -4,10 +4,32 @@ import type { HouseRules } from './house-rules.js';
 import type { DeclaredHere, Place, Rule, TrackContext } from './rule.js';
 
 /** What the house rules, and the clip's own marks, say of one track. */
-export function declaredHere(track: RotationTrack, clip: Clip, { declared }: HouseRules): DeclaredHere {
+export function declaredHere(
+  track: RotationTrack,
+  clip: Clip,
+  { declared }: HouseRules,
+  clips: readonly Clip[] = [],
+): DeclaredHere {
   const isHere = (entry: { readonly clip: string; readonly track: string }): boolean =>
     matchesPattern(entry.clip, track.clip) && matchesPattern(entry.track, track.id);
+  const inClip = (pattern: string, name = track.clip): boolean => matchesPattern(pattern, name);
+  const inOthers = (which: (other: string, at: number) => boolean): RotationTrack[] =>
+    clips.flatMap((other, at) =>
+      other.name !== track.clip && which(other.name, at)
+        ? other.tracks.filter(({ id }) => id === track.id)
+        : [],
+    );
+  const joins = declared.joins.filter((one) => inClip(one.from) && matchesPattern(one.track, track.id));
+  const blends = declared.blends.filter(
+    (one) => one.clips.some((name) => inClip(name)) && matchesPattern(one.track, track.id),
+  );
+  const own = clips.findIndex(({ name }) => name === track.clip);
   return {
+    joins: joins.length === 0 ? [] : inOthers((name) => joins.some(({ to }) => inClip(to, name))),
+    blends:
+      blends.length === 0
+        ? []
+        : inOthers((name, at) => at > own && blends.some((one) => one.clips.some((it) => inClip(it, name)))),
     holds: declared.holds.filter(isHere).map(({ span }) => span),
     whips: declared.whips.filter(isHere).map(({ span }) => span),
     spins: declared.spins.filter(isHere).map(({ rpm }) => rpm),

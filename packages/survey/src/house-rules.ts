@@ -35,6 +35,10 @@ export interface Declared {
   readonly whips: readonly DeclaredSpan[];
   readonly spins: readonly { readonly clip: string; readonly track: string; readonly rpm: number }[];
   readonly marks: readonly { readonly clip: string; readonly time: number; readonly name: string }[];
+  /** One clip runs on into another, without a transition. */
+  readonly joins: readonly { readonly from: string; readonly to: string; readonly track: string }[];
+  /** Clips that are mixed with each other, both from their starts. */
+  readonly blends: readonly { readonly clips: readonly string[]; readonly track: string }[];
 }
 
 /** A stretch of a track that is meant as it is. Seconds of the file's own clock. */
@@ -67,7 +71,7 @@ export const NO_HOUSE_RULES: HouseRules = Object.freeze({
   levels: {},
   exceptions: [],
   loops: [],
-  declared: { cuts: [], holds: [], whips: [], spins: [], marks: [] },
+  declared: { cuts: [], holds: [], whips: [], spins: [], marks: [], joins: [], blends: [] },
   playback: [],
   leaveOut: [],
 });
@@ -107,6 +111,7 @@ export function levelAt(house: HouseRules, rule: string, address: Address): Leve
 }
 
 function exceptionsAt(house: HouseRules, address: Address): readonly Exception[] {
+  if (house.exceptions.length === 0) return house.exceptions;
   return house.exceptions.filter(
     ({ where }) =>
       matchesPattern(where.file ?? '*', address.file) &&

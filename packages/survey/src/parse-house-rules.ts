@@ -68,8 +68,8 @@ function limitTable(value: unknown, at: string): LimitTable {
 
 function limit(value: unknown, at: string): LimitSetting {
   if (value === 'off') return value;
-  if (typeof value === 'number') return number(value, at);
-  const limits = map(value, at, number);
+  if (typeof value === 'number') return threshold(value, at);
+  const limits = map(value, at, threshold);
   const id = at.slice(at.lastIndexOf('/') + 1);
   const known = Object.values(knownRule(id, at).limits).flatMap((entry) =>
     entry === 'off' ? [] : Object.keys(entry),
@@ -105,8 +105,28 @@ function declared(value: unknown, at: string): Declared {
       time: number(record(entry, place)['time'], `${place}/time`),
       name: text(record(entry, place)['name'], `${place}/name`),
     })),
+    joins: list(fields['joins'], `${at}/joins`, join),
+    blends: list(fields['blends'], `${at}/blends`, blend),
   };
 }
+
+const join: Reader<Declared['joins'][number]> = (value, at) => {
+  const fields = record(value, at);
+  onlyKeys(fields, ['from', 'to', 'track'], at);
+  return {
+    from: text(fields['from'], `${at}/from`),
+    to: text(fields['to'], `${at}/to`),
+    track: target(value, at).track,
+  };
+};
+
+const blend: Reader<Declared['blends'][number]> = (value, at) => {
+  const fields = record(value, at);
+  onlyKeys(fields, ['clips', 'track'], at);
+  const clips = list(fields['clips'], `${at}/clips`, text);
+  if (clips.length < 2) throw badShape(`${at}/clips`, 'two names of clips or more', fields['clips']);
+  return { clips, track: target(value, at).track };
+};
 
 function declaredSpan(value: unknown, at: string): DeclaredSpan {
   const span = list(record(value, at)['span'], `${at}/span`, number);
@@ -137,6 +157,12 @@ const text: Reader<string> = (value, at) => {
 const number: Reader<number> = (value, at) => {
   if (typeof value === 'number' && Number.isFinite(value)) return value;
   throw badShape(at, 'a number', value);
+};
+
+/** Below nothing there is nothing to be beyond. */
+const threshold: Reader<number> = (value, at) => {
+  if (number(value, at) >= 0) return number(value, at);
+  throw badShape(at, 'a number from 0 up', value);
 };
 
 function oneOf<T extends string>(value: unknown, known: readonly T[], what: string, at: string): T {

@@ -28,8 +28,10 @@ import { overrun } from './rules/pace/overrun.js';
 import { pearls } from './rules/pace/pearls.js';
 import { reverse } from './rules/pace/reverse.js';
 import { tangentScale } from './rules/pace/tangent-scale.js';
+import { blendSide } from './rules/seam/blend-side.js';
 import { doubledEnd } from './rules/seam/doubled-end.js';
 import { tooMany } from './rules/keys/too-many.js';
+import { clipJoin } from './rules/seam/join.js';
 import { loopGap } from './rules/seam/loop-gap.js';
 import { loopKink } from './rules/seam/loop-kink.js';
 import { creep } from './rules/shake/creep.js';
@@ -93,6 +95,8 @@ export const RULES: readonly Rule[] = Object.freeze([
   loopGap,
   loopKink,
   doubledEnd,
+  clipJoin,
+  blendSide,
   speedLimit,
   accelLimit,
   jerkLimit,

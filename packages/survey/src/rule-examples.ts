@@ -134,6 +134,14 @@ export const RULE_EXAMPLES: Readonly<Record<string, readonly [fires: string, qui
       'A declared loop whose last two keys are the same while it turns.',
       'A loop that slows down to its end.',
     ],
+    'seam.join': [
+      'A walk that ends 3° off the start of the run that it is declared to go on into.',
+      'The same two clips, not declared to join.',
+    ],
+    'seam.blend-side': [
+      'Two clips that are declared to be mixed, 5° apart and stored with opposite signs.',
+      'The same on one side.',
+    ],
     'keys.too-many': [
       'A steady turn in 61 keys, 30 % asked for in the house rules: 59 could go.',
       'The same where nobody asked; keys that zigzag by 1°.',

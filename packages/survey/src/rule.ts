@@ -29,6 +29,10 @@ export interface DeclaredHere {
   readonly spins: readonly number[];
   /** Of the clip's own marks too. */
   readonly marks: readonly number[];
+  /** The same node's tracks in clips that this one runs on into. */
+  readonly joins: readonly RotationTrack[];
+  /** The same node's tracks in later clips that this one is mixed with. */
+  readonly blends: readonly RotationTrack[];
 }
 
 /** One track and what its rules need to know of it. */

@@ -35,6 +35,8 @@ export interface SurveySettings {
 export interface TrackSurveySettings extends SurveySettings {
   /** The clip that the track is of; its grid, its loop and its other tracks count. */
   readonly clip?: Clip;
+  /** All clips of the file, for what is declared between two of them. */
+  readonly clips?: readonly Clip[];
   /** The file's node tree, from which the role comes. */
   readonly nodes?: readonly SceneNode[];
   /** Metres in one unit of the node tree; left out: not known, and nothing is told in millimetres. */
@@ -104,7 +106,7 @@ function contextOf(
     clip,
     nodes,
     ...viewOf(nodes[track.source.node]),
-    declared: declaredHere(track, clip, house),
+    declared: declaredHere(track, clip, house, settings.clips),
     loop: clip.loop || house.loops.some((pattern) => matchesPattern(pattern, track.clip)),
     played: playable.times.length === 0 ? [] : playbacks.flatMap((id) => played(playable, id)),
     limits: (id) => {

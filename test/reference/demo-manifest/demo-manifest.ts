@@ -61,6 +61,9 @@ export const WORKED_OUT: readonly string[] = [
   'seam.loop-gap',
   'seam.loop-kink',
   'seam.doubled-end',
+  // The demo’s house rules declare no joins or blends.
+  'seam.join',
+  'seam.blend-side',
   'limit.speed',
   // The demo's house rules give no limit of acceleration or jerk.
   'limit.accel',

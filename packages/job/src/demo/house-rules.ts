@@ -32,6 +32,8 @@ export const kestrelPointRules: HouseRules = {
     ]),
     spins: ['lens-thirds', 'lens-halves'].map((clip) => ({ clip, track: LENS, rpm: 6 })),
     marks: [],
+    joins: [],
+    blends: [],
   },
   playback: [],
   leaveOut: [],

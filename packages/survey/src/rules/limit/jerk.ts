@@ -35,7 +35,9 @@ export const jerkLimit: Rule = Object.freeze({
     if (stored !== track || track.interpolation === 'EULER') return undefined;
     const length = (track.times.at(-1) ?? 0) - (track.times[0] ?? 0);
     const seconds = Math.ceil(length * (facts?.['stretch'] ?? 1) * 100) / 100;
-    return { step: { verb: 'stretch', clip: track.clip, track: track.id, seconds } };
+    return Number.isFinite(seconds)
+      ? { step: { verb: 'stretch', clip: track.clip, track: track.id, seconds } }
+      : undefined;
   },
   message({ keys: [key], value, limit, facts }: Place): string {
     const { seconds = 0, stretch = 1 } = facts ?? {};

@@ -56,5 +56,8 @@ export function levelFor({ role }: TrackContext): Level {
 
 /** "over it for 2.90 s; 2.15 times as slow it would keep it" */
 export function sayOver(seconds: number, stretch: number): string {
-  return `over it for ${seconds.toFixed(2)} s; ${stretch.toPrecision(3)} times as slow it would keep it`;
+  const cure = Number.isFinite(stretch)
+    ? `${stretch.toPrecision(3)} times as slow it would keep it`
+    : 'only standing still would keep it';
+  return `over it for ${seconds.toFixed(2)} s; ${cure}`;
 }
