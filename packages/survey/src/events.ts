@@ -119,7 +119,12 @@ function eventOf(bunch: readonly Spot[], owners: Map<Finding, string>): SurveyEv
   if (family === 'jump')
     for (const { finding, time } of bunch)
       if (time === finding.time) owners.set(finding, highest(finding.track, tracks));
-  const byDepth = tracks.toSorted((a, b) => depth(a) - depth(b));
+  let owner = tracks[0] ?? '';
+  let least = depth(owner);
+  for (const track of tracks) {
+    const own = depth(track);
+    if (own < least) [owner, least] = [track, own];
+  }
   const places = new Map(
     bunch.map(({ finding: { track, rule } }) => [`${track}\u001F${rule}`, { track, rule }]),
   );
@@ -128,7 +133,7 @@ function eventOf(bunch: readonly Spot[], owners: Map<Finding, string>): SurveyEv
     family,
     time: first!.time,
     level: SEVERITY[level] ?? 'note',
-    owner: byDepth[0] ?? '',
+    owner,
     tracks: tracks.length,
     places: [...places.values()],
   };

@@ -24,6 +24,8 @@ export function occurrenceFingerprint(
   return fnv1a64([rule, clip, track, size.toPrecision(2), change.toFixed(0)].join(SEPARATOR));
 }
 
+const UTF8 = new TextEncoder();
+
 /** What no name in a file can be told apart by: ASCII's unit separator. */
 const SEPARATOR = '\u001F';
 
@@ -34,7 +36,7 @@ const SEPARATOR = '\u001F';
 export function fnv1a64(text: string): string {
   let high = 0xcbf29ce4;
   let low = 0x84222325;
-  for (const byte of new TextEncoder().encode(text)) {
+  for (const byte of UTF8.encode(text)) {
     low = (low ^ byte) >>> 0;
     const product = low * 435;
     high = (Math.imul(high, 435) + Math.floor(product / 2 ** 32) + (low << 8)) >>> 0;

@@ -1,5 +1,6 @@
 import type { Limits, Place, PlayedTrack, Remedy, Rule, TrackContext } from '../../rule.js';
 import { sayRate } from '../../say-number.js';
+import { differenceOf } from '../../segments.js';
 import { easeThroughKeys } from './ease-through-keys.js';
 
 const DEGREES = 180 / Math.PI;
@@ -68,6 +69,10 @@ export const elbow: Rule = Object.freeze({
   },
 });
 
+// Written before they are read in every call.
+const before = new Float64Array(3);
+const after = new Float64Array(3);
+
 function worstAt(
   { track }: TrackContext,
   corners: readonly PlayedTrack[],
@@ -78,11 +83,12 @@ function worstAt(
   const time = track.times[key] ?? 0;
   let worst: Place | undefined;
   for (const { playback, curve } of corners) {
-    const before = curve.rate(new Float64Array(3), justBefore(time), 'parent');
-    const after = curve.rate(new Float64Array(3), time, 'parent');
-    const value = length(after.map((component, i) => component - (before[i] ?? 0)));
+    curve.rate(before, justBefore(time), 'parent');
+    curve.rate(after, time, 'parent');
+    const value = differenceOf(after, before) * DEGREES;
+    if (!(value > limit)) continue;
     const speeds = { before: length(before), after: length(after) };
-    if (!(value > limit && value > share * Math.max(speeds.before, speeds.after))) continue;
+    if (!(value > share * Math.max(speeds.before, speeds.after))) continue;
     if (worst !== undefined && worst.value >= value) continue;
     const span = [track.times[key - 1] ?? 0, track.times[key + 1] ?? 0] as const;
     worst = { keys: [key], time, span, value, limit, level: 'warning', playback: playback.id, facts: speeds };

@@ -45,10 +45,12 @@ export const overrun: Rule = Object.freeze({
     const floor = angleFloor(track.storage, track.interpolation) * DEGREES;
     const limit = Math.max(angle, 2 * floor);
     const segments = segmentsOf(context);
+    const cubics = cubicPlayed(context);
+    if (cubics.length === 0) return [];
     const places: Place[] = [];
     for (let k = 0; k + 1 < track.times.length; k++) {
       if (Number.isNaN(segments.turns[k])) continue;
-      const [worst] = cubicPlayed(context)
+      const [worst] = cubics
         .flatMap((played) => placeIn(context, played, segments, k, limit, floor))
         .toSorted((a, b) => b.value - a.value);
       if (worst !== undefined) places.push(worst);
