@@ -3,7 +3,7 @@ import { Ajv2020 } from 'ajv/dist/2020.js';
 import * as fc from 'fast-check';
 import { rotationTrack, type RotationTrack } from '@slewcurve/core';
 import { bufferSource, openAnimation } from '@slewcurve/formats';
-import { compareFiles, compareTracks, kestrelPoint, type ComparedFile } from '@slewcurve/job';
+import { compareFiles, compareTracks, comparisonText, kestrelPoint, type ComparedFile } from '@slewcurve/job';
 import { describe, expect, test } from 'vitest';
 
 /** A turn about x: degrees at times. */
@@ -104,6 +104,48 @@ describe('two files compared', () => {
     const { verdict, onlyInA, onlyInB } = compareFiles(a, fewer, 'as-written', { angle: 1 });
     expect([verdict, onlyInA.length, onlyInB]).toEqual(['fail', b.file.clips[0].tracks.length, []]);
     expect(compareFiles(fewer, a, 'as-written', { rate: 1 }).verdict).toBe('fail');
+  });
+
+  test('name a track with fewer keys too few, and one with as many adrift', async () => {
+    const whole = await demo('a.glb');
+    const of = (track: RotationTrack): ComparedFile => {
+      const clip = { ...whole.file.clips[0], tracks: [track] };
+      return { name: 'one.glb', file: { ...whole.file, clips: [clip] } };
+    };
+    const source = of(aboutX([0, 1, 2], [0, 80, 120]));
+    const named = (copy: RotationTrack, limits: { angle?: number; rate?: number }): unknown =>
+      compareFiles(source, of(copy), 'short-way', limits).findings;
+    const fewer = aboutX([0, 2], [0, 120]);
+    expect(named(fewer, { angle: 5 })).toEqual([
+      {
+        rule: 'keys.too-few',
+        level: 'error',
+        clip: 'walk',
+        track: 'hip',
+        keys: [3, 2],
+        span: [1, 1],
+        value: 20,
+        unit: 'deg',
+        limit: 5,
+      },
+    ]);
+    expect(named(fewer, { angle: 20, rate: 15 })).toMatchObject([
+      { rule: 'keys.too-few', value: 20, unit: 'deg/s', limit: 15, span: [0, 1] },
+    ]);
+    expect(named(fewer, {})).toEqual([]);
+    const even = compareFiles(of(aboutX([0, 1, 2], [0, 60, 120])), of(fewer), 'short-way', { angle: 0.001 });
+    expect([even.findings, even.verdict]).toEqual([[], 'pass']);
+    const off = aboutX([0, 1, 2], [0, 70, 120]);
+    expect(named(off, { angle: 5 })).toMatchObject([{ rule: 'keys.drift', keys: [3, 3], value: 10 }]);
+    expect(named(off, { angle: 10 })).toEqual([]);
+    const valid = new Ajv2020({ strict: false }).compile(
+      JSON.parse(readFileSync('packages/job/schema/comparison.json', 'utf8')),
+    );
+    const comparison = compareFiles(source, of(off), 'short-way', { angle: 5 });
+    expect(valid(JSON.parse(JSON.stringify(comparison)))).toBe(true);
+    expect(comparisonText(comparison)).toContain(
+      'error keys.drift: hip in walk is 10° off (limit 5°), 3 keys in both\n',
+    );
   });
 
   test('say which track a playback can’t play', async () => {

@@ -1,9 +1,11 @@
 import { describe, expect, test } from 'vitest';
-import { RULES, rulePage } from '@slewcurve/survey';
+import { COMPARISON_RULES, RULES, rulePage } from '@slewcurve/survey';
+
+const ALL = [...RULES, ...COMPARISON_RULES];
 
 describe('rule pages', () => {
   // The text lives in the rule; the file beside it is made from it: `npx vitest run test/survey/rule-page -u`.
-  test.each(RULES.map((rule) => [rule.id, rule] as const))(
+  test.each(ALL.map((rule) => [rule.id, rule] as const))(
     'the page beside %s is what the rule says',
     async (id, rule) => {
       const [family, slug] = id.split('.');
@@ -13,7 +15,7 @@ describe('rule pages', () => {
     },
   );
 
-  test.each(RULES.map((rule) => [rule.id, rule] as const))(
+  test.each(ALL.map((rule) => [rule.id, rule] as const))(
     '%s has an id of its family and words for its role',
     (id, rule) => {
       expect(id.startsWith(`${rule.family}.`)).toBe(true);
@@ -23,7 +25,7 @@ describe('rule pages', () => {
     },
   );
 
-  test.each(RULES.map((rule) => [rule.id, rule] as const))('the page of %s has every section', (_, rule) => {
+  test.each(ALL.map((rule) => [rule.id, rule] as const))('the page of %s has every section', (_, rule) => {
     const page = rulePage(rule);
     const headings = [...page.matchAll(/^## (.*)$/gm)].map(([, heading]) => heading);
     expect(headings).toEqual([
@@ -48,6 +50,6 @@ describe('rule pages', () => {
   });
 
   test('ids are all different', () => {
-    expect(new Set(RULES.map((rule) => rule.id)).size).toBe(RULES.length);
+    expect(new Set(ALL.map((rule) => rule.id)).size).toBe(ALL.length);
   });
 });

@@ -23,6 +23,18 @@ export interface TrackComparison {
   readonly rateOver: readonly [number, number];
 }
 
+/** A track beyond a limit: by its keys' number, or by what they say. Values in degrees or deg/s. */
+export interface ComparisonFinding extends TrackAddress {
+  readonly rule: 'keys.too-few' | 'keys.drift';
+  readonly level: 'error';
+  /** Keys in the first file and in the second. */
+  readonly keys: readonly [number, number];
+  readonly span: readonly [number, number];
+  readonly value: number;
+  readonly unit: 'deg' | 'deg/s';
+  readonly limit: number;
+}
+
 /** A track by name. */
 export interface TrackAddress {
   readonly clip: string;
@@ -41,6 +53,8 @@ export interface Comparison {
   readonly limits: ComparisonLimits;
   /** In the order of the first file. */
   readonly tracks: readonly TrackComparison[];
+  /** Tracks beyond a limit, in the same order. */
+  readonly findings: readonly ComparisonFinding[];
   readonly onlyInA: readonly TrackAddress[];
   readonly onlyInB: readonly TrackAddress[];
   readonly verdict: 'pass' | 'fail';
@@ -74,16 +88,17 @@ export function compareFiles(
   limits: ComparisonLimits = {},
 ): Comparison {
   const [inA, inB] = [a, b].map(tracksByName);
+  const findings: ComparisonFinding[] = [];
   const pairs = [...(inA ?? [])].flatMap(([name, track]) => {
     const other = inB?.get(name);
-    return other ? [compareTracks(track, other, playback)] : [];
+    if (!other) return [];
+    const compared = compareTracks(track, other, playback);
+    findings.push(...beyond(compared, [track.times.length, other.times.length], limits));
+    return [compared];
   });
   const onlyInA = missing(inA, inB);
   const onlyInB = missing(inB, inA);
   const limited = limits.angle !== undefined || limits.rate !== undefined;
-  const fits = pairs.every(
-    ({ angle, rate }) => angle <= (limits.angle ?? Infinity) && rate <= (limits.rate ?? Infinity),
-  );
   return {
     schemaVersion: 1,
     tool: { name: 'slewcurve', version: VERSION },
@@ -93,10 +108,26 @@ export function compareFiles(
     looks: LOOKS,
     limits,
     tracks: pairs,
+    findings,
     onlyInA,
     onlyInB,
-    verdict: fits && (!limited || onlyInA.length + onlyInB.length === 0) ? 'pass' : 'fail',
+    verdict: findings.length === 0 && (!limited || onlyInA.length + onlyInB.length === 0) ? 'pass' : 'fail',
   };
+}
+
+/** What is beyond the limits of a track: its angle, or else its rate. */
+function beyond(
+  { clip, track, angle, angleAt, rate, rateOver }: TrackComparison,
+  keys: readonly [number, number],
+  limits: ComparisonLimits,
+): ComparisonFinding[] {
+  const rule = keys[1] < keys[0] ? 'keys.too-few' : 'keys.drift';
+  const told = { rule, level: 'error', clip, track, keys } as const;
+  if (limits.angle !== undefined && angle > limits.angle)
+    return [{ ...told, span: [angleAt, angleAt], value: angle, unit: 'deg', limit: limits.angle }];
+  if (limits.rate !== undefined && rate > limits.rate)
+    return [{ ...told, span: rateOver, value: rate, unit: 'deg/s', limit: limits.rate }];
+  return [];
 }
 
 /** How two tracks differ, each as a playback plays it, one for both where a second is not named; outside its keys a track holds its ends. */

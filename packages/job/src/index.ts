@@ -6,6 +6,7 @@ export {
   compareTracks,
   type ComparedFile,
   type Comparison,
+  type ComparisonFinding,
   type ComparisonLimits,
   type TrackAddress,
   type TrackComparison,

@@ -1,5 +1,6 @@
 import { PLAYBACKS } from '@slewcurve/core';
 import { VERBS, nearestWord } from '@slewcurve/mend';
+import { COMPARISON_RULES } from './comparison-rule.js';
 import { RULES } from './registry.js';
 import { rulePage } from './rule-page.js';
 import { TERMS } from './terms.js';
@@ -31,7 +32,7 @@ export function explainWord(word: string): Explanation {
 }
 
 const ENTRIES: readonly Entry[] = Object.freeze([
-  ...RULES.map((rule) => ({
+  ...[...RULES, ...COMPARISON_RULES].map((rule) => ({
     kind: 'rule' as const,
     name: rule.id,
     summary: rule.summary,

@@ -27,6 +27,7 @@ export type {
   TrackContext,
 } from './rule.js';
 export { RULES } from './registry.js';
+export { COMPARISON_RULES, type ComparisonRule } from './comparison-rule.js';
 export { allowedSpeed } from './allowed-speed.js';
 export { withDeclaredCuts } from './declared-cuts.js';
 export { surveyClip, surveyTrack, type SurveySettings, type TrackSurveySettings } from './survey.js';

@@ -146,6 +146,14 @@ export const RULE_EXAMPLES: Readonly<Record<string, readonly [fires: string, qui
       'A steady turn in 61 keys, 30 % asked for in the house rules: 59 could go.',
       'The same where nobody asked; keys that zigzag by 1°.',
     ],
+    'keys.too-few': [
+      'Keys at 0°, 80° and 120° a second apart, the middle one left out, 5° allowed: 20° off.',
+      'Keys at 0°, 60° and 120°, the middle one left out.',
+    ],
+    'keys.drift': [
+      'A key of a copy that is 10° off where 5° are allowed.',
+      'The same where 10° are allowed.',
+    ],
     'limit.speed': [
       'A machine limited to 30 deg/s that reaches 43 deg/s.',
       'A joint without a limit in the house rules.',

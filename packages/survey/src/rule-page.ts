@@ -1,9 +1,10 @@
+import type { ComparisonRule } from './comparison-rule.js';
 import { ROLES } from './roles.js';
 import { RULE_EXAMPLES } from './rule-examples.js';
 import type { Rule } from './rule.js';
 
 /** A rule's page as Markdown: what `explain` prints and what the file beside the rule holds. */
-export function rulePage(rule: Rule): string {
+export function rulePage(rule: Rule | ComparisonRule): string {
   const { page } = rule;
   const sections: readonly (readonly [string, string])[] = [
     ['What it is', page.what],
@@ -13,11 +14,11 @@ export function rulePage(rule: Rule): string {
     ['What people see', page.people],
     ['Test', page.test],
     ...examples(rule),
-    ['Default thresholds', thresholds(rule)],
+    ['Default thresholds', 'limits' in rule ? thresholds(rule) : BY_FLAGS],
     ['Where the defaults come from', page.source],
     ['What it spares', page.spares],
     ['Remedy', `${page.remedy}\n\nThe remedy leaves alone: ${rule.untouched}.`],
-    ['How to silence it', silencing(rule)],
+    ['How to silence it', 'limits' in rule ? silencing(rule) : UNASKED],
   ];
   return [
     `# ${rule.id}`,
@@ -29,7 +30,11 @@ export function rulePage(rule: Rule): string {
     .concat('\n');
 }
 
-function examples({ id }: Rule): readonly (readonly [string, string])[] {
+const BY_FLAGS =
+  'None: `slewcurve compare` takes them as `--angle` (degrees) and `--rate` (degrees per second).';
+const UNASKED = 'Leave out `--angle` and `--rate`: differences are then listed and nothing fails.';
+
+function examples({ id }: ComparisonRule): readonly (readonly [string, string])[] {
   const both = RULE_EXAMPLES[id];
   return both === undefined ? [] : [['Examples', `Named: ${both[0]}\n\nNot named: ${both[1]}`]];
 }
