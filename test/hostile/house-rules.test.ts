@@ -104,7 +104,7 @@ function surveysBy(json: unknown): boolean {
     return true;
   } catch (error) {
     if (!(error instanceof SlewcurveError)) throw error;
-    expect(error.code).toMatch(/^house-rules\./);
+    if (!error.code.startsWith('house-rules.')) throw error;
     return false;
   }
 }

@@ -2,9 +2,9 @@ import { readFileSync } from 'node:fs';
 import { expect, test } from 'vitest';
 
 function definition(schema: string, name: string): unknown {
-  const { $defs } = JSON.parse(
+  const { $defs }: { $defs: Record<string, unknown> } = JSON.parse(
     readFileSync(new URL(`../../packages/job/schema/${schema}.json`, import.meta.url), 'utf8'),
-  ) as { readonly $defs: Readonly<Record<string, unknown>> };
+  );
   return $defs[name];
 }
 

@@ -28,10 +28,19 @@ function negated(clip: Clip): Clip {
   return { ...clip, tracks: [rotationTrack({ ...track, values: track.values.map((value) => -value) })] };
 }
 
-describe('seam.join', () => {
-  const JOIN = parseHouseRules({ declared: { joins: [{ from: 'Walk', to: 'Run' }] } });
-  const walk = clipOf('Walk', (key) => key);
+const JOIN = parseHouseRules({ declared: { joins: [{ from: 'Walk', to: 'Run' }] } });
+const walk = clipOf('Walk', (key) => key);
 
+/** What is found where a walk of 30 deg/s runs on at another speed. */
+function at(speed: number): Finding[] {
+  return found([walk, clipOf('Run', (key) => 30 + (key * speed) / 30)], JOIN);
+}
+
+function steps(name: string, angle: Angle): Clip {
+  return clipOf(name, angle, [0, 1, 0], 'STEP');
+}
+
+describe('seam.join', () => {
   test('a pose 3° off where the next clip begins is twelve times a prop’s limit of 0.25°', () => {
     const run = clipOf('Run', (key) => 33 + key);
     const [finding, ...rest] = found([walk, run], JOIN);
@@ -53,8 +62,6 @@ describe('seam.join', () => {
   });
 
   test('the pose fits: clips that go on are clean, a speed of 60 deg/s after 30 is named, 31 is not', () => {
-    const at = (speed: number): Finding[] =>
-      found([walk, clipOf('Run', (key) => 30 + (key * speed) / 30)], JOIN);
     expect(at(30)).toEqual([]);
     expect(at(31)).toEqual([]);
     // 30 deg/s over the larger of 10 deg/s and a tenth of 60.
@@ -72,7 +79,6 @@ describe('seam.join', () => {
   });
 
   test('STEP clips have a pose alone', () => {
-    const steps = (name: string, angle: Angle): Clip => clipOf(name, angle, [0, 1, 0], 'STEP');
     expect(found([steps('Walk', (key) => key), steps('Run', (key) => 30 + 9 * key)], JOIN)).toEqual([]);
     expect(found([steps('Walk', (key) => key), steps('Run', (key) => 33 + 9 * key)], JOIN)).toHaveLength(1);
   });
@@ -80,7 +86,6 @@ describe('seam.join', () => {
 
 describe('seam.blend-side', () => {
   const MIX = parseHouseRules({ declared: { blends: [{ clips: ['Walk', 'Run'] }] } });
-  const walk = clipOf('Walk', (key) => key);
   const run = clipOf('Run', (key) => 5 + key);
 
   test('5° apart on opposite sides leave a length of 0.022, told once and on the earlier clip', () => {

@@ -56,24 +56,34 @@ function isStraight(
   // Over half a turn on the way: one slerp would go round the other side.
   if (!(along > 0)) return false;
   const half = 2 * Math.asin(Math.min(1, Math.sqrt(apart) / 2));
-  const sine = Math.sin(half);
   const [start = 0, end = 0] = [times[from], times[to]];
   const speed = (2 * half * DEGREES) / (end - start);
   for (let key = from; key < to; key++) {
     if (!(Math.abs((speeds[key] ?? NaN) - speed) <= rate)) return false;
     if (key === from) continue;
     const share = ((times[key] ?? NaN) - start) / (end - start);
-    const [u, v] =
-      sine > 1e-9 ? [Math.sin((1 - share) * half) / sine, Math.sin(share * half) / sine] : [1 - share, share];
-    let off = 0;
-    for (let i = 0; i < 4; i++) {
-      const line = u * (orientations[a + i] ?? 0) + v * (orientations[b + i] ?? 0);
-      off += (line - (orientations[4 * key + i] ?? 0)) ** 2;
-    }
-    // The chord between two unit quaternions is twice the sine of a quarter of the angle that they turn apart.
-    const away = 4 * Math.asin(Math.min(1, Math.sqrt(off) / 2)) * DEGREES;
     const step = Math.max(turns[key - 1] ?? NaN, turns[key] ?? NaN) / DEGREES;
-    if (!(away <= angle * Math.cos(step / 4))) return false;
+    if (!(awayFrom(orientations, [from, to, key], half, share) <= angle * Math.cos(step / 4))) return false;
   }
   return true;
+}
+
+/** Degrees from a key's pose to where a slerp between two others, `2 * half` radians apart, is at a share of its time. */
+function awayFrom(
+  orientations: Float64Array,
+  [from, to, key]: readonly [number, number, number],
+  half: number,
+  share: number,
+): number {
+  const sine = Math.sin(half);
+  const isShort = sine < 1e-9;
+  const u = isShort ? 1 - share : Math.sin((1 - share) * half) / sine;
+  const v = isShort ? share : Math.sin(share * half) / sine;
+  let off = 0;
+  for (let i = 0; i < 4; i++) {
+    const line = u * (orientations[4 * from + i] ?? 0) + v * (orientations[4 * to + i] ?? 0);
+    off += (line - (orientations[4 * key + i] ?? 0)) ** 2;
+  }
+  // The chord between two unit quaternions is twice the sine of a quarter of the angle that they turn apart.
+  return 4 * Math.asin(Math.min(1, Math.sqrt(off) / 2)) * DEGREES;
 }
