@@ -14,6 +14,13 @@ test('the address ?demo opens the demo scene, under its own house rules', async 
   await page
     .locator('slew-chart .notes .message', { hasText: 'The loop ends 3.0° off its start' })
     .waitFor(SOON);
+  // DEMO: the head follows at no more than 20 deg/s in this clip; at most 30 elsewhere.
+  await page.getByRole('button', { name: 'Roster: all tracks' }).click();
+  await page.getByRole('searchbox', { name: 'Find a track' }).fill('scope-pass');
+  await page.locator('slew-roster .option').first().click();
+  await expect
+    .poll(() => page.locator('slew-chart .limit-name').first().textContent(), SOON)
+    .toBe('house rule 20 deg/s');
 });
 
 test('another playback is surveyed anew, and two stand on one paper with what they differ by', async () => {

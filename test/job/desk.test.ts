@@ -107,6 +107,48 @@ describe('desk', () => {
     expect(() => here.propose('f', [])).toThrow(expect.objectContaining({ code: 'job.not-surveyed' }));
   });
 
+  test('tries a step as a card would make it, with its price, and keeps nothing', async () => {
+    const here = await surveyedDesk();
+    const { tracks } = await here.open('g', bufferSource(kestrelPoint()), name);
+    const { clip, track } = tracks.find((one) => one.clip === 'scope-pass') ?? tracks[0];
+    const step = { verb: 'cap', clip, track, rate: 20 };
+    const tried = here.trial('f', clip, track, step);
+    // DEMO: +1.84 s within 5 %.
+    expect(Math.abs((tried.price?.seconds ?? 0) / 1.84 - 1)).toBeLessThan(0.05);
+    expect(here.track('f', clip, track).after.times).not.toEqual(tried.after?.times);
+    const { steps } = await here.card('f', [step], UNWATCHED);
+    expect(steps[0]?.changed).toBe(tried.changed);
+    const { after } = here.track('f', clip, track);
+    expect([...(tried.after?.times ?? [])]).toEqual([...after.times]);
+    expect([...(tried.after?.values ?? [])]).toEqual([...after.values]);
+  });
+
+  test('tries a pace that is copied from another track', async () => {
+    const here = await surveyedDesk();
+    const own = (await here.open('g', bufferSource(kestrelPoint()), name)).tracks.filter(
+      (one) => one.clip !== 'scope-pass',
+    );
+    const [to] = own;
+    const from = own.find((one) => one.clip !== to.clip) ?? to;
+    const step = {
+      verb: 'copy pace',
+      clip: to.clip,
+      track: to.track,
+      fromClip: from.clip,
+      fromTrack: from.track,
+    };
+    expect(here.trial('f', to.clip, to.track, step).changed).toBeGreaterThan(0);
+  });
+
+  test('says why a step can’t be done, without a number: there is but one', async () => {
+    const here = await surveyedDesk();
+    const { clip, track } = (await here.open('g', bufferSource(kestrelPoint()), name)).tracks[0];
+    const bad = { verb: 'hold', clip, track, at: 1e6, seconds: 1 };
+    expect(() => here.trial('f', clip, track, bad)).toThrow(
+      expect.objectContaining({ code: 'step.needs-hold', message: expect.stringMatching(/^Say when/) }),
+    );
+  });
+
   test('hands over one object twice where a track is not edited', async () => {
     const here = await surveyedDesk();
     const { track } = await here

@@ -211,3 +211,9 @@ function noteId(finding: ReportedFinding, place: ReportedOccurrence): string {
 function asSentence(message: string): string {
   return `${message.charAt(0).toUpperCase()}${message.slice(1)}${message.endsWith('.') ? '' : '.'}`;
 }
+
+/** A clip shorter than a row of ten seconds takes the whole row. */
+export function wholeClip({ motion }: ChartData): number | undefined {
+  const seconds = motion.end - motion.start;
+  return seconds > 0 && seconds < 10 ? seconds : undefined;
+}

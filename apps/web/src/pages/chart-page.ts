@@ -11,14 +11,7 @@ import type { SlewChart } from '@slewcurve/elements/chart';
 import type { MatrixWish } from '@slewcurve/elements/playback-matrix';
 import type { SlewPorthole } from '@slewcurve/elements/porthole';
 import type { SlewSentence } from '@slewcurve/elements/sentence';
-import {
-  rowAt,
-  type About,
-  type ChartData,
-  type HandEdit,
-  type Motion,
-  type Turn,
-} from '@slewcurve/elements/plot';
+import { rowAt, type About, type ChartData, type HandEdit, type Turn } from '@slewcurve/elements/plot';
 import { inTurn } from '@slewcurve/elements/theme/in-turn';
 import type { TrackAnswer } from '@slewcurve/job';
 import { sayStep, type Step } from '@slewcurve/mend';
@@ -36,18 +29,21 @@ import {
   acceptedAs,
   measureAhead,
   placeOfNote,
+  wholeClip,
   type ChartSubject,
 } from './chart-data-of.js';
 import { clockChoice, type Clock } from './clock-choice.js';
 import { cautionsOf } from './cautions-of.js';
 import { chartPageStyles } from './chart-page-styles.js';
-import { explanationOf } from './explanation-of.js';
+import { explanationOf, focusedWithin } from './explanation-of.js';
 import { jobCardOf } from './job-card-of.js';
 import { NOT_TURNING, keyTurnOf, layOverEdit, turnAtHand, turnedKey, type Turning } from './key-turn-of.js';
 import { loopChoice } from './loop-choice.js';
 import { playbackChoice } from './playback-choice.js';
 import { pageStyles } from './page-styles.js';
 import type { ChosenTrack } from './roster-rows.js';
+import { sentenceOf } from './sentence-of.js';
+import { sketchedData, type Sketched } from './sketched.js';
 
 /**
  * Chart: one track, with its 3-D view, the sentence that edits it, and the job card of its file.
@@ -245,7 +241,7 @@ export class SlewChartPage extends LitElement {
         <details class="figure" ?open=${!this.narrow}>
           <summary>3-D view</summary>
           <slew-porthole
-            .data=${this.trial.sketch ? sketchedData(data, this.trial.sketch) : data}
+            .data=${sketchedData(data, this.trial.sketch)}
             .time=${this.time}
             .span=${this.span}
             ?camera=${data.rateNames[0] === 'tilt'}
@@ -313,16 +309,11 @@ export class SlewChartPage extends LitElement {
     const { sentence } = this.trial;
     if (!sentence || !data) return nothing;
     const row = chart ? (chart.rows[rowAt(chart.rows, sentence.time)]?.index ?? 0) : 0;
-    return html`<slew-sentence
-      slot=${`row-${row}`}
-      .text=${sentence.text}
-      .price=${sentence.price}
-      .problem=${sentence.problem}
-      .busy=${this.busy}
-      @sentence-changed=${(event: CustomEvent<{ text: string }>) => this.rewrite(event.detail.text)}
-      @apply-asked=${() => void this.applySentence()}
-      @left-alone=${() => this.leaveSentence()}
-    ></slew-sentence>`;
+    return sentenceOf(sentence, row, this.busy, {
+      rewrite: (text) => this.rewrite(text),
+      apply: () => void this.applySentence(),
+      leave: () => this.leaveSentence(),
+    });
   }
 
   /** The finding and the place that a note stands for. */
@@ -467,28 +458,4 @@ export class SlewChartPage extends LitElement {
     this.edit = undefined;
     void this.updateComplete.then(() => this.focus());
   }
-}
-
-/** What the chart says of an edit by hand. */
-interface Sketched {
-  readonly edit: HandEdit;
-  readonly settled: boolean;
-  readonly idle: boolean;
-  readonly motion?: Motion;
-}
-
-function focusedWithin(element: Element | null): HTMLElement | undefined {
-  const focused = element?.shadowRoot?.activeElement;
-  return focused instanceof HTMLElement ? focused : undefined;
-}
-
-function sketchedData(data: ChartData, motion: Motion): ChartData {
-  const motionBefore = data.tried ? data.before?.motion : data.motion;
-  return { ...data, motion, ...(motionBefore && { before: { motion: motionBefore, name: 'before' } }) };
-}
-
-/** A clip shorter than a row of ten seconds takes the whole row. */
-function wholeClip({ motion }: ChartData): number | undefined {
-  const seconds = motion.end - motion.start;
-  return seconds > 0 && seconds < 10 ? seconds : undefined;
 }

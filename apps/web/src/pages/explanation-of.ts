@@ -64,3 +64,9 @@ function table(text: string): TemplateResult {
     </tbody>
   </table>`;
 }
+
+/** Where the keyboard is within an element, to go back there. */
+export function focusedWithin(element: Element | null): HTMLElement | undefined {
+  const focused = element?.shadowRoot?.activeElement;
+  return focused instanceof HTMLElement ? focused : undefined;
+}

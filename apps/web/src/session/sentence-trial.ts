@@ -117,6 +117,6 @@ export class SentenceTrial {
   }
 }
 
-function withoutPreview({ preview: _, ...rest }: SentenceAtHand): SentenceAtHand {
-  return rest;
+function withoutPreview({ text, time, step, price, problem }: SentenceAtHand): SentenceAtHand {
+  return { text, time, price, problem, ...(step && { step }) };
 }
