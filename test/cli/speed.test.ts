@@ -31,6 +31,9 @@ function costOf(...args: string[]): {
   return { ...cost, verdict: stdout.trimEnd().split('\n').at(-1) ?? '' };
 }
 
+/** Milliseconds on the clock, for a machine that is busy with something else. */
+const PATIENCE = 600_000;
+
 describe.skipIf(process.env.SLEWCURVE_LONG_RUNS === undefined)('the command', () => {
   test('checks 300 files of 60 tracks of 120 keys in less than 60 s on two cores, by one thread even', () => {
     for (let i = 0; i < 300; i++)
@@ -52,15 +55,27 @@ describe.skipIf(process.env.SLEWCURVE_LONG_RUNS === undefined)('the command', ()
   });
 
   const real = sharedFile('data/gltf/animation-only/840-joints.glb');
-  test.skipIf(real.absent)('checks 840 tracks in about a second', () => {
-    // A second on a machine of its own; half of it is loading the command's modules, which another job on the machine slows.
-    expect(costOf('check', resolve(real.path)).cpu).toBeLessThan(1.5);
-  });
+  test.skipIf(real.absent)(
+    'checks 840 tracks in less than a second',
+    () => {
+      // The lowest of several runs: half of it is loading the command's modules, which another job on the machine slows.
+      const runs = Array.from({ length: 5 }, () => costOf('check', resolve(real.path)).cpu);
+      expect(Math.min(...runs)).toBeLessThan(1);
+    },
+    PATIENCE,
+  );
 
-  test('checks 1.73 million keys in less than 10 s and 600 MB', () => {
-    writeFileSync(join(folder, 'take.glb'), generatedTake(THREE_MINUTES));
-    const { cpu, megabytes } = costOf('check', 'take.glb');
-    expect(cpu).toBeLessThan(10);
-    expect(megabytes).toBeLessThan(600);
-  });
+  test.each([
+    ['clean', 0],
+    ['noisy', 0.03],
+  ] as const)(
+    'checks 1.73 million %s keys in less than 10 s and 600 MB',
+    (name, grain) => {
+      writeFileSync(join(folder, `${name}.glb`), generatedTake({ ...THREE_MINUTES, grain }));
+      const runs = Array.from({ length: 2 }, () => costOf('check', `${name}.glb`));
+      expect(Math.min(...runs.map(({ cpu }) => cpu))).toBeLessThan(10);
+      expect(Math.max(...runs.map(({ megabytes }) => megabytes))).toBeLessThan(600);
+    },
+    PATIENCE,
+  );
 });

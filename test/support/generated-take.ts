@@ -1,3 +1,6 @@
+import { multiply, normalise } from '@slewcurve/core';
+import { seededRandom } from './seeded-random.js';
+
 /** A capture take made by formula: joints that sway, one of which pops for one frame. */
 export interface TakePlan {
   readonly joints: number;
@@ -7,13 +10,15 @@ export interface TakePlan {
   readonly pop?: { readonly joint: number | 'every'; readonly frame: number; readonly degrees: number };
   /** All joints hang on the first one, not each on the one before. */
   readonly flat?: boolean;
+  /** Standard deviation of white noise, degrees an axis, as a capture has it; none where left out. */
+  readonly grain?: number;
 }
 
 /** 80 joints, 3 minutes, 120 Hz: 1,728,000 keys, 27.7 MB. */
 export const THREE_MINUTES: TakePlan = { joints: 80, frames: 21_600, rate: 120 };
 
 /** The take as a GLB: one clip, shared key times, float32, joints in a chain of skins' kind. */
-export function generatedTake({ joints, frames, rate, pop, flat = false }: TakePlan): Uint8Array {
+export function generatedTake({ joints, frames, rate, pop, flat = false, grain = 0 }: TakePlan): Uint8Array {
   const times = Float32Array.from({ length: frames }, (_, k) => k / rate);
   const bin = new Uint8Array(times.byteLength + joints * frames * 16);
   bin.set(new Uint8Array(times.buffer));
@@ -26,8 +31,20 @@ export function generatedTake({ joints, frames, rate, pop, flat = false }: TakeP
       values[4 * k + (joint % 3)] = Math.sin(half);
       values[4 * k + 3] = Math.cos(half);
     }
+    if (grain > 0) addNoise(values, grain, joint);
   }
   return glbOf(takeJson({ joints, frames, rate, flat }, times, bin.byteLength), bin);
+}
+
+/** Turns every key of a joint, in own axes, by small normal angles (Box and Muller). */
+function addNoise(values: Float32Array, grain: number, joint: number): void {
+  const random = seededRandom(joint + 1);
+  const half = (): number =>
+    ((Math.sqrt(-2 * Math.log(1 - random())) * Math.cos(2 * Math.PI * random()) * grain) / 360) * Math.PI;
+  for (let at = 0; at < values.length; at += 4) {
+    const key = values.subarray(at, at + 4);
+    normalise(key, multiply(key, key, [half(), half(), half(), 1]));
+  }
 }
 
 /** Degrees: two slow waves, alike in no two of 80 joints, at most some 60 deg/s. */
