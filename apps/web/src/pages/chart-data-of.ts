@@ -176,7 +176,6 @@ function noteOf(finding: ReportedFinding, place: ReportedOccurrence | undefined)
   const one = !hasOneRemedy(finding) && place !== undefined;
   const places = one ? [place] : finding.occurrences;
   const open = places.filter(({ stamp }) => stamp === undefined);
-  const { effect } = finding;
   const { time, level, remedy, alternatives = [] } = open[0] ?? place ?? finding;
   const [proposed, ...others] = remedy ? remedyWays([remedy, ...alternatives]) : [];
   return {
@@ -187,13 +186,23 @@ function noteOf(finding: ReportedFinding, place: ReportedOccurrence | undefined)
     time,
     places: open.length > 0 ? open : places,
     count: one ? 1 : finding.count,
-    status: finding.muted === 'stamped' || (one && open.length === 0) ? 'stamped' : 'open',
-    // Said of a finding's worst place alone.
-    ...(effect && time === finding.time && { effect }),
+    status: isAccepted(finding, one, open) ? 'stamped' : 'open',
+    ...effectAt(finding, time),
     ...acceptedOf(places),
     ...(proposed && { remedy: proposed }),
     ...(others.length > 0 && { others }),
   };
+}
+
+/** Whether nothing of a note is open: the whole finding is accepted, or the one place that it stands for. */
+function isAccepted({ muted }: ReportedFinding, one: boolean, open: readonly ReportedOccurrence[]): boolean {
+  return muted === 'stamped' || (one && open.length === 0);
+}
+
+/** What is seen is told of a finding's worst place alone. */
+function effectAt(finding: ReportedFinding, time: number): Pick<MarginNote, 'effect'> {
+  const { effect } = finding;
+  return effect && time === finding.time ? { effect } : {};
 }
 
 /** Which of a note's places are accepted, and why. */

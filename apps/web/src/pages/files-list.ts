@@ -17,7 +17,7 @@ export interface FileActions {
   saveStamps(file: FileWork): void;
   /** Name of the house rules that somebody opened, and how they are put away. */
   readonly house: string | undefined;
-  leaveHouse(): void;
+  readonly leaveHouse: () => void;
   /** What asks by which conventions a file is read. */
   askConventions(file: FileWork): TemplateResult;
 }

@@ -9,7 +9,7 @@ export function isWorthKeeping({ lines, stamps = [], loops = [] }: SavedWork): b
 /** Work that an earlier visit left, to be taken up or left. */
 export function keptOffer(
   kept: readonly SavedWork[],
-  doings: { resume(): void; leave(): void },
+  doings: { readonly resume: () => void; readonly leave: () => void },
 ): TemplateResult | typeof nothing {
   if (kept.length === 0) return nothing;
   const names = kept.map((work) => work.name).join(', ');

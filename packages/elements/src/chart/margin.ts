@@ -17,9 +17,9 @@ export interface MarginEvents {
   mend(note: MarginNote, way: number): void;
   explain(rule: string): void;
   /** Accept it with a reason. */
-  accept(note: MarginNote): void;
+  readonly accept: (note: MarginNote) => void;
   /** Take back what was accepted of it. */
-  takeBack(note: MarginNote): void;
+  readonly takeBack: (note: MarginNote) => void;
   unfold(row: number): void;
 }
 
@@ -71,7 +71,9 @@ function noteItem(
           events.explain(note.rule);
         }}
         >${note.rule}</a
-      >, <span class="whole">${sayTime(note.time, 2)}</span>${places}${note.accepted ? '' : STATUS[note.status]}</span
+      >,
+      <span class="whole">${sayTime(note.time, 2)}</span
+      >${places}${note.accepted ? '' : STATUS[note.status]}</span
     >
     ${[effectWords(note), eventWords(note), acceptedWords(note)].map((words) =>
       words === undefined ? nothing : html`<span class="more">${words}</span>`,
