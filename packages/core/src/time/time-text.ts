@@ -30,7 +30,8 @@ export function sayTime(seconds: number, form: TimeForm = 'seconds', fps?: numbe
  */
 export function readTime(text: string, fps?: number): number {
   const trimmed = text.trim();
-  const [, plain] = /^([-+]?(?:\d+(?:\.\d*)?|\.\d+)(?:e[-+]?\d+)?)\s*(?:s|sec|seconds?)?$/i.exec(trimmed) ?? [];
+  const [, plain] =
+    /^([-+]?(?:\d+(?:\.\d*)?|\.\d+)(?:e[-+]?\d+)?)\s*(?:s|sec|seconds?)?$/i.exec(trimmed) ?? [];
   if (plain !== undefined) return Number(plain);
   const [, named, counted] =
     /^(?:frame\s+([-+]?\d+(?:\.\d+)?)|([-+]?\d+(?:\.\d+)?)\s*(?:f|frames?))$/i.exec(trimmed) ?? [];
