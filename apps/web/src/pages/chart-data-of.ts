@@ -41,7 +41,7 @@ export interface ChartSubject {
 const motions = new WeakMap<RotationTrack, Map<PlaybackId, Motion>>();
 
 /** The motion of a track as a playback plays it; made once. */
-export function motionOf(track: RotationTrack, playback: PlaybackId): Motion {
+function motionOf(track: RotationTrack, playback: PlaybackId): Motion {
   const known = motions.get(track) ?? new Map<PlaybackId, Motion>();
   motions.set(track, known);
   const motion = known.get(playback) ?? curveMotion(playAs(track, playback));
