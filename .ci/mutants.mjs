@@ -64,13 +64,19 @@ function option(name, fallback) {
 }
 
 /**
- * Whether a number is the size or the first content of a store that is written before it is read: no test can notice another.
+ * Whether a number is the size or the first content of a store that is written before it is read, or the end of a view of which the
+ * first numbers are read: no test can notice a greater one.
  *
  * @param {ts.Node} number
  */
-function isScratch({ parent }) {
+function isRoom(number) {
+  const { parent } = number;
   if (ts.isArrayLiteralExpression(parent)) return parent.elements.every((each) => each.getText() === '0');
-  return ts.isNewExpression(parent) && parent.expression.getText().endsWith('Array');
+  if (ts.isNewExpression(parent)) return parent.expression.getText().endsWith('Array');
+  for (let at = number; !ts.isStatement(at); at = at.parent)
+    if (ts.isCallExpression(at.parent) && /\.(?:subarray|slice)$/.test(at.parent.expression.getText()))
+      return at === at.parent.arguments[1];
+  return false;
 }
 
 /**
@@ -95,7 +101,7 @@ function flips(source) {
     }
     if (ts.isPrefixUnaryExpression(node) && node.operator === ts.SyntaxKind.MinusToken)
       found.push({ start: node.getStart(), end: node.operand.getStart(), from: '-', to: '' });
-    if (ts.isNumericLiteral(node) && !isScratch(node)) {
+    if (ts.isNumericLiteral(node) && !isRoom(node)) {
       const value = Number(node.getText());
       flip(node, Number.isInteger(value) ? String(value + 1) : String(value * 1.1));
     }

@@ -88,3 +88,38 @@ test('gaps of 5e-324 s and of 1e300 s give finite rates', () => {
       }
     }
 });
+
+describe('a stored cubic’s promise of an even rate', () => {
+  const key = [0.1, -0.5, 0.7, 0.5];
+  const tangent = [0.3, 0.2, -0.4, 0.6];
+  /** Three keys, the tangents of the middle one as given. */
+  const through = (arriving: readonly number[], leaving: readonly number[]): RotationTrack => {
+    const none = [0, 0, 0, 0];
+    return rotationTrack({
+      times: [0, 1, 2],
+      values: [
+        ...[none, [0, 0, 0, 1], [0.1, 0, 0, 0]],
+        ...[arriving, key, leaving],
+        ...[[0, 0.1, 0, 0], [0, 0, 1, 0], none],
+      ].flat(),
+      interpolation: 'CUBICSPLINE',
+    });
+  };
+  const continuity = (arriving: readonly number[], leaving: readonly number[]): number =>
+    playAs(through(arriving, leaving), 'stored-cubic').continuity;
+
+  test('is 1 where both tangents of a key are one, and where they differ along its value alone, which does not turn', () => {
+    expect(continuity(tangent, tangent)).toBe(1);
+    expect(
+      continuity(
+        tangent,
+        tangent.map((part, k) => part + 0.7 * key[k]),
+      ),
+    ).toBe(1);
+  });
+
+  test.each([0, 1, 2, 3])('is 0 where component %i of them differs', (component) => {
+    const other = tangent.map((part, k) => (k === component ? part + 1e-6 : part));
+    expect(continuity(tangent, other)).toBe(0);
+  });
+});

@@ -227,3 +227,11 @@ test('a kind that there is not is refused by name', () => {
   expect(asked).toThrow(SlewcurveError);
   expect(asked).toThrow(expect.objectContaining({ code: 'spline.unknown-kind' }));
 });
+
+test('a log chart keeps whole turns: three of them, keyed each 90°, are 1,080° long at one speed', () => {
+  const angles = Array.from({ length: 13 }, (_, key) => 90 * key);
+  const spin = oneAxisTrack([...angles.keys()], angles);
+  const curve = rotationSpline(spin, { kind: 'log-chart' });
+  expect((curve.length(0, 12) * 180) / Math.PI).toBeCloseTo(1080, 6);
+  expect((curve.peak(0, 12).rate * 180) / Math.PI).toBeCloseTo(90, 6);
+});
