@@ -20,6 +20,7 @@ import { storedValue, tangentFor } from '../stored-key.js';
 import type { EditResult, Price, TimeMap } from '../verb.js';
 import { bendsOf } from './bends.js';
 import { scaleTangents } from './scale-tangents.js';
+import { splitCubic } from './split-cubic.js';
 import { type NewKey, cubicKeys, frameKeys, movedKeys, offCorners } from './new-keys.js';
 
 /** Share of a gap by which the side before a key is looked at. */
@@ -78,8 +79,14 @@ export function storeKeys(
   const after =
     store === 'cubic' || (store === 'frames' && track.interpolation === 'CUBICSPLINE')
       ? cubicTrack(track, span, paced, keys)
-      : plainTrack(track, paced, keys);
+      : travelled(track, paced, keys);
   return pacedResult(track, after, keys, span, paced, paced.retiming, step);
+}
+
+/** Old keys that travel, and where there are more of them those that are read off the curve. */
+function travelled(track: RotationTrack, paced: PacedCurve, keys: readonly NewKey[]): RotationTrack {
+  const isSplit = track.interpolation === 'CUBICSPLINE' && keys.length > track.times.length;
+  return isSplit ? splitCubic(track, paced, keys, breaksOf(track, keys)) : plainTrack(track, paced, keys);
 }
 
 /** The result of a pace edit, with its price and its bends. */
