@@ -1,4 +1,4 @@
-import { EULER_SEQUENCES } from '@slewcurve/core';
+import { EULER_SEQUENCES, SlewcurveError } from '@slewcurve/core';
 import {
   LitElement,
   css,
@@ -11,7 +11,12 @@ import {
 import { sayTime } from './chart/quantity.js';
 import { WHOSE, sayTurn, turnTo, type About, type Turn } from './gesture/key-turn.js';
 import {
+  MATRIX_ORDERS,
   matrixText,
+  orientationOfMatrix,
+  type MatrixOrder,
+} from './gesture/orientation-matrix.js';
+import {
   numberNames,
   numbersOfOrientation,
   orientationOfNumbers,
@@ -43,6 +48,8 @@ export class SlewKeyTurn extends LitElement {
     about: { type: String },
     turning: { type: Boolean },
     kind: { state: true },
+    order: { state: true },
+    problem: { state: true },
     copied: { state: true },
   };
   static override styles: CSSResult[] = [
@@ -96,13 +103,25 @@ export class SlewKeyTurn extends LitElement {
         width: 100%;
         box-sizing: border-box;
       }
-      pre {
+      textarea {
+        display: block;
+        width: 100%;
+        box-sizing: border-box;
         margin: 0.25rem 0 0;
+        color: var(--_ink);
+        background: var(--_sheet);
+        border: 1px solid var(--_rule);
+        border-radius: 3px;
         font:
           0.75rem/1.5 ui-monospace,
           'DejaVu Sans Mono',
           monospace;
+        white-space: pre;
         overflow-x: auto;
+      }
+      .problem {
+        color: var(--_limit);
+        font-style: italic;
       }
       p {
         margin: 0.25rem 0 0;
@@ -129,6 +148,10 @@ export class SlewKeyTurn extends LitElement {
   /** A drag on the globe turns the key. */
   declare turning: boolean;
   declare private kind: NumberKind;
+  /** How the matrix is written, shown and read alike. */
+  declare private order: MatrixOrder;
+  /** Why the typed matrix tells no orientation; empty: it does. */
+  declare private problem: string;
   declare private copied: boolean;
 
   constructor() {
@@ -139,6 +162,8 @@ export class SlewKeyTurn extends LitElement {
     this.about = 'own';
     this.turning = false;
     this.kind = 'axis and angle';
+    this.order = 'row by row';
+    this.problem = '';
     this.copied = false;
   }
 
@@ -224,13 +249,33 @@ export class SlewKeyTurn extends LitElement {
   }
 
   private matrix(orientation: Quaternion): TemplateResult {
-    const text = matrixText(orientation);
+    const { order, problem } = this;
+    const text = matrixText(orientation, order);
     const copy = async (): Promise<void> => {
       await navigator.clipboard.writeText(text);
       this.copied = true;
     };
-    return html`<p>As a matrix, own to parent, for column vectors</p>
-      <pre tabindex="0" role="group" aria-label="4 by 4 matrix">${text}</pre>
+    const choose = (event: Event): void => {
+      this.order = MATRIX_ORDERS.find((each) => each === valueOf(event)) ?? order;
+    };
+    return html`<p>
+        <label
+          >As a matrix, own to parent, for column vectors, written
+          <select @change=${choose}>
+            ${MATRIX_ORDERS.map((each) => option(each, each, order))}
+          </select></label
+        >
+      </p>
+      <textarea
+        rows="4"
+        spellcheck="false"
+        autocomplete="off"
+        aria-label="4 by 4 matrix, ${order}"
+        aria-invalid=${problem ? 'true' : nothing}
+        .value=${text}
+        @change=${(event: Event) => this.typeMatrix(orientation, valueOf(event))}
+      ></textarea>
+      <p class="problem" role="status">${problem}</p>
       <button class="plain on-screen" @click=${() => void copy()}>
         ${this.copied ? 'Copied' : 'Copy the matrix'}
       </button>`;
@@ -247,12 +292,27 @@ export class SlewKeyTurn extends LitElement {
     const numbers = numbersOfOrientation(orientation, this.kind).map((old, i) => (i === index ? typed : old));
     const wanted = orientationOfNumbers(numbers, this.kind);
     if (!wanted) return this.requestUpdate();
+    this.turnInto(orientation, wanted);
+  }
+
+  private typeMatrix(orientation: Quaternion, text: string): void {
+    this.problem = '';
+    try {
+      this.turnInto(orientation, orientationOfMatrix(text, this.order));
+    } catch (error) {
+      if (!(error instanceof SlewcurveError)) throw error;
+      this.problem = error.message;
+    }
+  }
+
+  private turnInto(orientation: Quaternion, wanted: Quaternion): void {
     const about = this.about === 'own' ? 'own' : 'parent';
     this.send('turn-typed', { turn: turnTo(orientation, wanted, about), about });
   }
 
   protected override willUpdate(changed: Map<PropertyKey, unknown>): void {
-    if (changed.has('orientation')) this.copied = false;
+    if (changed.has('orientation') || changed.has('order')) this.copied = false;
+    if (changed.has('key') || changed.has('order')) this.problem = '';
   }
 
   private send(type: string, detail: unknown): void {

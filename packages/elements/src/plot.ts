@@ -24,6 +24,7 @@ export * from './gesture/hold.js';
 export * from './gesture/key-time.js';
 export * from './gesture/key-turn.js';
 export * from './gesture/limit.js';
+export * from './gesture/orientation-matrix.js';
 export * from './gesture/orientation-numbers.js';
 export * from './gesture/pace-sketch.js';
 export * from './gesture/paper-place.js';

@@ -1,10 +1,12 @@
-import { EULER_SEQUENCES, angleBetween, expMap, multiply } from '@slewcurve/core';
+import { EULER_SEQUENCES, SlewcurveError, angleBetween, expMap, multiply } from '@slewcurve/core';
 import {
+  MATRIX_ORDERS,
   NO_TURN,
   matrixText,
   nudgedTurn,
   numberNames,
   numbersOfOrientation,
+  orientationOfMatrix,
   orientationOfNumbers,
   sayTurn,
   turnOfDrag,
@@ -82,6 +84,68 @@ describe('an orientation by numbers', () => {
     );
   });
 });
+
+describe('a typed matrix', () => {
+  // A quarter turn about z: own x becomes the parent's y. Numbers of the definition, row by row, with a translation of (5, 6, 7).
+  const quarter = '0 -1 0 5\n1 0 0 6\n0 0 1 7\n0 0 0 1';
+
+  it.each(MATRIX_ORDERS)('is told and read back within the six decimals that are shown: %s', (order) => {
+    fc.assert(
+      fc.property(unit, (orientation) => {
+        const back = orientationOfMatrix(matrixText(orientation, order), order);
+        // Each number is off by 5e-7 at the most, nine of them: 1.5e-6 rad.
+        expect(angleBetween(back, orientation)).toBeLessThan(1.5e-6);
+      }),
+    );
+  });
+
+  it('leaves translation and scale out, and takes commas, brackets and a typeset minus', () => {
+    const expected = [0, 0, Math.SQRT1_2, Math.SQRT1_2];
+    for (const text of [
+      quarter,
+      '[[0, −1, 0, 5], [1, 0, 0, 6], [0, 0, 1, 7], [0, 0, 0, 1]]',
+      '0 -2 0 0; 3 0 0 0; 0 0 4 0; 0 0 0 1',
+    ])
+      expect(angleBetween(orientationOfMatrix(text, 'row by row'), expected)).toBeLessThan(1e-12);
+  });
+
+  it('takes numbers of three decimals', () => {
+    const text = '0.866 -0.5 0 0  0.5 0.866 0 0  0 0 1 0  0 0 0 1';
+    const thirty = [0, 0, Math.sin(Math.PI / 12), Math.cos(Math.PI / 12)];
+    expect(angleBetween(orientationOfMatrix(text, 'row by row'), thirty) * DEGREES).toBeLessThan(0.03);
+    // Read in the other order it is the turn back, which numbers alone can't tell: the order is always named.
+    const back = orientationOfMatrix(text, 'column by column');
+    expect(angleBetween(back, thirty) * DEGREES).toBeCloseTo(60, 1);
+  });
+
+  it.each([
+    ['matrix.reflected', '-1 0 0 0  0 1 0 0  0 0 1 0  0 0 0 1'],
+    ['matrix.sheared', '1 0.1 0 0  0 1 0 0  0 0 1 0  0 0 0 1'],
+    ['matrix.flat', '1 0 0 0  0 1 0 0  0 0 0 0  0 0 0 1'],
+    ['matrix.bad-length', '1 0 0 0 1 0 0 0 1'],
+    ['matrix.bad-length', ''],
+    ['matrix.not-a-number', quarter.replace('5', 'five')],
+    ['matrix.not-a-number', quarter.replace('5', 'Infinity')],
+  ])('is refused as %s: %s', (code, text) => {
+    expect(refusal(text, 'row by row').code).toBe(code);
+  });
+
+  it('is asked about where the other order fits: a translation stands in its last row', () => {
+    const { code, message } = refusal(quarter, 'column by column');
+    expect(code).toBe('matrix.last-row');
+    expect(message).toMatch(/the last row is 5 6 7 1 .* Is it written row by row\?$/);
+  });
+});
+
+function refusal(text: string, order: (typeof MATRIX_ORDERS)[number]): SlewcurveError {
+  try {
+    orientationOfMatrix(text, order);
+  } catch (error) {
+    if (error instanceof SlewcurveError) return error;
+    throw error;
+  }
+  throw new Error('taken');
+}
 
 describe('the turn to a typed orientation', () => {
   it('leads there about own and about parent’s axes, to the last digit that is said', () => {

@@ -4,7 +4,6 @@ import {
   normalise,
   toAxisAngle,
   toEuler,
-  toMat4,
   type EulerSequence,
 } from '@slewcurve/core';
 import { toDegrees } from '../chart/quantity.js';
@@ -46,22 +45,6 @@ export function orientationOfNumbers(numbers: readonly number[], kind: NumberKin
     return Math.hypot(x, y, z) > 0 ? fromAxisAngle(out, [x, y, z], radians(angle)) : undefined;
   }
   return fromEuler(out, numbers.map(radians), kind);
-}
-
-/** The 4×4 matrix, a line a row, for column vectors: it takes own vectors to the parent. */
-export function matrixText(orientation: Readonly<Quaternion>): string {
-  const columns = toMat4(new Float64Array(16), orientation);
-  return [0, 1, 2, 3]
-    .map((row) =>
-      [0, 1, 2, 3]
-        .map((column) => {
-          const text = columns[4 * column + row].toFixed(6);
-          return /^-0\.0+$/.test(text) ? text.slice(1) : text;
-        })
-        .map((text) => text.padStart(9))
-        .join(' '),
-    )
-    .join('\n');
 }
 
 function radians(degrees: number): number {
