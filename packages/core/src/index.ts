@@ -52,6 +52,7 @@ export { readTime, sayTime, TIME_FORMS, type TimeForm } from './time/time-text.j
 export { findSegment } from './track/find-segment.js';
 export { FRAME_RATES, frameGrid } from './track/frame-grid.js';
 export { keyOrientation } from './track/key-orientation.js';
+export { nodeChain } from './track/node-chain.js';
 export { accelerationFloor, angleFloor, rateFloor } from './track/noise-floor.js';
 export { playableTrack } from './track/playable-track.js';
 export { replaceTrack, type TrackChanges } from './track/replace-track.js';

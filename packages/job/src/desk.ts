@@ -1,4 +1,4 @@
-import { SlewcurveError, type Clip, type RotationTrack } from '@slewcurve/core';
+import { SlewcurveError, nodeChain, type Clip, type RotationTrack } from '@slewcurve/core';
 import type { OpenOptions, Source } from '@slewcurve/formats';
 import { applySteps, type Step } from '@slewcurve/mend';
 import { surveyTrack, withDeclaredCuts, type Finding } from '@slewcurve/survey';
@@ -286,14 +286,13 @@ function trackAnswer(
 /** Tracks of the nodes that a track's node hangs on, in its clip. */
 function tracksAbove({ opened, current }: Folder, { id, clip }: RotationTrack): RotationTrack[] {
   const { nodes } = opened.file;
-  const above: RotationTrack[] = [];
-  const node = nodes.find(({ path }) => path === id);
-  for (let parent = node && nodes[node.parent]; parent; parent = nodes[parent.parent]) {
-    const { path } = parent;
-    const moving = current.find((track) => track.id === path && track.clip === clip);
-    if (moving) above.push(moving);
-  }
-  return above;
+  const [, ...above] = nodeChain(
+    nodes,
+    nodes.findIndex(({ path }) => path === id),
+  );
+  return above.flatMap((node) =>
+    current.filter((track) => track.id === nodes[node]?.path && track.clip === clip).slice(0, 1),
+  );
 }
 
 /** A copy whose arrays may be handed over. */

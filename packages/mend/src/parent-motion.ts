@@ -1,4 +1,11 @@
-import { type NumberStore, type RotationTrack, SlewcurveError, multiply, playAs } from '@slewcurve/core';
+import {
+  type NumberStore,
+  type RotationTrack,
+  SlewcurveError,
+  multiply,
+  nodeChain,
+  playAs,
+} from '@slewcurve/core';
 import { placeOf } from './acted-keys.js';
 import type { EditScene } from './verb.js';
 
@@ -30,12 +37,11 @@ export function parentMotion(
       placeOf(track),
     );
   const links: Link[] = [];
-  for (let at = node.parent; at >= 0;) {
+  for (const at of nodeChain(scene.nodes, node.parent)) {
     const above = scene.nodes[at];
     const moving = scene.tracks.find(({ id, clip }) => id === above.path && clip === track.clip);
     links.push(moving && moving.times.length > 0 ? linkOf(moving) : resting(above.rotation));
     if (namedAreWorlds && moving && scene.named.includes(moving)) break;
-    at = above.parent;
   }
   if (links.length === 0) return undefined;
   const one = new Float64Array(4);

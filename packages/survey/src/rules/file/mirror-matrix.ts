@@ -1,4 +1,4 @@
-import type { Clip, SceneNode } from '@slewcurve/core';
+import { nodeChain, type Clip, type SceneNode } from '@slewcurve/core';
 import { everyRole, type Limits, type Place, type Remedy, type Rule, type TrackContext } from '../../rule.js';
 import { sayDegrees } from '../../say-number.js';
 import { isTime } from './is-time.js';
@@ -102,7 +102,7 @@ const MOST_KEYS = 100;
 /** Matrices of the track's node and of those above it, each told on the first track of the clip that stands at or below it. */
 function amongNodes({ stored, clip, nodes }: TrackContext, { shear: most = 0 }: Limits): Place[] {
   const places: Place[] = [];
-  for (const node of chainOf(nodes, stored.source.node)) {
+  for (const node of nodeChain(nodes, stored.source.node)) {
     const matrix = nodes[node]?.matrix;
     if (matrix === undefined || (!matrix.reflected && !(matrix.shear > most))) continue;
     if (firstBelow(clip, nodes).get(node) !== stored.id) continue;
@@ -132,17 +132,10 @@ function firstBelow(clip: Clip, nodes: readonly SceneNode[]): ReadonlyMap<number
   if (before !== undefined) return before;
   const first = new Map<number, string>();
   for (const { id, source } of clip.tracks)
-    for (const node of chainOf(nodes, source.node))
+    for (const node of nodeChain(nodes, source.node))
       if (nodes[node]?.matrix !== undefined && !first.has(node)) first.set(node, id);
   known.set(clip, first);
   return first;
-}
-
-/** A node and all above it, up to the root. */
-function chainOf(nodes: readonly SceneNode[], node: number): number[] {
-  const chain: number[] = [];
-  for (let at = node; at >= 0 && at < nodes.length; at = nodes[at]?.parent ?? -1) chain.push(at);
-  return chain;
 }
 
 function offSquare(shear: number): number {
