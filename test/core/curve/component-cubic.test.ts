@@ -98,10 +98,10 @@ describe('a stored cubic’s promise of an even rate', () => {
     return rotationTrack({
       times: [0, 1, 2],
       values: [
-        ...[none, [0, 0, 0, 1], [0.1, 0, 0, 0]],
-        ...[arriving, key, leaving],
-        ...[[0, 0.1, 0, 0], [0, 0, 1, 0], none],
-      ].flat(),
+        [none, [0, 0, 0, 1], [0.1, 0, 0, 0]],
+        [arriving, key, leaving],
+        [[0, 0.1, 0, 0], [0, 0, 1, 0], none],
+      ].flat(2),
       interpolation: 'CUBICSPLINE',
     });
   };
