@@ -48,9 +48,10 @@ test('one instant on five tracks is one event, and a finding of it is accepted a
   expect(await note.textContent()).toContain('Accepted: the hit is meant (Ada, ');
   const words = page.locator('slew-chart details', { hasText: 'The chart in words' });
   await words.locator('summary').click();
-  expect(await words.textContent()).toContain(
-    'one of 5 tracks at 0.50 s; owner joint-0. Accepted: the hit is',
-  );
+  // The words are made once they are asked for.
+  await expect
+    .poll(() => words.textContent())
+    .toContain('one of 5 tracks at 0.50 s; owner joint-0. Accepted: the hit is');
   await expectCommandsStamps(place, page);
 
   await page.getByRole('button', { name: 'Docket: report' }).click();
